@@ -1,0 +1,121 @@
+package optimize
+
+import (
+	"cmp"
+	"container/heap"
+)
+
+// bestBatch is how many candidates have the pool tried on them at a time.
+const bestBatch = largestBatch
+
+// candidate is a rejected design with the lowest margin known so far, which bounds its margin from above.
+type candidate[C any] struct {
+	rank     int
+	bound    float64
+	cut      int32 // pool cut of the bound
+	tried    int   // pool cuts tried, from the first
+	searched bool
+	missing  int // unresolved cuts met by the search
+}
+
+// candidates is a heap, greatest bound first, then lowest rank.
+type candidates[C any] []*candidate[C]
+
+func (h candidates[C]) Len() int      { return len(h) }
+func (h candidates[C]) Swap(i, j int) { h[i], h[j] = h[j], h[i] }
+func (h candidates[C]) Less(i, j int) bool {
+	return cmp.Or(cmp.Compare(h[j].bound, h[i].bound), cmp.Compare(h[i].rank, h[j].rank)) < 0
+}
+func (h *candidates[C]) Push(x any) { *h = append(*h, x.(*candidate[C])) }
+func (h *candidates[C]) Pop() any {
+	old := *h
+	last := old[len(old)-1]
+	*h = old[:len(old)-1]
+	return last
+}
+
+// rankBest looks for the design with the greatest margin among those that have a witness, best bound first: a bound is
+// lowered by trying the whole pool, then by a full search, and the first candidate to stay on top after both is the
+// best. When the searches run out, only those searched stay in the queue.
+func (r *run[C]) rankBest() error {
+	var queue, searched candidates[C]
+	for rank, w := range r.res.Lattice {
+		if w.Cut != NoCut {
+			queue = append(queue, &candidate[C]{rank: rank, bound: w.Margin, cut: w.Cut})
+		}
+	}
+	heap.Init(&queue)
+	for len(queue) > 0 {
+		top := queue[0]
+		switch {
+		case top.tried < len(r.pool):
+			if err := r.tightenTop(&queue); err != nil {
+				return err
+			}
+		case top.searched:
+			r.acceptBest(top)
+			return nil
+		case len(searched) == r.s.FullSearches:
+			queue = searched
+			heap.Init(&queue)
+		default:
+			searched = append(searched, top)
+			if err := r.searchCandidate(top); err != nil {
+				return err
+			}
+			heap.Fix(&queue, 0)
+			r.report(Ranking, len(r.designs))
+		}
+	}
+	return nil
+}
+
+// tightenTop tries the rest of the pool on the top candidates that lack it.
+func (r *run[C]) tightenTop(queue *candidates[C]) error {
+	var batch []*candidate[C]
+	for len(*queue) > 0 && len(batch) < bestBatch && (*queue)[0].tried < len(r.pool) {
+		batch = append(batch, heap.Pop(queue).(*candidate[C]))
+	}
+	err := each(r.ctx, r.s.Workers, len(batch), func(i int) {
+		c := batch[i]
+		d := r.open(r.point(r.designs[c.rank]))
+		defer d.Close()
+		for k := c.tried; k < len(r.pool); k++ {
+			if m := d.Margin(&r.pool[k]); m < c.bound {
+				c.bound, c.cut = m, int32(k)
+			}
+		}
+		r.margins.Add(int64(len(r.pool) - c.tried))
+		c.tried = len(r.pool)
+	})
+	for _, c := range batch {
+		heap.Push(queue, c)
+	}
+	return err
+}
+
+// searchCandidate searches a candidate in full, unless that was done before, and lowers its bound to what was found.
+func (r *run[C]) searchCandidate(c *candidate[C]) error {
+	v, known := r.verdicts[c.rank]
+	if !known {
+		d := r.open(r.point(r.designs[c.rank]))
+		defer d.Close()
+		var err error
+		if v, err = r.examine(d, c.rank, false, 0); err != nil {
+			return err
+		}
+	}
+	c.searched, c.missing = true, v.missing
+	if v.standing == rejected && v.witness.margin < c.bound {
+		c.bound, c.cut = v.witness.margin, v.witness.cut
+	}
+	return nil
+}
+
+func (r *run[C]) acceptBest(c *candidate[C]) {
+	d := r.designs[c.rank]
+	r.res.Best = Attempt[C]{
+		X: r.point(d), Cost: d.cost, Margin: c.bound, Unresolved: c.missing,
+		Binding: Found[C]{Cut: r.pool[c.cut], Margin: c.bound},
+	}
+}
