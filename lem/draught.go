@@ -1,0 +1,328 @@
+package lem
+
+import (
+	"math"
+	"slices"
+)
+
+// draught is a section drawn out for compiling: every boundary as straight segments that are functions of x.
+type draught struct {
+	s        *Section
+	sit      *Situation
+	ground   Profile
+	strata   []Profile
+	water    Profile
+	edges    []segment // Everything that bounds soils or water.
+	step     float64   // Width of a drawn-out vertical step, m.
+	from, to float64   // Ends of the columns.
+}
+
+// segment is part of a boundary from left to right; upright ones only give a breakpoint.
+type segment struct{ a, b Point }
+
+func (g segment) line() line {
+	k := (g.b.Y - g.a.Y) / (g.b.X - g.a.X)
+	return line{g.a.Y - k*g.a.X, k}
+}
+
+func draughtOf(s *Section, sit *Situation) *draught {
+	width := s.Ground.Right() - s.Ground.Left()
+	d := &draught{s: s, sit: sit, step: stepWidth * width}
+	// Slips may daylight beyond the ends: ground and lines are held level there.
+	d.from, d.to = s.Ground.Left()-width, s.Ground.Right()+width
+	d.ground = d.drawOut(s.Ground)
+	d.addLine(d.ground)
+	for _, st := range s.Strata {
+		p := d.drawOut(st.Top)
+		d.strata = append(d.strata, p)
+		d.addLine(p)
+	}
+	if len(sit.Water.Line) > 0 {
+		d.water = d.drawOut(sit.Water.Line)
+		d.addLine(d.water)
+	}
+	for _, b := range s.Placed {
+		for i, p := range b.Outline {
+			q := b.Outline[(i+1)%len(b.Outline)]
+			if p.X > q.X {
+				p, q = q, p
+			}
+			d.edges = append(d.edges, segment{p, q})
+		}
+	}
+	for _, f := range sit.Water.Free {
+		d.edges = append(d.edges, segment{Point{f.FromX, f.Level}, Point{f.ToX, f.Level}})
+	}
+	if sit.Water.HasFreeDrainingLevel {
+		y := sit.Water.FreeDrainingLevel
+		d.edges = append(d.edges, segment{Point{d.from, y}, Point{d.to, y}})
+	}
+	return d
+}
+
+// drawOut returns the profile as a function of x over the whole width of the columns: vertical steps become steep, and the ends run on
+// level.
+func (d *draught) drawOut(p Profile) Profile {
+	q := Profile{{min(d.from, p.Left()-1), p[0].Y}}
+	for i := 0; i < len(p); {
+		j := i
+		for j+1 < len(p) && p[j+1].X-p[i].X <= d.step {
+			j++
+		}
+		if j == i {
+			q = append(q, p[i])
+		} else {
+			mid := (p[i].X + p[j].X) / 2
+			q = append(q, Point{mid - d.step/2, p[i].Y}, Point{mid + d.step/2, p[j].Y})
+		}
+		i = j + 1
+	}
+	return append(q, Point{max(d.to, p.Right()+1), p[len(p)-1].Y})
+}
+
+func (d *draught) addLine(p Profile) {
+	for i := 0; i+1 < len(p); i++ {
+		d.edges = append(d.edges, segment{p[i], p[i+1]})
+	}
+}
+
+// breakpoints returns the sorted x between which no boundary has a vertex and no two boundaries cross.
+func (d *draught) breakpoints() []float64 {
+	xs := []float64{d.from, d.to}
+	add := func(x float64) {
+		if x > d.from && x < d.to {
+			xs = append(xs, x)
+		}
+	}
+	addBuried := func(p Point) { // A vertex above the ground in force bounds nothing.
+		if p.Y <= d.ground.At(p.X)+d.step {
+			add(p.X)
+		}
+	}
+	for i, e := range d.edges {
+		addBuried(e.a)
+		addBuried(e.b)
+		for _, o := range d.edges[:i] {
+			if p, ok := crossing(e, o); ok {
+				addBuried(p)
+			}
+		}
+	}
+	for _, line := range []Profile{d.ground, d.water, d.s.FirmBase} {
+		for _, p := range line { // A head above the ground counts too.
+			add(p.X)
+		}
+	}
+	for _, l := range d.s.Loads {
+		add(l.FromX)
+		add(l.ToX)
+	}
+	for _, f := range d.sit.Water.Free {
+		add(f.FromX)
+		add(f.ToX)
+	}
+	if dr := d.sit.Water.Drains; dr != nil {
+		for _, p := range dr.Invert {
+			add(p.X)
+		}
+	}
+	for i := range d.s.Soils {
+		if u := d.s.Soils[i].Undrained; u != nil {
+			for _, p := range u.Datum {
+				add(p.X)
+			}
+			for _, p := range u.Points {
+				add(p.X)
+			}
+		}
+	}
+	slices.Sort(xs)
+	// Closer than a step is the same place; the steps themselves are kept.
+	return slices.CompactFunc(xs, func(a, b float64) bool { return math.Abs(b-a) < d.step/2 })
+}
+
+// crossing returns where two segments cross inside both, if they do at one point.
+func crossing(e, o segment) (Point, bool) {
+	x0, x1 := max(e.a.X, o.a.X), min(e.b.X, o.b.X)
+	if x1 <= x0 {
+		return Point{}, false
+	}
+	le, lo := e.line(), o.line()
+	d0, d1 := le.at(x0)-lo.at(x0), le.at(x1)-lo.at(x1)
+	if d0*d1 >= 0 {
+		return Point{}, false
+	}
+	x := x0 + (x1-x0)*d0/(d0-d1)
+	return Point{x, le.at(x)}, true
+}
+
+// lineOver returns the line of a profile over a column, from its value at two points inside.
+func lineOver(p Profile, x0, x1 float64) line {
+	xa, xb := x0+(x1-x0)/4, x1-(x1-x0)/4
+	ya, yb := p.At(xa), p.At(xb)
+	k := (yb - ya) / (xb - xa)
+	return line{ya - k*xa, k}
+}
+
+// soilAt returns the soil at a point: the last placed body that holds it, else the lowest stratum whose top is not below it.
+func soilAt(s *Section, x, y float64) int {
+	for i := len(s.Placed) - 1; i >= 0; i-- {
+		if inside(s.Placed[i].Outline, x, y) {
+			return s.Placed[i].Soil
+		}
+	}
+	for i := len(s.Strata) - 1; i > 0; i-- {
+		if s.Strata[i].Top.At(x) >= y {
+			return s.Strata[i].Soil
+		}
+	}
+	return s.Strata[0].Soil
+}
+
+// inside reports whether a point lies in an outline (crossing number).
+func inside(o []Point, x, y float64) bool {
+	in := false
+	for i, a := range o {
+		b := o[(i+1)%len(o)]
+		if (a.X > x) != (b.X > x) && y < a.Y+(b.Y-a.Y)*(x-a.X)/(b.X-a.X) {
+			in = !in
+		}
+	}
+	return in
+}
+
+// addColumn adds the column between two breakpoints, with its layers.
+func (m *Model) addColumn(d *draught, x0, x1 float64) {
+	xm := (x0 + x1) / 2
+	c := column{
+		x0: x0, x1: x1, ground: lineOver(d.ground, x0, x1), water: nowhere, free: math.Inf(-1), firm: nowhere,
+		first: int32(len(m.layers)),
+	}
+	c.tangent = c.ground.b / math.Hypot(1, c.ground.b)
+	if d.s.FirmBase != nil {
+		c.firm = lineOver(d.s.FirmBase, x0, x1)
+	}
+	m.addWater(d, &c, xm)
+	for _, l := range d.s.Loads {
+		if !l.Variable && l.FromX < xm && xm < l.ToX {
+			c.pressure += l.Pressure
+		}
+	}
+	for i, l := range m.varied {
+		if l.FromX < xm && xm < l.ToX {
+			c.variable |= 1 << i
+		}
+	}
+	m.addLayers(d, &c, xm)
+	c.last = int32(len(m.layers))
+	m.cols = append(m.cols, c)
+}
+
+// addWater sets the column's head line, free water and drains.
+func (m *Model) addWater(d *draught, c *column, xm float64) {
+	w := &d.sit.Water
+	if d.water != nil {
+		c.water = lineOver(d.water, c.x0, c.x1)
+	}
+	for _, f := range w.Free {
+		if f.FromX < xm && xm < f.ToX && f.Level > c.ground.at(xm) {
+			c.free = max(c.free, f.Level)
+		}
+	}
+	if c.free > c.water.at(xm) { // Still water: the head under it is its level.
+		c.water = line{c.free, 0}
+	}
+	if dr := w.Drains; dr != nil && dr.Invert.Left() < xm && xm < dr.Invert.Right() {
+		c.invert = lineOver(dr.Invert, c.x0, c.x1)
+		ratio := make(Profile, len(dr.Ratio))
+		for i, r := range dr.Ratio {
+			ratio[i] = Point{dr.Invert[i].X, r}
+		}
+		c.ratio = lineOver(ratio, c.x0, c.x1)
+		c.fade = dr.Fade
+	}
+}
+
+// addLayers adds the layers of a column from the top down, and sums up the weight above them.
+func (m *Model) addLayers(d *draught, c *column, xm float64) {
+	ground := c.ground.at(xm)
+	var below []line
+	for _, e := range d.edges {
+		if e.a.X <= c.x0+d.step/4 && e.b.X >= c.x1-d.step/4 && e.b.X-e.a.X > d.step/4 {
+			if l := e.line(); l.at(xm) < ground-d.step {
+				below = append(below, l)
+			}
+		}
+	}
+	slices.SortFunc(below, func(p, q line) int {
+		switch a, b := p.at(xm), q.at(xm); {
+		case a > b:
+			return -1
+		case a < b:
+			return 1
+		}
+		return 0
+	})
+	below = append(below, nowhere)
+	top := c.ground
+	var sigma line // Weight of the layers above the present one.
+	for _, l := range below {
+		y := top.at(xm)
+		if y-l.at(xm) < d.step {
+			continue
+		}
+		mid := y - 1 // Of the lowest layer, which has no bottom.
+		if l != nowhere {
+			mid = (y + l.at(xm)) / 2
+		}
+		next := m.newLayer(d, c, xm, mid)
+		next.bottom = l
+		n := len(m.layers)
+		if n > int(c.first) && m.layers[n-1].soil == next.soil && m.layers[n-1].gamma == next.gamma {
+			m.layers[n-1].bottom = l
+		} else {
+			next.sigma, next.slope = sigma.a+next.gamma*top.a, sigma.b+next.gamma*top.b
+			m.layers = append(m.layers, next)
+		}
+		if l != nowhere {
+			sigma.a += next.gamma * (top.a - l.a)
+			sigma.b += next.gamma * (top.b - l.b)
+		}
+		top = l
+	}
+}
+
+// newLayer returns the layer that holds the point, without its place in the column.
+func (m *Model) newLayer(d *draught, c *column, x, y float64) layer {
+	i := soilAt(d.s, x, y)
+	soil := &d.s.Soils[i]
+	l := layer{soil: int32(i), gamma: soil.UnitWeight, pore: poreNone}
+	head := c.water.at(x)
+	if soil.FreeDraining && (d.sit.Water.HasFreeDrainingLevel || !math.IsInf(c.free, -1)) {
+		l.pore, l.freeLevel = poreLevel, c.free
+		if d.sit.Water.HasFreeDrainingLevel {
+			l.freeLevel = max(l.freeLevel, d.sit.Water.FreeDrainingLevel)
+		}
+		head = l.freeLevel
+	} else if !math.IsInf(head, -1) {
+		l.pore = poreLine
+	}
+	if y < head && soil.SaturatedUnitWeight > 0 {
+		l.gamma = soil.SaturatedUnitWeight
+	}
+	if soil.HasRu {
+		l.pore, l.ru = poreRu, soil.Ru
+	}
+	l.c, l.tan = soil.Cohesion, math.Tan(soil.Friction)
+	if i < len(d.sit.Undrained) && d.sit.Undrained[i] {
+		u := soil.Undrained
+		l.pore, l.c, l.tan = poreNone, u.Strength, 0
+		switch {
+		case len(u.Points) > 0:
+			l.kind = strengthPoints
+		case u.Gradient != 0 && len(u.Datum) > 0:
+			l.kind, l.gradient, l.datum = strengthGradient, u.Gradient, lineOver(u.Datum, c.x0, c.x1)
+		}
+	}
+	return l
+}

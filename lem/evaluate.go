@@ -1,0 +1,197 @@
+package lem
+
+import "math"
+
+// minMAlpha is the least m-alpha = cos(alpha) + sin(alpha) tan(phi)/F of an admissible slip. Below it the base normal force of a steeply
+// rising exit grows without sense; Whitman and Bailey (1967) warn below 0.2. It also bars exits much steeper than passive.
+const minMAlpha = 0.2
+
+// FS evaluates a slip: every part of it below the ground that is deep enough is a slip of its own, and the one with the lowest F counts.
+// It does not allocate once the workspace has grown. Bishop is for circles; a polyline asks for Ordinary or Spencer.
+func (m *Model) FS(ws *Workspace, s *Slip, o Setting) Result {
+	best := Result{F: math.NaN(), Screen: math.NaN(), Status: Missed}
+	slices := o.Slices
+	if slices == 0 {
+		slices = DefaultSlices
+	}
+	var cut bool
+	if s.Kind == Circle {
+		cut = m.circleParts(ws, s.Centre, s.Radius)
+	} else {
+		m.polylineParts(ws, s)
+	}
+	if cut {
+		best.Status = Inadmissible
+	}
+	for i := 0; i < len(ws.parts); i++ {
+		p := ws.parts[i]
+		depth, clear := m.depthOf(s, p)
+		if depth < o.MinDepth || depth <= 0 {
+			continue
+		}
+		r := Result{F: math.NaN(), Screen: math.NaN(), Status: Inadmissible, Depth: depth}
+		if clear {
+			if s.Kind == Circle {
+				m.sliceCircle(ws, p, s.Centre, s.Radius, slices)
+			} else {
+				m.slicePolyline(ws, p, s, slices)
+			}
+			m.solve(ws, s, o.Method, &r)
+			m.ends(&r, p)
+		}
+		best = lower(best, r)
+	}
+	return best
+}
+
+// depthOf returns the greatest depth of a part and whether it clears the firm base.
+func (m *Model) depthOf(s *Slip, p part) (depth float64, clear bool) {
+	if s.Kind == Circle {
+		return m.circleDepth(p, s.Centre, s.Radius), !m.firm || m.circleClearsBase(p, s.Centre, s.Radius)
+	}
+	return m.polylineDepth(p, s)
+}
+
+func (m *Model) ends(r *Result, p part) {
+	r.From = Point{p.from, m.cols[m.columnAt(p.from)].ground.at(p.from)}
+	r.To = Point{p.to, m.cols[m.columnAt(p.to)].ground.at(p.to)}
+}
+
+// lower returns the result that counts for the slip: the lowest F, and above all a part that could not be solved and whose screen lies
+// below that.
+func lower(a, b Result) Result {
+	rank := func(r Result) float64 {
+		switch r.Status {
+		case Converged:
+			return r.F
+		case NotConverged:
+			if math.IsNaN(r.Screen) {
+				return math.MaxFloat64 / 2
+			}
+			return r.Screen
+		case Inadmissible:
+			return math.MaxFloat64
+		case Missed:
+		}
+		return math.Inf(1)
+	}
+	if rank(b) < rank(a) {
+		return b
+	}
+	return a
+}
+
+// solve finds F of the slices in the workspace by a method, with variable surcharges only where they lower it.
+func (m *Model) solve(ws *Workspace, s *Slip, method Method, r *Result) {
+	ws.trial++
+	r.Slices = ws.n
+	ws.arc, ws.centre = s.Kind == Circle, s.Centre
+	if !ws.orient(r) {
+		r.Status = Missed
+		return
+	}
+	ws.method(method, r)
+	if len(m.varied) == 0 || r.Status != Converged {
+		return
+	}
+	if ws.addVariable(m.varied, r.F) {
+		without := *r
+		ws.method(method, r)
+		if r.Status == Converged && without.F < r.F {
+			r.F, r.Lambda = without.F, without.Lambda
+		}
+	}
+}
+
+func (ws *Workspace) method(method Method, r *Result) {
+	switch method {
+	case Ordinary:
+		r.F, r.Status = ws.ordinary()
+	case Bishop:
+		r.F, r.Status = ws.bishop()
+	case Spencer:
+		r.F, r.Lambda, r.Status = ws.spencer(r.Leftward)
+	default:
+		r.F, r.Status = math.NaN(), NotConverged
+	}
+	if r.Status == Converged && !(r.F > 0 && r.F < math.MaxFloat64) {
+		r.Status = NotConverged
+	}
+	if r.Status != Converged {
+		r.F = math.NaN()
+	}
+	if r.Status == NotConverged {
+		if f, st := ws.ordinary(); st == Converged && f > 0 {
+			r.Screen = f
+		}
+	}
+}
+
+// orient turns the signs of the slices to the direction in which the weight drives the slip, and reports whether it drives it at all.
+func (ws *Workspace) orient(r *Result) bool {
+	var d float64
+	ss := ws.slice[:ws.n]
+	for i := range ss {
+		d += ss[i].q * ss[i].sin
+	}
+	r.Leftward = d < 0
+	if r.Leftward {
+		for i := range ss {
+			ss[i].sin, ss[i].h = -ss[i].sin, -ss[i].h
+		}
+	}
+	return d != 0
+}
+
+// driving returns what the resistance is compared with, kN: for an arc the overturning moment of all loads about the centre over the mean
+// arm of the base, for a polyline the sum of the loads along the base.
+func (ws *Workspace) driving() float64 {
+	var d, moment, arm float64
+	ss := ws.slice[:ws.n]
+	for i := range ss {
+		s := &ss[i]
+		d += s.q * s.sin
+		if s.h == 0 && s.k == 0 {
+			continue
+		}
+		if ws.arc {
+			moment += s.h*(ws.centre.Y-s.ground) + s.k*(ws.centre.Y-s.ky)
+		} else {
+			d += (s.h + s.k) * s.cos
+		}
+	}
+	if moment != 0 {
+		for i := range ss {
+			arm += (ws.centre.Y - ss[i].y) / ss[i].cos
+		}
+		d += moment * float64(len(ss)) / arm
+	}
+	return d
+}
+
+// addVariable puts every variable surcharge on the slices where, by Bishop's influence of a small load at this F, it lowers F on the
+// whole. A load on a slice raises F where tan(alpha) < tan(phi)/F (Hutchinson 1977). It reports whether any was put on.
+func (ws *Workspace) addVariable(loads []Surcharge, f float64) bool {
+	added := false
+	ss := ws.slice[:ws.n]
+	for i := range loads {
+		bit := uint64(1) << i
+		var influence float64
+		for k := range ss {
+			if s := &ss[k]; s.variable&bit != 0 {
+				influence += s.b * (s.tan/(s.cos+s.sin*s.tan/f) - f*s.sin)
+			}
+		}
+		if influence*loads[i].Pressure >= 0 {
+			continue
+		}
+		added = true
+		for k := range ss {
+			if s := &ss[k]; s.variable&bit != 0 {
+				s.q += loads[i].Pressure * s.b
+				s.frees += loads[i].Pressure * s.b * s.tan
+			}
+		}
+	}
+	return added
+}

@@ -1,0 +1,59 @@
+package lem
+
+// Sampler names the parametrisation of trial circles. The two share no code but the engine, so that one can audit the other.
+type Sampler uint8
+
+// The samplers.
+const (
+	ByDaylight Sampler = iota // Daylight points at head and exit, and the angle of the arc.
+	ByCentre                  // Centre and radius.
+)
+
+// Direction limits the movement that a search looks at.
+type Direction uint8
+
+// The directions of movement.
+const (
+	EitherWay Direction = iota
+	LeftwardOnly
+	RightwardOnly
+)
+
+// Range is an interval of x, m. The zero value means everywhere.
+type Range struct{ From, To float64 }
+
+// SearchOptions says what a search looks at and with what effort. The zero value is the default search.
+type SearchOptions struct {
+	Slices    int       // Target slices; 0: DefaultSlices.
+	MinDepth  float64   // Depth of interest, m.
+	Sampler   Sampler   // Parametrisation of trial circles.
+	Effort    float64   // Multiple of the default number of trials; 0 means 1.
+	Seed      uint64    // Shifts the low-discrepancy sequence.
+	Direction Direction // Movement to look at.
+	Head      Range     // Where a slip may leave the ground at its head.
+	Toe       Range     // Where a slip may leave the ground at its toe.
+	Methods   []Method  // Governing methods; nil: Bishop and Spencer.
+	// Below: basins with F at or below this are all polished with every governing method; 0 polishes the lowest few only.
+	Below float64
+}
+
+// Minimum is one basin of the search: the lowest slip found in it.
+type Minimum struct {
+	Slip    Slip
+	Setting Setting // With what the slip was evaluated.
+	Result  Result
+}
+
+// Minima is the outcome of a search.
+type Minima struct {
+	Basins []Minimum // Every distinct basin, ascending in F.
+	// Unresolved holds trials that no governing method could solve and whose Ordinary screen is lower than the lowest F found,
+	// lowest screen first, at most MaxUnresolved of them.
+	Unresolved      []Minimum
+	Trials          int // Slip evaluations spent.
+	NotConverged    int // Trials that no governing method could solve.
+	InadmissibleCut int // Trials left out by the rules of admissibility.
+}
+
+// MaxUnresolved bounds the list of unresolved trials that a search keeps.
+const MaxUnresolved = 16

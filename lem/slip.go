@@ -1,0 +1,81 @@
+package lem
+
+// SlipKind tells how a slip surface is described.
+type SlipKind uint8
+
+// The kinds of slip surface.
+const (
+	Circle   SlipKind = iota // Centre and Radius; the lower arc.
+	Polyline                 // Nodes from left to right.
+)
+
+// Slip is a slip surface as geometry alone: it can be evaluated on any section. A circle stands for every part of its lower arc
+// that lies below the ground; each part is a slip of its own. A polyline is cut at the ground, and its end segments run
+// on to daylight.
+type Slip struct {
+	Kind   SlipKind
+	Centre Point   // Circle only.
+	Radius float64 // Circle only, m.
+	Nodes  []Point // Polyline only, X strictly increasing.
+}
+
+// Method is a published method of slices.
+type Method uint8
+
+// The methods.
+const (
+	Ordinary Method = iota // Fellenius (1936).
+	Bishop                 // Bishop (1955), simplified; circles only.
+	Spencer                // Spencer (1967).
+	numMethods
+)
+
+// String returns the method's name in lower case, as in result files.
+func (m Method) String() string {
+	if m < numMethods {
+		return [numMethods]string{"ordinary", "bishop", "spencer"}[m]
+	}
+	return "unknown"
+}
+
+// Setting says how a slip is evaluated.
+type Setting struct {
+	Method Method
+	Slices int // Target number of slices; a slip always has at least MinSlices. 0: DefaultSlices.
+	// MinDepth is the depth of interest, m: parts of the slip whose greatest vertical depth is less are left out.
+	MinDepth float64
+}
+
+// MinSlices is the least number of slices of any slip (common practice, no source).
+const MinSlices = 5
+
+// DefaultSlices is the default target number of slices; docs/theory.md has the convergence study behind it.
+const DefaultSlices = 30
+
+// Status says what an evaluation came to.
+type Status uint8
+
+// The statuses of an evaluation.
+const (
+	Missed       Status = iota // No part of the slip lies below the ground, is deep enough and moves downhill.
+	Converged                  // F is the factor of safety of the slip.
+	Inadmissible               // Every part breaks a rule of admissibility (m-alpha too small, arc not daylighting, exit steeper than passive).
+	NotConverged               // The equations have no answer that the method can reach; F is NaN.
+)
+
+// String returns the status in words.
+func (s Status) String() string {
+	return [...]string{"missed", "converged", "inadmissible", "not converged"}[s]
+}
+
+// Result is the outcome of evaluating one slip: that of its part with the lowest F.
+type Result struct {
+	F        float64 // Factor of safety; NaN unless Status is Converged.
+	Status   Status
+	Lambda   float64 // Spencer: ratio of vertical to horizontal interslice force.
+	From, To Point   // Ends of the part on the ground, left and right.
+	Depth    float64 // Greatest vertical depth of the part below the ground, m.
+	Leftward bool    // True if the part moves to the left.
+	Slices   int     // Number of slices used.
+	Screen   float64 // When NotConverged: FS of the Ordinary method on the same part, as a screen; else NaN.
+}

@@ -1,0 +1,34 @@
+package lem
+
+// Workspace is the memory of one evaluation: the slices of the part at hand. Make one per goroutine; the zero value is ready. It
+// grows to the largest slip seen and then allocates no more.
+type Workspace struct {
+	n         int // Slices in use.
+	parts     []part
+	slice     []slice
+	arc       bool // The slip is a circle about centre.
+	centre    Point
+	curvature float64 // 1/radius; 0 for a polyline.
+	trial     int     // Evaluations since the workspace was made.
+}
+
+// part is an interval of x where a slip lies below the ground.
+type part struct{ from, to float64 }
+
+// slice is one slice, left to right. Signs are those of a slip that moves to the right until orient turns them.
+type slice struct {
+	x, y     float64 // Middle of the base, m.
+	b        float64 // Width, m.
+	sin, cos float64 // Of the base's inclination, positive where it falls in the direction of movement.
+	tan      float64 // Tangent of the friction angle on the base.
+	cl       float64 // Cohesion times base length, kN.
+	ul       float64 // Pore pressure times base length, kN.
+	q        float64 // Vertical force: soil, surcharge, free water, kN.
+	soilW    float64 // Part of q that an earthquake acts on, kN.
+	h        float64 // Horizontal push of free water on the ground, positive in the direction of movement, kN.
+	ground   float64 // Level of the ground at x, m.
+	k        float64 // Horizontal earthquake force, kN.
+	ky       float64 // Level at which k acts, m.
+	variable uint64  // Variable surcharges over the slice.
+	frees    float64 // Shear resistance term of Bishop: c b + (q - u b) tan.
+}
