@@ -11,8 +11,8 @@ const (
 // bishop solves the simplified method (Bishop 1955): F = sum[(c b + (W - u b) tan phi)/m]/sum(driving), m = cos(alpha) + sin(alpha) tan phi/F.
 // Written as g(F) = sum[(c b + (W - u b) tan phi)/(F cos + sin tan phi)] - driving = 0, g falls and is convex right of its largest pole
 // as long as the numerators are positive, so Newton's method climbs to the root from the left.
-func (ws *Workspace) bishop() (float64, Status) {
-	d := ws.driving()
+func (ws *Workspace) bishop(leftward bool) (float64, Status) {
+	d := ws.driving(leftward)
 	if !(d > 0) {
 		return math.NaN(), NotConverged
 	}

@@ -36,7 +36,7 @@ func (m *Model) FS(ws *Workspace, s *Slip, o Setting) Result {
 			} else {
 				m.slicePolyline(ws, p, s, slices)
 			}
-			m.solve(ws, s, o.Method, &r)
+			m.solve(ws, o.Method, &r)
 			m.ends(&r, p)
 		}
 		best = lower(best, r)
@@ -82,10 +82,9 @@ func lower(a, b Result) Result {
 }
 
 // solve finds F of the slices in the workspace by a method, with variable surcharges only where they lower it.
-func (m *Model) solve(ws *Workspace, s *Slip, method Method, r *Result) {
+func (m *Model) solve(ws *Workspace, method Method, r *Result) {
 	ws.trial++
 	r.Slices = ws.n
-	ws.arc, ws.centre = s.Kind == Circle, s.Centre
 	if !ws.orient(r) {
 		r.Status = Missed
 		return
@@ -106,9 +105,9 @@ func (m *Model) solve(ws *Workspace, s *Slip, method Method, r *Result) {
 func (ws *Workspace) method(method Method, r *Result) {
 	switch method {
 	case Ordinary:
-		r.F, r.Status = ws.ordinary()
+		r.F, r.Status = ws.ordinary(r.Leftward)
 	case Bishop:
-		r.F, r.Status = ws.bishop()
+		r.F, r.Status = ws.bishop(r.Leftward)
 	case Spencer:
 		r.F, r.Lambda, r.Status = ws.spencer(r.Leftward)
 	default:
@@ -121,7 +120,7 @@ func (ws *Workspace) method(method Method, r *Result) {
 		r.F = math.NaN()
 	}
 	if r.Status == NotConverged {
-		if f, st := ws.ordinary(); st == Converged && f > 0 {
+		if f, st := ws.ordinary(r.Leftward); st == Converged && f > 0 {
 			r.Screen = f
 		}
 	}
@@ -132,7 +131,11 @@ func (ws *Workspace) orient(r *Result) bool {
 	var d float64
 	ss := ws.slice[:ws.n]
 	for i := range ss {
-		d += ss[i].q * ss[i].sin
+		if ws.arc {
+			d += ss[i].q * (ws.centre.X - ss[i].x)
+		} else {
+			d += ss[i].q * ss[i].sin
+		}
 	}
 	r.Leftward = d < 0
 	if r.Leftward {
@@ -143,30 +146,30 @@ func (ws *Workspace) orient(r *Result) bool {
 	return d != 0
 }
 
-// driving returns what the resistance is compared with, kN: for an arc the overturning moment of all loads about the centre over the mean
-// arm of the base, for a polyline the sum of the loads along the base.
-func (ws *Workspace) driving() float64 {
-	var d, moment, arm float64
+// driving returns what the resistance is compared with, kN: for an arc the overturning moment of all loads about the centre over the
+// radius, for a polyline the sum of the loads along the base.
+func (ws *Workspace) driving(leftward bool) float64 {
+	var d float64
 	ss := ws.slice[:ws.n]
+	if !ws.arc {
+		for i := range ss {
+			d += ss[i].q*ss[i].sin + (ss[i].h+ss[i].k)*ss[i].cos
+		}
+		return d
+	}
 	for i := range ss {
 		s := &ss[i]
-		d += s.q * s.sin
-		if s.h == 0 && s.k == 0 {
-			continue
-		}
-		if ws.arc {
-			moment += s.h*(ws.centre.Y-s.ground) + s.k*(ws.centre.Y-s.ky)
-		} else {
-			d += (s.h + s.k) * s.cos
+		d += s.q * (ws.centre.X - s.x)
+	}
+	if leftward {
+		d = -d
+	}
+	for i := range ss {
+		if s := &ss[i]; s.h != 0 || s.k != 0 {
+			d += s.h*(ws.centre.Y-s.ground) + s.k*(ws.centre.Y-s.ky)
 		}
 	}
-	if moment != 0 {
-		for i := range ss {
-			arm += (ws.centre.Y - ss[i].y) / ss[i].cos
-		}
-		d += moment * float64(len(ss)) / arm
-	}
-	return d
+	return d / ws.radius
 }
 
 // addVariable puts every variable surcharge on the slices where, by Bishop's influence of a small load at this F, it lowers F on the

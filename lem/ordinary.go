@@ -5,8 +5,8 @@ import "math"
 // ordinary solves the Ordinary method (Fellenius 1936): F = sum(c l + N' tan phi)/sum(driving), with N' = W cos(alpha) - K sin(alpha) - u l.
 // Where free water loads the slip, N' = (W - u b) cos(alpha) - K sin(alpha), since W cos(alpha) - u l breaks down there (the form that
 // EM 1110-2-1902, 2003, Appendix C recommends; recalled from memory). Negative N' counts as it stands, on the safe side.
-func (ws *Workspace) ordinary() (float64, Status) {
-	d := ws.driving()
+func (ws *Workspace) ordinary(leftward bool) (float64, Status) {
+	d := ws.driving(leftward)
 	if !(d > 0) {
 		return math.NaN(), NotConverged
 	}

@@ -74,7 +74,7 @@ func (m *Model) polylineDepth(p part, s *Slip) (depth float64, clear bool) {
 
 // slicePolyline cuts a part of a polyline into slices; nodes and column edges are always slice edges.
 func (m *Model) slicePolyline(ws *Workspace, p part, s *Slip, target int) {
-	ws.n, ws.curvature = 0, 0
+	ws.n, ws.arc = 0, false
 	width := (p.to - p.from) / float64(max(target, MinSlices))
 	m.walkPolyline(s.Nodes, p.from, p.to, func(col *column, x0, y0, x1, y1 float64) {
 		n := max(1, int(math.Ceil((x1-x0)/width-crossingMargin)))

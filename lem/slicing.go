@@ -5,34 +5,63 @@ import "math"
 // crossingMargin is the share of a slice's width within which a boundary is taken to pass through the slice's end.
 const crossingMargin = 1e-6
 
-// sliceCircle cuts a part of a circle into slices whose bases are chords: never across a column's edge, and cut again where the base
-// passes from one layer into the next, so that the answer converges with the square of the slice width.
+// sliceCircle cuts a part of a circle into slices of equal angle: never across a column's edge, and cut again where the base passes from
+// one layer into the next, so that the answer converges with the square of the slice width. Inside a column the arc is walked by rotation,
+// half a slice at a time.
 func (m *Model) sliceCircle(ws *Workspace, p part, c Point, r float64, target int) {
-	ws.n, ws.curvature = 0, 1/r
-	width := (p.to - p.from) / float64(max(target, MinSlices))
-	r2 := r * r
-	x, y := p.from, c.Y-math.Sqrt(max(0, r2-(p.from-c.X)*(p.from-c.X)))
+	ws.n, ws.arc, ws.centre, ws.radius = 0, true, c, r
+	angle := func(x float64) float64 { return math.Asin(min(max((x-c.X)/r, -1), 1)) }
+	theta := angle(p.from)
+	width := (angle(p.to) - theta) / float64(max(target, MinSlices))
 	for i := m.columnAt(p.from); i < len(m.cols) && m.cols[i].x0 < p.to; i++ {
 		col := &m.cols[i]
-		b := min(col.x1, p.to)
-		if b <= x {
+		end := min(col.x1, p.to)
+		if end <= p.from {
 			continue
 		}
-		a := x
-		n := max(1, int(math.Ceil((b-a)/width-crossingMargin)))
-		step := (b - a) / float64(n)
+		next := angle(end)
+		n := max(1, int(math.Ceil((next-theta)/width-crossingMargin)))
 		k := col.first // Layer at the left end of the next slice.
-		for s := 1; s <= n; s++ {
-			xr := a + float64(s)*step
-			if s == n {
-				xr = b
-			}
-			dx := xr - c.X
-			yr := c.Y - math.Sqrt(max(0, r2-dx*dx))
-			k = m.addBase(ws, col, k, x, y, xr, yr)
-			x, y = xr, yr
+		a := arcBase{delta: (next - theta) / float64(n)}
+		a.sinHalf, a.cosHalf = math.Sincos(a.delta / 2)
+		// Area between arc and chord, R^2/2 (delta - sin delta), over the chord: how far the arc lies below it on the average.
+		a.bulge = r * (a.delta - 2*a.sinHalf*a.cosHalf) / (4 * a.sinHalf)
+		sin, cos := math.Sincos(theta)
+		for range n {
+			a.sin, a.cos = sin*a.cosHalf+cos*a.sinHalf, cos*a.cosHalf-sin*a.sinHalf
+			nextSin, nextCos := a.sin*a.cosHalf+a.cos*a.sinHalf, a.cos*a.cosHalf-a.sin*a.sinHalf
+			k = m.addArc(ws, col, k, &a, sin, cos, nextSin, nextCos)
+			sin, cos = nextSin, nextCos
+		}
+		theta = next
+	}
+}
+
+// arcBase is the base of one slice of a circle; angles are from the vertical through the centre, positive to the right.
+type arcBase struct {
+	delta            float64 // Angle of the slice, rad.
+	sinHalf, cosHalf float64 // Of delta/2.
+	sin, cos         float64 // Of the angle at the middle.
+	bulge            float64 // Mean distance of the arc from its chord, m.
+}
+
+// addArc adds the slice over an arc inside one column; the arc's ends are given by the sines and cosines of their angles. It returns the
+// layer at the right end.
+func (m *Model) addArc(ws *Workspace, col *column, k int32, a *arcBase, sin0, cos0, sin1, cos1 float64) int32 {
+	c, r := ws.centre, ws.radius
+	if col.last-col.first > 1 {
+		x0, y0, x1, y1 := c.X+r*sin0, c.Y-r*cos0, c.X+r*sin1, c.Y-r*cos1
+		if k = m.layerAt(col, k, x0, y0); k != m.layerAt(col, k, x1, y1) {
+			return m.addBase(ws, col, k, x0, y0, x1, y1)
 		}
 	}
+	s := ws.add()
+	s.sin, s.cos = -a.sin, a.cos
+	s.b = 2 * r * a.sinHalf * a.cos
+	s.x = c.X + r*a.cosHalf*a.sin
+	s.y = c.Y - r*a.cosHalf*a.cos - a.bulge/a.cos
+	m.fill(s, col, &m.layers[k], r*a.delta)
+	return k
 }
 
 // layerAt returns the layer of the column at a point, starting from layer k.
@@ -74,22 +103,24 @@ func (m *Model) addBase(ws *Workspace, col *column, k int32, x0, y0, x1, y1 floa
 	return kr
 }
 
-// addSlice adds one slice whose base lies in layer k of the column.
+// addSlice adds one slice over a chord whose base lies in layer k of the column.
 func (m *Model) addSlice(ws *Workspace, col *column, k int32, x0, y0, x1, y1 float64) {
-	if ws.n == len(ws.slice) {
-		ws.slice = append(ws.slice, make([]slice, 64)...)
-	}
-	s := &ws.slice[ws.n]
-	ws.n++
-	l := &m.layers[k]
+	s := ws.add()
 	b, dy := x1-x0, y1-y0
 	length := math.Sqrt(b*b + dy*dy)
 	s.x, s.y, s.b = (x0+x1)/2, (y0+y1)/2, b
 	s.cos, s.sin = b/length, -dy/length
-	// An arc bulges below its chord: its mean level and its length, to the second order of the slice width.
-	bulge := length * length * ws.curvature
-	s.y -= bulge * length / (12 * b)
-	length += bulge * length * ws.curvature / 24
+	if ws.arc { // The arc bulges below its chord: its mean level and its length, to the second order.
+		bulge := length * length / ws.radius
+		s.y -= bulge * length / (12 * b)
+		length += bulge * length / (24 * ws.radius)
+	}
+	m.fill(s, col, &m.layers[k], length)
+}
+
+// fill works out the forces on a slice whose geometry is set and whose base, of the given length, lies in layer l of the column.
+func (m *Model) fill(s *slice, col *column, l *layer, length float64) {
+	b := s.b
 	weight := l.sigma + l.slope*s.x - l.gamma*s.y
 	s.soilW = (weight + col.pressure) * b
 	s.q, s.h, s.k = s.soilW, 0, 0
@@ -120,10 +151,10 @@ func (m *Model) addSlice(ws *Workspace, col *column, k int32, x0, y0, x1, y1 flo
 	}
 	s.tan = l.tan
 	s.cl, s.ul = c*length, u*length
-	s.frees = c*b + (s.q-u*b)*l.tan
+	s.frees = s.cl*s.cos + (s.q-s.ul*s.cos)*l.tan
 	if m.kh != 0 {
 		s.k = m.kh * s.soilW
-		s.ky = m.weightLevel(col, k, s, weight)
+		s.ky = m.weightLevel(col, l, s, weight)
 	}
 }
 
@@ -147,17 +178,22 @@ func (col *column) head(x, y float64) float64 {
 	return w
 }
 
-// weightLevel returns the level at which the earthquake force on a slice acts: the centroid of soil and permanent surcharge.
-func (m *Model) weightLevel(col *column, k int32, s *slice, weight float64) float64 {
+// weightLevel returns the level at which the earthquake force on a slice acts: the centroid of soil and permanent surcharge. base is the
+// layer that the base lies in.
+func (m *Model) weightLevel(col *column, base *layer, s *slice, weight float64) float64 {
 	top := s.ground
 	moment := col.pressure * top
-	for i := col.first; i <= k; i++ {
+	for i := col.first; i < col.last; i++ {
+		l := &m.layers[i]
 		bottom := s.y
-		if i < k {
-			bottom = m.layers[i].bottom.at(s.x)
+		if l != base {
+			bottom = l.bottom.at(s.x)
 		}
-		moment += m.layers[i].gamma * (top - bottom) * (top + bottom) / 2
+		moment += l.gamma * (top - bottom) * (top + bottom) / 2
 		top = bottom
+		if l == base {
+			break
+		}
 	}
 	if total := weight + col.pressure; total > 0 {
 		return moment / total

@@ -24,9 +24,9 @@ const (
 //
 // E and M vanish at the toe. Newton's method with the exact derivatives; if it fails, a search in lambda.
 func (ws *Workspace) spencer(leftward bool) (f, lambda float64, st Status) {
-	f, st = ws.bishop()
+	f, st = ws.bishop(leftward)
 	if st != Converged && !(f > 0) {
-		f, st = ws.ordinary()
+		f, st = ws.ordinary(leftward)
 		if st != Converged || !(f > 0) {
 			return math.NaN(), math.NaN(), NotConverged
 		}

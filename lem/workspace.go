@@ -3,13 +3,13 @@ package lem
 // Workspace is the memory of one evaluation: the slices of the part at hand. Make one per goroutine; the zero value is ready. It
 // grows to the largest slip seen and then allocates no more.
 type Workspace struct {
-	n         int // Slices in use.
-	parts     []part
-	slice     []slice
-	arc       bool // The slip is a circle about centre.
-	centre    Point
-	curvature float64 // 1/radius; 0 for a polyline.
-	trial     int     // Evaluations since the workspace was made.
+	n      int // Slices in use.
+	parts  []part
+	slice  []slice
+	arc    bool    // The slip is a circle:
+	centre Point   // its centre
+	radius float64 // and radius.
+	trial  int     // Evaluations since the workspace was made.
 }
 
 // part is an interval of x where a slip lies below the ground.
@@ -31,4 +31,13 @@ type slice struct {
 	ky       float64 // Level at which k acts, m.
 	variable uint64  // Variable surcharges over the slice.
 	frees    float64 // Shear resistance term of Bishop: c b + (q - u b) tan.
+}
+
+// add returns the next slice to fill in.
+func (ws *Workspace) add() *slice {
+	if ws.n == len(ws.slice) {
+		ws.slice = append(ws.slice, make([]slice, 64)...)
+	}
+	ws.n++
+	return &ws.slice[ws.n-1]
 }
