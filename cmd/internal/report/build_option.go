@@ -1,0 +1,169 @@
+package report
+
+import (
+	"standfast/lem"
+	"standfast/remedies"
+)
+
+// governing are the methods whose lowest value is the FS of a circular slip, as lem.SearchOptions has it by default.
+var governing = []lem.Method{lem.Bishop, lem.Spencer}
+
+// meetsTarget is the status of an option that meets the target.
+var meetsTarget = remedies.MeetsTarget.String()
+
+// option lays out one option.
+func (b *builder) option(o *remedies.Option) Option {
+	out := Option{
+		Name: o.Name, Title: o.Title, Remedies: list(o.Remedies), Status: o.Status.String(), Reason: o.Reason, BindsOn: o.Binding,
+		WhatIf: o.WhatIf, Trial: o.Trial, Broken: []Limit{}, Order: make([]string, 0, len(o.Parameters)),
+		Parameters: parametersOf(o.Parameters), Situations: make([]Answer, 0, len(o.Situations)), Stages: make([]Stage, 0, len(o.Stages)),
+		StepLess: make([]StepLess, 0, len(o.StepLess)), NotChecked: []string{}, Notes: []string{},
+		Tradeoff: make([]TradePoint, 0, len(o.Tradeoff)),
+	}
+	for _, v := range o.Parameters {
+		out.Order = append(out.Order, v.Name)
+	}
+	for _, s := range o.StepLess {
+		out.StepLess = append(out.StepLess, StepLess{
+			Parameter: s.Parameter, Value: s.Value, Check: s.Check, FS: Number(s.FS), RequiredFS: known(s.Required), Limit: s.Limit,
+		})
+	}
+	for _, t := range o.Tradeoff {
+		out.Tradeoff = append(out.Tradeoff, TradePoint{
+			RequiredFS: Number(t.RequiredFS), Shift: t.Shift, ReachedFS: Number(t.Reached), Earthworks: Number(t.Earthworks),
+			Parameters: parametersOf(t.Parameters),
+		})
+	}
+	out.Certificate = certificateOf(o)
+	b.addProposal(&out, o)
+	b.addAnswers(&out, o)
+	return out
+}
+
+// known returns v, or a number that is not known for 0: no FS required is 0.
+func known(v float64) Number {
+	if v == 0 {
+		return nan
+	}
+	return Number(v)
+}
+
+func parametersOf(values []remedies.Value) map[string]Parameter {
+	out := make(map[string]Parameter, len(values))
+	for _, v := range values {
+		out[v.Name] = Parameter{Value: Number(v.Value), Unit: v.Unit}
+	}
+	return out
+}
+
+// addProposal adds the section after works with its quantities; the existing slope needs no proposal.
+func (b *builder) addProposal(out *Option, o *remedies.Option) {
+	section := &b.job.Section
+	if p := o.Proposal; p != nil {
+		section = &p.Section
+		for _, v := range p.Violations {
+			out.Broken = append(out.Broken, Limit{Name: v.Limit, Detail: v.Detail, By: v.By})
+		}
+		out.NotChecked, out.Notes = list(p.NotChecked), list(p.Notes)
+		out.Quantities = b.quantities(&p.Quantities)
+	} else {
+		out.Quantities = b.quantities(&remedies.Quantities{})
+		if o.Status != remedies.Existing {
+			section = nil
+		}
+	}
+	out.Totals = totalsOf(&out.Quantities, b.job.Length)
+	if section != nil {
+		out.Section = b.section(section)
+	}
+}
+
+func (b *builder) quantities(q *remedies.Quantities) Quantities {
+	return Quantities{
+		Cut: q.TotalCut(), Fill: q.TotalFill(), Earthworks: q.Earthworks(), Import: q.TotalFill(), Dispose: q.TotalCut(),
+		Drain: q.Drain, Strip: q.Strip, TrenchDig: q.TrenchDig, Stone: q.Stone, CutBySoil: b.bySoil(q.Cut), FillBySoil: b.bySoil(q.Fill),
+	}
+}
+
+// bySoil names the volumes that are not 0.
+func (b *builder) bySoil(volumes []float64) map[string]float64 {
+	out := map[string]float64{}
+	for i, v := range volumes {
+		if v != 0 {
+			out[b.soils[i]] = v
+		}
+	}
+	return out
+}
+
+func totalsOf(q *Quantities, length float64) Totals {
+	return Totals{
+		Cut: q.Cut * length, Fill: q.Fill * length, Earthworks: q.Earthworks * length, Import: q.Import * length,
+		Dispose: q.Dispose * length, Drain: q.Drain * length, Strip: q.Strip * length,
+	}
+}
+
+// addAnswers adds the answers to situations and stages, and the water of the situations to the option's section.
+func (b *builder) addAnswers(out *Option, o *remedies.Option) {
+	for i := range o.Situations {
+		s := &o.Situations[i]
+		c := &s.Check
+		a := Answer{Name: checkName(c), RequiredFS: c.Required, Found: found(s, groundOf(c, &b.job.Section))}
+		if c.Note != "" {
+			a.VariantOf, a.Variant = c.Name, c.Note
+		}
+		out.Situations = append(out.Situations, a)
+		if out.Section != nil {
+			out.Section.Water[a.Name] = water(&c.Situation.Water, b.job.Section.Soils)
+		}
+	}
+	for i := range o.Stages {
+		s := &o.Stages[i]
+		c := &s.Check
+		st := Stage{
+			Name: checkName(c), Order: i + 1, RequiredFS: c.Required, Strength: strengthOf(b.soils, c.Situation.Undrained),
+			Kh: c.Situation.Kh, Found: found(s, groundOf(c, &b.job.Section)),
+		}
+		if c.Section != nil {
+			st.Section = b.section(c.Section)
+			st.Section.Water[st.Name] = water(&c.Situation.Water, c.Section.Soils)
+		}
+		out.Stages = append(out.Stages, st)
+	}
+}
+
+func groundOf(c *remedies.Check, otherwise *lem.Section) lem.Profile {
+	if c.Section != nil {
+		return c.Section.Ground
+	}
+	return otherwise.Ground
+}
+
+func certificateOf(o *remedies.Option) *Certificate {
+	c := o.Certificate
+	if c == nil {
+		return nil
+	}
+	out := &Certificate{
+		Axes: make([]Axis, 0, len(c.Axes)), Coarsened: c.Coarsened, Cheaper: c.CheaperDesigns, Witnessed: c.Witnessed,
+		Forbidden: c.Forbidden, Unresolved: c.UnresolvedDesigns, ContinuousEstimate: Number(c.ContinuousEstimate),
+		Allowance: Number(c.Allowance), Searches: c.Searches, DesignsSearched: c.DesignsSearched, SlipEvaluations: c.SlipEvaluations,
+		PoolSize: len(c.Pool), Audit: Audit{Methods: []string{}, Searches: c.AuditSearches, Lowest: make([]AuditLow, 0, len(c.AuditLowest))},
+	}
+	for _, a := range c.Axes {
+		if a.Name != "" { // An absent optional parameter has no name.
+			out.Axes = append(out.Axes, Axis{Name: a.Name, Min: a.Min, Max: a.Max, Step: a.Step})
+		}
+	}
+	for _, l := range c.AuditLowest {
+		low := AuditLow{Check: l.Check, FS: Number(l.FS), RequiredFS: Number(l.Required)}
+		if low.FS.Known() {
+			low.Method = l.Method.String()
+		}
+		out.Audit.Lowest = append(out.Audit.Lowest, low)
+	}
+	for _, m := range governing {
+		out.Audit.Methods = append(out.Audit.Methods, m.String())
+	}
+	return out
+}

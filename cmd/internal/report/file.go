@@ -1,0 +1,256 @@
+package report
+
+// Format names the layout of result.json. It changes only when a program that reads the file would have to change.
+const Format = "standfast-result/1"
+
+// File is result.json: the whole answer to a case, complete enough to analyse every option and stage again from it alone.
+type File struct {
+	Format     string          `json:"format" jsonschema:"enum=standfast-result/1"` // Name of this layout, "standfast-result/1".
+	Case       Case            `json:"case"`                                        // What was asked.
+	Program    Program         `json:"program"`                                     // What answered.
+	Settings   Settings        `json:"settings"`                                    // Settings in force, after defaults and command-line flags.
+	Soils      map[string]Soil `json:"soils"`                                       // Every soil of the case by name.
+	Situations []Situation     `json:"situations"`                                  // Design situations, with the variants that single options add.
+	Existing   Option          `json:"existing"`                                    // The slope as it is.
+	Options    []Option        `json:"options"`                                     // In ascending earthworks; what-ifs behind them, those that fail last.
+	// Name of the option with the least earthworks of those that meet the target, "existing" if nothing is needed, null if nothing
+	// meets it.
+	LeastEarthworks *string  `json:"least_earthworks" jsonschema:"nullable"`
+	Cautions        []string `json:"cautions"` // What the reader must bear in mind.
+	Files           []string `json:"files"`    // Names of the files written to the same folder, this one included.
+}
+
+// Case says which case was read.
+type Case struct {
+	Title  string   `json:"title"`    // Title of the case.
+	File   string   `json:"file"`     // Name of the case file, without its folder.
+	SHA256 string   `json:"sha256"`   // SHA-256 of the case file's bytes, in hexadecimal.
+	Length float64  `json:"length_m"` // Run of the works along the slope, m.
+	Crest  Point    `json:"crest"`    // Crest of the slope before works.
+	Toe    Point    `json:"toe"`      // Toe of the slope before works.
+	Notes  []string `json:"notes"`    // What was deduced or assumed when the case was read.
+}
+
+// Program names the program that wrote the file.
+type Program struct {
+	Version string `json:"version"` // Version of the program.
+}
+
+// Settings are the settings in force.
+type Settings struct {
+	Seed            uint64       `json:"seed"`                                                    // Of the searches.
+	DepthOfInterest float64      `json:"depth_of_interest_m"`                                     // Slips nowhere deeper below ground than this are left out, m.
+	Allowance       float64      `json:"search_allowance"`                                        // FS by which an answer exceeds the requirement, for the search being finite.
+	Slices          int          `json:"slices"`                                                  // Target number of slices of a slip in a search.
+	GammaW          float64      `json:"gamma_w_kN_m3"`                                           // Unit weight of water, kN/m3.
+	Direction       string       `json:"direction" jsonschema:"enum=either,enum=left,enum=right"` // Movement that searches look at: "either", "left" or "right".
+	SearchRanges    SearchRanges `json:"search_ranges"`                                           // Where a slip may leave the ground.
+	Overrides       []string     `json:"overrides"`                                               // Command-line flags that changed what the case file asks.
+}
+
+// SearchRanges limit where a slip may leave the ground.
+type SearchRanges struct {
+	Head *[2]float64 `json:"head" jsonschema:"nullable"` // At its head: from x to x, m; null: everywhere.
+	Exit *[2]float64 `json:"exit" jsonschema:"nullable"` // At its toe: from x to x, m; null: everywhere.
+}
+
+// Soil is a material.
+type Soil struct {
+	UnitWeight          float64    `json:"unit_weight_kN_m3"`               // Above the water line, kN/m3.
+	SaturatedUnitWeight float64    `json:"saturated_unit_weight_kN_m3"`     // Below the water line, kN/m3.
+	Drained             Drained    `json:"drained"`                         // Effective strength.
+	Undrained           *Undrained `json:"undrained" jsonschema:"nullable"` // Undrained strength; null: none given.
+	// Pore pressure as a ratio to the weight of ground and fill above (no surcharge), used instead of any water line; null: none given.
+	Ru           *float64 `json:"ru" jsonschema:"nullable"`
+	FreeDraining bool     `json:"free_draining"` // Pore pressure only below the outfall or below free water; see the water's by_soil.
+	SlowDraining bool     `json:"slow_draining"` // Fill on this soil is checked at the end of construction.
+}
+
+// Drained is an effective strength c' + sigma' tan(phi').
+type Drained struct {
+	Cohesion float64 `json:"cohesion_kPa"`       // Effective cohesion c', kPa.
+	Friction float64 `json:"friction_angle_deg"` // Effective angle of friction phi', degrees.
+}
+
+// Undrained is a strength cu that is fixed from the ground before works: cu = strength + gradient x max(0, datum - y), or from points.
+type Undrained struct {
+	Strength float64 `json:"strength_kPa"`       // cu at and above the datum, kPa.
+	Gradient float64 `json:"gradient_kPa_per_m"` // Increase of cu per metre below the datum, kPa/m.
+	DatumY   *Number `json:"datum_y"`            // Level of the datum, m; null if it is not level or there is none.
+	Datum    []Point `json:"datum,omitempty"`    // Line that depth is measured from, if it is not level.
+	// Points [x, y, cu] in m and kPa; when present nothing else here is used. Points of one x make a vertical: cu is linear in level on
+	// it and held beyond its ends; between verticals it is linear in x and held beyond the outermost.
+	Points [][3]float64 `json:"points,omitempty"`
+}
+
+// Situation is a state of the ground with the FS required in it.
+type Situation struct {
+	Name          string   `json:"name"`                             // Name, as in the situations and the water of an option.
+	RequiredFS    float64  `json:"required_fs"`                      // FS required.
+	Strength      Strength `json:"strength"`                         // "drained", "undrained", or one of these words for every soil.
+	Kh            float64  `json:"kh"`                               // Horizontal pseudo-static coefficient, outward.
+	Kv            float64  `json:"kv"`                               // Vertical pseudo-static coefficient; always 0.
+	DrainsWorking *Number  `json:"drains_working"`                   // Share of the drains' effect that counts, 0 to 1; null in a variant.
+	AppliesTo     []string `json:"applies_to" jsonschema:"nullable"` // Names of the options that it is checked for; null: all.
+	VariantOf     string   `json:"variant_of,omitempty"`             // Of a variant: the design situation that it belongs to.
+	Variant       string   `json:"variant,omitempty"`                // Of a variant: what is different.
+}
+
+// Option is a remedy, the user's own trial works, or the slope as it is, with its answer.
+type Option struct {
+	Name     string   `json:"name"`                                                                                           // Name, unique in the file.
+	Title    string   `json:"title"`                                                                                          // Name for people.
+	Remedies []string `json:"remedies"`                                                                                       // Remedies applied, in order.
+	Status   string   `json:"status" jsonschema:"enum=meets target,enum=infeasible,enum=unresolved,enum=existing,enum=fails"` // "meets target", "infeasible", "unresolved", "existing", or "fails" for trial works.
+	Reason   string   `json:"reason"`                                                                                         // Why the status is what it is.
+	BindsOn  string   `json:"binds_on"`                                                                                       // The limit, situation or stage that binds; empty if none does.
+	WhatIf   bool     `json:"what_if"`                                                                                        // Shows what could be; never the least-earthworks answer.
+	Trial    bool     `json:"trial"`                                                                                          // The user's own works, only checked.
+	Broken   []Limit  `json:"limits_broken"`                                                                                  // Limits of the site that the works shown break.
+
+	Parameters map[string]Parameter `json:"parameters"`      // Dimensions found, by name.
+	Order      []string             `json:"parameter_order"` // Names of the parameters in the order of the remedy.
+	Quantities Quantities           `json:"quantities"`      // Per metre run of the works.
+	Totals     Totals               `json:"totals"`          // For the whole length of the works.
+
+	Situations  []Answer     `json:"situations"`                        // Answers to the design situations; a variant follows its situation.
+	Stages      []Stage      `json:"stages"`                            // Answers to the construction stages.
+	StepLess    []StepLess   `json:"step_less"`                         // Why one step less of each parameter fails.
+	NotChecked  []string     `json:"not_checked"`                       // Checks that could not be made, with the reason.
+	Notes       []string     `json:"notes"`                             // What the works changed besides, such as a water line cut down to the new ground.
+	Certificate *Certificate `json:"certificate" jsonschema:"nullable"` // What the answer rests on; null if nothing was sized.
+	Section     *Section     `json:"section" jsonschema:"nullable"`     // The section after works; null if there is none.
+	Tradeoff    []TradePoint `json:"tradeoff"`                          // Least earthworks against the FS asked for.
+}
+
+// Limit is a limit of the site that a design breaks.
+type Limit struct {
+	Name   string  `json:"name"`   // Name of the limit.
+	Detail string  `json:"detail"` // What breaks it.
+	By     float64 `json:"by_m"`   // How far beyond, m.
+}
+
+// Parameter is a dimension of the works.
+type Parameter struct {
+	Value Number `json:"value"` // In its unit; null if the works have none.
+	Unit  string `json:"unit"`  // "m", "1" for a ratio, "1V:nH" for a batter n.
+}
+
+// Quantities are amounts per metre run: cut is bank volume, fill compacted volume, never netted.
+type Quantities struct {
+	Cut        float64            `json:"cut_m3_per_m"`          // Bank cut with the dig of trenches, m3/m.
+	Fill       float64            `json:"fill_m3_per_m"`         // Compacted fill with the stone of trenches, m3/m.
+	Earthworks float64            `json:"earthworks_m3_per_m"`   // Cut plus fill, m3/m: what a sizing makes least.
+	Import     float64            `json:"import_m3_per_m"`       // Material brought in, m3/m compacted: all fill, since no reuse is assumed.
+	Dispose    float64            `json:"dispose_m3_per_m"`      // Material taken away, m3/m bank: all cut, since no reuse is assumed.
+	Drain      float64            `json:"drain_m_per_m"`         // Length of drain, m/m.
+	Strip      float64            `json:"strip_m2_per_m"`        // Existing ground stripped, m2/m; not in the earthworks.
+	TrenchDig  float64            `json:"trench_dig_m3_per_m"`   // Dig of trenches, in the cut, m3/m.
+	Stone      float64            `json:"stone_m3_per_m"`        // Stone in trenches, in the fill, m3/m.
+	CutBySoil  map[string]float64 `json:"cut_by_soil_m3_per_m"`  // Bank cut by soil without trenches, m3/m.
+	FillBySoil map[string]float64 `json:"fill_by_soil_m3_per_m"` // Compacted fill by soil without trenches, m3/m.
+}
+
+// Totals are the quantities over the whole length of the works.
+type Totals struct {
+	Cut        float64 `json:"cut_m3"`        // Bank cut, m3.
+	Fill       float64 `json:"fill_m3"`       // Compacted fill, m3.
+	Earthworks float64 `json:"earthworks_m3"` // Cut plus fill, m3.
+	Import     float64 `json:"import_m3"`     // Material brought in, m3 compacted.
+	Dispose    float64 `json:"dispose_m3"`    // Material taken away, m3 bank.
+	Drain      float64 `json:"drain_m"`       // Length of drain, m.
+	Strip      float64 `json:"strip_m2"`      // Existing ground stripped, m2.
+	Cost       *Number `json:"cost"`          // Cost; null without rates.
+	Carbon     *Number `json:"carbon_t"`      // Carbon, t; null without factors.
+}
+
+// Answer is the lowest converged, admissible FS found in a design situation.
+type Answer struct {
+	Name       string  `json:"name"`                 // Name of the situation.
+	VariantOf  string  `json:"variant_of,omitempty"` // Of a variant: the design situation that it belongs to.
+	Variant    string  `json:"variant,omitempty"`    // Of a variant: what is different.
+	RequiredFS float64 `json:"required_fs"`          // FS required.
+	Found
+}
+
+// Found is what the search of one check found.
+type Found struct {
+	FS         Number            `json:"fs"`                         // Governing FS, unrounded; null if nothing converged.
+	Method     string            `json:"method"`                     // Method that gave it; empty if none did.
+	FSByMethod map[string]Number `json:"fs_by_method"`               // FS by every method on the governing slip; one that did not converge is absent.
+	Slip       *Slip             `json:"slip" jsonschema:"nullable"` // Governing slip; null if none.
+	Resolved   bool              `json:"resolved"`                   // False: a trial that no governing method could solve may lie below the required FS.
+	Depth      Number            `json:"slip_depth_m"`               // Greatest vertical depth of the governing slip below ground, m.
+}
+
+// Stage is the answer to a construction stage, with the section it was checked on.
+type Stage struct {
+	Name       string   `json:"name"`        // Name of the stage, as in the water of its section.
+	Order      int      `json:"order"`       // Place in the order of construction, from 1.
+	RequiredFS float64  `json:"required_fs"` // FS required.
+	Strength   Strength `json:"strength"`    // "drained", "undrained", or one of these words for every soil.
+	Kh         float64  `json:"kh"`          // Horizontal pseudo-static coefficient, outward.
+	Found
+	Section *Section `json:"section" jsonschema:"nullable"` // Section of the stage; null if the works have none.
+}
+
+// StepLess tells why the design with one parameter a step cheaper is not the answer.
+type StepLess struct {
+	Parameter  string  `json:"parameter"`   // Name of the parameter.
+	Value      float64 `json:"value"`       // A step cheaper.
+	Check      string  `json:"check"`       // Situation or stage that fails; empty if a limit forbids the design.
+	FS         Number  `json:"fs"`          // FS of the slip that rejects it; null if a limit forbids the design.
+	RequiredFS Number  `json:"required_fs"` // FS required there; null if a limit forbids the design.
+	Limit      string  `json:"limit"`       // Limit that forbids the design; empty if it fails a check.
+}
+
+// Certificate says what the answer rests on: least on this lattice, for this remedy and these methods; no slip below target found in
+// the searches counted. It does not say that none exists.
+type Certificate struct {
+	Axes               []Axis `json:"axes"`                         // The lattice of sizes.
+	Coarsened          bool   `json:"coarsened"`                    // True if the lattice asked for was too large and its steps were doubled.
+	Cheaper            int    `json:"cheaper_designs"`              // Designs within the limits cheaper than the answer; all of them if infeasible.
+	Witnessed          int    `json:"witnessed"`                    // Of these, designs with a slip that rejects them, listed in witnesses.json.
+	Forbidden          int    `json:"forbidden_designs"`            // Designs that a limit or geometry forbids.
+	Unresolved         int    `json:"unresolved"`                   // Cheaper designs that could be neither rejected nor accepted.
+	ContinuousEstimate Number `json:"continuous_estimate_m3_per_m"` // Earthworks of the continuous estimate, m3/m; an estimate, not a bound.
+	Allowance          Number `json:"search_allowance"`             // FS by which the answer had to exceed the requirement.
+	Searches           int    `json:"searches"`                     // One search is one check of one design.
+	DesignsSearched    int    `json:"designs_searched"`             // Designs searched in full.
+	SlipEvaluations    int    `json:"slip_evaluations"`             // Slips evaluated, pool included.
+	PoolSize           int    `json:"pool_size"`                    // Slips in the pool of witnesses.json.
+	Audit              Audit  `json:"audit"`                        // Independent search of the answer.
+}
+
+// Axis is the sizes tried for one parameter.
+type Axis struct {
+	Name string  `json:"name"` // Name of the parameter.
+	Min  float64 `json:"min"`  // Least size.
+	Max  float64 `json:"max"`  // Greatest size.
+	Step float64 `json:"step"` // Step between sizes; 0: fixed.
+}
+
+// Audit is the search of the answer by another sampler and seed.
+type Audit struct {
+	Methods  []string   `json:"methods"`  // Governing methods used.
+	Searches int        `json:"searches"` // One search is one check of one design.
+	Lowest   []AuditLow `json:"lowest"`   // Lowest FS by check.
+}
+
+// AuditLow is the lowest FS that the audit found in one check.
+type AuditLow struct {
+	Check      string `json:"check"`       // Situation or stage.
+	FS         Number `json:"fs"`          // Lowest FS found.
+	Method     string `json:"method"`      // Method that gave it.
+	RequiredFS Number `json:"required_fs"` // FS required.
+}
+
+// TradePoint is one point of the curve of earthworks against the FS asked for.
+type TradePoint struct {
+	RequiredFS Number               `json:"required_fs"`         // Asked for, in the situation that governs the sized option.
+	Shift      float64              `json:"shift"`               // Added to the required FS of every check.
+	ReachedFS  Number               `json:"reached_fs"`          // FS of that situation at this design.
+	Earthworks Number               `json:"earthworks_m3_per_m"` // Least earthworks, m3/m.
+	Cost       *Number              `json:"cost"`                // Cost; null without rates.
+	Parameters map[string]Parameter `json:"parameters"`          // Dimensions of the design.
+}

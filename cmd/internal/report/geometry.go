@@ -1,0 +1,80 @@
+package report
+
+// Section is a cross-section as analysed. The tops of the strata are those of the ground before works and are not clipped: Ground
+// clips them. Placed bodies are painted over the strata in order, and Ground already includes them. Every line is held level beyond its
+// ends.
+type Section struct {
+	GroundBefore []Point          `json:"ground_before"`       // Ground before works, from left to right.
+	Ground       []Point          `json:"ground"`              // Ground in force, from left to right.
+	Strata       []Stratum        `json:"strata"`              // From the surface down; the first top is the ground before works.
+	Placed       []Body           `json:"placed"`              // Fill and exchanged ground, later over earlier.
+	Surcharges   []Surcharge      `json:"surcharges"`          // Vertical pressures on the ground.
+	FirmBase     []Point          `json:"firm_base,omitempty"` // Line below which no slip passes.
+	Water        map[string]Water `json:"water"`               // By name of the situation or stage.
+}
+
+// Stratum is a layer from its top down to the next top below; where a later top lies above, the layer is absent.
+type Stratum struct {
+	Soil string  `json:"soil"` // Name of the soil.
+	Top  []Point `json:"top"`  // Top of the layer, from left to right.
+}
+
+// Body is placed material.
+type Body struct {
+	Soil    string  `json:"soil"`    // Name of the soil.
+	Outline []Point `json:"outline"` // Simple outline, clockwise.
+}
+
+// Surcharge is a vertical pressure on the ground.
+type Surcharge struct {
+	Name     string  `json:"name"`                                           // Name.
+	FromX    float64 `json:"from_x"`                                         // Left end, m.
+	ToX      float64 `json:"to_x"`                                           // Right end, m.
+	Pressure float64 `json:"kPa"`                                            // Downward pressure, kPa.
+	Kind     string  `json:"kind" jsonschema:"enum=permanent,enum=variable"` // "permanent", or "variable": left out on slips whose FS it would raise.
+}
+
+// Water is the pore pressure and free water of a situation: u = gamma_w x vertical depth below the line, unless by_soil or drains say
+// otherwise. Where free water stands higher than the line, its level takes the line's place. Undrained soil has no pore pressure of
+// its own.
+type Water struct {
+	Line      []Point           `json:"line" jsonschema:"nullable"` // Piezometric line, lowered by drains where there are any; null: dry.
+	FreeWater []FreeWater       `json:"free_water"`                 // Water that stands on the ground and loads it.
+	BySoil    map[string]BySoil `json:"by_soil"`                    // Soils whose pore pressure does not follow the line.
+	Drains    *Drains           `json:"drains,omitempty"`           // Drains: the pore pressure that the engine used.
+}
+
+// FreeWater stands on the ground up to a level.
+type FreeWater struct {
+	Level float64 `json:"level"`  // Water level, m.
+	FromX float64 `json:"from_x"` // Left end, m.
+	ToX   float64 `json:"to_x"`   // Right end, m.
+}
+
+// BySoil is the pore pressure of a soil that does not follow the water line. With ru, u = ru x weight of ground and fill above. A
+// free-draining soil has u = gamma_w x max(0, level - y), its level being the greater of level_y and of the free water standing at that x;
+// where there is neither, it follows the line.
+type BySoil struct {
+	Ru     *float64 `json:"ru" jsonschema:"nullable"`      // Pore pressure ratio; null: none.
+	LevelY *float64 `json:"level_y" jsonschema:"nullable"` // Of a free-draining soil: level of the outfall, m; null: none is named.
+}
+
+// Drains lower the pore pressure between the ends of their invert. With L the line before and I the invert at x, H = L - I and R the
+// ratio, the head falls by R (L - y) between line and invert, by R H (1 - (I - y)/fade) from the invert down to fade below it, and by
+// nothing deeper.
+type Drains struct {
+	LineBefore []Point   `json:"line_before"` // Piezometric line before drains, from left to right.
+	Invert     []Point   `json:"invert"`      // Invert of the drains, from left to right.
+	Ratio      []float64 `json:"ratio"`       // R at each point of the invert, linear between.
+	Fade       float64   `json:"fade_m"`      // m.
+}
+
+// Slip is a slip surface between two points of the ground.
+type Slip struct {
+	Kind   string  `json:"kind" jsonschema:"enum=circle,enum=polyline"` // "circle" or "polyline".
+	Centre *Point  `json:"centre,omitempty"`                            // Of a circle.
+	Radius float64 `json:"radius,omitempty"`                            // Of a circle, m.
+	Points []Point `json:"points,omitempty"`                            // Of a polyline, from left to right.
+	From   Point   `json:"from"`                                        // Left end on the ground.
+	To     Point   `json:"to"`                                          // Right end on the ground.
+}

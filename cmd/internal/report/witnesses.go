@@ -1,0 +1,109 @@
+package report
+
+import (
+	"io"
+
+	"standfast/remedies"
+)
+
+// WitnessFormat names the layout of witnesses.json.
+const WitnessFormat = "standfast-witnesses/1"
+
+// Witnesses is witnesses.json: for every option that was sized, the pool of slips and, for every cheaper design of the lattice, the slip
+// that rejects it.
+type Witnesses struct {
+	Format  string                   `json:"format"`  // Name of this layout, "standfast-witnesses/1".
+	Case    WitnessCase              `json:"case"`    // The case, as in result.json.
+	Options map[string]WitnessOption `json:"options"` // By name of the option.
+}
+
+// WitnessCase says to which result the witnesses belong.
+type WitnessCase struct {
+	File   string `json:"file"`   // Name of the case file, without its folder.
+	SHA256 string `json:"sha256"` // SHA-256 of the case file's bytes, in hexadecimal.
+}
+
+// WitnessOption holds the witnesses of one option.
+type WitnessOption struct {
+	Parameters []string        `json:"parameters"` // Names of the numbers in x, in order.
+	Pool       []WitnessCut    `json:"pool"`       // Slips that reject designs.
+	Designs    []WitnessDesign `json:"designs"`    // The cheaper designs, each with its witness.
+}
+
+// WitnessCut is a slip with the check and the setting it was found in; it is evaluated as it was found.
+type WitnessCut struct {
+	Check    string       `json:"check"`       // Situation, variant or stage.
+	Method   string       `json:"method"`      // Method of slices.
+	Slices   int          `json:"slices"`      // Target number of slices.
+	MinDepth float64      `json:"min_depth_m"` // Parts of the slip nowhere deeper than this do not count, m.
+	Slip     WitnessShape `json:"slip"`        // Geometry alone: it is cut by the ground of each design.
+}
+
+// WitnessShape is a slip surface that no ground has cut yet.
+type WitnessShape struct {
+	Kind   string  `json:"kind"`             // "circle" or "polyline".
+	Centre *Point  `json:"centre,omitempty"` // Of a circle.
+	Radius float64 `json:"radius,omitempty"` // Of a circle, m.
+	Points []Point `json:"points,omitempty"` // Of a polyline, from left to right.
+}
+
+// WitnessDesign is a cheaper design with the slip that rejects it.
+type WitnessDesign struct {
+	X          []Number `json:"x"`                   // Its parameters; null where an optional one is absent.
+	Earthworks float64  `json:"earthworks_m3_per_m"` // Cut plus fill, m3/m.
+	Cut        int32    `json:"cut"`                 // Index into the pool.
+	FS         Number   `json:"fs"`                  // FS of that slip on this design.
+}
+
+// NewWitnesses lays out the certificates of a result as the contents of witnesses.json.
+func NewWitnesses(r *remedies.Result, src Source) *Witnesses {
+	w := &Witnesses{Format: WitnessFormat, Case: WitnessCase{File: src.File, SHA256: src.SHA256}, Options: map[string]WitnessOption{}}
+	for i := range r.Options {
+		o := &r.Options[i]
+		if o.Certificate != nil {
+			w.Options[o.Name] = witnessOption(o)
+		}
+	}
+	return w
+}
+
+// Encode writes the witnesses as JSON, a design a line.
+func (w *Witnesses) Encode(to io.Writer) error { return encode(to, w) }
+
+func witnessOption(o *remedies.Option) WitnessOption {
+	c := o.Certificate
+	out := WitnessOption{
+		Parameters: make([]string, len(c.Axes)), Pool: make([]WitnessCut, len(c.Pool)), Designs: make([]WitnessDesign, len(c.Witnesses)),
+	}
+	for i, a := range c.Axes {
+		out.Parameters[i] = a.Name
+	}
+	for i := range c.Pool {
+		cut := &c.Pool[i]
+		shape := slipOf(&cut.Slip, cut.Slip.Centre, cut.Slip.Centre)
+		out.Pool[i] = WitnessCut{
+			Check: checkAt(o, int(cut.Check)), Method: cut.Setting.Method.String(), Slices: cut.Setting.Slices,
+			MinDepth: cut.Setting.MinDepth,
+			Slip:     WitnessShape{Kind: shape.Kind, Centre: shape.Centre, Radius: shape.Radius, Points: shape.Points},
+		}
+	}
+	for i, d := range c.Witnesses {
+		x := make([]Number, len(d.X))
+		for k, v := range d.X {
+			x[k] = Number(v)
+		}
+		out.Designs[i] = WitnessDesign{X: x, Earthworks: d.Earthworks, Cut: d.Cut, FS: Number(d.FS)}
+	}
+	return out
+}
+
+// checkAt returns the name of check i of an option: its situations with their variants, then its stages.
+func checkAt(o *remedies.Option, i int) string {
+	switch n := len(o.Situations); {
+	case i < n:
+		return checkName(&o.Situations[i].Check)
+	case i < n+len(o.Stages):
+		return checkName(&o.Stages[i-n].Check)
+	}
+	return ""
+}
