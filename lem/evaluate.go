@@ -36,8 +36,11 @@ func (m *Model) FS(ws *Workspace, s *Slip, o Setting) Result {
 			} else {
 				m.slicePolyline(ws, p, s, slices)
 			}
-			m.solve(ws, o.Method, &r)
 			m.ends(&r, p)
+			m.solve(ws, o.Method, &r)
+			if r.Status != Missed && !o.Window.admits(&r) {
+				continue
+			}
 		}
 		best = lower(best, r)
 	}

@@ -80,7 +80,7 @@ func newSearcher(m *Model, o SearchOptions) *searcher {
 	if s.o.Effort == 0 {
 		s.o.Effort = 1
 	}
-	s.setting = Setting{Method: s.methods[0], Slices: s.o.Slices, MinDepth: o.MinDepth}
+	s.setting = Setting{Method: s.methods[0], Slices: s.o.Slices, MinDepth: o.MinDepth, Window: o.Window}
 	s.zones = m.zones()
 	return s
 }
@@ -97,13 +97,9 @@ func (s *searcher) try(p vector) candidate {
 	c.r = s.m.FS(&s.ws, &slip, s.setting)
 	switch c.r.Status {
 	case Converged:
-		if !s.wanted(&c.r) {
-			c.r.F = math.Inf(1)
-		}
 		return c
 	case NotConverged:
-		s.failed++
-		if s.wanted(&c.r) {
+		if s.setting.Method == s.methods[0] {
 			s.keepUnresolved(&c)
 		}
 	case Inadmissible:
@@ -114,29 +110,21 @@ func (s *searcher) try(p vector) candidate {
 	return c
 }
 
-// wanted reports whether a slip moves in a direction and daylights in the ranges that are asked for.
-func (s *searcher) wanted(r *Result) bool {
-	if s.o.Direction == LeftwardOnly && !r.Leftward || s.o.Direction == RightwardOnly && r.Leftward {
-		return false
-	}
-	head, exit := r.ends()
-	return s.o.Head.holds(head) && s.o.Toe.holds(exit)
-}
-
-// ends returns x of the head and of the exit of a slip.
-func (r *Result) ends() (head, exit float64) {
-	if r.Leftward {
-		return r.To.X, r.From.X
-	}
-	return r.From.X, r.To.X
-}
-
-func (r Range) holds(x float64) bool { return r == Range{} || r.From <= x && x <= r.To }
-
+// keepUnresolved files a trial that the first method could not solve: with the answer of a further method if one has it, else among the
+// unresolved.
 func (s *searcher) keepUnresolved(c *candidate) {
 	if math.IsNaN(c.r.Screen) {
 		return
 	}
+	for _, method := range s.methods[1:] {
+		o := *c
+		o.setting.Method = method
+		if o.r = s.m.FS(&s.ws, &o.slip, o.setting); o.r.Status == Converged {
+			s.extra = append(s.extra, o)
+			return
+		}
+	}
+	s.failed++
 	s.unres = append(s.unres, Minimum{c.slip, c.setting, c.r})
 	if len(s.unres) >= 8*MaxUnresolved {
 		s.trimUnresolved()
@@ -263,7 +251,7 @@ func (s *searcher) polish(ctx context.Context) {
 }
 
 func (s *searcher) minima() Minima {
-	all := append(s.found, s.extra...)
+	all := append(s.found, s.distinct(s.extra)...)
 	slices.SortFunc(all, compareCandidates)
 	out := Minima{Trials: s.ws.trial, NotConverged: s.failed, InadmissibleCut: s.barred}
 	for _, c := range all {

@@ -9,30 +9,15 @@ const (
 	ByCentre                  // Centre and radius.
 )
 
-// Direction limits the movement that a search looks at.
-type Direction uint8
-
-// The directions of movement.
-const (
-	EitherWay Direction = iota
-	LeftwardOnly
-	RightwardOnly
-)
-
-// Range is an interval of x, m. The zero value means everywhere.
-type Range struct{ From, To float64 }
-
 // SearchOptions says what a search looks at and with what effort. The zero value is the default search.
 type SearchOptions struct {
-	Slices    int       // Target slices; 0: DefaultSlices.
-	MinDepth  float64   // Depth of interest, m.
-	Sampler   Sampler   // Parametrisation of trial circles.
-	Effort    float64   // Multiple of the default number of trials; 0 means 1.
-	Seed      uint64    // Shifts the low-discrepancy sequence.
-	Direction Direction // Movement to look at.
-	Head      Range     // Where a slip may leave the ground at its head.
-	Toe       Range     // Where a slip may leave the ground at its toe.
-	Methods   []Method  // Governing methods; nil: Bishop and Spencer.
+	Slices   int      // Target slices; 0: DefaultSlices.
+	MinDepth float64  // Depth of interest, m.
+	Sampler  Sampler  // Parametrisation of trial circles.
+	Effort   float64  // Multiple of the default number of trials; 0 means 1.
+	Seed     uint64   // Shifts the low-discrepancy sequence.
+	Window   Window   // Slips to look at.
+	Methods  []Method // Governing methods; nil: Bishop and Spencer.
 	// Below: basins with F at or below this are all polished with every governing method; 0 polishes the lowest few only.
 	Below float64
 }

@@ -38,12 +38,44 @@ func (m Method) String() string {
 	return "unknown"
 }
 
-// Setting says how a slip is evaluated.
+// Setting says how a slip is evaluated, and which parts of it count.
 type Setting struct {
 	Method Method
 	Slices int // Target number of slices; a slip always has at least MinSlices. 0: DefaultSlices.
 	// MinDepth is the depth of interest, m: parts of the slip whose greatest vertical depth is less are left out.
 	MinDepth float64
+	Window   Window
+}
+
+// Window limits the slips that count by their movement and by where they leave the ground. The zero value lets all count.
+type Window struct {
+	Direction Direction
+	Head      Range // Where a slip may leave the ground at its head.
+	Toe       Range // Where a slip may leave the ground at its toe.
+}
+
+// Direction limits the movement that is looked at.
+type Direction uint8
+
+// The directions of movement.
+const (
+	EitherWay Direction = iota
+	LeftwardOnly
+	RightwardOnly
+)
+
+// Range is an interval of x, m. The zero value means everywhere.
+type Range struct{ From, To float64 }
+
+func (r Range) holds(x float64) bool { return r == Range{} || r.From <= x && x <= r.To }
+
+// admits reports whether a slip with this result counts.
+func (w *Window) admits(r *Result) bool {
+	if w.Direction == LeftwardOnly && !r.Leftward || w.Direction == RightwardOnly && r.Leftward {
+		return false
+	}
+	head, exit := r.ends()
+	return w.Head.holds(head) && w.Toe.holds(exit)
 }
 
 // MinSlices is the least number of slices of any slip (common practice, no source).
@@ -78,4 +110,12 @@ type Result struct {
 	Leftward bool    // True if the part moves to the left.
 	Slices   int     // Number of slices used.
 	Screen   float64 // When NotConverged: FS of the Ordinary method on the same part, as a screen; else NaN.
+}
+
+// ends returns x of the head and of the exit of a slip.
+func (r *Result) ends() (head, exit float64) {
+	if r.Leftward {
+		return r.To.X, r.From.X
+	}
+	return r.From.X, r.To.X
 }

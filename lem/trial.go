@@ -176,8 +176,8 @@ func (s *searcher) sweep(ctx context.Context) {
 // mayFail reports whether slips between two zones, a left of b, can move in a wanted direction and daylight in the wanted ranges.
 func (s *searcher) mayFail(a, b Range) bool {
 	overlaps := func(z, want Range) bool { return want == Range{} || z.From <= want.To && want.From <= z.To }
-	right := s.o.Direction != LeftwardOnly && overlaps(a, s.o.Head) && overlaps(b, s.o.Toe)
-	left := s.o.Direction != RightwardOnly && overlaps(b, s.o.Head) && overlaps(a, s.o.Toe)
+	right := s.o.Window.Direction != LeftwardOnly && overlaps(a, s.o.Window.Head) && overlaps(b, s.o.Window.Toe)
+	left := s.o.Window.Direction != RightwardOnly && overlaps(b, s.o.Window.Head) && overlaps(a, s.o.Window.Toe)
 	return right || left
 }
 
