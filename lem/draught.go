@@ -136,9 +136,30 @@ func (d *draught) breakpoints() []float64 {
 			}
 		}
 	}
+	return d.thin(xs)
+}
+
+// thin sorts breakpoints and leaves out those closer than a quarter of a step to another: they are the same place. The vertices of the
+// ground all stay, even where a body's or a stratum's vertex lies in the middle of a step, so that the ground never jumps between columns.
+func (d *draught) thin(xs []float64) []float64 {
+	near := d.step / 4
 	slices.Sort(xs)
-	// Closer than a step is the same place; the steps themselves are kept.
-	return slices.CompactFunc(xs, func(a, b float64) bool { return math.Abs(b-a) < d.step/2 })
+	kept := xs[:0]
+	g := 0
+	for _, x := range xs {
+		for g < len(d.ground) && d.ground[g].X < x-near {
+			g++
+		}
+		atGround := g < len(d.ground) && d.ground[g].X <= x+near
+		if atGround && d.ground[g].X != x {
+			continue
+		}
+		if n := len(kept); n > 0 && x-kept[n-1] < near {
+			continue
+		}
+		kept = append(kept, x)
+	}
+	return kept
 }
 
 // crossing returns where two segments cross inside both, if they do at one point.
