@@ -15,7 +15,8 @@ type candidate[C any] struct {
 	cut      int32 // pool cut of the bound
 	tried    int   // pool cuts tried, from the first
 	searched bool
-	missing  int // unresolved cuts met by the search
+	audited  bool
+	missing  int // unresolved cuts met by search and audit
 }
 
 // candidates is a heap, greatest bound first, then lowest rank.
@@ -35,8 +36,8 @@ func (h *candidates[C]) Pop() any {
 }
 
 // rankBest looks for the design with the greatest margin among those that have a witness, best bound first: a bound is
-// lowered by trying the whole pool, then by a full search, and the first candidate to stay on top after both is the
-// best. When the searches run out, only those searched stay in the queue.
+// lowered by trying the whole pool, then by a full search, then by an audit, and the first candidate to stay on top
+// after all three is the best. When the searches run out, only those searched stay in the queue.
 func (r *run[C]) rankBest() error {
 	var queue, searched candidates[C]
 	for rank, w := range r.res.Lattice {
@@ -52,9 +53,14 @@ func (r *run[C]) rankBest() error {
 			if err := r.tightenTop(&queue); err != nil {
 				return err
 			}
-		case top.searched:
+		case top.audited:
 			r.acceptBest(top)
 			return nil
+		case top.searched:
+			if err := r.auditCandidate(top); err != nil {
+				return err
+			}
+			heap.Fix(&queue, 0)
 		case len(searched) == r.s.FullSearches:
 			queue = searched
 			heap.Init(&queue)
@@ -94,20 +100,38 @@ func (r *run[C]) tightenTop(queue *candidates[C]) error {
 	return err
 }
 
-// searchCandidate searches a candidate in full, unless that was done before, and lowers its bound to what was found.
+// searchCandidate searches a candidate in full, unless that was done before.
 func (r *run[C]) searchCandidate(c *candidate[C]) error {
+	c.searched = true
 	v, known := r.verdicts[c.rank]
 	if !known {
-		d := r.open(r.point(r.designs[c.rank]))
-		defer d.Close()
-		var err error
-		if v, err = r.examine(d, c.rank, false, 0); err != nil {
-			return err
-		}
+		r.res.Spent.FullySearched++
+		return r.lower(c, false)
 	}
-	c.searched, c.missing = true, v.missing
-	if v.standing == rejected && v.witness.margin < c.bound {
-		c.bound, c.cut = v.witness.margin, v.witness.cut
+	c.missing = v.missing
+	return nil
+}
+
+// auditCandidate audits a candidate that has been searched.
+func (r *run[C]) auditCandidate(c *candidate[C]) error {
+	c.audited = true
+	return r.lower(c, true)
+}
+
+// lower searches or audits a candidate on which the whole pool has been tried. Cuts below its bound are news: they
+// join the pool, and the lowest is the new bound.
+func (r *run[C]) lower(c *candidate[C], audit bool) error {
+	x := r.point(r.designs[c.rank])
+	d := r.open(x)
+	defer d.Close()
+	found, err := r.search(d, x, audit)
+	if err != nil {
+		return err
+	}
+	c.missing += unresolved(found)
+	lowest := int32(len(r.pool))
+	if r.joinFound(found, c.bound, 0); int(lowest) < len(r.pool) {
+		c.bound, c.cut = found[0].Margin, lowest
 	}
 	return nil
 }

@@ -18,10 +18,10 @@ const (
 // answer, or when its share of the searches is spent. With an empty pool the master's answer is the cheapest design.
 func (r *run[C]) exchange() error {
 	m := newMaster(r)
-	if len(m.free) == 0 {
+	rounds := r.s.FullSearches * 2 / 3
+	if len(m.free) == 0 || rounds == 0 {
 		return nil
 	}
-	rounds := r.s.FullSearches * 2 / 3
 	for round := 0; ; round++ {
 		near := []int{0}
 		if len(r.pool) > 0 {

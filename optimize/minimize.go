@@ -55,7 +55,7 @@ func Minimize[C any](ctx context.Context, p Problem[C], s Settings[C]) (Result[C
 			r.res.Unresolved++
 		}
 	}
-	r.res.Spent.FullySearched = len(r.verdicts)
+	r.res.Spent.FullySearched += len(r.verdicts)
 	r.res.Spent.DesignsOpened = int(r.opened.Load())
 	r.res.Spent.MarginEvaluations = int(r.margins.Load())
 	if err != nil {
@@ -117,9 +117,14 @@ func (r *run[C]) enumerate() error {
 	if err != nil {
 		return err
 	}
+	for _, ok := range allowed {
+		if !ok {
+			r.res.Forbidden++
+		}
+	}
+	r.designs = make([]design, 0, n-r.res.Forbidden)
 	for i, d := range all {
 		if !allowed[i] {
-			r.res.Forbidden++
 			continue
 		}
 		if !finite(d.cost) || !finite(d.tie) {

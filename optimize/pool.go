@@ -22,16 +22,16 @@ func (r *run[C]) join(cuts []C) {
 	r.order = append(fresh, r.order...)
 }
 
-// joinFound adds the cuts of a search that lie below the allowance, and up to near more, lowest first, that are merely
-// near it. found is in the order of arrange, so the first cut to join is the lowest.
-func (r *run[C]) joinFound(found []Found[C], near int) {
+// joinFound adds the cuts of a search that lie below the limit, and up to near more, lowest first, that do not. found is
+// in the order of arrange, so the first cut to join is the lowest.
+func (r *run[C]) joinFound(found []Found[C], limit float64, near int) {
 	var cuts []C
 	for i := range found {
 		f := &found[i]
 		if f.Unresolved || math.IsInf(f.Margin, 1) {
 			break
 		}
-		if f.Margin >= r.s.Allowance {
+		if f.Margin >= limit {
 			if near == 0 {
 				break
 			}

@@ -47,13 +47,13 @@ type Witness struct {
 	Margin float64 // of the design at the cut; NaN when the design is unresolved
 }
 
-// An Attempt is a design that falls short, searched in full.
+// An Attempt is a design that falls short, searched in full and audited.
 type Attempt[C any] struct {
 	X          []float64
 	Cost       float64
-	Margin     float64  // the lowest known: of its search and of the whole pool
+	Margin     float64  // the lowest known: of its search, its audit and the whole pool
 	Binding    Found[C] // the cut that has this margin
-	Unresolved int      // cuts of its search without a margin, any of which could lie lower
+	Unresolved int      // cuts of its search and audit without a margin, any of which could lie lower
 }
 
 // Spent counts the work done; it does not depend on the number of workers unless the run is interrupted.
@@ -73,9 +73,9 @@ type Result[C any] struct {
 	// Lowest holds all basins at the answer from its search and its audit, ascending by margin; nil unless Optimal.
 	Lowest []Found[C]
 	// Best is the design with the greatest margin when the status is Infeasible or Unresolved; X is nil when there is none.
-	// Candidates are taken by their lowest margin on the pool, which bounds their margin from above, and
-	// searched in full until the best searched is at least as good as every bound left, or Settings.FullSearches of them
-	// have been searched for this purpose: then it is the best of those searched. Unresolved designs are no candidates.
+	// Candidates are taken by their lowest margin on the pool, which bounds their margin from above, and searched and audited
+	// until the best of them is at least as good as every bound left, or until Settings.FullSearches of them have been
+	// taken: then it is the best of those. Unresolved designs are no candidates.
 	Best Attempt[C]
 	Pool []C // every cut known, Settings.Start first
 	// Lattice has one entry for each design that geometry allows and that comes before the answer (all of them when there

@@ -78,27 +78,31 @@ func judge[C any](found []Found[C], allowance float64) standing {
 	return passed
 }
 
-// examine searches an open design, lets what it found join the pool, and keeps the verdict.
+// unresolved counts the cuts without a margin.
+func unresolved[C any](found []Found[C]) int {
+	n := 0
+	for i := range found {
+		if found[i].Unresolved {
+			n++
+		}
+	}
+	return n
+}
+
+// examine searches or audits an open design and keeps the verdict. If that rejects the design, the cuts below the
+// allowance join the pool, and up to near others.
 func (r *run[C]) examine(d Design[C], rank int, audit bool, near int) (verdict[C], error) {
 	found, err := r.search(d, r.point(r.designs[rank]), audit)
 	if err != nil {
 		return verdict[C]{}, err
 	}
 	v := verdict[C]{standing: judge(found, r.s.Allowance)}
-	first := int32(len(r.pool))
-	r.joinFound(found, near)
-	v.found = found
-	if audit {
-		v.found = arrange(append(slices.Clone(r.verdicts[rank].found), found...))
-	}
-	for i := range v.found {
-		if v.found[i].Unresolved {
-			v.missing++
-		}
-	}
+	v.found = arrange(append(slices.Clone(r.verdicts[rank].found), found...))
+	v.missing = unresolved(v.found)
 	if v.standing == rejected {
-		v.witness = hit{cut: first, margin: found[0].Margin}
+		v.witness = hit{cut: int32(len(r.pool)), margin: found[0].Margin}
 		v.found = nil
+		r.joinFound(found, r.s.Allowance, near)
 	}
 	r.verdicts[rank] = v
 	return v, nil
