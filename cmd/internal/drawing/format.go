@@ -1,0 +1,57 @@
+package drawing
+
+import (
+	"math"
+	"strconv"
+	"strings"
+
+	"standfast/remedies"
+)
+
+// sumNoise is what the sum of areas of a section can be off by rounding alone, m3/m; a quantity is not rounded up for it.
+const sumNoise = 1e-9
+
+// fsDown writes a factor of safety with three decimals, never higher than it is: the shortest decimal that reads back as v is cut.
+func fsDown(v float64) string {
+	s := strconv.FormatFloat(v, 'f', -1, 64)
+	whole, decimals, _ := strings.Cut(s, ".")
+	return whole + "." + (decimals + "000")[:3]
+}
+
+// quantityUp writes a quantity with two decimals, rounded up.
+func quantityUp(v float64) string {
+	return strconv.FormatFloat(math.Ceil((v-sumNoise)*100)/100+0, 'f', 2, 64)
+}
+
+// number writes v with at least the given decimals and at most four.
+func number(v float64, decimals int) string {
+	s := strconv.FormatFloat(v, 'f', 4, 64)
+	for n := 4; n > decimals && s[len(s)-1] == '0'; n-- {
+		s = s[:len(s)-1]
+	}
+	return strings.TrimSuffix(s, ".")
+}
+
+// metres writes a length or coordinate with its unit.
+func metres(v float64) string { return number(v, 2) + " m" }
+
+// value writes a parameter of an option in words.
+func value(v remedies.Value) string {
+	name := strings.ReplaceAll(v.Name, "_", " ")
+	switch v.Unit {
+	case "1V:nH":
+		return name + " 1V:" + number(v.Value, 1) + "H"
+	case "1", "":
+		return name + " " + number(v.Value, 2)
+	default:
+		return name + " " + number(v.Value, 2) + " " + v.Unit
+	}
+}
+
+// title writes a word with a capital.
+func title(s string) string {
+	if s == "" {
+		return s
+	}
+	return strings.ToUpper(s[:1]) + s[1:]
+}

@@ -1,0 +1,220 @@
+package drawing
+
+import (
+	"math"
+	"strings"
+
+	"standfast/lem"
+)
+
+// fillKey names everything that will be drawn, before the size of the sheet is known.
+func (p *picture) fillKey() {
+	ground := "ground"
+	if p.works {
+		p.key.addLine("ground before works", beforePen)
+		ground = "ground after works"
+	}
+	p.key.addLine(ground, groundPen)
+	if p.stage != nil {
+		p.key.addLine("ground in the governing stage", stagePen)
+	}
+	if len(p.cuts) > 0 {
+		p.key.addHatch("cut", paper, cutPen, cutHatchAngle)
+	}
+	for _, b := range p.bodies {
+		if b.added {
+			p.key.addHatch("fill: "+p.soilWords(b.soil), soilTint(b.soil), fillPen, fillHatchAngle)
+		}
+	}
+	if len(p.fills) > 0 && !p.hasAdded() {
+		p.key.addHatch("fill", paper, fillPen, fillHatchAngle)
+	}
+	for _, w := range p.waters {
+		p.key.addLine(w.what, w.pen)
+	}
+	if p.drains != nil && len(p.drains.Invert) > 1 {
+		p.key.addLine("invert of drains", invertPen)
+	}
+	if len(p.free) > 0 {
+		p.key.addTint("free water", waterFill)
+	}
+	if p.slip != nil {
+		p.key.addLine("governing slip", slipPen)
+	}
+	if p.sec.FirmBase != nil {
+		p.key.addLine("firm base, no slip below", firmPen)
+	}
+	p.keyLimits()
+	for _, t := range p.sec.Strata {
+		p.key.addTint(p.soilWords(t.Soil), soilTint(t.Soil))
+	}
+	for _, b := range p.bodies {
+		if !b.added {
+			p.key.addTint(p.soilWords(b.soil), soilTint(b.soil))
+		}
+	}
+}
+
+func (p *picture) keyLimits() {
+	l := &p.job.Limits
+	if len(p.sec.Loads) > 0 {
+		p.key.addLine("surcharge", loadPen)
+	}
+	if l.Left != nil || l.Right != nil {
+		p.key.addLine("limit of works", limitPen)
+	}
+	if len(l.KeepClear) > 0 {
+		p.key.addHatch("keep-clear zone", paper, zonePen, 0)
+	}
+	if len(l.MaxLevels) > 0 {
+		p.key.addLine("greatest level of works", zonePen)
+	}
+}
+
+func (p *picture) hasAdded() bool {
+	for _, b := range p.bodies {
+		if b.added {
+			return true
+		}
+	}
+	return false
+}
+
+// soilWords names a soil with its parameters.
+func (p *picture) soilWords(i int) string {
+	c := &p.sec.Soils[i]
+	words := []string{c.Name + ": γ " + number(c.UnitWeight, 1) + " kN/m³"}
+	if c.SaturatedUnitWeight != 0 && c.SaturatedUnitWeight != c.UnitWeight {
+		words[0] += " (" + number(c.SaturatedUnitWeight, 1) + " saturated)"
+	}
+	words = append(words, "c′ "+number(c.Cohesion, 0)+" kPa", "φ′ "+number(c.Friction*180/math.Pi, 0)+"°")
+	if u := c.Undrained; u != nil {
+		switch {
+		case len(u.Points) > 0:
+			words = append(words, "cu at points")
+		case u.Gradient != 0:
+			words = append(words, "cu "+number(u.Strength, 0)+" + "+number(u.Gradient, 1)+" kPa/m")
+		default:
+			words = append(words, "cu "+number(u.Strength, 0)+" kPa")
+		}
+	}
+	if c.HasRu {
+		words = append(words, "ru "+number(c.Ru, 2))
+	}
+	if c.FreeDraining {
+		words = append(words, "free-draining")
+	}
+	return strings.Join(words, ", ")
+}
+
+// drawSection draws everything inside the frame: areas, then lines, then texts.
+func (p *picture) drawSection(s *sheet) {
+	floor := s.view.y0
+	for i, t := range p.tops {
+		s.add(fill{soilTint(p.sec.Strata[i].Soil), [][]xy{s.view.line(under(t, floor))}})
+	}
+	p.drawBodies(s)
+	sky := append(s.view.line(p.ground), xy{s.view.at(p.ground[len(p.ground)-1]).X, s.view.frame.MaxY},
+		xy{s.view.at(p.ground[0]).X, s.view.frame.MaxY})
+	s.add(fill{paper, [][]xy{sky}})
+	p.drawFree(s)
+	if cuts := s.view.lines(p.cuts); len(cuts) > 0 {
+		s.stroke(cutPen, lighter, hatch(cutHatchAngle, hatchSpacing, cuts)...)
+	}
+	p.drawLines(s)
+	p.drawLimits(s)
+	p.drawLoads(s)
+	p.drawSlip(s)
+	p.label(s)
+}
+
+func (p *picture) drawBodies(s *sheet) {
+	below := [][]xy{s.view.line(under(p.ground, min(p.lo, s.view.y0)-1))}
+	var added [][]xy
+	for _, b := range p.bodies {
+		ring := s.view.line(b.outline)
+		s.add(fill{soilTint(b.soil), [][]xy{ring}})
+		s.stroke(bodyPen, light, append(ring, ring[0]))
+		if b.added {
+			added = append(added, ring)
+		}
+	}
+	if len(added) == 0 {
+		added = s.view.lines(p.fills)
+	}
+	for _, ring := range added { // One by one: bodies may cover each other.
+		s.stroke(fillPen, lighter, hatch(fillHatchAngle, hatchSpacing, [][]xy{ring}, below)...)
+	}
+}
+
+func (p *picture) drawLines(s *sheet) {
+	for i, t := range p.tops {
+		if i > 0 {
+			s.stroke(strataPen, light, s.view.line(t))
+		}
+	}
+	floor := s.view.y0
+	for _, q := range []lem.Point{p.ground[0], p.ground[len(p.ground)-1]} {
+		s.add(stroke{strataPen, [][]xy{s.view.line([]lem.Point{q, {X: q.X, Y: floor}})}})
+	}
+	if p.sec.FirmBase != nil {
+		s.stroke(firmPen, medium, s.view.line(crop(p.sec.FirmBase, p.x0, p.x1)))
+	}
+	p.drawWater(s)
+	if p.works {
+		s.stroke(beforePen, medium, s.view.line(p.before))
+	}
+	if p.stage != nil {
+		s.stroke(stagePen, medium, s.view.line(p.stage))
+	}
+	s.stroke(groundPen, heavy, s.view.line(p.ground))
+}
+
+func (p *picture) drawSlip(s *sheet) {
+	if p.slip != nil {
+		s.stroke(slipPen, heavy, s.view.line(p.slip))
+	}
+}
+
+// label places the texts, those with least freedom or most weight first.
+func (p *picture) label(s *sheet) {
+	p.markSlope(s)
+	if p.opt != nil && p.opt.Proposal != nil {
+		for _, d := range p.opt.Proposal.Dimensions {
+			if !d.Batter {
+				p.dimension(s, d)
+			}
+		}
+		for _, d := range p.opt.Proposal.Dimensions {
+			if d.Batter {
+				p.batter(s, d)
+			}
+		}
+	}
+	p.labelSlip(s)
+	p.labelLoads(s)
+	p.labelSlope(s)
+	p.labelWater(s)
+	p.labelStrata(s)
+	p.labelLimits(s)
+}
+
+func (p *picture) labelSlip(s *sheet) {
+	if p.slip == nil {
+		return
+	}
+	g := p.gov
+	n := note{
+		lines:  []string{"FS " + fsDown(g.FS) + " (" + title(g.Method.String()) + ")"},
+		font:   bodyFace,
+		colour: slipInk,
+		bold:   true,
+	}
+	name := checkName(&g.Check)
+	if g.Check.Stage {
+		name = "stage: " + name
+	}
+	n.lines = append(n.lines, bodyFace.wrap(clean(name), 150, 2)...)
+	n.lines = append(n.lines, "required "+number(g.Check.Required, 2))
+	s.label(n, s.view.at(p.slip[len(p.slip)/2]), below)
+}

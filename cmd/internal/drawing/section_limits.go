@@ -1,0 +1,277 @@
+package drawing
+
+import (
+	"math"
+
+	"standfast/lem"
+	"standfast/remedies"
+)
+
+// Heights and depths of marks at the ground, points.
+const (
+	fenceAbove   = 34.0
+	fenceBelow   = 14.0
+	zoneAbove    = 13.0 // of a zone that no load may enter
+	zoneBelow    = 22.0 // of a zone that no dig may enter
+	zoneHatch    = 3.4
+	outfallMark  = 16.0
+	arrowHead    = 4.6
+	arrowHalf    = 1.35
+	loadHeight   = 13.0
+	loadArrows   = 11.0 // between the arrows of a surcharge
+	loadStacking = 17.0
+)
+
+// inWindow reports whether x is drawn.
+func (p *picture) inWindow(x float64) bool { return x >= p.x0 && x <= p.x1 }
+
+// fences returns the side limits of the works that are drawn; inwards is the sign of x towards the works.
+func (p *picture) fences() (list []*remedies.Fence, inwards []float64) {
+	l := &p.job.Limits
+	if l.Left != nil && p.inWindow(l.Left.X) {
+		list, inwards = append(list, l.Left), append(inwards, 1)
+	}
+	if l.Right != nil && p.inWindow(l.Right.X) {
+		list, inwards = append(list, l.Right), append(inwards, -1)
+	}
+	return list, inwards
+}
+
+// highest returns the higher of the grounds at x on the page, and lowest the lower.
+func (p *picture) highest(s *sheet, x float64) float64 {
+	return s.view.at(lem.Point{X: x, Y: max(p.before.At(x), p.ground.At(x))}).Y
+}
+
+func (p *picture) lowest(s *sheet, x float64) float64 {
+	return s.view.at(lem.Point{X: x, Y: min(p.before.At(x), p.ground.At(x))}).Y
+}
+
+func (p *picture) fenceTop(s *sheet, f *remedies.Fence) xy {
+	return xy{s.view.at(lem.Point{X: f.X}).X, p.highest(s, f.X) + fenceAbove}
+}
+
+func (p *picture) drawLimits(s *sheet) {
+	list, inwards := p.fences()
+	for i, f := range list {
+		top := p.fenceTop(s, f)
+		s.stroke(limitPen, medium, []xy{top, {top.X, p.lowest(s, f.X) - fenceBelow}})
+		tip := xy{top.X + inwards[i]*11, top.Y - 4}
+		s.stroke(pen{limitInk, 0.7, nil}, medium, []xy{{top.X, tip.Y}, tip})
+		s.arrow(limitInk, tip, xy{inwards[i], 0})
+	}
+	for i := range p.job.Limits.KeepClear {
+		if ring := p.zone(s, &p.job.Limits.KeepClear[i]); ring != nil {
+			s.stroke(pen{limitInk, 0.3, nil}, lighter, hatch(0, zoneHatch, [][]xy{ring})...)
+			s.stroke(zonePen, medium, append(ring, ring[0]))
+		}
+	}
+	for _, m := range p.job.Limits.MaxLevels {
+		if x0, x1 := max(m.FromX, p.x0), min(m.ToX, p.x1); x0 < x1 {
+			s.stroke(zonePen, medium, s.view.line([]lem.Point{{X: x0, Y: m.Level}, {X: x1, Y: m.Level}}))
+		}
+	}
+	if a, ok := p.outfall(s); ok {
+		s.stroke(pen{waterInk, 0.9, nil}, medium, []xy{{a.X - outfallMark/2, a.Y}, {a.X + outfallMark/2, a.Y}})
+		s.arrow(waterInk, xy{a.X + p.job.Facing()*(outfallMark/2+arrowHead), a.Y}, xy{p.job.Facing(), 0})
+	}
+	p.drawRanges(s)
+}
+
+// zone returns the outline of a keep-clear zone along the ground, on the page; nil outside the window.
+func (p *picture) zone(s *sheet, k *remedies.KeepClear) []xy {
+	x0, x1 := max(k.FromX, p.x0), min(k.ToX, p.x1)
+	if x0 >= x1 {
+		return nil
+	}
+	g := s.view.line(crop(p.before, x0, x1))
+	up, down := 0.0, 0.0
+	if k.NoLoad {
+		up = zoneAbove
+	}
+	if k.NoDig {
+		down = zoneBelow
+		if k.DigBelow != nil && !k.NoLoad {
+			up = -*k.DigBelow * s.view.sy
+		}
+		if k.DigBelow != nil {
+			down += *k.DigBelow * s.view.sy
+		}
+	}
+	var ring []xy
+	for _, q := range g {
+		ring = append(ring, xy{q.X, q.Y + up})
+	}
+	for i := len(g) - 1; i >= 0; i-- {
+		ring = append(ring, xy{g[i].X, max(g[i].Y-down, s.view.frame.MinY)})
+	}
+	return ring
+}
+
+// outfall returns where the drain outfall is marked.
+func (p *picture) outfall(s *sheet) (xy, bool) {
+	o := p.job.Limits.Outfall
+	if o == nil || *o < s.view.y0 {
+		return xy{}, false
+	}
+	a := s.view.at(lem.Point{X: p.job.Toe.X, Y: *o})
+	a.X += p.job.Facing() * 14
+	return a, a.X-outfallMark > s.view.frame.MinX && a.X+outfallMark < s.view.frame.MaxX
+}
+
+// daylight is a range in which slips may leave the ground.
+type daylight struct {
+	name string
+	r    lem.Range
+	row  float64 // above the lower edge of the frame, points
+}
+
+// ranges returns the daylight ranges that the case gives and the window shows.
+func (p *picture) ranges() []daylight {
+	var out []daylight
+	for _, d := range []daylight{{"slips start", p.job.Head, 8}, {"slips end", p.job.Exit, 17}} {
+		d.r.From, d.r.To = max(d.r.From, p.x0), min(d.r.To, p.x1)
+		if d.r.From < d.r.To && (d.r != lem.Range{}) {
+			out = append(out, d)
+		}
+	}
+	if (p.job.Head == lem.Range{}) && (p.job.Exit == lem.Range{}) {
+		return nil
+	}
+	return out
+}
+
+func (p *picture) drawRanges(s *sheet) {
+	for _, d := range p.ranges() {
+		a, b, y := p.bracket(s, d)
+		s.stroke(rangePen, medium, []xy{{a, y + 3}, {a, y - 3}}, []xy{{a, y}, {b, y}}, []xy{{b, y + 3}, {b, y - 3}})
+	}
+}
+
+func (p *picture) bracket(s *sheet, d daylight) (x0, x1, y float64) {
+	return s.view.at(lem.Point{X: d.r.From}).X, s.view.at(lem.Point{X: d.r.To}).X, s.view.frame.MinY + d.row
+}
+
+func (p *picture) labelLimits(s *sheet) {
+	put := func(txt string, at xy, prefer side) {
+		s.label(noteOf(bodyFace, limitInk, 120, txt), at, prefer)
+	}
+	list, _ := p.fences()
+	for _, f := range list {
+		put(f.Name+", offset "+metres(f.X), p.fenceTop(s, f), above)
+	}
+	for i := range p.job.Limits.KeepClear {
+		k := &p.job.Limits.KeepClear[i]
+		if ring := p.zone(s, k); ring != nil {
+			put(zoneWords(k), middle(ring), below)
+		}
+	}
+	for _, m := range p.job.Limits.MaxLevels {
+		if x0, x1 := max(m.FromX, p.x0), min(m.ToX, p.x1); x0 < x1 {
+			put(m.Name+": works no higher than "+metres(m.Level), s.view.at(lem.Point{X: (x0 + x1) / 2, Y: m.Level}), above)
+		}
+	}
+	if a, ok := p.outfall(s); ok {
+		s.label(noteOf(bodyFace, waterInk, 120, "drain outfall "+metres(*p.job.Limits.Outfall)), a, below)
+	}
+	for _, d := range p.ranges() {
+		a, b, y := p.bracket(s, d)
+		s.label(noteOf(smallFace, inkGrey, 200, d.name+" between offsets "+metres(d.r.From)+" and "+metres(d.r.To)), xy{(a + b) / 2, y}, above)
+	}
+}
+
+func zoneWords(k *remedies.KeepClear) string {
+	out := k.Name + ": "
+	switch {
+	case k.NoDig && k.DigBelow != nil:
+		out += "no dig deeper than " + metres(*k.DigBelow)
+		if k.NoLoad {
+			out += ", no load"
+		}
+	case k.NoDig && k.NoLoad:
+		out += "no dig, no load"
+	case k.NoDig:
+		out += "no dig"
+	default:
+		out += "no load"
+	}
+	return out
+}
+
+// middle returns the centre of the box about a ring.
+func middle(ring []xy) xy {
+	b := Box{math.Inf(1), math.Inf(1), math.Inf(-1), math.Inf(-1)}
+	for _, q := range ring {
+		b = Box{min(b.MinX, q.X), min(b.MinY, q.Y), max(b.MaxX, q.X), max(b.MaxY, q.Y)}
+	}
+	return b.centre()
+}
+
+// loadLine returns the line that a surcharge's arrows hang from, along the ground; nil outside the window. Surcharges that share an
+// x stand above each other.
+func (p *picture) loadLine(s *sheet, i int) (upper, lower []xy) {
+	l := p.sec.Loads[i]
+	x0, x1 := max(l.FromX, p.x0), min(l.ToX, p.x1)
+	if x0 >= x1 {
+		return nil, nil
+	}
+	row := 0.0
+	for _, o := range p.sec.Loads[:i] {
+		if o.FromX < l.ToX && l.FromX < o.ToX {
+			row++
+		}
+	}
+	lower = s.view.line(crop(p.ground, x0, x1))
+	top := row*loadStacking + loadHeight + 2
+	for k := range lower {
+		lower[k].Y += row*loadStacking + 2
+		upper = append(upper, xy{lower[k].X, lower[k].Y + top - row*loadStacking - 2})
+	}
+	return upper, lower
+}
+
+func (p *picture) drawLoads(s *sheet) {
+	for i := range p.sec.Loads {
+		up, low := p.loadLine(s, i)
+		if up == nil {
+			continue
+		}
+		s.stroke(loadPen, medium, up)
+		first, last := up[0].X, up[len(up)-1].X
+		n := max(1, math.Round((last-first)/loadArrows))
+		for k := 0.0; k <= n; k++ {
+			x := first + (last-first)*k/n
+			foot, head := xy{x, heightAt(low, x)}, xy{x, heightAt(up, x)}
+			s.stroke(loadPen, light, []xy{head, {x, foot.Y + arrowHead/2}})
+			s.arrow(loadInk, foot, xy{0, -1})
+		}
+	}
+}
+
+// heightAt returns the height of a line of the page at x.
+func heightAt(l []xy, x float64) float64 {
+	for i := 0; i+1 < len(l); i++ {
+		if a, b := l[i], l[i+1]; x <= b.X && b.X > a.X {
+			return a.Y + (b.Y-a.Y)*(x-a.X)/(b.X-a.X)
+		}
+	}
+	return l[len(l)-1].Y
+}
+
+func (p *picture) labelLoads(s *sheet) {
+	for i, l := range p.sec.Loads {
+		up, _ := p.loadLine(s, i)
+		if up == nil {
+			continue
+		}
+		x := (up[0].X + up[len(up)-1].X) / 2
+		txt := l.Name
+		if txt != "" {
+			txt += " "
+		}
+		txt += number(l.Pressure, 0) + " kPa"
+		if l.Variable {
+			txt += " (variable)"
+		}
+		s.label(noteOf(bodyFace, loadInk, 130, txt), xy{x, heightAt(up, x)}, above)
+	}
+}
