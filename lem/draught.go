@@ -245,8 +245,9 @@ func (m *Model) addWater(d *draught, c *column, xm float64) {
 	if d.water != nil {
 		c.water = lineOver(d.water, c.x0, c.x1)
 	}
-	for _, f := range w.Free {
-		if f.FromX < xm && xm < f.ToX && f.Level > c.ground.at(xm) {
+	lowest := min(c.ground.at(c.x0), c.ground.at(c.x1))
+	for _, f := range w.Free { // Water that reaches to a vertical face stands against all of the drawn-out step.
+		if f.FromX-d.step < xm && xm < f.ToX+d.step && f.Level > lowest+d.step {
 			c.free = max(c.free, f.Level)
 		}
 	}

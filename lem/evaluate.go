@@ -169,7 +169,7 @@ func (ws *Workspace) driving(leftward bool) float64 {
 	}
 	for i := range ss {
 		if s := &ss[i]; s.h != 0 || s.k != 0 {
-			d += s.h*(ws.centre.Y-s.ground) + s.k*(ws.centre.Y-s.ky)
+			d += s.h*(ws.centre.Y-s.hy) + s.k*(ws.centre.Y-s.ky)
 		}
 	}
 	return d / ws.radius

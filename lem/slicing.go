@@ -126,10 +126,8 @@ func (m *Model) fill(s *slice, col *column, l *layer, length float64) {
 	s.q, s.h, s.k = s.soilW, 0, 0
 	s.variable = col.variable
 	s.ground = col.ground.at(s.x)
-	if col.free > s.ground {
-		p := GammaW * (col.free - s.ground) * b
-		s.q += p
-		s.h = p * col.ground.b
+	if m.pooled {
+		s.press(col.free, col.ground.b)
 	}
 	var u float64
 	switch l.pore {
@@ -156,6 +154,24 @@ func (m *Model) fill(s *slice, col *column, l *layer, length float64) {
 		s.k = m.kh * s.soilW
 		s.ky = m.weightLevel(col, l, s, weight)
 	}
+}
+
+// press puts free water on the ground over a slice, which has the given slope. On a vertical face, drawn out to a slope that only part of may
+// stand in water, the push must act at its own level, a third of the depth above the foot.
+func (s *slice) press(free, slope float64) {
+	half := math.Abs(slope) * s.b / 2
+	deep, shallow := free-(s.ground-half), max(0, free-(s.ground+half))
+	if !(deep > 0) {
+		return
+	}
+	wet := s.b
+	if shallow == 0 && half > 0 {
+		wet = deep / math.Abs(slope)
+	}
+	p := GammaW * (deep + shallow) / 2 * wet
+	s.q += p
+	s.h = p * slope
+	s.hy = free - 2.0/3*(deep*deep+deep*shallow+shallow*shallow)/(deep+shallow)
 }
 
 // head returns the level of the piezometric head at a point, drains counted: see Drawdown.

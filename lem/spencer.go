@@ -109,7 +109,7 @@ func (ws *Workspace) closure(f, lambda float64, leftward bool) closing {
 		c.mF += stepF*y - lambda*(c.eF+eF)*half
 		c.mL += stepL*y - (c.e+e+lambda*(c.eL+eL))*half
 		if s.h != 0 || s.k != 0 {
-			c.m += s.h*(s.ground-s.y) + s.k*(s.ky-s.y)
+			c.m += s.h*(s.hy-s.y) + s.k*(s.ky-s.y)
 		}
 		c.e, c.eF, c.eL = e, eF, eL
 	}
@@ -197,7 +197,7 @@ func (ws *Workspace) admittedSpencer(f, lambda float64, leftward bool) Status {
 			g := (s.sin - s.cos*t) * mm
 			before := e
 			e += (s.h + s.k + g*s.q - (s.cl-s.ul*s.tan)/f*mm) / (1 + g*lambda)
-			m += (e-before)*s.y - lambda*(before+e)*s.b/2 + s.h*(s.ground-s.y) + s.k*(s.ky-s.y)
+			m += (e-before)*s.y - lambda*(before+e)*s.b/2 + s.h*(s.hy-s.y) + s.k*(s.ky-s.y)
 			if pass == 0 {
 				greatest = max(greatest, math.Abs(e))
 				continue

@@ -26,6 +26,7 @@ type slice struct {
 	q        float64 // Vertical force: soil, surcharge, free water, kN.
 	soilW    float64 // Part of q that an earthquake acts on, kN.
 	h        float64 // Horizontal push of free water on the ground, positive in the direction of movement, kN.
+	hy       float64 // Level at which h acts, m.
 	ground   float64 // Level of the ground at x, m.
 	k        float64 // Horizontal earthquake force, kN.
 	ky       float64 // Level at which k acts, m.
