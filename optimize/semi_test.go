@@ -2,7 +2,6 @@ package optimize
 
 import (
 	"context"
-	"fmt"
 	"math"
 	"slices"
 	"testing"
@@ -238,26 +237,4 @@ func margin[C any](p Problem[C], x []float64, c *C) float64 {
 	d := p.Open(x)
 	defer d.Close()
 	return d.Margin(c)
-}
-
-func ExampleMinimize() {
-	// The least r such that the circle of radius r round the origin covers the curve (cos t, 2 sin t): cuts are angles.
-	p := interval{
-		axes: []Axis{{Name: "r", Min: 0.5, Max: 4, Step: 0.25}},
-		cost: func(x []float64) float64 { return math.Pi * x[0] * x[0] },
-		margin: func(x []float64, t float64) float64 {
-			return x[0] - math.Hypot(math.Cos(t), 2*math.Sin(t))
-		},
-		lo: 0, hi: math.Pi,
-	}
-	r, err := Minimize(context.Background(), p.problem(), Settings[float64]{})
-	if err != nil {
-		fmt.Println(err)
-		return
-	}
-	fmt.Printf("%v: r = %.2f, cost %.2f\n", r.Status, r.X[0], r.Cost)
-	fmt.Printf("%d cheaper designs, each with a witness; %d unresolved\n", len(r.Lattice), r.Unresolved)
-	// Output:
-	// optimal: r = 2.00, cost 12.57
-	// 6 cheaper designs, each with a witness; 0 unresolved
 }
