@@ -1,6 +1,11 @@
 package remedies
 
-import "standfast/optimize"
+import (
+	"math"
+
+	"standfast/lem"
+	"standfast/optimize"
+)
 
 // bermKind is a berm of fill at the toe.
 func bermKind() Kind {
@@ -17,7 +22,7 @@ func bermKind() Kind {
 			{
 				// At least 3 m for an excavator (common practice, no source).
 				Name: "top_width", Unit: "m", Meaning: "Width of the top from where it meets the face of the slope to its outer edge.",
-				Min: 0, Max: 200, Default: optimize.Axis{Name: "top_width", Min: 3, Max: 10, Step: 0.25},
+				Min: 0.1, Max: 200, Default: optimize.Axis{Name: "top_width", Min: 3, Max: 10, Step: 0.25},
 			},
 			{
 				// 1V:2H to 1V:3H is usual (common practice, no source).
@@ -26,6 +31,52 @@ func bermKind() Kind {
 			},
 		},
 		Choices: []Choice{{Name: "fill", Soil: true, Meaning: "Soil of the fill."}},
+		order:   orderFill,
 		New:     newBerm,
+	}
+}
+
+func newBerm(_ *Job, r *Request) (Remedy, error) {
+	return &earthworks{noun: "berm", soil: r.soil("fill"), shape: bermShape("berm")}, nil
+}
+
+// bermShape is a level top at height x[0] above the toe, of width x[1] from where it meets the face before works to its outer edge,
+// with an outer face at x[2] to its first meeting with the ground. Where the face has been cut back, the top runs on inward to it.
+func bermShape(noun string) func(*slope, []float64) shape {
+	return func(s *slope, x []float64) shape {
+		height, width, n := x[0], x[1], x[2]
+		limit := "shape of the " + noun
+		if height > s.height()+sameLevel {
+			return noShape(limit, height-s.height(), "top of %s %s m above the toe lies above the crest, %s m above the toe", noun, metres(height), metres(s.height()))
+		}
+		level := s.toe.Y + height
+		flat := ray(s.before, lem.Point{X: s.toe.X, Y: level}, math.Inf(1))
+		inner, ok := meet(flat, s.before, s.toe.X, s.crest.X, lower)
+		if !ok {
+			return noShape(limit, 0, "top of %s %s m above the toe does not meet the face", noun, metres(height))
+		}
+		heel, ok := meet(flat, s.ground, inner.X, s.ground.Left(), lower)
+		if !ok {
+			return noShape(limit, 0, "top of %s %s m above the toe does not meet the new face", noun, metres(height))
+		}
+		edge := lem.Point{X: inner.X + width, Y: level}
+		if under := s.ground.At(edge.X) - level; under > sameLevel {
+			return noShape(limit, under, "outer edge of %s at x = %s m lies below the ground", noun, metres(s.x(edge.X)))
+		}
+		face := ray(s.ground, edge, n)
+		foot, ok := meet(face, s.ground, edge.X, s.ground.Right(), lower)
+		if !ok || edge.X > s.ground.Right() {
+			end := face[len(face)-1]
+			return noShape("ground within the section", end.Y-levelRight(s.ground, end.X), "outer face of %s at %s meets no ground in the section", noun, batterText(n))
+		}
+		return shape{
+			line: lem.Profile{heel, edge, foot}, fill: true,
+			uphill: "back of " + noun, foot: "toe of " + noun,
+			dims: []Dimension{
+				lengthDim("top width", inner, edge),
+				lengthDim("height", lem.Point{X: edge.X, Y: s.toe.Y}, edge),
+				batterDim(edge, foot, n),
+			},
+		}
 	}
 }

@@ -1,6 +1,10 @@
 package remedies
 
-import "standfast/optimize"
+import (
+	"fmt"
+
+	"standfast/optimize"
+)
 
 // buttressKind is a buttress of free-draining rockfill at the toe.
 func buttressKind() Kind {
@@ -17,7 +21,7 @@ func buttressKind() Kind {
 			{
 				// 2 m to 4 m is usual (common practice, no source).
 				Name: "top_width", Unit: "m", Meaning: "Width of the top from where it meets the face of the slope to its outer edge.",
-				Min: 0, Max: 200, Default: optimize.Axis{Name: "top_width", Min: 2, Max: 6, Step: 0.25},
+				Min: 0.1, Max: 200, Default: optimize.Axis{Name: "top_width", Min: 2, Max: 6, Step: 0.25},
 			},
 			{
 				// 1V:1.5H to 1V:2H is usual for rockfill (common practice, no source).
@@ -26,6 +30,16 @@ func buttressKind() Kind {
 			},
 		},
 		Choices: []Choice{{Name: "fill", Soil: true, Meaning: "Soil of the rockfill; it must be free-draining."}},
+		order:   orderFill,
 		New:     newButtress,
 	}
+}
+
+// newButtress makes the remedy; its fill must drain freely, since nothing else carries water away from its back.
+func newButtress(j *Job, r *Request) (Remedy, error) {
+	soil := r.soil("fill")
+	if !j.Section.Soils[soil].FreeDraining {
+		return nil, fmt.Errorf("%w: buttress: fill %q is not free-draining; choose a free-draining rockfill, or a berm", ErrRequest, j.Section.Soils[soil].Name)
+	}
+	return &earthworks{noun: "buttress", soil: soil, shape: bermShape("buttress")}, nil
 }

@@ -1,6 +1,22 @@
 package remedies
 
-import "standfast/optimize"
+import (
+	"fmt"
+	"slices"
+
+	"standfast/lem"
+	"standfast/optimize"
+)
+
+// Places of the parameters of trench drains.
+const (
+	drainDepth = iota
+	drainSpacing
+	drainWidth
+	drainEffectiveness
+	drainFrom
+	drainTo
+)
 
 // trenchDrainsKind is a set of stone-filled trenches that run down the slope.
 func trenchDrainsKind() Kind {
@@ -41,6 +57,20 @@ func trenchDrainsKind() Kind {
 		Choices: []Choice{
 			{Name: "low_permeability", Soil: true, Optional: true, Meaning: "Soil of low permeability that the trenches reach down to; their invert is taken at its top."},
 		},
-		New: newTrenchDrains,
+		order: orderDrains,
+		New:   newTrenchDrains,
 	}
+}
+
+// newTrenchDrains makes the remedy. How far the head falls must come from somewhere: a given effectiveness, or the series for drains
+// that reach down to soil of low permeability.
+func newTrenchDrains(j *Job, r *Request) (Remedy, error) {
+	soil := r.soil("low_permeability")
+	if r.Axes[drainEffectiveness].Name == "" && soil == noSoil {
+		return nil, fmt.Errorf("%w: trench_drains: how far the drains lower the water is not known: name the soil that they reach down to under low_permeability, or give an effectiveness", ErrRequest)
+	}
+	if soil != noSoil && !slices.ContainsFunc(j.Section.Strata, func(s lem.Stratum) bool { return s.Soil == soil }) {
+		return nil, fmt.Errorf("%w: trench_drains: low_permeability names %q, which is no stratum of the section", ErrRequest, j.Section.Soils[soil].Name)
+	}
+	return &trenchDrains{soil: soil}, nil
 }

@@ -1,6 +1,9 @@
 package remedies
 
-import "standfast/optimize"
+import (
+	"standfast/lem"
+	"standfast/optimize"
+)
 
 // waterLoweringKind is a plain lowering of the water lines, by whatever means: a what-if, not works.
 func waterLoweringKind() Kind {
@@ -15,6 +18,28 @@ func waterLoweringKind() Kind {
 			},
 		},
 		WhatIf: true,
+		order:  orderWater,
 		New:    newWaterLowering,
 	}
+}
+
+type waterLowering struct{}
+
+func newWaterLowering(*Job, *Request) (Remedy, error) { return waterLowering{}, nil }
+
+// Apply lowers the lines of every situation by x[0]. Stages keep their water, which is on the safe side.
+func (waterLowering) Apply(j *Job, on *Proposal, x []float64) *Proposal {
+	p := on.clone()
+	stage := p.stageWater
+	p.eachWater(j, func(line int, w *lem.Water) {
+		if j.Waters[line].Artesian {
+			p.note("water line %q is artesian and is not lowered", j.Waters[line].Name)
+			return
+		}
+		w.Line = shifted(w.Line, -x[0])
+	})
+	p.stageWater = stage
+	p.note("a what-if: water lines lie %s m lower by means that are not designed here", metres(x[0]))
+	p.finish(j)
+	return p
 }

@@ -1,0 +1,102 @@
+package remedies
+
+import (
+	"fmt"
+
+	"standfast/lem"
+)
+
+// earthworks is any remedy that gives the slope a new surface.
+type earthworks struct {
+	noun  string // For messages: "berm".
+	soil  int    // Soil of the fill; noSoil: none was named and nothing may be filled.
+	shape func(s *slope, x []float64) shape
+}
+
+// Apply cuts and fills to the shape at x.
+func (w *earthworks) Apply(j *Job, on *Proposal, x []float64) *Proposal {
+	p := on.clone()
+	p.mayFill = p.mayFill || w.soil != noSoil
+	f := slopeOf(j, on)
+	sh := w.shape(f, x).own(f)
+	p.Violations = append(p.Violations, sh.faults...)
+	if sh.line != nil {
+		p.Dimensions = append(p.Dimensions, sh.dims...)
+		w.build(j, p, &sh, f.mirrored)
+	}
+	p.finish(j)
+	return p
+}
+
+// build does the works of a shape, in the section's own coordinates: cut first, then fill.
+func (w *earthworks) build(j *Job, p *Proposal, sh *shape, mirrored bool) {
+	var done []run
+	if sh.cut {
+		done = p.cutTo(j, spliced(p.Section.Ground, sh.line, sh.from(), sh.to(), lower), w.noun)
+	}
+	if sh.fill {
+		after := spliced(p.Section.Ground, sh.line, sh.from(), sh.to(), upper)
+		if w.soil == noSoil {
+			if h, x := highest(after, p.Section.Ground, sh.from(), sh.to()); h > limitSlack {
+				p.violate("fill", h, "the %s runs %s m above the ground at x = %s m and no fill soil is named: name one under fill", w.noun, metres(h), metres(x))
+			}
+		} else {
+			done = append(done, p.fillTo(j, after, w.soil, w.noun)...)
+		}
+	}
+	left, right := sh.uphill, sh.foot
+	if mirrored {
+		left, right = right, left
+	}
+	p.checkFences(j, done, left, right)
+}
+
+// cutTo lowers the ground, measures the cut by soil, clips the water lines to it and checks the no-dig zones. It returns the
+// stretches that it cut.
+func (p *Proposal) cutTo(j *Job, after lem.Profile, noun string) []run {
+	runs := runsAbove(p.Section.Ground, after)
+	for _, r := range runs {
+		addSoilAreas(p.Quantities.Cut, &p.Section, p.Section.Ground, after, r.from, r.to)
+		p.checkDig(j, after, r.from, r.to, noun)
+	}
+	p.Section.Ground = after
+	p.clipWater(j, runs)
+	return runs
+}
+
+// fillTo raises the ground by bodies of a soil, measures them, marks the soils that they load and checks the no-load zones and
+// maximum levels. It returns the stretches that it filled.
+func (p *Proposal) fillTo(j *Job, after lem.Profile, soil int, noun string) []run {
+	ground := p.Section.Ground
+	runs := runsAbove(after, ground)
+	for _, r := range runs {
+		p.Quantities.Fill[soil] += r.area
+		addSoilAreas(p.loaded, &p.Section, ground, shifted(ground, r.from-r.to), r.from, r.to)
+		p.checkLoad(j, after, r.from, r.to, noun)
+	}
+	for i := range runs {
+		p.Section.Placed = append(p.Section.Placed, lem.Body{Soil: soil, Outline: runs[i].outline()})
+	}
+	p.Section.Ground = after
+	return runs
+}
+
+// violate adds a violation.
+func (p *Proposal) violate(limit string, by float64, format string, args ...any) {
+	p.Violations = append(p.Violations, Violation{Limit: limit, Detail: fmt.Sprintf(format, args...), By: by})
+}
+
+// note adds a note unless it is there already.
+func (p *Proposal) note(format string, args ...any) {
+	p.Notes = appendOnce(p.Notes, fmt.Sprintf(format, args...))
+}
+
+// appendOnce appends a text that is not in the list yet.
+func appendOnce(list []string, text string) []string {
+	for _, t := range list {
+		if t == text {
+			return list
+		}
+	}
+	return append(list, text)
+}

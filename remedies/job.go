@@ -1,0 +1,96 @@
+package remedies
+
+import "standfast/lem"
+
+// Job is what is asked: the slope as it is, the situations it must stand in, the limits of the site and the remedies to size.
+type Job struct {
+	Title  string
+	Length float64 // Run of the works along the slope, m.
+
+	Section    lem.Section // As it is: Section.Ground equals its GroundBefore.
+	Crest, Toe lem.Point   // Of the slope to be remedied, before works.
+	Clay       []bool      // By soil: slow-draining; fill on it gets an end-of-construction check.
+
+	Waters     []WaterLine
+	Situations []Situation
+	Stage      StageSettings
+
+	Limits    Limits
+	MinDepth  float64       // Depth of interest: slips nowhere deeper below ground than this are left out, m.
+	Head      lem.Range     // Daylight range of slips at the head; zero: everywhere.
+	Exit      lem.Range     // Daylight range of slips at the toe; zero: everywhere.
+	Direction lem.Direction // Movement that searches look at.
+
+	Requests []Request // Remedies to size.
+	Trials   []Trial   // The user's own works, only checked.
+}
+
+// Facing returns +1 if the slope descends to the right, -1 if it descends to the left.
+func (j *Job) Facing() float64 {
+	if j.Toe.X < j.Crest.X {
+		return -1
+	}
+	return 1
+}
+
+// Height returns the height of the slope from toe to crest, m.
+func (j *Job) Height() float64 { return j.Crest.Y - j.Toe.Y }
+
+// WaterLine is a piezometric line under its name. A line is clipped to the ground where works cut below it, unless it is artesian.
+type WaterLine struct {
+	Name     string
+	Line     lem.Profile
+	Artesian bool
+}
+
+// Situation is a design situation: a state of the ground with the factor of safety required in it.
+type Situation struct {
+	Name      string
+	Water     int // Index into Job.Waters; -1: dry.
+	Free      []lem.FreeWater
+	Undrained []bool  // By soil; nil: all drained.
+	Kh        float64 // Outward pseudo-static coefficient.
+	// RequiredFS is the factor of safety required. When RatioToExisting is not 0 it is resolved by Study as that ratio times the
+	// FS of the existing slope in this situation.
+	RequiredFS      float64
+	RatioToExisting float64
+	DrainsWorking   float64 // Share of the drains' effect that counts in this situation, 0 to 1.
+}
+
+// StageSettings hold for construction stages.
+type StageSettings struct {
+	Given      bool    // False: the case has no stage settings and stages are not checked, which the output says.
+	Water      int     // Index into Job.Waters; -1: dry.
+	RequiredFS float64 // FS required in every stage.
+}
+
+// Limits are the limits of the works.
+type Limits struct {
+	Left, Right *Fence // The works stay between; nil: no limit on that side.
+	KeepClear   []KeepClear
+	MaxLevels   []MaxLevel
+	Outfall     *float64 // Lowest level at which a drain can discharge, m; nil: none given.
+}
+
+// Fence is a side limit of the works.
+type Fence struct {
+	Name string // As the user calls it; "left limit" or "right limit" if not named.
+	X    float64
+}
+
+// KeepClear is a zone that no dig or no load may enter.
+type KeepClear struct {
+	Name       string
+	FromX, ToX float64
+	NoDig      bool
+	NoLoad     bool
+	// DigBelow, when not nil, is the depth below ground before works down to which digging is still allowed, m.
+	DigBelow *float64
+}
+
+// MaxLevel is the greatest level of the ground after works between FromX and ToX, m.
+type MaxLevel struct {
+	Name       string
+	FromX, ToX float64
+	Level      float64
+}

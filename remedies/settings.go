@@ -1,0 +1,23 @@
+package remedies
+
+// Settings are the settings of a study. The zero value is the default.
+type Settings struct {
+	Workers   int     // Goroutines; 0: all cores. The answer does not depend on it.
+	Seed      uint64  // Of the searches.
+	Slices    int     // Slices of a slip in a search; 0: the engine's default.
+	Allowance float64 // FS by which an answer must exceed the requirement; 0: DefaultAllowance.
+	Curves    bool    // Also size each option for a range of required FS.
+	Progress  func(Progress)
+}
+
+// DefaultAllowance is the allowance for the search being finite: a design is accepted when every FS is at least the required FS
+// plus this, unrounded.
+const DefaultAllowance = 0.005
+
+// Progress is told to the caller while a study runs.
+type Progress struct {
+	Option string  // Being sized.
+	Done   int     // Options finished.
+	Total  int     // Options in all.
+	Share  float64 // Of this option, 0 to 1, an estimate.
+}

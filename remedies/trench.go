@@ -1,0 +1,213 @@
+package remedies
+
+import (
+	"math"
+
+	"standfast/lem"
+)
+
+const (
+	// drainStation is the greatest distance between points at which the ratio lowered is worked out, m. Between them it is linear.
+	// The mean ratio is a concave function of the head, so that is on the safe side; the ratio at midspan is convex where the head is
+	// small, where the line overstates it by less than 0.002.
+	drainStation = 1
+	// midspanNote marks the check midway between drains.
+	midspanNote = "midspan between drains"
+)
+
+// trenchDrains is the remedy with its choices made.
+type trenchDrains struct {
+	soil int // Soil of low permeability reached; noSoil if the effectiveness is given.
+}
+
+// trench is one trench as a line of the section, in the section's own coordinates.
+type trench struct {
+	from, to float64
+	spacing  float64 // Centre to centre, m.
+	clear    float64 // Between trenches, m.
+	width    float64
+	invert   lem.Profile // From x = from to x = to.
+}
+
+// Apply lowers the pore pressure of every situation in the share that its drains work, and adds to each such situation the state
+// midway between drains.
+func (d *trenchDrains) Apply(j *Job, on *Proposal, x []float64) *Proposal {
+	p := on.clone()
+	f := slopeOf(j, on)
+	t, ok := d.trench(j, f, p, x)
+	if ok {
+		d.measure(j, p, f, t)
+	}
+	for i, s := range j.Situations {
+		if s.Water == dry || s.DrainsWorking == 0 {
+			continue
+		}
+		if j.Waters[s.Water].Artesian {
+			p.note("water line %q is artesian: trench drains are not taken to lower it", j.Waters[s.Water].Name)
+			continue
+		}
+		mid := p.Waters[i]
+		if ok {
+			mid.Drains = t.drawdown(mid.Line, s.DrainsWorking, midspanRatio(x[drainEffectiveness]))
+			p.Waters[i].Drains = t.drawdown(p.Waters[i].Line, s.DrainsWorking, meanRatio(x[drainEffectiveness]))
+		}
+		p.variants = append(p.variants, variant{situation: i, note: midspanNote, water: mid})
+	}
+	d.explain(p, x)
+	p.finish(j)
+	return p
+}
+
+// explain notes where the fall of the head comes from.
+func (d *trenchDrains) explain(p *Proposal, x []float64) {
+	if math.IsNaN(x[drainEffectiveness]) {
+		p.note("trench drains: pore pressure from the series for drains down to soil of low permeability, the water line taken as fed from the surface")
+		return
+	}
+	p.note("trench drains: effectiveness as given, a mean between drains; midway between them the head left is taken as 1.5 times that, as for a parabola")
+}
+
+// trench sets out a trench; it reports false, with the violation added, where none can be.
+func (d *trenchDrains) trench(j *Job, s *slope, p *Proposal, x []float64) (*trench, bool) {
+	const limit = "layout of the trench drains"
+	t := &trench{from: j.Toe.X, to: j.Crest.X, spacing: x[drainSpacing], width: x[drainWidth], clear: x[drainSpacing] - x[drainWidth]}
+	if !math.IsNaN(x[drainFrom]) {
+		t.from = x[drainFrom]
+	}
+	if !math.IsNaN(x[drainTo]) {
+		t.to = x[drainTo]
+	}
+	t.from, t.to = math.Min(t.from, t.to), math.Max(t.from, t.to)
+	before := j.Section.Ground
+	switch {
+	case t.clear <= 0:
+		p.violate(limit, -t.clear, "trenches %s m wide leave no ground between them at a spacing of %s m", metres(t.width), metres(t.spacing))
+		return nil, false
+	case t.to-t.from <= sameLevel:
+		p.violate(limit, 0, "trench drains from x = %s m to x = %s m have no length", metres(t.from), metres(t.to))
+		return nil, false
+	case t.from < before.Left() || t.to > before.Right():
+		p.violate(limit, math.Max(before.Left()-t.from, t.to-before.Right()), "trench drains from x = %s m to x = %s m reach outside the section", metres(t.from), metres(t.to))
+		return nil, false
+	}
+	bottom := shifted(before, -x[drainDepth])
+	if d.soil != noSoil {
+		firm, ok := firstTop(&j.Section, d.soil, t.from, t.to)
+		name := j.Section.Soils[d.soil].Name
+		if !ok {
+			p.violate("low_permeability", 0, "%s does not lie under the whole length of the trench drains, x = %s to %s m: shorten them or give an effectiveness", name, metres(t.from), metres(t.to))
+			return nil, false
+		}
+		if short, at := highest(bottom, firm, t.from, t.to); short > limitSlack && math.IsNaN(x[drainEffectiveness]) {
+			p.violate("low_permeability", short, "trench drains %s m deep do not reach the top of %s at x = %s m, %s m below ground: deepen them or give an effectiveness",
+				metres(x[drainDepth]), name, metres(at), metres(x[drainDepth]+short))
+			return nil, false
+		}
+		bottom = spliced(bottom, firm, t.from, t.to, upper)
+	}
+	t.invert = clipped(bottom, t.from, t.to)
+	return t, true
+}
+
+// firstTop returns the level at which a soil of the strata is first met going down, and whether it is met at all from x = from to
+// x = to.
+func firstTop(s *lem.Section, soil int, from, to float64) (lem.Profile, bool) {
+	first := 0
+	for s.Strata[first].Soil != soil {
+		first++
+	}
+	top := spliced(s.Strata[first].Top, s.Ground, from, to, lower)
+	for _, st := range s.Strata[first+1:] {
+		if h, _ := highest(st.Top, top, from, to); h > limitSlack { // pinched out there
+			return nil, false
+		}
+	}
+	return top, true
+}
+
+// clipped returns the part of a profile from x = from to x = to.
+func clipped(p lem.Profile, from, to float64) lem.Profile {
+	var out path
+	out.add(from, levelRight(p, from))
+	for _, q := range p {
+		if q.X > from && q.X < to {
+			out.add(q.X, q.Y)
+		}
+	}
+	out.add(to, levelLeft(p, to))
+	return lem.Profile(out)
+}
+
+// measure adds the quantities and the dimension of the trenches and checks the limits.
+func (d *trenchDrains) measure(j *Job, p *Proposal, s *slope, t *trench) {
+	var area, length float64
+	for _, r := range runsAbove(clipped(p.Section.Ground, t.from, t.to), t.invert) {
+		area += r.area
+	}
+	for i := 1; i < len(t.invert); i++ {
+		a, b := t.invert[i-1], t.invert[i]
+		length += math.Hypot(b.X-a.X, b.Y-a.Y)
+	}
+	p.Quantities.TrenchDig += area * t.width / t.spacing
+	p.Quantities.Stone += area * t.width / t.spacing
+	p.Quantities.Drain += length / t.spacing
+
+	left, right, low := "head of trench drains", "outlet of trench drains", t.invert[len(t.invert)-1]
+	if s.mirrored {
+		left, right, low = right, left, t.invert[0]
+	}
+	p.checkSpan(j, t.from, t.to, left, right)
+	p.checkDig(j, t.invert, t.from, t.to, "trench drain")
+	if o := j.Limits.Outfall; o != nil && *o-low.Y > limitSlack {
+		p.violate("outfall", *o-low.Y, "invert of trench drains at their low end, x = %s m, is at level %s m, outfall is at %s m", metres(low.X), metres(low.Y), metres(*o))
+	}
+	middle := (t.from + t.to) / 2
+	p.Dimensions = append(p.Dimensions, lengthDim("drain depth",
+		lem.Point{X: middle, Y: j.Section.Ground.At(middle)}, lem.Point{X: middle, Y: t.invert.At(middle)}))
+}
+
+// ratioOf returns the ratio by which the head h above the invert falls at the invert, for a clear spacing.
+type ratioOf func(clear, h float64) float64
+
+// meanRatio returns the mean ratio between drains: as given, or by the series if effectiveness is NaN.
+func meanRatio(effectiveness float64) ratioOf {
+	if math.IsNaN(effectiveness) {
+		return func(clear, h float64) float64 { return 1 - meanHead(clear/h) }
+	}
+	return func(_, _ float64) float64 { return effectiveness }
+}
+
+// midspanRatio returns the ratio midway between drains.
+func midspanRatio(effectiveness float64) ratioOf {
+	if math.IsNaN(effectiveness) {
+		return func(clear, h float64) float64 { return 1 - midspanHead(clear/h) }
+	}
+	r := math.Max(0, 1-midspanOverMean*(1-effectiveness))
+	return func(_, _ float64) float64 { return r }
+}
+
+// drawdown returns what the trenches do to a water line, in the share that they work.
+func (t *trench) drawdown(line lem.Profile, working float64, ratio ratioOf) *lem.Drawdown {
+	d := &lem.Drawdown{Fade: t.clear / 2}
+	add := func(x, y, h float64) {
+		r := 0.0
+		if h > sameLevel {
+			r = working * ratio(t.clear, h)
+		}
+		if n := len(d.Invert); n > 0 && d.Invert[n-1].X == x && d.Invert[n-1].Y == y {
+			d.Ratio[n-1] = math.Min(d.Ratio[n-1], r) // at a step of the water line the lesser ratio is safe on both sides
+			return
+		}
+		d.Invert = append(d.Invert, lem.Point{X: x, Y: y})
+		d.Ratio = append(d.Ratio, r)
+	}
+	for _, p := range pieces(line, t.invert, t.from, t.to) {
+		n := math.Ceil((p.x1 - p.x0) / drainStation)
+		for i := 0.0; i <= n; i++ {
+			w := i / n
+			x, a, b := p.x0*(1-w)+p.x1*w, p.a0*(1-w)+p.a1*w, p.b0*(1-w)+p.b1*w
+			add(x, b, a-b)
+		}
+	}
+	return d
+}
