@@ -1,0 +1,212 @@
+package remedies
+
+import (
+	"context"
+	"fmt"
+	"math"
+	"runtime"
+	"slices"
+
+	"standfast/lem"
+	"standfast/optimize"
+)
+
+// Study answers a job: it assesses the slope as it is, sizes every remedy asked for and checks the user's own works. The answer depends
+// on the job and the settings only, not on the number of workers. The error is that of the context, or a fault of a request.
+func Study(ctx context.Context, job *Job, s Settings) (*Result, error) {
+	s = s.resolved()
+	j, existing, err := assess(ctx, job, &s)
+	if err != nil {
+		return nil, err
+	}
+	res := &Result{Job: j, Settings: s, Existing: *existing}
+	needed := !adequate(existing, &s)
+	total := len(j.Trials)
+	if needed {
+		total += len(j.Requests)
+	} else {
+		res.Least = existing.Name
+	}
+	done := 0
+	tell := func(name string, share float64) {
+		if s.Progress != nil {
+			s.Progress(Progress{Option: name, Done: done, Total: total, Share: share})
+		}
+	}
+	if needed {
+		for i := range j.Requests {
+			tell(j.Requests[i].Kind, 0)
+			o, err := size(ctx, j, &s, &j.Requests[i], existing, tell)
+			if err != nil {
+				return nil, err
+			}
+			res.Options = append(res.Options, *o)
+			done++
+		}
+	}
+	for i := range j.Trials {
+		tell(j.Trials[i].Name, 0)
+		o, err := checkTrial(ctx, j, &s, &j.Trials[i])
+		if err != nil {
+			return nil, err
+		}
+		res.Options = append(res.Options, *o)
+		done++
+	}
+	rank(res.Options)
+	if needed {
+		for i := range res.Options {
+			if o := &res.Options[i]; o.Status == MeetsTarget && !o.WhatIf {
+				res.Least = o.Name
+				break
+			}
+		}
+	}
+	return res, nil
+}
+
+// resolved returns the settings with defaults filled in.
+func (s Settings) resolved() Settings {
+	if s.Workers <= 0 {
+		s.Workers = runtime.GOMAXPROCS(0)
+	}
+	if s.Slices == 0 {
+		s.Slices = lem.DefaultSlices
+	}
+	if s.Allowance == 0 {
+		s.Allowance = DefaultAllowance
+	}
+	return s
+}
+
+// rank sorts options: those that meet the target in ascending earthworks, what-ifs behind them, those that fail last.
+func rank(os []Option) {
+	class := func(o *Option) int {
+		switch {
+		case o.Status == MeetsTarget && !o.WhatIf:
+			return 0
+		case o.Status == MeetsTarget:
+			return 1
+		case o.WhatIf:
+			return 3
+		}
+		return 2
+	}
+	slices.SortStableFunc(os, func(a, b Option) int {
+		if c := class(&a) - class(&b); c != 0 {
+			return c
+		}
+		qa, qb := &a.Proposal.Quantities, &b.Proposal.Quantities
+		switch ea, eb := qa.Earthworks(), qb.Earthworks(); {
+		case ea < eb || ea == eb && qa.Drain < qb.Drain:
+			return -1
+		case ea > eb || qa.Drain > qb.Drain:
+			return 1
+		}
+		return 0
+	})
+}
+
+// size sizes one remedy.
+func size(ctx context.Context, j *Job, s *Settings, r *Request, existing *Option, tell func(string, float64)) (*Option, error) {
+	w, err := newWorks(j, r.Kind, []Request{*r})
+	if err != nil {
+		return nil, err
+	}
+	z := newSizing(j, w, s)
+	if g := existing.Governing(); g != nil {
+		z.existingMargin = g.Margin()
+	}
+	res, err := z.minimize(ctx, z.cost, nil, tell)
+	if err != nil {
+		return nil, err
+	}
+	o := &Option{Name: w.name, Title: w.title, Remedies: kindNames(w), WhatIf: w.whatIf}
+	x := res.X
+	found := res.Lowest
+	if x == nil {
+		x = res.Best.X
+	}
+	if x == nil { // Limits or geometry forbid everything: show the smallest works.
+		x = w.smallest()
+	}
+	o.Parameters = w.values(x)
+	o.Proposal = w.apply(j, x)
+	d := z.openProposal(o.Proposal)
+	defer d.Close()
+	if res.X == nil && res.Best.X != nil {
+		if found, err = d.searchBoth(ctx); err != nil {
+			return nil, err
+		}
+	}
+	if len(found) > 0 {
+		o.Situations, o.Stages = split(d.outcomes(found))
+	}
+	z.judge(o, &res)
+	if o.Status == Infeasible {
+		if err := z.explain(ctx, o, &res, tell); err != nil {
+			return nil, err
+		}
+	}
+	if res.X != nil {
+		o.StepLess = z.stepsLess(&res)
+	}
+	o.Certificate = z.certificate(&res)
+	if s.Curves {
+		if o.Tradeoff, err = z.curve(ctx, o, &res); err != nil {
+			return nil, err
+		}
+	}
+	return o, nil
+}
+
+func kindNames(w *works) []string {
+	var names []string
+	for _, k := range w.kinds {
+		names = append(names, k.Name)
+	}
+	return names
+}
+
+// costFunc is the Cost of an optimize.Problem.
+type costFunc func(x []float64) (cost, tie float64, ok bool)
+
+// cost returns the earthworks of a design within the limits; fewer drains break ties.
+func (z *sizing) cost(x []float64) (cost, tie float64, ok bool) {
+	p := z.w.apply(z.j, x)
+	cost, tie = z.price(p, x)
+	return cost, tie, len(p.Violations) == 0
+}
+
+// price returns what is made least. A what-if has no works: the least change is the first parameter's.
+func (z *sizing) price(p *Proposal, x []float64) (cost, tie float64) {
+	if z.w.whatIf && len(x) > 0 {
+		return p.Quantities.Earthworks(), x[0]
+	}
+	return p.Quantities.Earthworks(), p.Quantities.Drain
+}
+
+// minimize runs the optimiser over the lattice of the works.
+func (z *sizing) minimize(ctx context.Context, cost costFunc, start []Cut, tell func(string, float64)) (optimize.Result[Cut], error) {
+	settings := optimize.Settings[Cut]{Workers: z.s.Workers, Seed: z.s.Seed, Allowance: z.s.Allowance, Start: start}
+	if tell != nil {
+		settings.Progress = func(p optimize.Progress) {
+			tell(z.w.name, float64(p.Done)/math.Max(1, float64(p.Designs)))
+		}
+	}
+	res, err := optimize.Minimize(ctx, optimize.Problem[Cut]{Axes: z.w.axes, Cost: cost, Open: z.open}, settings)
+	if err != nil {
+		return res, fmt.Errorf("%s: %w", z.w.name, err)
+	}
+	return res, nil
+}
+
+// searchBoth searches a design as a sizing does, search and audit together.
+func (d *design) searchBoth(ctx context.Context) ([]optimize.Found[Cut], error) {
+	found, err := d.Search(ctx, optimize.Effort{Seed: 1})
+	if err != nil {
+		return nil, err
+	}
+	audit, err := d.Search(ctx, optimize.Effort{Audit: true, Seed: 2})
+	return append(found, audit...), err
+}
