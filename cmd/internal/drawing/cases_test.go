@@ -70,6 +70,18 @@ func circleOutcome(name string, i int, required, fs float64, c lem.Point, r floa
 	arc := func(x float64) lem.Point {
 		return lem.Point{X: x, Y: c.Y - math.Sqrt(math.Max(0, r*r-(x-c.X)*(x-c.X)))}
 	}
+	// The ends are moved from the given guesses along the arc to where it meets the ground.
+	meet := func(x, outwards float64) float64 {
+		inside := arc(x).Y < g.At(x)
+		if !inside {
+			outwards = -outwards
+		}
+		for (arc(x).Y < g.At(x)) == inside {
+			x += outwards
+		}
+		return x
+	}
+	from, to = meet(from, -0.01), meet(to, 0.01)
 	return remedies.Outcome{
 		Check: remedies.Check{Name: name, SituationI: i, Required: required, Situation: lem.Situation{Name: name, Water: w}},
 		FS:    fs, Method: lem.Bishop, Slip: lem.Slip{Kind: lem.Circle, Centre: c, Radius: r},
@@ -100,7 +112,10 @@ func berm(d drawn, height, width, batter float64) drawn {
 	level := toe.Y + height
 	inner := lem.Point{X: toe.X - face*height, Y: level}
 	outer := lem.Point{X: inner.X + width, Y: level}
-	foot := lem.Point{X: outer.X + height*batter, Y: toe.Y - 0.05}
+	// The outer face meets the ground beyond the toe, which falls gently.
+	fall := (toe.Y - d.job.Section.Ground[3].Y) / (d.job.Section.Ground[3].X - toe.X)
+	run := (height + fall*(outer.X-toe.X)) / (1/batter - fall)
+	foot := lem.Point{X: outer.X + run, Y: level - run/batter}
 	sec := d.job.Section
 	sec.Ground = lem.Profile{sec.Ground[0], sec.Ground[1], inner, outer, foot, sec.Ground[3]}
 	sec.Placed = []lem.Body{{Soil: len(sec.Soils) - 1, Outline: []lem.Point{inner, outer, foot, toe}}}
@@ -248,7 +263,7 @@ func flat() drawn {
 	j.Stage = remedies.StageSettings{Given: true, Water: -1, RequiredFS: 1.1}
 	j.Limits = remedies.Limits{Right: &remedies.Fence{Name: "right limit", X: 330}}
 	d := drawn{job: j}
-	foot := lem.Point{X: 325, Y: 16.95}
+	foot := lem.Point{X: 325, Y: 17 - 2*7.0/302}
 	sec := j.Section
 	in, out := lem.Point{X: 312, Y: 19}, lem.Point{X: 321, Y: 19}
 	sec.Ground = lem.Profile{ground[0], ground[1], in, out, foot, ground[3]}
@@ -437,6 +452,9 @@ func tradeoffs(differing bool) []remedies.Option {
 		for i := range n {
 			shift := 0.02 * float64(i-n/2)
 			fs := required + shift + 0.004*float64(i%3)
+			if status != remedies.MeetsTarget {
+				fs -= 0.03
+			}
 			o.Tradeoff = append(o.Tradeoff, remedies.TradeoffPoint{Shift: shift, RequiredFS: required + shift, Reached: fs, Earthworks: a + b*float64(i)*(1+0.05*float64(i))})
 		}
 		return o

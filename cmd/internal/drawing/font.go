@@ -63,11 +63,17 @@ func (f face) descent() float64 { return 0.212 * f.size }
 // lineHeight is the distance between the baselines of two lines, points.
 func (f face) lineHeight() float64 { return leading * f.size }
 
+// noBreak is a blank at which no line is broken.
+const noBreak = '\u00a0'
+
 // clean replaces what cannot be set in the font or written to XML, so that a text drawn has the width that was measured.
 func clean(s string) string {
 	var buf sfnt.Buffer
 	f := faces()[0]
 	return strings.Map(func(r rune) rune {
+		if r == noBreak {
+			return r
+		}
 		if unicode.IsSpace(r) || unicode.IsControl(r) {
 			return ' '
 		}
@@ -100,7 +106,7 @@ func (f face) fit(s string, width float64) string {
 
 // wrap breaks s at blanks into lines of at most width, points, and shortens what does not fit into maxLines.
 func (f face) wrap(s string, width float64, maxLines int) []string {
-	words := strings.Fields(s)
+	words := strings.FieldsFunc(s, func(r rune) bool { return r == ' ' })
 	var lines []string
 	for len(words) > 0 && len(lines) < maxLines-1 {
 		n := 1

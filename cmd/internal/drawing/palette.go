@@ -45,6 +45,7 @@ var (
 	waterPen      = pen{waterInk, 1.1, nil}
 	waterOldPen   = pen{waterInk, 1.0, []float64{5, 3}}
 	waterOtherPen = pen{waterLight, 0.7, nil}
+	headPen       = pen{waterInk, 0.9, []float64{2.5, 1.8}}
 	invertPen     = pen{waterInk, 0.9, []float64{7, 2, 1.5, 2}}
 	slipPen       = pen{slipInk, 1.5, nil}
 	loadPen       = pen{loadInk, 0.7, nil}

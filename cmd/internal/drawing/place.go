@@ -116,14 +116,15 @@ var rings = []float64{0, 5, 12, 22, 34, 50, 70, 95, 125, 160}
 // directions is the number of directions tried at each distance.
 const directions = 16
 
-// place finds room for a box of w by h near an anchor, best on one side of it, and takes it. It reports false if there is none.
-func (p *placer) place(w, h float64, anchor xy, prefer side) (spot, bool) {
+// place finds room for a box of w by h near an anchor, best on one side of it, and takes it; a pointed label has a
+// leader line however near it stands. It reports false if there is none.
+func (p *placer) place(w, h float64, anchor xy, prefer side, pointed bool) (spot, bool) {
 	best, least := spot{}, math.Inf(1)
 	try := func(b Box) {
 		if !p.free(b) {
 			return
 		}
-		cost, s := p.cost(b, anchor, prefer, least)
+		cost, s := p.cost(b, anchor, prefer, pointed, least)
 		if cost < least {
 			best, least = s, cost
 		}
@@ -147,16 +148,14 @@ func (p *placer) place(w, h float64, anchor xy, prefer side) (spot, bool) {
 }
 
 // cost returns the cost of a free box for a label; it may stop early with a cost above the limit.
-func (p *placer) cost(b Box, anchor xy, prefer side, limit float64) (float64, spot) {
+func (p *placer) cost(b Box, anchor xy, prefer side, pointed bool, limit float64) (float64, spot) {
 	s := spot{box: b}
 	near := b.nearest(anchor)
 	d := math.Hypot(near.X-anchor.X, near.Y-anchor.Y)
 	c := b.centre()
 	turn := math.Atan2(c.Y-anchor.Y, c.X-anchor.X) - float64(prefer)
 	cost := d + turnCost*(1-math.Cos(turn))/2
-	if d > leaderFrom {
-		s.leader = true
-	}
+	s.leader = pointed || d > leaderFrom
 	if cost >= limit {
 		return cost, s
 	}

@@ -7,8 +7,8 @@ import (
 	"standfast/lem"
 )
 
-// thinnest is the depth of cut or fill below which two profiles count as one line, m.
-const thinnest = 1e-6
+// thinnest is the depth of cut or fill below which two profiles count as one line, m: less than a pen's width at any scale.
+const thinnest = 1e-3
 
 // limits returns the levels that a profile approaches at x from the left and from the right, m. They differ at a vertical step.
 func limits(p lem.Profile, x float64) (left, right float64) {

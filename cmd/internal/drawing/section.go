@@ -26,7 +26,7 @@ func Section(j *remedies.Job, o *remedies.Option, opts Options) (*Figure, error)
 	if o != nil && o.Proposal != nil {
 		p.sec = &o.Proposal.Section
 	}
-	if len(p.sec.Strata) == 0 || len(p.sec.GroundBefore()) < 2 || len(p.sec.Ground) < 2 {
+	if !drawable(p.sec) {
 		return nil, fmt.Errorf("section of %q: %w", j.Title, ErrNothingToDraw)
 	}
 	p.gather()
@@ -35,6 +35,16 @@ func Section(j *remedies.Job, o *remedies.Option, opts Options) (*Figure, error)
 		s = p.layOut(opts, s.unplaced)
 	}
 	return &s.fig, nil
+}
+
+// drawable reports whether a section has ground, and every stratum a top.
+func drawable(s *lem.Section) bool {
+	for _, t := range s.Strata {
+		if len(t.Top) == 0 {
+			return false
+		}
+	}
+	return len(s.Strata) > 0 && len(s.GroundBefore()) > 1 && len(s.Ground) > 1
 }
 
 // picture is a section about to be drawn, in section coordinates.
@@ -146,7 +156,7 @@ func (p *picture) chooseWidth() {
 	pad := shownAround * max(p.job.Height(), (hi-lo)/10)
 	lo, hi = max(lo-pad, p.x0), min(hi+pad, p.x1)
 	if p.x1-p.x0 > shownWhole*(hi-lo) {
-		p.x0, p.x1 = lo, hi
+		p.x0, p.x1 = max(math.Floor(lo), p.x0), min(math.Ceil(hi), p.x1)
 	}
 }
 

@@ -9,7 +9,13 @@ import (
 )
 
 // Offsets of a dimension line from what it measures, points, best first.
-var dimOffsets = []float64{15, -15, 25, -25, 37, -37, 52, -52, 70, 90}
+var dimOffsets = []float64{15, -15, 25, -25, 37, -37, 52, -52, 64, -64, 78, 94, 112}
+
+// Costs of a position for a dimension line, beside those of its label. They are set by eye.
+const (
+	offsetCost   = 0.5  // of each point of offset
+	dimCrossCost = 30.0 // of each line that it crosses
+)
 
 // arrow draws an arrowhead with its tip at a point, pointing in a direction.
 func (s *sheet) arrow(c color.NRGBA, tip, dir xy) {
@@ -70,7 +76,7 @@ func (s *sheet) tryDimension(a, b, u, normal xy, o, long float64, n note) (dimLa
 		short: long < 4*arrowHead,
 	}
 	mid := xy{(l.a.X + l.b.X) / 2, (l.a.Y + l.b.Y) / 2}
-	cost := math.Abs(o)
+	cost := offsetCost * math.Abs(o)
 	if along+4*arrowHead <= long {
 		l.inside = true
 		l.box = Box{mid.X - w/2, mid.Y - h/2, mid.X + w/2, mid.Y + h/2}
@@ -95,7 +101,7 @@ func (s *sheet) tryDimension(a, b, u, normal xy, o, long float64, n note) (dimLa
 		}
 		for i := range s.place.ink {
 			if k := &s.place.ink[i]; k.weight >= medium && crosses(q[0], q[1], k.a, k.b) {
-				cost += crossCost / 2
+				cost += dimCrossCost
 			}
 		}
 	}
@@ -122,11 +128,16 @@ func (s *sheet) drawDimension(a, b, u xy, l dimLayout) {
 	s.arrow(inkBlack, l.b, u)
 }
 
-// batter names the slope of a face.
+// batter names the slope of a face on its outer side.
 func (p *picture) batter(s *sheet, d remedies.Dimension) {
 	m := lem.Point{X: (d.From.X + d.To.X) / 2, Y: (d.From.Y + d.To.Y) / 2}
 	if p.inWindow(m.X) {
-		s.label(noteOf(bodyFace, inkBlack, 150, d.Label), s.view.at(m), above)
+		a, b := s.view.at(d.From), s.view.at(d.To)
+		out := side(math.Atan2(b.X-a.X, a.Y-b.Y)) // Square to the face.
+		if b.X < a.X {
+			out += math.Pi
+		}
+		s.label(noteOf(bodyFace, inkBlack, 150, d.Label), s.view.at(m), out)
 	}
 }
 
@@ -143,6 +154,9 @@ func (p *picture) markSlope(s *sheet) {
 // labelSlope names crest and toe.
 func (p *picture) labelSlope(s *sheet) {
 	words := func(name string, q lem.Point) string {
+		if p.opt != nil {
+			return name
+		}
 		return name + " (" + number(q.X, 2) + ", " + number(q.Y, 2) + ")"
 	}
 	s.label(noteOf(bodyFace, inkBlack, 150, words("crest", p.job.Crest)), s.view.at(p.job.Crest), above)

@@ -58,10 +58,10 @@ func (p *picture) fillKey() {
 func (p *picture) keyLimits() {
 	l := &p.job.Limits
 	if len(p.sec.Loads) > 0 {
-		p.key.addLine("surcharge", loadPen)
+		p.key.add("surcharge", sampleLoad)
 	}
 	if l.Left != nil || l.Right != nil {
-		p.key.addLine("limit of works", limitPen)
+		p.key.addLine("limit of works, arrow towards the works", limitPen)
 	}
 	if len(l.KeepClear) > 0 {
 		p.key.addHatch("keep-clear zone", paper, zonePen, 0)
@@ -83,7 +83,7 @@ func (p *picture) hasAdded() bool {
 // soilWords names a soil with its parameters.
 func (p *picture) soilWords(i int) string {
 	c := &p.sec.Soils[i]
-	words := []string{c.Name + ": γ " + number(c.UnitWeight, 1) + " kN/m³"}
+	words := []string{c.Name + ": γ" + string(noBreak) + number(c.UnitWeight, 1) + string(noBreak) + "kN/m³"}
 	if c.SaturatedUnitWeight != 0 && c.SaturatedUnitWeight != c.UnitWeight {
 		words[0] += " (" + number(c.SaturatedUnitWeight, 1) + " saturated)"
 	}
@@ -103,6 +103,9 @@ func (p *picture) soilWords(i int) string {
 	}
 	if c.FreeDraining {
 		words = append(words, "free-draining")
+	}
+	for i, w := range words[1:] {
+		words[i+1] = strings.ReplaceAll(w, " ", string(noBreak))
 	}
 	return strings.Join(words, ", ")
 }
@@ -181,13 +184,13 @@ func (p *picture) label(s *sheet) {
 	p.markSlope(s)
 	if p.opt != nil && p.opt.Proposal != nil {
 		for _, d := range p.opt.Proposal.Dimensions {
-			if !d.Batter {
-				p.dimension(s, d)
+			if d.Batter {
+				p.batter(s, d)
 			}
 		}
 		for _, d := range p.opt.Proposal.Dimensions {
-			if d.Batter {
-				p.batter(s, d)
+			if !d.Batter {
+				p.dimension(s, d)
 			}
 		}
 	}

@@ -206,6 +206,26 @@ func middle(ring []xy) xy {
 	return b.centre()
 }
 
+// loadRow returns how many surcharges stand below the i-th: those before it that share an x with it.
+func (p *picture) loadRow(i int) float64 {
+	row, l := 0.0, p.sec.Loads[i]
+	for _, o := range p.sec.Loads[:i] {
+		if o.FromX < l.ToX && l.FromX < o.ToX {
+			row++
+		}
+	}
+	return row
+}
+
+// sky returns the height kept free above the ground for labels, points.
+func (p *picture) sky() float64 {
+	rows := 0.0
+	for i := range p.sec.Loads {
+		rows = max(rows, p.loadRow(i))
+	}
+	return skyAbove + rows*loadStacking
+}
+
 // loadLine returns the line that a surcharge's arrows hang from, along the ground; nil outside the window. Surcharges that share an
 // x stand above each other.
 func (p *picture) loadLine(s *sheet, i int) (upper, lower []xy) {
@@ -214,12 +234,7 @@ func (p *picture) loadLine(s *sheet, i int) (upper, lower []xy) {
 	if x0 >= x1 {
 		return nil, nil
 	}
-	row := 0.0
-	for _, o := range p.sec.Loads[:i] {
-		if o.FromX < l.ToX && l.FromX < o.ToX {
-			row++
-		}
-	}
+	row := p.loadRow(i)
 	lower = s.view.line(crop(p.ground, x0, x1))
 	top := row*loadStacking + loadHeight + 2
 	for k := range lower {
@@ -244,6 +259,16 @@ func (p *picture) drawLoads(s *sheet) {
 			s.stroke(loadPen, light, []xy{head, {x, foot.Y + arrowHead/2}})
 			s.arrow(loadInk, foot, xy{0, -1})
 		}
+	}
+}
+
+// sampleLoad draws a surcharge in the key.
+func sampleLoad(s *sheet, b Box) {
+	s.add(stroke{loadPen, [][]xy{{{b.MinX + 4, b.MaxY}, {b.MaxX - 4, b.MaxY}}}})
+	for k := range 3 {
+		x := b.MinX + 4 + float64(k)*(b.width()-8)/2
+		s.add(stroke{loadPen, [][]xy{{{x, b.MaxY}, {x, b.MinY + arrowHead/2}}}})
+		s.arrow(loadInk, xy{x, b.MinY}, xy{0, -1})
 	}
 }
 

@@ -2,6 +2,7 @@ package drawing
 
 import (
 	"fmt"
+	"image/color"
 	"math"
 	"slices"
 	"strings"
@@ -46,7 +47,7 @@ func (p *picture) layOut(opts Options, listed []string) *sheet {
 	rest := 2*margin + headHeight + axisBelow + stripHeight + footHeight + 3*blockGap
 	dx, dy := p.x1-p.x0, p.hi-p.lo
 	frameWidth := inner - axisLeft
-	frameHeight := (frameWidth-2*besideFrame)*dy/dx + skyAbove
+	frameHeight := (frameWidth-2*besideFrame)*dy/dx + p.sky()
 	frameHeight = max(leastFrame, min(frameHeight, pageHeight-rest))
 	s.fig.Height = math.Ceil(rest + frameHeight)
 
@@ -56,7 +57,7 @@ func (p *picture) layOut(opts Options, listed []string) *sheet {
 	s.view = p.viewIn(frame)
 	s.place.area = frame.grown(-3)
 	p.drawSection(s)
-	s.axes("offset, m (equal scales)", "level, m")
+	s.axes("offset, m (equal scales)", "level, m", p.x0, p.x1)
 	stripTop := frame.MinY - axisBelow - blockGap
 	s.drawKey(cols, margin, stripTop, width)
 	s.drawTable(rows, margin+inner-tableWidth, stripTop)
@@ -69,8 +70,8 @@ func (p *picture) layOut(opts Options, listed []string) *sheet {
 // viewIn fits the window into a frame at equal scales.
 func (p *picture) viewIn(f Box) view {
 	dx, dy := p.x1-p.x0, p.hi-p.lo
-	scale := min((f.width()-2*besideFrame)/dx, (f.height()-skyAbove)/dy)
-	spare := f.height() - skyAbove - dy*scale
+	scale := min((f.width()-2*besideFrame)/dx, (f.height()-p.sky())/dy)
+	spare := f.height() - p.sky() - dy*scale
 	return view{
 		sx: scale, sy: scale, frame: f,
 		x0: (p.x0+p.x1)/2 - f.width()/2/scale,
@@ -93,8 +94,8 @@ func footLines(width float64, opts Options, listed []string) []string {
 // heading is what stands above a drawing.
 type heading struct {
 	title, status string
-	bad           bool
-	name          []string // In heavier type.
+	ink           color.NRGBA // of the status
+	name          []string    // In heavier type.
 	lines         []string
 }
 
@@ -110,6 +111,7 @@ func (p *picture) heading(width float64) heading {
 		h.name = []string{"Section as read: ground, strata, water, loads and limits"}
 	case o.Status == remedies.Existing:
 		h.name, h.status = []string{"Section as it is"}, "existing slope"
+		h.ink = inkBlack
 	default:
 		name := o.Title
 		if name == "" {
@@ -125,7 +127,9 @@ func (p *picture) heading(width float64) heading {
 			name += ": " + strings.Join(values, ", ")
 		}
 		h.name, h.status = headFace.wrap(clean(title(name)), width, 2), o.Status.String()
-		h.bad = o.Status != remedies.MeetsTarget
+		if h.ink = goodInk; o.Status != remedies.MeetsTarget {
+			h.ink = badInk
+		}
 	}
 	if p.works {
 		h.lines = append(h.lines, quantities(&o.Proposal.Quantities))
@@ -133,8 +137,8 @@ func (p *picture) heading(width float64) heading {
 	if p.gov != nil {
 		h.lines = append(h.lines, p.slipWords())
 	}
-	if o != nil && h.bad && o.Reason != "" {
-		h.lines = append(h.lines, bodyFace.wrap(clean(o.Reason), width, 3)...)
+	if o != nil && o.Status != remedies.MeetsTarget && o.Reason != "" {
+		h.lines = append(h.lines, bodyFace.wrap(clean(title(o.Reason)), width, 3)...)
 	}
 	if g := p.sec.GroundBefore(); p.x0 > g.Left() || p.x1 < g.Right() {
 		h.lines = append(h.lines, fmt.Sprintf("Shown from offset %s to %s of a section that runs from %s to %s.",
@@ -174,13 +178,9 @@ func checkName(c *remedies.Check) string {
 func (s *sheet) drawHeading(h heading, left, top, width float64) {
 	room := width
 	if h.status != "" {
-		c := goodInk
-		if h.bad {
-			c = badInk
-		}
 		w := headFace.width(h.status)
-		b := s.line(headFace, c, left+width-w-5, top-2, h.status).grown(4)
-		s.add(stroke{pen{c, 1, nil}, [][]xy{append(b.corners(), b.corners()[0])}})
+		b := s.line(headFace, h.ink, left+width-w-5, top-2, h.status).grown(4)
+		s.add(stroke{pen{h.ink, 1, nil}, [][]xy{append(b.corners(), b.corners()[0])}})
 		room -= w + 24
 	}
 	s.line(titleFace, inkBlack, left, top, titleFace.fit(clean(h.title), room))
@@ -266,7 +266,7 @@ func (s *sheet) drawTable(rows []fsRow, left, top float64) {
 	}
 	headFace := smallFace
 	headFace.bold = true
-	cell(headFace, fsRow{name: "situation or stage", required: "required", fs: "FS", method: "method"}, top)
+	cell(headFace, fsRow{name: "situation or stage", required: "required", fs: "FS", method: "method", verdict: "verdict"}, top)
 	y := top - tableRow
 	s.add(stroke{tickPen, [][]xy{{{left, y + 0.8}, {left + tableWidth, y + 0.8}}}})
 	for _, r := range rows {

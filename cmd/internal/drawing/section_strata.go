@@ -17,8 +17,7 @@ type strip struct {
 func (p *picture) labelStrata(s *sheet) {
 	for i := range p.bodies {
 		b := &p.bodies[i]
-		n := noteOf(bodyFace, inkBlack, 110, p.sec.Soils[b.soil].Name)
-		s.label(n, s.view.at(insideOf(b.outline)), above)
+		p.nameBody(s, noteOf(bodyFace, inkBlack, 110, p.sec.Soils[b.soil].Name), b.outline)
 	}
 	floor := lem.Profile{{X: p.x0, Y: s.view.y0}, {X: p.x1, Y: s.view.y0}}
 	for i, t := range p.tops {
@@ -28,6 +27,35 @@ func (p *picture) labelStrata(s *sheet) {
 		}
 		p.nameStrip(s, strip{p.sec.Soils[p.sec.Strata[i].Soil].Name, t, bottom})
 	}
+}
+
+// nameBody writes a name in the middle of an outline if it fits inside, else beside it.
+func (p *picture) nameBody(s *sheet, n note, outline []lem.Point) {
+	n.pointed = true
+	w, h := n.size()
+	at := s.view.at(insideOf(outline))
+	b := Box{at.X - w/2, at.Y - h/2, at.X + w/2, at.Y + h/2}
+	if len(n.lines) > 0 && s.place.free(b) && holds(s.view.line(outline), b) {
+		s.place.taken = append(s.place.taken, b)
+		s.write(n, b)
+		return
+	}
+	s.label(n, at, above)
+}
+
+// holds reports whether a box lies inside a ring: its upper and lower edges do.
+func holds(ring []xy, b Box) bool {
+	for _, y := range []float64{b.MinY, b.MaxY} {
+		xs := crossings([][]xy{ring}, y)
+		inside := false
+		for i := 0; i+1 < len(xs); i += 2 {
+			inside = inside || xs[i] <= b.MinX && b.MaxX <= xs[i+1]
+		}
+		if !inside {
+			return false
+		}
+	}
+	return true
 }
 
 // insideOf returns a point inside an outline: the middle of the longest of some level cuts through it.
@@ -89,6 +117,7 @@ func (p *picture) nameStrip(s *sheet, t strip) {
 		s.place.taken = append(s.place.taken, best)
 		s.write(n, best)
 	case thickest > 0:
+		n.pointed = true
 		s.label(n, anchor, below)
 	}
 }

@@ -42,7 +42,9 @@ func (p *picture) gatherWater() {
 		p.addWater(name, line, waterPen, "water line after works")
 	}
 	if drains != nil && len(line) > 0 {
-		p.addWater("head at drain invert", lowered(line, drains), waterPen, "water line after works")
+		if l := cropInside(lowered(line, drains), p.x0, p.x1); l != nil && len(drains.Invert) > 1 {
+			p.waters = append(p.waters, waterDrawn{"head at drain invert", l, headPen, "head left at the invert of drains"})
+		}
 	}
 	p.addFree(name, free)
 	for i, w := range p.opt.Proposal.Waters {
@@ -158,15 +160,20 @@ func ratioAt(d *lem.Drawdown, x float64) float64 {
 // drawFree fills free water down to the ground.
 func (p *picture) drawFree(s *sheet) {
 	for _, f := range p.free {
-		surface := lem.Profile{{X: f.FromX, Y: f.Level}, {X: f.ToX, Y: f.Level}}
-		wet := between(surface, lower(surface, crop(p.ground, f.FromX, f.ToX)))
-		s.add(fill{waterFill, s.view.lines(wet)})
-		for _, r := range wet {
+		s.add(fill{waterFill, s.view.lines(p.wet(f))})
+	}
+	for _, f := range p.free {
+		for _, r := range p.wet(f) {
 			x0, x1 := ends(r)
 			s.stroke(waterPen, medium, s.view.line([]lem.Point{{X: x0, Y: f.Level}, {X: x1, Y: f.Level}}))
 		}
-		p.key.addTint("free water", waterFill)
 	}
+}
+
+// wet returns the areas between the surface of free water and the ground in force.
+func (p *picture) wet(f freeDrawn) [][]lem.Point {
+	surface := lem.Profile{{X: f.FromX, Y: f.Level}, {X: f.ToX, Y: f.Level}}
+	return between(surface, lower(surface, crop(p.ground, f.FromX, f.ToX)))
 }
 
 // ends returns the range of x of an outline.
@@ -182,41 +189,44 @@ func (p *picture) drawWater(s *sheet) {
 	for _, w := range slices.Backward(p.waters) { // The governing line last, on top.
 		s.stroke(w.pen, medium, s.view.line(w.line))
 	}
-	for _, w := range p.waters {
-		p.key.addLine(w.what, w.pen)
-	}
 	if p.drains != nil && len(p.drains.Invert) > 1 {
 		s.stroke(invertPen, medium, s.view.line(cropInside(p.drains.Invert, p.x0, p.x1)))
-		p.key.addLine("invert of drains", invertPen)
 	}
 }
 
 // Share of the window's width at which the marks of water lines are looked for, from the head of the slope on.
 var markShares = []float64{0.06, 0.14, 0.24, 0.34, 0.9, 0.8, 0.46, 0.7, 0.58}
 
+// freeShares are the shares of a stretch of free water at which its mark stands.
+var freeShares = []float64{0.5, 0.25, 0.75, 0.38, 0.62}
+
 // labelWater marks and names the water lines and free water.
 func (p *picture) labelWater(s *sheet) {
+	type named struct {
+		txt string
+		at  xy
+	}
+	var list []named
+	for i, f := range p.free {
+		if wet := p.wet(f); len(wet) > 0 {
+			x0, x1 := ends(wet[len(wet)/2])
+			t := freeShares[i%len(freeShares)]
+			list = append(list, named{"free water, " + f.name + ", level " + metres(f.Level), s.view.at(lem.Point{X: x0 + t*(x1-x0), Y: f.Level})})
+			s.waterMark(list[len(list)-1].at)
+		}
+	}
 	for i, w := range p.waters {
 		t := markShares[i%len(markShares)]
 		if p.job.Facing() < 0 {
 			t = 1 - t
 		}
-		at := p.onLine(s, w.line, t)
+		list = append(list, named{w.name, p.onLine(s, w.line, t)})
 		if w.pen.colour == waterInk {
-			s.waterMark(at)
+			s.waterMark(list[len(list)-1].at)
 		}
-		s.label(noteOf(bodyFace, waterInk, 130, w.name), at, above)
 	}
-	for _, f := range p.free {
-		surface := lem.Profile{{X: f.FromX, Y: f.Level}, {X: f.ToX, Y: f.Level}}
-		wet := between(surface, lower(surface, crop(p.ground, f.FromX, f.ToX)))
-		if len(wet) == 0 {
-			continue
-		}
-		x0, x1 := ends(wet[len(wet)/2])
-		at := s.view.at(lem.Point{X: (x0 + x1) / 2, Y: f.Level})
-		s.waterMark(at)
-		s.label(noteOf(bodyFace, waterInk, 140, "free water, "+f.name+", level "+metres(f.Level)), at, above)
+	for _, n := range list { // All marks stand before the first label looks for room.
+		s.label(noteOf(bodyFace, waterInk, 140, n.txt), n.at, above)
 	}
 	if p.drains != nil && len(p.drains.Invert) > 1 {
 		if d := cropInside(p.drains.Invert, p.x0, p.x1); d != nil {

@@ -91,6 +91,8 @@ type note struct {
 	font   face
 	colour color.NRGBA
 	bold   bool // The first line is bold.
+	// pointed notes name an area: they have a leader line that ends in it however near they stand.
+	pointed bool
 }
 
 // noteOf returns a text as a note of at most three lines of a width, points.
@@ -118,7 +120,7 @@ func (s *sheet) label(n note, anchor xy, prefer side) {
 		return
 	}
 	w, h := n.size()
-	sp, ok := s.place.place(w, h, anchor, prefer)
+	sp, ok := s.place.place(w, h, anchor, prefer, n.pointed)
 	if !ok {
 		s.unplaced = append(s.unplaced, strings.Join(n.lines, " "))
 		return
@@ -140,9 +142,11 @@ func (s *sheet) leader(b Box, anchor xy) {
 	s.add(fill{leaderPen.colour, [][]xy{ring}})
 }
 
-// write sets a note in a box that was found for it, on a pale ground.
+// write sets a note in a box that was found for it, on a pale ground where lines run under it.
 func (s *sheet) write(n note, b Box) {
-	s.add(fill{labelPaper, [][]xy{b.grown(1).corners()}})
+	if s.place.covered(b) > 0 {
+		s.add(fill{labelPaper, [][]xy{b.grown(1).corners()}})
+	}
 	for i, l := range n.lines {
 		f := n.faceOf(i)
 		left := b.centre().X - f.width(l)/2
@@ -151,13 +155,13 @@ func (s *sheet) write(n note, b Box) {
 	s.fig.Labels = append(s.fig.Labels, Label{strings.Join(n.lines, "\n"), b})
 }
 
-// axis draws the frame with ticks and numbers on its left and lower sides.
-func (s *sheet) axes(xTitle, yTitle string) {
+// axes draws the frame with ticks and numbers on its left and lower sides, the lower ones between offsets lo and hi.
+func (s *sheet) axes(xTitle, yTitle string, lo, hi float64) {
 	f := s.view.frame
 	s.add(stroke{framePen, [][]xy{append(f.corners(), f.corners()[0])}})
 	var ticks [][]xy
 	h := axisFace.ascent() + axisFace.descent()
-	for _, t := range ticksOf(s.view.x0, s.view.x0+f.width()/s.view.sx, 46/s.view.sx) {
+	for _, t := range ticksOf(lo, hi, 46/s.view.sx) {
 		x := f.MinX + (t.at-s.view.x0)*s.view.sx
 		ticks = append(ticks, []xy{{x, f.MinY}, {x, f.MinY - tickLength}}, []xy{{x, f.MaxY}, {x, f.MaxY - tickLength}})
 		s.line(axisFace, inkBlack, x-axisFace.width(t.txt)/2, f.MinY-tickLength-1, t.txt)

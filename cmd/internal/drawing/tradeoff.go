@@ -161,7 +161,7 @@ func layOutTradeoff(name string, curves []curve, target float64, share bool, opt
 	if share {
 		yTitle = "FS reached / FS required"
 	}
-	s.axes("earthworks, m³ per metre run", yTitle)
+	s.axes("earthworks, m³ per metre run", yTitle, 0, s.view.x0+frame.width()/s.view.sx)
 	for i, l := range foot {
 		s.line(cautionFace, inkGrey, margin, margin+footHeight-float64(i)*cautionFace.lineHeight(), l)
 	}
