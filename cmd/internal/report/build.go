@@ -175,7 +175,7 @@ func (b *builder) variants(r *remedies.Result, i int) []Situation {
 			if c.SituationI != i || c.Note == "" {
 				continue
 			}
-			name := checkName(c)
+			name := c.Label()
 			n, seen := at[name]
 			if !seen {
 				n = len(out)
@@ -189,12 +189,4 @@ func (b *builder) variants(r *remedies.Result, i int) []Situation {
 		}
 	}
 	return out
-}
-
-// checkName returns the name of a check, unique among the checks of an option.
-func checkName(c *remedies.Check) string {
-	if c.Note == "" {
-		return c.Name
-	}
-	return c.Name + ", " + c.Note
 }

@@ -56,25 +56,23 @@ func parametersOf(values []remedies.Value) map[string]Parameter {
 	return out
 }
 
-// addProposal adds the section after works with its quantities; the existing slope needs no proposal.
+// addProposal adds the works, or the slope as it is where there is no proposal: the section with the water of every situation.
 func (b *builder) addProposal(out *Option, o *remedies.Option) {
-	section := &b.job.Section
-	if p := o.Proposal; p != nil {
-		section = &p.Section
-		for _, v := range p.Violations {
-			out.Broken = append(out.Broken, Limit{Name: v.Limit, Detail: v.Detail, By: v.By})
-		}
-		out.NotChecked, out.Notes = list(p.NotChecked), list(p.Notes)
-		out.Quantities = b.quantities(&p.Quantities)
-	} else {
-		out.Quantities = b.quantities(&remedies.Quantities{})
-		if o.Status != remedies.Existing {
-			section = nil
-		}
+	p := o.Proposal
+	if p == nil {
+		p = remedies.Start(b.job)
 	}
+	for _, v := range p.Violations {
+		out.Broken = append(out.Broken, Limit{Name: v.Limit, Detail: v.Detail, By: v.By})
+	}
+	out.NotChecked, out.Notes = list(p.NotChecked), list(p.Notes)
+	out.Quantities = b.quantities(&p.Quantities)
 	out.Totals = totalsOf(&out.Quantities, b.job.Length)
-	if section != nil {
-		out.Section = b.section(section)
+	out.Section = b.section(&p.Section)
+	for _, c := range remedies.Checks(b.job, p) {
+		if !c.Stage {
+			out.Section.Water[c.Label()] = water(&c.Situation.Water, p.Section.Soils)
+		}
 	}
 }
 
@@ -103,40 +101,27 @@ func totalsOf(q *Quantities, length float64) Totals {
 	}
 }
 
-// addAnswers adds the answers to situations and stages, and the water of the situations to the option's section.
+// addAnswers adds the answers to situations and stages.
 func (b *builder) addAnswers(out *Option, o *remedies.Option) {
 	for i := range o.Situations {
 		s := &o.Situations[i]
 		c := &s.Check
-		a := Answer{Name: checkName(c), RequiredFS: c.Required, Found: found(s, groundOf(c, &b.job.Section))}
+		a := Answer{Name: c.Label(), RequiredFS: c.Required, Found: found(s)}
 		if c.Note != "" {
 			a.VariantOf, a.Variant = c.Name, c.Note
 		}
 		out.Situations = append(out.Situations, a)
-		if out.Section != nil {
-			out.Section.Water[a.Name] = water(&c.Situation.Water, b.job.Section.Soils)
-		}
 	}
 	for i := range o.Stages {
 		s := &o.Stages[i]
 		c := &s.Check
 		st := Stage{
-			Name: checkName(c), Order: i + 1, RequiredFS: c.Required, Strength: strengthOf(b.soils, c.Situation.Undrained),
-			Kh: c.Situation.Kh, Found: found(s, groundOf(c, &b.job.Section)),
+			Name: c.Label(), Order: i + 1, RequiredFS: c.Required, Strength: strengthOf(b.soils, c.Situation.Undrained),
+			Kh: c.Situation.Kh, Found: found(s), Section: b.section(c.Section),
 		}
-		if c.Section != nil {
-			st.Section = b.section(c.Section)
-			st.Section.Water[st.Name] = water(&c.Situation.Water, c.Section.Soils)
-		}
+		st.Section.Water[st.Name] = water(&c.Situation.Water, c.Section.Soils)
 		out.Stages = append(out.Stages, st)
 	}
-}
-
-func groundOf(c *remedies.Check, otherwise *lem.Section) lem.Profile {
-	if c.Section != nil {
-		return c.Section.Ground
-	}
-	return otherwise.Ground
 }
 
 func certificateOf(o *remedies.Option) *Certificate {

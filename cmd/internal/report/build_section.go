@@ -1,8 +1,6 @@
 package report
 
 import (
-	"math"
-
 	"standfast/lem"
 	"standfast/remedies"
 )
@@ -49,7 +47,7 @@ func water(w *lem.Water, soils []lem.Soil) Water {
 		}
 	}
 	if d := w.Drains; d != nil {
-		out.Line = points(loweredLine(w))
+		out.Line = points(remedies.LoweredLine(w))
 		out.Drains = &Drains{
 			LineBefore: points(w.Line), Invert: points(d.Invert), Ratio: append([]float64{}, d.Ratio...), Fade: d.Fade,
 		}
@@ -57,13 +55,8 @@ func water(w *lem.Water, soils []lem.Soil) Water {
 	return out
 }
 
-// loweredLine returns the piezometric line that stands at the lowered head at the drains' invert.
-func loweredLine(w *lem.Water) lem.Profile {
-	return w.Line
-}
-
-// found lays out what a search found in a check, on the section checked.
-func found(o *remedies.Outcome, ground lem.Profile) Found {
+// found lays out what a search found in a check.
+func found(o *remedies.Outcome) Found {
 	out := Found{FS: Number(o.FS), Resolved: o.Resolved, FSByMethod: make(map[string]Number, len(o.ByMethod)), Depth: nan}
 	for m, fs := range o.ByMethod {
 		if Number(fs).Known() {
@@ -73,7 +66,7 @@ func found(o *remedies.Outcome, ground lem.Profile) Found {
 	if out.FS.Known() {
 		out.Method = o.Method.String()
 		out.Slip = slipOf(&o.Slip, o.From, o.To)
-		out.Depth = Number(slipDepth(&o.Slip, o.From.X, o.To.X, ground))
+		out.Depth = Number(o.Depth)
 	}
 	return out
 }
@@ -88,51 +81,4 @@ func slipOf(s *lem.Slip, from, to lem.Point) *Slip {
 		out.Kind, out.Points = "polyline", points(s.Nodes)
 	}
 	return out
-}
-
-// slipDepth returns the greatest vertical depth of a slip below the ground between two x, m.
-func slipDepth(s *lem.Slip, from, to float64, ground lem.Profile) float64 {
-	depth := 0.0
-	at := func(x float64) {
-		if x < from || x > to {
-			return
-		}
-		if y, ok := slipLevel(s, x); ok {
-			depth = max(depth, ground.At(x)-y)
-		}
-	}
-	for i, p := range ground {
-		at(p.X)
-		if i > 0 && s.Kind == lem.Circle && p.X > ground[i-1].X {
-			// Between breakpoints the depth is greatest where the arc runs parallel to the ground.
-			q := ground[i-1]
-			grade := (p.Y - q.Y) / (p.X - q.X)
-			if x := s.Centre.X + s.Radius*grade/math.Hypot(1, grade); x > q.X && x < p.X {
-				at(x)
-			}
-		}
-	}
-	for _, p := range s.Nodes {
-		at(p.X)
-	}
-	if s.Kind == lem.Circle { // Level ground beyond the ends of the profile.
-		at(s.Centre.X)
-	}
-	return depth
-}
-
-// slipLevel returns the level of a slip at x and reports whether it passes there.
-func slipLevel(s *lem.Slip, x float64) (float64, bool) {
-	if s.Kind == lem.Circle {
-		dx := x - s.Centre.X
-		if math.Abs(dx) > s.Radius {
-			return 0, false
-		}
-		return s.Centre.Y - math.Sqrt(s.Radius*s.Radius-dx*dx), true
-	}
-	n := lem.Profile(s.Nodes)
-	if len(n) == 0 || x < n.Left() || x > n.Right() {
-		return 0, false
-	}
-	return n.At(x), true
 }

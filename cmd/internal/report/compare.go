@@ -3,6 +3,7 @@ package report
 import (
 	"fmt"
 	"io"
+	"strings"
 
 	"github.com/jedib0t/go-pretty/v6/table"
 )
@@ -73,31 +74,31 @@ func (p *printer) options(f *File) {
 		if o.Trial {
 			status += ", trial"
 		}
-		row := table.Row{o.Title, unknown, unknown, unknown, unknown}
-		if o.Section != nil {
-			row = table.Row{o.Title, QuantityText(q.Earthworks), QuantityText(q.Cut), QuantityText(q.Fill), QuantityText(q.Drain)}
-		}
-		if g, ok := o.Governing(); ok {
+		row := table.Row{o.Title, QuantityText(q.Earthworks), QuantityText(q.Cut), QuantityText(q.Fill), QuantityText(q.Drain)}
+		g, ok := o.Governing()
+		if ok {
 			row = append(row, g.Check, FactorText(g.FS), RequiredText(Number(g.RequiredFS)))
 		} else {
 			row = append(row, unknown, unknown, unknown)
 		}
-		rows = append(rows, append(row, status, dash(o.BindsOn)))
+		binds := o.BindsOn
+		if binds == "" || binds == g.Check { // The governing check stands beside it.
+			binds = unknown
+		}
+		rows = append(rows, append(row, status, binds))
 	}
 	p.table([]column{
 		{head: "option", most: 16},
-		{head: "earthworks\nm3/m", right: true}, {head: "cut\nm3/m", right: true}, {head: "fill\nm3/m", right: true},
+		{head: "earthworks\nm3/m", right: true},
+		{head: "cut\nm3/m", right: true},
+		{head: "fill\nm3/m", right: true},
 		{head: "drains\nm/m", right: true},
-		{head: "governing check", most: 18}, {head: "FS", right: true}, {head: "required", right: true},
-		{head: "status", most: 12}, {head: "what binds", most: 14},
+		{head: "governing check", most: 18},
+		{head: "FS", right: true},
+		{head: "required", right: true},
+		{head: "status", most: 12},
+		{head: "what binds", most: 14},
 	}, rows)
-}
-
-func dash(s string) string {
-	if s == "" {
-		return unknown
-	}
-	return s
 }
 
 // reasons prints why options do not meet the target, what could not be checked, and what the works change besides.
@@ -110,7 +111,7 @@ func (p *printer) reasons(f *File) {
 			remarks = append(remarks, remark{o.Title + ", " + o.Status + ": ", o.Reason})
 		}
 		for _, n := range o.NotChecked {
-			remarks = append(remarks, remark{o.Title + ", not checked: ", n})
+			remarks = append(remarks, remark{o.Title + ": ", n})
 		}
 		for _, n := range o.Notes {
 			remarks = append(remarks, remark{o.Title + ": ", n})
@@ -120,7 +121,7 @@ func (p *printer) reasons(f *File) {
 		p.line("")
 	}
 	for _, r := range remarks {
-		p.para(" ", r.lead+r.body)
+		p.para(" ", r.lead+strings.TrimPrefix(r.body, r.lead))
 	}
 }
 

@@ -119,7 +119,7 @@ type Option struct {
 	NotChecked  []string     `json:"not_checked"`                       // Checks that could not be made, with the reason.
 	Notes       []string     `json:"notes"`                             // What the works changed besides, such as a water line cut down to the new ground.
 	Certificate *Certificate `json:"certificate" jsonschema:"nullable"` // What the answer rests on; null if nothing was sized.
-	Section     *Section     `json:"section" jsonschema:"nullable"`     // The section after works; null if there is none.
+	Section     *Section     `json:"section"`                           // The section after works.
 	Tradeoff    []TradePoint `json:"tradeoff"`                          // Least earthworks against the FS asked for.
 }
 
@@ -191,7 +191,7 @@ type Stage struct {
 	Strength   Strength `json:"strength"`    // "drained", "undrained", or one of these words for every soil.
 	Kh         float64  `json:"kh"`          // Horizontal pseudo-static coefficient, outward.
 	Found
-	Section *Section `json:"section" jsonschema:"nullable"` // Section of the stage; null if the works have none.
+	Section *Section `json:"section"` // Section of the stage.
 }
 
 // StepLess tells why the design with one parameter a step cheaper is not the answer.

@@ -60,8 +60,8 @@ func NewWitnesses(r *remedies.Result, src Source) *Witnesses {
 	w := &Witnesses{Format: WitnessFormat, Case: WitnessCase{File: src.File, SHA256: src.SHA256}, Options: map[string]WitnessOption{}}
 	for i := range r.Options {
 		o := &r.Options[i]
-		if o.Certificate != nil {
-			w.Options[o.Name] = witnessOption(o)
+		if o.Certificate != nil && o.Proposal != nil {
+			w.Options[o.Name] = witnessOption(o, remedies.Checks(r.Job, o.Proposal))
 		}
 	}
 	return w
@@ -70,7 +70,7 @@ func NewWitnesses(r *remedies.Result, src Source) *Witnesses {
 // Encode writes the witnesses as JSON, a design a line.
 func (w *Witnesses) Encode(to io.Writer) error { return encode(to, w) }
 
-func witnessOption(o *remedies.Option) WitnessOption {
+func witnessOption(o *remedies.Option, checks []remedies.Check) WitnessOption {
 	c := o.Certificate
 	out := WitnessOption{
 		Parameters: make([]string, len(c.Axes)), Pool: make([]WitnessCut, len(c.Pool)), Designs: make([]WitnessDesign, len(c.Witnesses)),
@@ -82,7 +82,7 @@ func witnessOption(o *remedies.Option) WitnessOption {
 		cut := &c.Pool[i]
 		shape := slipOf(&cut.Slip, cut.Slip.Centre, cut.Slip.Centre)
 		out.Pool[i] = WitnessCut{
-			Check: checkAt(o, int(cut.Check)), Method: cut.Setting.Method.String(), Slices: cut.Setting.Slices,
+			Check: checks[cut.Check].Label(), Method: cut.Setting.Method.String(), Slices: cut.Setting.Slices,
 			MinDepth: cut.Setting.MinDepth,
 			Slip:     WitnessShape{Kind: shape.Kind, Centre: shape.Centre, Radius: shape.Radius, Points: shape.Points},
 		}
@@ -95,15 +95,4 @@ func witnessOption(o *remedies.Option) WitnessOption {
 		out.Designs[i] = WitnessDesign{X: x, Earthworks: d.Earthworks, Cut: d.Cut, FS: Number(d.FS)}
 	}
 	return out
-}
-
-// checkAt returns the name of check i of an option: its situations with their variants, then its stages.
-func checkAt(o *remedies.Option, i int) string {
-	switch n := len(o.Situations); {
-	case i < n:
-		return checkName(&o.Situations[i].Check)
-	case i < n+len(o.Stages):
-		return checkName(&o.Stages[i-n].Check)
-	}
-	return ""
 }

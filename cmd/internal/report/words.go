@@ -2,6 +2,7 @@ package report
 
 import (
 	"fmt"
+	"slices"
 	"strings"
 )
 
@@ -70,6 +71,11 @@ func (f *File) Least() *Option {
 		}
 	}
 	return &f.Existing
+}
+
+// Met reports whether something meets the target: the slope as it is, or an option that is no what-if.
+func (f *File) Met() bool {
+	return f.LeastEarthworks != nil || slices.ContainsFunc(f.Options, func(o Option) bool { return o.Status == meetsTarget && !o.WhatIf })
 }
 
 // Nearest returns the option that comes nearest to the target, what-ifs left out; nil if no option has an FS.
