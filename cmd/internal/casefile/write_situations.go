@@ -1,0 +1,193 @@
+package casefile
+
+import (
+	"fmt"
+
+	"go.yaml.in/yaml/v4"
+
+	"standfast/lem"
+	"standfast/remedies"
+)
+
+// lineName returns what the water line of a situation after works is called: as the situation.
+func (w *writer) lineName(i int) string {
+	switch name := w.job.Situations[i].Name; {
+	case w.option.Proposal.Waters[i].Line == nil:
+		return wordNone
+	case name == wordNone:
+		return wordNone + " (water line)"
+	default:
+		return name
+	}
+}
+
+// waters returns the water lines after works, one for each situation.
+func (w *writer) waters() *yaml.Node {
+	var m mapping
+	for i, s := range w.job.Situations {
+		line := w.option.Proposal.Waters[i].Line
+		switch {
+		case line == nil:
+		case s.Water >= 0 && w.job.Waters[s.Water].Artesian:
+			var a mapping
+			a.put("line", pointsNode(line))
+			a.put("artesian", trueNode())
+			m.put(w.lineName(i), a.inline())
+		default:
+			m.put(w.lineName(i), pointsNode(line))
+		}
+	}
+	return m.block()
+}
+
+func (w *writer) situations() (*yaml.Node, error) {
+	list := listNode()
+	for i := range w.job.Situations {
+		s := &w.job.Situations[i]
+		fs := w.requiredFS(i)
+		if fs == 0 {
+			return nil, fmt.Errorf("%w: the required FS of the situation %q is not known yet", ErrNotWritable, s.Name)
+		}
+		var m mapping
+		m.put("name", textNode(s.Name))
+		m.put("water", textNode(w.lineName(i)))
+		m.put("required_fs", numberNode(fs))
+		if s.Undrained != nil {
+			m.put("strength", w.strength(s.Undrained))
+		}
+		if s.Kh != 0 {
+			m.put("kh", numberNode(s.Kh))
+		}
+		water := &w.option.Proposal.Waters[i]
+		if len(water.Free) > 0 {
+			m.put("free_water", freeWaterNode(water.Free))
+		}
+		if water.Drains != nil {
+			m.put("drains", drainsNode(water.Drains))
+		}
+		list.Content = append(list.Content, m.block())
+	}
+	return list, nil
+}
+
+// requiredFS returns the FS required in a situation, as resolved when the option was checked; 0 if a ratio is not resolved.
+func (w *writer) requiredFS(i int) float64 {
+	for _, o := range w.option.Situations {
+		if o.Check.SituationI == i && o.Check.Note == "" && o.Check.Required > 0 {
+			return o.Check.Required
+		}
+	}
+	if w.job.Situations[i].RatioToExisting != 0 {
+		return 0
+	}
+	return w.job.Situations[i].RequiredFS
+}
+
+func (w *writer) strength(undrained []bool) *yaml.Node {
+	var m mapping
+	for i, u := range undrained {
+		if u {
+			m.put(w.section.Soils[i].Name, textNode(wordUndrained))
+		}
+	}
+	if len(m.node.Content) == 0 {
+		return textNode(wordDrained)
+	}
+	return m.inline()
+}
+
+func freeWaterNode(free []lem.FreeWater) *yaml.Node {
+	list := rowNode()
+	for _, f := range free {
+		var m mapping
+		m.put("level", numberNode(f.Level))
+		m.put("from", numberNode(f.FromX))
+		m.put("to", numberNode(f.ToX))
+		list.Content = append(list.Content, m.inline())
+	}
+	return list
+}
+
+func drainsNode(d *lem.Drawdown) *yaml.Node {
+	var m mapping
+	m.put("invert", pointsNode(d.Invert))
+	m.put("ratio", numbersNode(d.Ratio...))
+	m.put("fade", numberNode(d.Fade))
+	return m.inline()
+}
+
+func (w *writer) limits() *yaml.Node {
+	l := &w.job.Limits
+	var m, between mapping
+	if l.Left != nil {
+		between.put("left", fenceNode(l.Left))
+	}
+	if l.Right != nil {
+		between.put("right", fenceNode(l.Right))
+	}
+	m.put("works_between", between.inline())
+	zones := listNode()
+	for i := range l.KeepClear {
+		zones.Content = append(zones.Content, keepClearNode(&l.KeepClear[i]))
+	}
+	m.put("keep_clear", zones)
+	tops := listNode()
+	for _, t := range l.MaxLevels {
+		var z mapping
+		z.put("name", textNode(t.Name))
+		z.put("from", numberNode(t.FromX))
+		z.put("to", numberNode(t.ToX))
+		z.put("level", numberNode(t.Level))
+		tops.Content = append(tops.Content, z.inline())
+	}
+	m.put("maximum_levels", tops)
+	if l.Outfall != nil {
+		m.put("drain_outfall", numberNode(*l.Outfall))
+	}
+	return m.block()
+}
+
+func fenceNode(f *remedies.Fence) *yaml.Node {
+	var m mapping
+	m.put("x", numberNode(f.X))
+	m.put("name", textNode(f.Name))
+	return m.inline()
+}
+
+func keepClearNode(z *remedies.KeepClear) *yaml.Node {
+	var m mapping
+	m.put("name", textNode(z.Name))
+	m.put("from", numberNode(z.FromX))
+	m.put("to", numberNode(z.ToX))
+	forbid := rowNode()
+	if z.NoDig {
+		forbid.Content = append(forbid.Content, textNode("dig"))
+	}
+	if z.NoLoad {
+		forbid.Content = append(forbid.Content, textNode("load"))
+	}
+	m.put("forbid", forbid)
+	if z.DigBelow != nil {
+		m.put("dig_allowed_to_depth", numberNode(*z.DigBelow))
+	}
+	return m.inline()
+}
+
+func (w *writer) slips() *yaml.Node {
+	var m mapping
+	if w.job.Head != (lem.Range{}) {
+		m.put("head", numbersNode(w.job.Head.From, w.job.Head.To))
+	}
+	if w.job.Exit != (lem.Range{}) {
+		m.put("toe", numbersNode(w.job.Exit.From, w.job.Exit.To))
+	}
+	switch w.job.Direction {
+	case lem.LeftwardOnly:
+		m.put("direction", textNode("leftward"))
+	case lem.RightwardOnly:
+		m.put("direction", textNode("rightward"))
+	case lem.EitherWay:
+		m.put("direction", textNode("either"))
+	}
+	return m.inline()
+}
