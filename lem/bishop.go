@@ -5,7 +5,7 @@ import "math"
 // Limits of the iteration for F.
 const (
 	maxIterations = 50
-	fRelTol       = 1e-9 // Stop when |dF| <= fRelTol * F; Newton's step is then far more accurate still.
+	fRelTol       = 1e-6 // Stop when |dF| <= fRelTol * F: Newton's next step would be of the order of fRelTol squared.
 )
 
 // bishop solves the simplified method (Bishop 1955): F = sum[(c b + (W - u b) tan phi)/m]/sum(driving), m = cos(alpha) + sin(alpha) tan phi/F.

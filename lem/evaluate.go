@@ -56,8 +56,8 @@ func (m *Model) depthOf(s *Slip, p part) (depth float64, clear bool) {
 }
 
 func (m *Model) ends(r *Result, p part) {
-	r.From = Point{p.from, m.cols[m.columnAt(p.from)].ground.at(p.from)}
-	r.To = Point{p.to, m.cols[m.columnAt(p.to)].ground.at(p.to)}
+	r.From = Point{p.from, m.cols[p.first].ground.at(p.from)}
+	r.To = Point{p.to, m.cols[p.last].ground.at(p.to)}
 }
 
 // lower returns the result that counts for the slip: the lowest F, and above all a part that could not be solved and whose screen lies

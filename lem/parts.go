@@ -11,6 +11,9 @@ func (m *Model) columnAt(x float64) int {
 	return min(i, len(m.cols)-1)
 }
 
+// span returns the part from x0 to x1.
+func (m *Model) span(x0, x1 float64) part { return part{x0, x1, m.columnAt(x0), m.columnAt(x1)} }
+
 // circleParts lists in ws.parts the intervals where the lower arc of a circle lies below the ground and both ends daylight. It
 // reports whether some part was left out because the arc does not come up to the ground.
 func (m *Model) circleParts(ws *Workspace, c Point, r float64) (cut bool) {
@@ -28,7 +31,7 @@ func (m *Model) circleParts(ws *Workspace, c Point, r float64) (cut bool) {
 		return dy >= 0 || dx*dx+dy*dy < r2
 	}
 	const nowhere = math.MaxFloat64
-	start := nowhere
+	start, startCol := nowhere, 0
 	i := m.columnAt(lo)
 	under := below(lo, m.cols[i].ground.at(lo))
 	open := under // This part began without daylight.
@@ -44,25 +47,25 @@ func (m *Model) circleParts(ws *Workspace, c Point, r float64) (cut bool) {
 		e := g.at(c.X) - c.Y
 		qa, qb, qc := 1+g.b*g.b, e*g.b, e*e-r2
 		disc := qb*qb - qa*qc
-		if disc <= 0 {
+		if disc <= 0 && under == next {
 			continue
 		}
-		root := math.Sqrt(disc)
+		root := math.Sqrt(max(disc, 0))
 		x1, x2 := c.X+(-qb-root)/qa, c.X+(-qb+root)/qa
 		switch {
 		case !under && next: // The arc goes under at one of them.
-			start = nearest(a, b, x1, x2, g, c.Y)
+			start, startCol = nearest(a, b, x1, x2, g, c.Y), i
 		case under && !next:
 			end := nearest(a, b, x2, x1, g, c.Y)
 			if start != nowhere && !open {
-				ws.parts = append(ws.parts, part{start, end})
+				ws.parts = append(ws.parts, part{start, end, startCol, i})
 			} else {
 				cut = true
 			}
 			start, open = nowhere, false
 		default: // Under in the middle of a straight ground only.
 			if x1 > a && x2 < b && g.at(x1) < c.Y && g.at(x2) < c.Y {
-				ws.parts = append(ws.parts, part{x1, x2})
+				ws.parts = append(ws.parts, part{x1, x2, i, i})
 			}
 		}
 		under = next
@@ -84,7 +87,7 @@ func nearest(a, b, preferred, other float64, g line, top float64) float64 {
 // circleDepth returns the greatest vertical depth of an arc below the ground over the part, m.
 func (m *Model) circleDepth(p part, c Point, r float64) float64 {
 	var d float64
-	for i := m.columnAt(p.from); i < len(m.cols) && m.cols[i].x0 < p.to; i++ {
+	for i := p.first; i <= p.last; i++ {
 		col := &m.cols[i]
 		// The depth is concave over straight ground, greatest where the arc runs parallel to it.
 		x := min(max(c.X+col.tangent*r, col.x0, p.from), col.x1, p.to)
@@ -96,7 +99,7 @@ func (m *Model) circleDepth(p part, c Point, r float64) float64 {
 
 // circleClearsBase reports whether an arc stays above the firm base over the part.
 func (m *Model) circleClearsBase(p part, c Point, r float64) bool {
-	for i := m.columnAt(p.from); i < len(m.cols) && m.cols[i].x0 < p.to; i++ {
+	for i := p.first; i <= p.last; i++ {
 		col := &m.cols[i]
 		if math.IsInf(col.firm.a, -1) {
 			continue

@@ -55,7 +55,7 @@ func (m *Model) polylineParts(ws *Workspace, s *Slip) {
 			return
 		}
 		if under && !math.IsNaN(start) {
-			ws.parts = append(ws.parts, part{start, x})
+			ws.parts = append(ws.parts, part{start, x, m.columnAt(start), m.columnAt(x)})
 		}
 		start, under = math.NaN(), false
 	})

@@ -13,7 +13,7 @@ func (m *Model) sliceCircle(ws *Workspace, p part, c Point, r float64, target in
 	angle := func(x float64) float64 { return math.Asin(min(max((x-c.X)/r, -1), 1)) }
 	theta := angle(p.from)
 	width := (angle(p.to) - theta) / float64(max(target, MinSlices))
-	for i := m.columnAt(p.from); i < len(m.cols) && m.cols[i].x0 < p.to; i++ {
+	for i := p.first; i <= p.last; i++ {
 		col := &m.cols[i]
 		end := min(col.x1, p.to)
 		if end <= p.from {
@@ -21,16 +21,17 @@ func (m *Model) sliceCircle(ws *Workspace, p part, c Point, r float64, target in
 		}
 		next := angle(end)
 		n := max(1, int(math.Ceil((next-theta)/width-crossingMargin)))
-		k := col.first // Layer at the left end of the next slice.
 		a := arcBase{delta: (next - theta) / float64(n)}
 		a.sinHalf, a.cosHalf = math.Sincos(a.delta / 2)
 		// Area between arc and chord, R^2/2 (delta - sin delta), over the chord: how far the arc lies below it on the average.
 		a.bulge = r * (a.delta - 2*a.sinHalf*a.cosHalf) / (4 * a.sinHalf)
 		sin, cos := math.Sincos(theta)
+		ws.tail = Point{c.X + r*sin, c.Y - r*cos}
+		k := m.layerAt(col, col.first, ws.tail.X, ws.tail.Y) // At the left end of the next slice.
 		for range n {
 			a.sin, a.cos = sin*a.cosHalf+cos*a.sinHalf, cos*a.cosHalf-sin*a.sinHalf
 			nextSin, nextCos := a.sin*a.cosHalf+a.cos*a.sinHalf, a.cos*a.cosHalf-a.sin*a.sinHalf
-			k = m.addArc(ws, col, k, &a, sin, cos, nextSin, nextCos)
+			k = m.addArc(ws, col, k, &a, Point{c.X + r*nextSin, c.Y - r*nextCos})
 			sin, cos = nextSin, nextCos
 		}
 		theta = next
@@ -45,16 +46,15 @@ type arcBase struct {
 	bulge            float64 // Mean distance of the arc from its chord, m.
 }
 
-// addArc adds the slice over an arc inside one column; the arc's ends are given by the sines and cosines of their angles. It returns the
-// layer at the right end.
-func (m *Model) addArc(ws *Workspace, col *column, k int32, a *arcBase, sin0, cos0, sin1, cos1 float64) int32 {
+// addArc adds the slice over an arc inside one column, from a point in layer k to the point end. It returns the layer at the end.
+func (m *Model) addArc(ws *Workspace, col *column, k int32, a *arcBase, end Point) int32 {
 	c, r := ws.centre, ws.radius
-	if col.last-col.first > 1 {
-		x0, y0, x1, y1 := c.X+r*sin0, c.Y-r*cos0, c.X+r*sin1, c.Y-r*cos1
-		if k = m.layerAt(col, k, x0, y0); k != m.layerAt(col, k, x1, y1) {
-			return m.addBase(ws, col, k, x0, y0, x1, y1)
-		}
+	if m.layerAt(col, k, end.X, end.Y) != k {
+		t := ws.tail
+		ws.tail = end
+		return m.addBase(ws, col, k, t.X, t.Y, end.X, end.Y)
 	}
+	ws.tail = end
 	s := ws.add()
 	s.sin, s.cos = -a.sin, a.cos
 	s.b = 2 * r * a.sinHalf * a.cos

@@ -33,7 +33,7 @@ func (s *searcher) buildByDaylight(p *vector) (Slip, bool) {
 	b := Point{x1, m.cols[m.columnAt(x1)].ground.at(x1)}
 	p[2] = min(max(p[2], flattest), roundest)
 	arc := func(half float64) (Point, float64) { return arcThrough(a, b, half) }
-	if ok := s.project(&p[2], flattest, roundest, part{x0, x1}, arc); !ok {
+	if ok := s.project(&p[2], flattest, roundest, m.span(x0, x1), arc); !ok {
 		return Slip{}, false
 	}
 	c, r := arc(p[2])
@@ -56,10 +56,9 @@ func (s *searcher) buildByCentre(p *vector) (Slip, bool) {
 	if !(p[2] > 0) {
 		return Slip{}, false
 	}
-	whole := part{m.cols[0].x0, m.cols[len(m.cols)-1].x1}
 	circle := func(r float64) (Point, float64) { return c, r }
 	if s.o.MinDepth > 0 || m.firm {
-		span := part{max(whole.from, c.X-0.99*p[2]), min(whole.to, c.X+0.99*p[2])}
+		span := m.span(max(m.cols[0].x0, c.X-0.99*p[2]), min(m.cols[len(m.cols)-1].x1, c.X+0.99*p[2]))
 		if span.from >= span.to || !s.project(&p[2], p[2]*0.7, p[2]*1.4, span, circle) {
 			return Slip{}, false
 		}

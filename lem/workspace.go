@@ -8,12 +8,16 @@ type Workspace struct {
 	slice  []slice
 	arc    bool    // The slip is a circle:
 	centre Point   // its centre
-	radius float64 // and radius.
+	radius float64 // and radius;
+	tail   Point   // where the slices so far end.
 	trial  int     // Evaluations since the workspace was made.
 }
 
-// part is an interval of x where a slip lies below the ground.
-type part struct{ from, to float64 }
+// part is an interval of x where a slip lies below the ground, with the columns that hold its ends.
+type part struct {
+	from, to    float64
+	first, last int
+}
 
 // slice is one slice, left to right. Signs are those of a slip that moves to the right until orient turns them.
 type slice struct {
