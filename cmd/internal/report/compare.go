@@ -24,7 +24,7 @@ func WriteComparison(w io.Writer, f *File, look Look) error {
 }
 
 func (p *printer) title(f *File) {
-	p.para("", fmt.Sprintf("%s (%s), %s m of works, crest %s, toe %s", f.Case.Title, f.Case.File, SizeText(f.Case.Length),
+	p.para("", fmt.Sprintf("%s, from %s: %s m of works, crest %s, toe %s", f.Case.Title, f.Case.File, SizeText(f.Case.Length),
 		pointText(f.Case.Crest), pointText(f.Case.Toe)))
 	if f.Settings.DepthOfInterest > 0 {
 		p.para("", fmt.Sprintf("Slips nowhere deeper than %s m below ground are left out.", SizeText(f.Settings.DepthOfInterest)))
@@ -65,27 +65,26 @@ func verdict(f Found, required float64) string {
 
 // options prints a row an option.
 func (p *printer) options(f *File) {
-	p.heading("Works per metre run, in ascending earthworks (FS rounded down, quantities up)")
+	p.heading("Works per metre run, in ascending earthworks, those that fail last (FS rounded down, quantities up)")
 	var rows []table.Row
 	for i := range f.Options {
 		o := &f.Options[i]
 		q := &o.Quantities
-		status := p.status(o.Status)
+		title := o.Title
 		if o.Trial {
-			status += ", trial"
+			title += " (trial)"
 		}
-		row := table.Row{o.Title, QuantityText(q.Earthworks), QuantityText(q.Cut), QuantityText(q.Fill), QuantityText(q.Drain)}
-		g, ok := o.Governing()
-		if ok {
+		row := table.Row{title, QuantityText(q.Earthworks), QuantityText(q.Cut), QuantityText(q.Fill), QuantityText(q.Drain)}
+		if g, ok := o.Governing(); ok {
 			row = append(row, g.Check, FactorText(g.FS), RequiredText(Number(g.RequiredFS)))
 		} else {
 			row = append(row, unknown, unknown, unknown)
 		}
 		binds := o.BindsOn
-		if binds == "" || binds == g.Check { // The governing check stands beside it.
+		if binds == "" || o.Status == meetsTarget { // Then the governing check says all there is.
 			binds = unknown
 		}
-		rows = append(rows, append(row, status, binds))
+		rows = append(rows, append(row, p.status(o.Status), binds))
 	}
 	p.table([]column{
 		{head: "option", most: 16},

@@ -1,0 +1,106 @@
+package cli
+
+import (
+	"fmt"
+	"path/filepath"
+
+	"github.com/spf13/cobra"
+
+	"standfast/cmd/internal/report"
+	"standfast/remedies"
+)
+
+type compareOptions struct {
+	studyOptions
+	out  string
+	only []string
+}
+
+func newCompareCommand() *cobra.Command {
+	o := &compareOptions{}
+	c := &cobra.Command{
+		Use:   "compare CASE",
+		Short: "Size every remedy of a case and say which needs the least earthworks",
+		Long: `compare analyses the slope of a case file as it is, sizes every remedy that the case asks for, compares them, and
+writes the results, drawings and proposed sections to a folder.
+
+` + exitCodes(exitOK, exitInput, exitNothingMeets, exitInterrupted, exitOther),
+		Example: "  standfast compare case.yaml --only berm,regrade --target \"high water=1.25\"",
+		Args:    oneArgument("a case file"),
+		RunE:    func(c *cobra.Command, args []string) error { return runCompare(c, o, args[0]) },
+	}
+	o.addFlags(c)
+	c.Flags().StringVar(&o.out, "out", "", "folder for the results (default ./<case>-works); one of an earlier run is replaced, any other refused")
+	c.Flags().StringSliceVar(&o.only, "only", nil, "size only these remedies, such as berm,regrade")
+	return c
+}
+
+func runCompare(c *cobra.Command, o *compareOptions, path string) error {
+	ctx := c.Context()
+	settings, err := o.settings()
+	if err != nil {
+		return err
+	}
+	read, err := readCase(path)
+	if err != nil {
+		return err
+	}
+	if err := applyTargets(read.Job, o.targets); err != nil {
+		return err
+	}
+	if err := applyOnly(read.Job, o.only); err != nil {
+		return err
+	}
+	out := o.out
+	if out == "" {
+		out = caseName(path) + "-works"
+	}
+	if err := checkFolder(out); err != nil {
+		return err
+	}
+	if !o.quiet {
+		printWarnings(c, read.Warnings)
+	}
+	settings.Curves = true
+	progress := newProgress(c.ErrOrStderr(), o.quiet)
+	settings.Progress = progress.show
+	result, err := remedies.Study(ctx, read.Job, settings)
+	progress.clear()
+	if err != nil {
+		return finished(ctx, err)
+	}
+	file, err := writeWorks(ctx, out, read, result, sourceOf(read, o.overrides()))
+	if err != nil {
+		return finished(ctx, err)
+	}
+	if err := o.print(c, file, out); err != nil {
+		return err
+	}
+	if !file.Met() {
+		return errNothingMeets
+	}
+	return nil
+}
+
+func (o *compareOptions) overrides() []string {
+	out := o.studyOptions.overrides()
+	for _, name := range o.only {
+		out = append(out, "--only "+name)
+	}
+	return out
+}
+
+func (o *compareOptions) print(c *cobra.Command, f *report.File, out string) error {
+	w := c.OutOrStdout()
+	switch {
+	case o.json:
+		return f.Encode(w)
+	case o.quiet:
+		return nil
+	}
+	if err := report.WriteComparison(w, f, lookOf(w)); err != nil {
+		return err
+	}
+	_, err := fmt.Fprintf(w, "\nResults, drawings and proposed sections are in %s\n", filepath.ToSlash(out))
+	return err
+}

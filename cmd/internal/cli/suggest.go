@@ -1,0 +1,52 @@
+package cli
+
+import (
+	"fmt"
+	"strings"
+)
+
+// unknownName returns the error for a name that is none of those there are, with the one that was probably meant.
+func unknownName(what, name string, there []string) error {
+	for _, t := range there {
+		if near(name, t) {
+			return usagef("unknown %s %q; did you mean %q?", what, name, t)
+		}
+	}
+	return usagef("unknown %s %q; there are: %s", what, name, quoted(there))
+}
+
+func quoted(names []string) string {
+	out := make([]string, len(names))
+	for i, n := range names {
+		out[i] = fmt.Sprintf("%q", n)
+	}
+	return strings.Join(out, ", ")
+}
+
+// near reports whether a is likely a slip of the pen for b: at most a third of the letters differ, case and the joining of words apart.
+func near(a, b string) bool {
+	plain := strings.NewReplacer("_", " ", "-", " ")
+	s, t := []rune(plain.Replace(strings.ToLower(a))), []rune(plain.Replace(strings.ToLower(b)))
+	return distance(s, t) <= max(1, min(len(s), len(t))/3)
+}
+
+// distance is the least number of letters added, dropped or changed that turns s into t (Levenshtein 1966).
+func distance(s, t []rune) int {
+	row := make([]int, len(t)+1) // Distances from the letters of s so far to every beginning of t.
+	for j := range row {
+		row[j] = j
+	}
+	for i := range s {
+		corner := row[0]
+		row[0] = i + 1
+		for j := range t {
+			change := corner
+			if s[i] != t[j] {
+				change++
+			}
+			corner = row[j+1]
+			row[j+1] = min(change, row[j]+1, corner+1)
+		}
+	}
+	return row[len(t)]
+}

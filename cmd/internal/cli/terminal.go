@@ -1,0 +1,100 @@
+package cli
+
+import (
+	"fmt"
+	"io"
+	"os"
+	"strings"
+	"sync"
+	"time"
+	"unicode/utf8"
+
+	"github.com/spf13/cobra"
+	"golang.org/x/term"
+
+	"standfast/cmd/internal/report"
+	"standfast/remedies"
+)
+
+// terminal returns the file behind a stream if it is a terminal.
+func terminal(w io.Writer) (*os.File, bool) {
+	f, ok := w.(*os.File)
+	return f, ok && term.IsTerminal(int(f.Fd()))
+}
+
+// widest is the width beyond which text is not spread: longer lines read badly.
+const widest = 120
+
+// lookOf returns how text on a stream is laid out: in the width of a terminal, with colours unless the user wants none.
+func lookOf(w io.Writer) report.Look {
+	f, ok := terminal(w)
+	if !ok {
+		return report.Look{}
+	}
+	look := report.Look{Colour: os.Getenv("NO_COLOR") == "" && os.Getenv("TERM") != "dumb"}
+	if width, _, err := term.GetSize(int(f.Fd())); err == nil && width > 0 {
+		look.Width = min(width, widest)
+	}
+	return look
+}
+
+func printWarnings(c *cobra.Command, warnings []string) {
+	for _, w := range warnings {
+		fmt.Fprintf(c.ErrOrStderr(), "standfast: warning: %s\n", w)
+	}
+}
+
+// progress shows on a terminal how far a study has come, on one line that is written over. It uses no control codes but the carriage
+// return.
+type progress struct {
+	w       io.Writer // nil: shows nothing.
+	mu      sync.Mutex
+	last    time.Time
+	written int
+}
+
+// betweenShows is the least time between two lines of progress.
+const betweenShows = 100 * time.Millisecond
+
+func newProgress(stderr io.Writer, quiet bool) *progress {
+	if _, ok := terminal(stderr); !ok || quiet {
+		return &progress{}
+	}
+	return &progress{w: stderr}
+}
+
+// show may be called by many goroutines.
+func (p *progress) show(s remedies.Progress) {
+	if p.w == nil {
+		return
+	}
+	p.mu.Lock()
+	defer p.mu.Unlock()
+	if time.Since(p.last) < betweenShows {
+		return
+	}
+	p.last = time.Now()
+	p.write(progressText(s))
+}
+
+func progressText(s remedies.Progress) string {
+	return fmt.Sprintf("%s: %d of %d done, this one %.0f %%", s.Option, s.Done, s.Total, 100*s.Share)
+}
+
+// write replaces what stands on the line.
+func (p *progress) write(line string) {
+	n := utf8.RuneCountInString(line)
+	fmt.Fprintf(p.w, "\r%s%s", line, strings.Repeat(" ", max(0, p.written-n)))
+	p.written = n
+}
+
+// clear leaves the line empty.
+func (p *progress) clear() {
+	if p.w == nil {
+		return
+	}
+	p.mu.Lock()
+	defer p.mu.Unlock()
+	p.write("")
+	fmt.Fprint(p.w, "\r")
+}
