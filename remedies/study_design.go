@@ -152,11 +152,13 @@ func (d *design) searchOne(ctx context.Context, i int, e optimize.Effort) ([]opt
 		return nil, err
 	}
 	var out []optimize.Found[Cut]
-	for _, b := range minima.Basins {
+	for k := range minima.Basins {
+		b := &minima.Basins[k]
 		out = append(out, optimize.Found[Cut]{
 			Cut:    Cut{uint16(i), b.Setting, b.Slip},
 			Margin: b.Result.F - d.required(i),
 		})
+		out = append(out, d.companions(i, b)...)
 	}
 	for _, u := range minima.Unresolved {
 		if u.Result.Screen < d.required(i)+d.z.s.Allowance {
