@@ -40,6 +40,7 @@ func (b Box) Within(o Box) bool {
 	return b.MinX >= o.MinX && b.MaxX <= o.MaxX && b.MinY >= o.MinY && b.MaxY <= o.MaxY
 }
 
+func (b Box) holds(p xy) bool     { return (Box{p.X, p.Y, p.X, p.Y}).Within(b) }
 func (b Box) grown(d float64) Box { return Box{b.MinX - d, b.MinY - d, b.MaxX + d, b.MaxY + d} }
 func (b Box) width() float64      { return b.MaxX - b.MinX }
 func (b Box) height() float64     { return b.MaxY - b.MinY }

@@ -12,6 +12,7 @@ const (
 	leaderCost   = 9.0  // of needing a leader line
 	leaderWeight = 30.0 // of each point of a leader line that a label covers
 	crossCost    = 25.0 // of each heavy line that a leader line crosses
+	buriedCost   = 40.0 // of a leader line that starts under another label
 	leaderClear  = 2.5  // points between a leader line and other texts
 )
 
@@ -23,8 +24,9 @@ type segment struct {
 
 // placer finds room for labels. It is greedy: what is placed first stands.
 type placer struct {
-	area   Box // Labels stay inside.
-	taken  []Box
+	area   Box   // Labels stay inside.
+	taken  []Box // Texts.
+	marks  []Box // Marks at anchors, such as that of a water level.
 	ink    []segment
 	leader [][2]xy
 }
@@ -46,6 +48,11 @@ func (p *placer) free(b Box) bool {
 	g := b.grown(labelGap / 2)
 	for _, t := range p.taken {
 		if g.Overlaps(t.grown(labelGap / 2)) {
+			return false
+		}
+	}
+	for _, m := range p.marks {
+		if b.Overlaps(m) {
 			return false
 		}
 	}
@@ -71,12 +78,22 @@ func (p *placer) covered(b Box) float64 {
 
 // leaderCosts returns the cost of a leader line from a to b, +Inf if it would run through a text.
 func (p *placer) leaderCosts(a, b xy) float64 {
+	cost := leaderCost
 	for _, t := range p.taken {
-		if g := t.grown(leaderClear); clippedLength(a, b, g) > 0 && !(Box{a.X, a.Y, a.X, a.Y}).Within(g) {
+		g := t.grown(leaderClear)
+		switch {
+		case clippedLength(a, b, g) == 0:
+		case g.holds(a):
+			cost += buriedCost // The anchor itself is under a text: no line avoids that.
+		default:
 			return math.Inf(1)
 		}
 	}
-	cost := leaderCost
+	for _, m := range p.marks {
+		if clippedLength(a, b, m) > 0 && !m.holds(a) {
+			cost += crossCost
+		}
+	}
 	for _, l := range p.leader {
 		if crosses(a, b, l[0], l[1]) {
 			cost += 4 * crossCost
@@ -116,16 +133,23 @@ var rings = []float64{0, 5, 12, 22, 34, 50, 70, 95, 125, 160}
 // directions is the number of directions tried at each distance.
 const directions = 16
 
-// place finds room for a box of w by h near an anchor, best on one side of it, and takes it; a pointed label has a
-// leader line however near it stands. It reports false if there is none.
-func (p *placer) place(w, h float64, anchor xy, prefer side, pointed bool) (spot, bool) {
+// wish is what a label asks for.
+type wish struct {
+	w, h    float64 // Its size, points.
+	anchor  xy
+	prefer  side
+	clear   float64 // Kept clear about the anchor beyond the usual gap, points.
+	pointed bool    // The label has a leader line however near it stands.
+}
+
+// place finds room for a label near its anchor, best on the side it prefers, and takes it. It reports false if there is none.
+func (p *placer) place(l wish) (spot, bool) {
 	best, least := spot{}, math.Inf(1)
 	try := func(b Box) {
 		if !p.free(b) {
 			return
 		}
-		cost, s := p.cost(b, anchor, prefer, pointed, least)
-		if cost < least {
+		if cost, s := p.cost(b, l, least); cost < least {
 			best, least = s, cost
 		}
 	}
@@ -134,33 +158,33 @@ func (p *placer) place(w, h float64, anchor xy, prefer side, pointed bool) (spot
 			break
 		}
 		for k := range directions {
-			try(around(w, h, anchor, anchorGap+d, 2*math.Pi*float64(k)/directions))
+			try(around(l.w, l.h, l.anchor, anchorGap+l.clear+d, 2*math.Pi*float64(k)/directions))
 		}
 	}
 	if math.IsInf(least, 1) {
-		p.sweep(w, h, try)
+		p.sweep(l.w, l.h, try)
 	}
 	if math.IsInf(least, 1) {
 		return spot{}, false
 	}
-	p.take(best, anchor)
+	p.take(best, l.anchor)
 	return best, true
 }
 
 // cost returns the cost of a free box for a label; it may stop early with a cost above the limit.
-func (p *placer) cost(b Box, anchor xy, prefer side, pointed bool, limit float64) (float64, spot) {
+func (p *placer) cost(b Box, l wish, limit float64) (float64, spot) {
 	s := spot{box: b}
-	near := b.nearest(anchor)
-	d := math.Hypot(near.X-anchor.X, near.Y-anchor.Y)
+	near := b.nearest(l.anchor)
+	d := math.Hypot(near.X-l.anchor.X, near.Y-l.anchor.Y)
 	c := b.centre()
-	turn := math.Atan2(c.Y-anchor.Y, c.X-anchor.X) - float64(prefer)
+	turn := math.Atan2(c.Y-l.anchor.Y, c.X-l.anchor.X) - float64(l.prefer)
 	cost := d + turnCost*(1-math.Cos(turn))/2
-	s.leader = pointed || d > leaderFrom
+	s.leader = l.pointed || d > leaderFrom+l.clear
 	if cost >= limit {
 		return cost, s
 	}
 	if s.leader {
-		cost += p.leaderCosts(anchor, near)
+		cost += p.leaderCosts(l.anchor, near)
 	}
 	if cost >= limit {
 		return cost, s
@@ -198,27 +222,11 @@ func around(w, h float64, anchor xy, gap, angle float64) Box {
 
 // clippedLength returns how much of the line from a to b lies inside the box, points.
 func clippedLength(a, b xy, box Box) float64 {
-	t0, t1 := 0.0, 1.0
-	for _, e := range [4][2]float64{
-		{a.X - b.X, a.X - box.MinX}, {b.X - a.X, box.MaxX - a.X},
-		{a.Y - b.Y, a.Y - box.MinY}, {b.Y - a.Y, box.MaxY - a.Y},
-	} {
-		d, room := e[0], e[1]
-		switch {
-		case d == 0:
-			if room < 0 {
-				return 0
-			}
-		case d > 0:
-			t1 = min(t1, room/d)
-		default:
-			t0 = max(t0, room/d)
-		}
-	}
-	if t0 >= t1 {
+	p, q, ok := clipSegment(a, b, box)
+	if !ok {
 		return 0
 	}
-	return (t1 - t0) * math.Hypot(b.X-a.X, b.Y-a.Y)
+	return math.Hypot(q.X-p.X, q.Y-p.Y)
 }
 
 // crosses reports whether the lines a-b and c-d cross at an inner point of both.

@@ -52,9 +52,10 @@ func (p *picture) dimension(s *sheet, d remedies.Dimension) {
 	}
 	best, least := dimLayout{}, math.Inf(1)
 	for _, o := range dimOffsets {
-		l, cost := s.tryDimension(a, b, u, normal, o, long, n)
-		if cost < least {
-			best, least = l, cost
+		for _, outside := range []bool{true, false} {
+			if l, cost := s.tryDimension(a, b, u, normal, o, long, n, outside); cost < least {
+				best, least = l, cost
+			}
 		}
 	}
 	if math.IsInf(least, 1) {
@@ -66,8 +67,9 @@ func (p *picture) dimension(s *sheet, d remedies.Dimension) {
 	s.write(n, best.box)
 }
 
-// tryDimension returns the layout at an offset with its cost, +Inf if it cannot be drawn there.
-func (s *sheet) tryDimension(a, b, u, normal xy, o, long float64, n note) (dimLayout, float64) {
+// tryDimension returns the layout at an offset with its cost, +Inf if it cannot be drawn there. A label too long to interrupt the
+// line stands outside it or between it and what it measures.
+func (s *sheet) tryDimension(a, b, u, normal xy, o, long float64, n note, outside bool) (dimLayout, float64) {
 	w, h := n.size()
 	along := math.Abs(u.X)*w + math.Abs(u.Y)*h
 	l := dimLayout{
@@ -82,7 +84,7 @@ func (s *sheet) tryDimension(a, b, u, normal xy, o, long float64, n note) (dimLa
 		l.box = Box{mid.X - w/2, mid.Y - h/2, mid.X + w/2, mid.Y + h/2}
 	} else {
 		sign := 1.0
-		if o < 0 {
+		if o < 0 == outside {
 			sign = -1
 		}
 		l.box = around(w, h, mid, 2.5, math.Atan2(sign*normal.Y, sign*normal.X))
@@ -91,7 +93,7 @@ func (s *sheet) tryDimension(a, b, u, normal xy, o, long float64, n note) (dimLa
 		return l, math.Inf(1)
 	}
 	for _, q := range [][2]xy{{l.a, l.b}, {a, l.a}, {b, l.b}} {
-		if !(Box{q[1].X, q[1].Y, q[1].X, q[1].Y}).Within(s.place.area) {
+		if !s.place.area.holds(q[1]) {
 			return l, math.Inf(1)
 		}
 		for _, t := range s.place.taken {
@@ -148,6 +150,7 @@ func (p *picture) markSlope(s *sheet) {
 		a := s.view.at(q)
 		ring := []xy{{a.X - half, a.Y}, {a.X, a.Y + half}, {a.X + half, a.Y}, {a.X, a.Y - half}, {a.X - half, a.Y}}
 		s.add(fill{paper, [][]xy{ring}}, stroke{pen{inkBlack, 0.7, nil}, [][]xy{ring}})
+		s.place.marks = append(s.place.marks, Box{a.X, a.Y, a.X, a.Y}.grown(half))
 	}
 }
 
@@ -160,5 +163,5 @@ func (p *picture) labelSlope(s *sheet) {
 		return name + " (" + number(q.X, 2) + ", " + number(q.Y, 2) + ")"
 	}
 	s.label(noteOf(bodyFace, inkBlack, 150, words("crest", p.job.Crest)), s.view.at(p.job.Crest), above)
-	s.label(noteOf(bodyFace, inkBlack, 150, words("toe", p.job.Toe)), s.view.at(p.job.Toe), above)
+	s.label(noteOf(bodyFace, inkBlack, 150, words("toe", p.job.Toe)), s.view.at(p.job.Toe), below)
 }

@@ -112,6 +112,8 @@ func (p *picture) soilWords(i int) string {
 
 // drawSection draws everything inside the frame: areas, then lines, then texts.
 func (p *picture) drawSection(s *sheet) {
+	s.inside = true
+	defer func() { s.inside = false }()
 	floor := s.view.y0
 	for i, t := range p.tops {
 		s.add(fill{soilTint(p.sec.Strata[i].Soil), [][]xy{s.view.line(under(t, floor))}})
@@ -195,6 +197,7 @@ func (p *picture) label(s *sheet) {
 		}
 	}
 	p.labelSlip(s)
+	p.labelOutfall(s)
 	p.labelLoads(s)
 	p.labelSlope(s)
 	p.labelWater(s)

@@ -170,12 +170,15 @@ func (p *picture) labelLimits(s *sheet) {
 			put(m.Name+": works no higher than "+metres(m.Level), s.view.at(lem.Point{X: (x0 + x1) / 2, Y: m.Level}), above)
 		}
 	}
-	if a, ok := p.outfall(s); ok {
-		s.label(noteOf(bodyFace, waterInk, 120, "drain outfall "+metres(*p.job.Limits.Outfall)), a, below)
-	}
 	for _, d := range p.ranges() {
 		a, b, y := p.bracket(s, d)
 		s.label(noteOf(smallFace, inkGrey, 200, d.name+" between offsets "+metres(d.r.From)+" and "+metres(d.r.To)), xy{(a + b) / 2, y}, above)
+	}
+}
+
+func (p *picture) labelOutfall(s *sheet) {
+	if a, ok := p.outfall(s); ok {
+		s.label(noteOf(bodyFace, waterInk, 120, "drain outfall "+metres(*p.job.Limits.Outfall)), a, below)
 	}
 }
 

@@ -2,6 +2,7 @@ package drawing
 
 import (
 	"math"
+	"slices"
 
 	"standfast/lem"
 )
@@ -29,18 +30,37 @@ func (p *picture) labelStrata(s *sheet) {
 	}
 }
 
-// nameBody writes a name in the middle of an outline if it fits inside, else beside it.
+// nameBody writes a name inside an outline if it fits there, else beside it with a leader line.
 func (p *picture) nameBody(s *sheet, n note, outline []lem.Point) {
-	n.pointed = true
-	w, h := n.size()
-	at := s.view.at(insideOf(outline))
-	b := Box{at.X - w/2, at.Y - h/2, at.X + w/2, at.Y + h/2}
-	if len(n.lines) > 0 && s.place.free(b) && holds(s.view.line(outline), b) {
-		s.place.taken = append(s.place.taken, b)
-		s.write(n, b)
+	if len(n.lines) == 0 {
 		return
 	}
-	s.label(n, at, above)
+	w, h := n.size()
+	ring := s.view.line(outline)
+	spots := insideOf(ring)
+	best, least := Box{}, math.Inf(1)
+	for _, at := range spots {
+		b := Box{at.X - w/2, at.Y - h/2, at.X + w/2, at.Y + h/2}
+		if s.place.free(b) && holds(ring, b) {
+			if cost := s.place.covered(b); cost < least {
+				best, least = b, cost
+			}
+		}
+	}
+	if !math.IsInf(least, 1) {
+		s.place.taken = append(s.place.taken, best)
+		s.write(n, best)
+		return
+	}
+	n.pointed = true
+	anchor := spots[0]
+	for _, at := range spots {
+		if !slices.ContainsFunc(s.place.taken, func(b Box) bool { return b.grown(leaderClear).holds(at) }) {
+			anchor = at
+			break
+		}
+	}
+	s.label(n, anchor, above)
 }
 
 // holds reports whether a box lies inside a ring: its upper and lower edges do.
@@ -58,23 +78,24 @@ func holds(ring []xy, b Box) bool {
 	return true
 }
 
-// insideOf returns a point inside an outline: the middle of the longest of some level cuts through it.
-func insideOf(ring []lem.Point) lem.Point {
+// insideOf returns points inside a ring, those in its widest middle first; the first corner if the ring has no inside.
+func insideOf(ring []xy) []xy {
 	lo, hi := math.Inf(1), math.Inf(-1)
-	flat := make([]xy, len(ring))
-	for i, q := range ring {
-		flat[i] = xy{q.X, q.Y}
+	for _, q := range ring {
 		lo, hi = min(lo, q.Y), max(hi, q.Y)
 	}
-	best, out := -1.0, ring[0]
-	for _, t := range []float64{0.5, 0.4, 0.6, 0.3, 0.7} {
-		y := lo + t*(hi-lo)
-		xs := crossings([][]xy{flat}, y)
-		for i := 0; i+1 < len(xs); i += 2 {
-			if w := xs[i+1] - xs[i]; w > best*1.2 {
-				best, out = w, lem.Point{X: (xs[i] + xs[i+1]) / 2, Y: y}
+	var out []xy
+	for _, share := range []float64{0.5, 0.3, 0.7, 0.15, 0.85} {
+		for _, t := range []float64{0.5, 0.4, 0.6, 0.28, 0.72, 0.16, 0.84} {
+			y := lo + t*(hi-lo)
+			xs := crossings([][]xy{ring}, y)
+			for i := 0; i+1 < len(xs); i += 2 {
+				out = append(out, xy{xs[i] + share*(xs[i+1]-xs[i]), y})
 			}
 		}
+	}
+	if len(out) == 0 {
+		return ring[:1]
 	}
 	return out
 }

@@ -249,5 +249,5 @@ func (s *sheet) waterMark(at xy) {
 	p := pen{waterInk, 0.7, nil}
 	s.add(fill{paper, [][]xy{tri}}, stroke{p, [][]xy{tri,
 		{{at.X - 3, at.Y - 2.2}, {at.X + 3, at.Y - 2.2}}, {{at.X - 1.6, at.Y - 4.2}, {at.X + 1.6, at.Y - 4.2}}}})
-	s.place.taken = append(s.place.taken, Box{at.X - half, at.Y - 4.5, at.X + half, at.Y + high})
+	s.place.marks = append(s.place.marks, Box{at.X - half, at.Y - 4.5, at.X + half, at.Y + high})
 }

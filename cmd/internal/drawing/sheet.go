@@ -21,7 +21,7 @@ const (
 
 // Weights of drawn lines in the search for label positions: the cost of each point covered.
 const (
-	heavy   = 1.5 // ground, slip
+	heavy   = 2.5 // ground, slip
 	medium  = 0.8 // water, dimensions, loads, limits
 	light   = 0.3 // strata
 	lighter = 0.06
@@ -59,15 +59,24 @@ type sheet struct {
 	fig      Figure
 	view     view
 	place    placer
+	inside   bool     // What is drawn is cut to the frame.
 	unplaced []string // Labels that found no room.
 }
 
-func (s *sheet) add(m ...mark) { s.fig.marks = append(s.fig.marks, m...) }
+// add draws marks, cut to the frame while what is inside it is drawn.
+func (s *sheet) add(marks ...mark) {
+	for _, m := range marks {
+		if s.inside {
+			m = clipped(m, s.view.frame)
+		}
+		s.fig.marks = append(s.fig.marks, m)
+	}
+}
 
 // stroke draws lines and keeps labels off them.
 func (s *sheet) stroke(p pen, weight float64, lines ...[]xy) {
 	s.add(stroke{p, lines})
-	s.place.avoid(weight, lines...)
+	s.place.avoid(weight, clipLines(lines, s.view.frame)...)
 }
 
 // line writes one line of text with its box starting at the left of its upper edge, and records it.
@@ -93,6 +102,7 @@ type note struct {
 	bold   bool // The first line is bold.
 	// pointed notes name an area: they have a leader line that ends in it however near they stand.
 	pointed bool
+	clear   float64 // Kept clear about the anchor beyond the usual gap, points.
 }
 
 // noteOf returns a text as a note of at most three lines of a width, points.
@@ -120,7 +130,7 @@ func (s *sheet) label(n note, anchor xy, prefer side) {
 		return
 	}
 	w, h := n.size()
-	sp, ok := s.place.place(w, h, anchor, prefer, n.pointed)
+	sp, ok := s.place.place(wish{w, h, anchor, prefer, n.clear, n.pointed})
 	if !ok {
 		s.unplaced = append(s.unplaced, strings.Join(n.lines, " "))
 		return

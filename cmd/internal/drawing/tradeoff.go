@@ -135,6 +135,9 @@ func curveName(o *remedies.Option) string {
 	return title(name)
 }
 
+// markerSize is the half width of a marker, points.
+const markerSize = 3.3
+
 // tradeoffFrame is the height of the frame, points.
 const tradeoffFrame = 370.0
 
@@ -204,7 +207,6 @@ func (s *sheet) drawCurves(curves []curve, target float64, share bool) {
 	s.add(stroke{grid, [][]xy{{{zero, f.MinY}, {zero, f.MaxY}}}})
 	at := s.pagePoint(0, target).Y
 	s.stroke(pen{inkBlack, 1.1, []float64{12, 4}}, heavy, []xy{{f.MinX, at}, {f.MaxX, at}})
-	const size = 3.3 // of a marker, points
 	for _, c := range curves {
 		var line []xy
 		for _, q := range c.points {
@@ -212,11 +214,11 @@ func (s *sheet) drawCurves(curves []curve, target float64, share bool) {
 		}
 		s.stroke(pen{c.style.colour, 1.3, c.style.dash}, heavy, line)
 		for i, q := range line {
-			s.marker(c.style, q, size)
+			s.marker(c.style, q, markerSize)
 			if c.points[i].sized {
-				s.add(stroke{pen{c.style.colour, 1.2, nil}, [][]xy{ringAbout(q, 2.2*size)}})
+				s.add(stroke{pen{c.style.colour, 1.2, nil}, [][]xy{ringAbout(q, 2.2*markerSize)}})
 			}
-			b := Box{q.X, q.Y, q.X, q.Y}.grown(size)
+			b := Box{q.X, q.Y, q.X, q.Y}.grown(markerSize)
 			s.place.avoid(heavy, []xy{{b.MinX, b.MinY}, {b.MaxX, b.MaxY}}, []xy{{b.MinX, b.MaxY}, {b.MaxX, b.MinY}})
 		}
 	}
@@ -227,7 +229,9 @@ func (s *sheet) drawCurves(curves []curve, target float64, share bool) {
 	s.label(noteOf(strongFace, inkBlack, 150, words), xy{f.MaxX - 60, at}, above)
 	for _, c := range curves {
 		last := c.points[len(c.points)-1]
-		s.label(noteOf(strongFace, c.style.colour, 170, c.name), s.pagePoint(last.earthworks, last.fs), rightOf)
+		n := noteOf(strongFace, c.style.colour, 170, c.name)
+		n.clear = markerSize
+		s.label(n, s.pagePoint(last.earthworks, last.fs), rightOf)
 	}
 }
 

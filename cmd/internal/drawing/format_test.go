@@ -1,0 +1,27 @@
+package drawing
+
+import "testing"
+
+func TestRounding(t *testing.T) {
+	tests := []struct{ name, got, want string }{
+		{"FS that is three decimals already", fsDown(1.305), "1.305"},
+		{"FS just below", fsDown(1.2999999999), "1.299"},
+		{"FS with more decimals", fsDown(1.2509), "1.250"},
+		{"FS of whole number", fsDown(2), "2.000"},
+		{"FS of few decimals", fsDown(0.9), "0.900"},
+		{"quantity of two decimals", quantityUp(12.9), "12.90"},
+		{"quantity with more decimals", quantityUp(12.9001), "12.91"},
+		{"quantity with the noise of a sum", quantityUp(0.1 + 0.2), "0.30"},
+		{"no quantity", quantityUp(0), "0.00"},
+		{"number with least decimals", number(2.5, 2), "2.50"},
+		{"number keeps what it needs", number(0.125, 2), "0.125"},
+		{"number without decimals", number(30, 0), "30"},
+	}
+	for _, c := range tests {
+		t.Run(c.name, func(t *testing.T) {
+			if c.got != c.want {
+				t.Errorf("got %s, want %s", c.got, c.want)
+			}
+		})
+	}
+}
