@@ -7,10 +7,8 @@ import (
 )
 
 const (
-	// drainStation is the greatest distance between points at which the ratio lowered is worked out, m. Between them it is linear.
-	// The mean ratio is a concave function of the head, so that is on the safe side; the ratio at midspan is convex where the head is
-	// small, where the line overstates it by less than 0.002.
-	drainStation = 1
+	// drainStation is the greatest distance between points at which the ratio lowered is worked out, m.
+	drainStation = 0.75
 	// midspanNote marks the check midway between drains.
 	midspanNote = "midspan between drains"
 )
@@ -48,8 +46,8 @@ func (d *trenchDrains) Apply(j *Job, on *Proposal, x []float64) *Proposal {
 		}
 		mid := p.Waters[i]
 		if ok {
-			mid.Drains = t.drawdown(mid.Line, s.DrainsWorking, midspanRatio(x[drainEffectiveness]))
-			p.Waters[i].Drains = t.drawdown(p.Waters[i].Line, s.DrainsWorking, meanRatio(x[drainEffectiveness]))
+			mid.Drains = t.drawdown(mid.Line, s.DrainsWorking, midspanFall(x[drainEffectiveness]))
+			p.Waters[i].Drains = t.drawdown(p.Waters[i].Line, s.DrainsWorking, meanFall(x[drainEffectiveness]))
 		}
 		p.variants = append(p.variants, variant{situation: i, note: midspanNote, water: mid})
 	}
@@ -166,48 +164,75 @@ func (d *trenchDrains) measure(j *Job, p *Proposal, s *slope, t *trench) {
 		lem.Point{X: middle, Y: j.Section.Ground.At(middle)}, lem.Point{X: middle, Y: t.invert.At(middle)}))
 }
 
-// ratioOf returns the ratio by which the head h above the invert falls at the invert, for a clear spacing.
-type ratioOf func(clear, h float64) float64
-
-// meanRatio returns the mean ratio between drains: as given, or by the series if effectiveness is NaN.
-func meanRatio(effectiveness float64) ratioOf {
-	if math.IsNaN(effectiveness) {
-		return func(clear, h float64) float64 { return 1 - meanHead(clear/h) }
-	}
-	return func(_, _ float64) float64 { return effectiveness }
+// fall says by what ratio the head above the invert falls at the invert.
+type fall struct {
+	ratio func(clear, head float64) float64
+	// concave: the ratio is a concave function of the head, so that a straight line between two heads lies below it. Otherwise it is
+	// only known to rise with the head.
+	concave bool
 }
 
-// midspanRatio returns the ratio midway between drains.
-func midspanRatio(effectiveness float64) ratioOf {
+// meanFall returns the mean between drains: as given, or by the series if effectiveness is NaN.
+func meanFall(effectiveness float64) fall {
 	if math.IsNaN(effectiveness) {
-		return func(clear, h float64) float64 { return 1 - midspanHead(clear/h) }
+		return fall{ratio: func(clear, h float64) float64 { return 1 - meanHead(clear/h) }, concave: true}
+	}
+	return fall{ratio: func(_, _ float64) float64 { return effectiveness }, concave: true}
+}
+
+// midspanFall returns the fall midway between drains.
+func midspanFall(effectiveness float64) fall {
+	if math.IsNaN(effectiveness) {
+		return fall{ratio: func(clear, h float64) float64 { return 1 - midspanHead(clear/h) }}
 	}
 	r := math.Max(0, 1-midspanOverMean*(1-effectiveness))
-	return func(_, _ float64) float64 { return r }
+	return fall{ratio: func(_, _ float64) float64 { return r }, concave: true}
+}
+
+// between returns the ratios to take at two neighbouring heads so that the straight line between them nowhere overstates the ratio.
+func (f *fall) between(clear, h0, h1 float64) (r0, r1 float64) {
+	at := func(h float64) float64 {
+		if h <= sameLevel {
+			return 0
+		}
+		return f.ratio(clear, h)
+	}
+	if f.concave {
+		return at(h0), at(h1)
+	}
+	low := at(math.Min(h0, h1))
+	return low, low
 }
 
 // drawdown returns what the trenches do to a water line, in the share that they work.
-func (t *trench) drawdown(line lem.Profile, working float64, ratio ratioOf) *lem.Drawdown {
+func (t *trench) drawdown(line lem.Profile, working float64, f fall) *lem.Drawdown {
 	d := &lem.Drawdown{Fade: t.clear / 2}
-	add := func(x, y, h float64) {
-		r := 0.0
-		if h > sameLevel {
-			r = working * ratio(t.clear, h)
-		}
-		if n := len(d.Invert); n > 0 && d.Invert[n-1].X == x && d.Invert[n-1].Y == y {
-			d.Ratio[n-1] = math.Min(d.Ratio[n-1], r) // at a step of the water line the lesser ratio is safe on both sides
+	add := func(s station, r float64) {
+		if n := len(d.Invert); n > 0 && d.Invert[n-1].X == s.x && d.Invert[n-1].Y == s.invert {
+			d.Ratio[n-1] = math.Min(d.Ratio[n-1], working*r) // the lesser ratio is safe on both sides
 			return
 		}
-		d.Invert = append(d.Invert, lem.Point{X: x, Y: y})
-		d.Ratio = append(d.Ratio, r)
+		d.Invert = append(d.Invert, lem.Point{X: s.x, Y: s.invert})
+		d.Ratio = append(d.Ratio, working*r)
 	}
 	for _, p := range pieces(line, t.invert, t.from, t.to) {
 		n := math.Ceil((p.x1 - p.x0) / drainStation)
-		for i := 0.0; i <= n; i++ {
-			w := i / n
-			x, a, b := p.x0*(1-w)+p.x1*w, p.a0*(1-w)+p.a1*w, p.b0*(1-w)+p.b1*w
-			add(x, b, a-b)
+		for i := 0.0; i < n; i++ {
+			a, b := p.along(i/n), p.along((i+1)/n)
+			r0, r1 := f.between(t.clear, a.head, b.head)
+			add(a, r0)
+			add(b, r1)
 		}
 	}
 	return d
+}
+
+// station is a point of a trench with the head of the line above its invert.
+type station struct{ x, invert, head float64 }
+
+// along returns the station at share w of a piece of line over invert.
+func (p *piece) along(w float64) station {
+	mix := func(a, b float64) float64 { return a*(1-w) + b*w }
+	invert := mix(p.b0, p.b1)
+	return station{x: mix(p.x0, p.x1), invert: invert, head: mix(p.a0, p.a1) - invert}
 }
