@@ -46,8 +46,10 @@ func clipLines(lines [][]xy, b Box) [][]xy {
 func clipSegment(p, q xy, b Box) (xy, xy, bool) {
 	t0, t1 := 0.0, 1.0
 	for _, e := range [4][2]float64{
-		{p.X - q.X, p.X - b.MinX}, {q.X - p.X, b.MaxX - p.X},
-		{p.Y - q.Y, p.Y - b.MinY}, {q.Y - p.Y, b.MaxY - p.Y},
+		{p.X - q.X, p.X - b.MinX},
+		{q.X - p.X, b.MaxX - p.X},
+		{p.Y - q.Y, p.Y - b.MinY},
+		{q.Y - p.Y, b.MaxY - p.Y},
 	} {
 		d, room := e[0], e[1]
 		switch {

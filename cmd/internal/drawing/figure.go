@@ -62,6 +62,7 @@ func (f *Figure) Page() Box { return Box{0, 0, f.Width, f.Height} }
 // on faces of the same widths. It returns the error of w.
 func (f *Figure) WriteSVG(w io.Writer) error {
 	c := vgsvg.New(vg.Length(f.Width), vg.Length(f.Height))
+	fill{colour: paper, rings: [][]xy{f.Page().corners()}}.draw(c) // An image is white from the start.
 	f.drawOn(c)
 	var b bytes.Buffer
 	if _, err := c.WriteTo(&b); err != nil {
@@ -82,8 +83,6 @@ func (f *Figure) WritePNG(w io.Writer) error {
 }
 
 func (f *Figure) drawOn(c vg.Canvas) {
-	white := fill{colour: paper, rings: [][]xy{f.Page().corners()}}
-	white.draw(c)
 	for _, m := range f.marks {
 		m.draw(c)
 	}

@@ -91,6 +91,7 @@ func spans(a, b lem.Profile) []span {
 func lower(a, b lem.Profile) lem.Profile {
 	return envelope(a, b, func(y, z float64) float64 { return min(y, z) })
 }
+
 func upper(a, b lem.Profile) lem.Profile {
 	return envelope(a, b, func(y, z float64) float64 { return max(y, z) })
 }

@@ -56,8 +56,12 @@ func TestLimitsAtAStep(t *testing.T) {
 		name           string
 		x, left, right float64
 	}{
-		{"before the profile", -1, 1, 1}, {"at its start", 0, 1, 1}, {"at the step", 2, 1, 5}, {"between points", 3, 6, 6},
-		{"at its end", 4, 7, 7}, {"behind it", 9, 7, 7},
+		{"before the profile", -1, 1, 1},
+		{"at its start", 0, 1, 1},
+		{"at the step", 2, 1, 5},
+		{"between points", 3, 6, 6},
+		{"at its end", 4, 7, 7},
+		{"behind it", 9, 7, 7},
 	} {
 		t.Run(c.name, func(t *testing.T) {
 			if l, r := limits(p, c.x); l != c.left || r != c.right {

@@ -118,10 +118,10 @@ func (s *sheet) drawDimension(a, b, u xy, l dimLayout) {
 		v := xy{dx / k, dy / k}
 		s.stroke(dimPen, medium, []xy{{e[0].X + v.X*gap, e[0].Y + v.Y*gap}, {e[1].X + v.X*over, e[1].Y + v.Y*over}})
 	}
-	s.stroke(dimPen, heavy, []xy{l.a, l.b})
+	s.stroke(dimPen, heaviest, []xy{l.a, l.b})
 	if l.short {
 		const tail = 2 * arrowHead
-		s.stroke(dimPen, heavy, []xy{{l.a.X - u.X*tail, l.a.Y - u.Y*tail}, l.a}, []xy{l.b, {l.b.X + u.X*tail, l.b.Y + u.Y*tail}})
+		s.stroke(dimPen, heaviest, []xy{{l.a.X - u.X*tail, l.a.Y - u.Y*tail}, l.a}, []xy{l.b, {l.b.X + u.X*tail, l.b.Y + u.Y*tail}})
 		s.arrow(inkBlack, l.a, u)
 		s.arrow(inkBlack, l.b, xy{-u.X, -u.Y})
 		return

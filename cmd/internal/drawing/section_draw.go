@@ -114,14 +114,15 @@ func (p *picture) soilWords(i int) string {
 func (p *picture) drawSection(s *sheet) {
 	s.inside = true
 	defer func() { s.inside = false }()
-	floor := s.view.y0
+	floor := lem.Profile{{X: p.x0, Y: s.view.y0}, {X: p.x1, Y: s.view.y0}}
 	for i, t := range p.tops {
-		s.add(fill{soilTint(p.sec.Strata[i].Soil), [][]xy{s.view.line(under(t, floor))}})
+		next := floor
+		if i+1 < len(p.tops) {
+			next = p.tops[i+1]
+		}
+		s.add(fill{soilTint(p.sec.Strata[i].Soil), s.view.lines(between(t, next))})
 	}
 	p.drawBodies(s)
-	sky := append(s.view.line(p.ground), xy{s.view.at(p.ground[len(p.ground)-1]).X, s.view.frame.MaxY},
-		xy{s.view.at(p.ground[0]).X, s.view.frame.MaxY})
-	s.add(fill{paper, [][]xy{sky}})
 	p.drawFree(s)
 	if cuts := s.view.lines(p.cuts); len(cuts) > 0 {
 		s.stroke(cutPen, lighter, hatch(cutHatchAngle, hatchSpacing, cuts)...)
@@ -149,6 +150,13 @@ func (p *picture) drawBodies(s *sheet) {
 	}
 	for _, ring := range added { // One by one: bodies may cover each other.
 		s.stroke(fillPen, lighter, hatch(fillHatchAngle, hatchSpacing, [][]xy{ring}, below)...)
+	}
+	for _, b := range p.bodies { // The ground cuts bodies.
+		x0, x1 := ends(b.outline)
+		if x0 < x1 {
+			high := lem.Profile{{X: x0, Y: p.hi}, {X: x1, Y: p.hi}}
+			s.add(fill{paper, s.view.lines(between(upper(high, crop(p.ground, x0, x1)), crop(p.ground, x0, x1)))})
+		}
 	}
 }
 

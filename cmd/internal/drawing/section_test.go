@@ -44,7 +44,7 @@ func TestScalesAreEqual(t *testing.T) {
 	}
 }
 
-// TestNothingLeavesTheFrame looks at the marks themselves: what is drawn stays on the page.
+// TestNothingLeavesThePage looks at the marks themselves: what is drawn stays on the page.
 func TestNothingLeavesThePage(t *testing.T) {
 	for name, d := range cases() {
 		t.Run(name, func(t *testing.T) {

@@ -247,7 +247,10 @@ func (s *sheet) waterMark(at xy) {
 	const half, high = 3.6, 6.2 // points
 	tri := []xy{at, {at.X - half, at.Y + high}, {at.X + half, at.Y + high}, at}
 	p := pen{waterInk, 0.7, nil}
-	s.add(fill{paper, [][]xy{tri}}, stroke{p, [][]xy{tri,
-		{{at.X - 3, at.Y - 2.2}, {at.X + 3, at.Y - 2.2}}, {{at.X - 1.6, at.Y - 4.2}, {at.X + 1.6, at.Y - 4.2}}}})
+	s.add(fill{paper, [][]xy{tri}}, stroke{p, [][]xy{
+		tri,
+		{{at.X - 3, at.Y - 2.2}, {at.X + 3, at.Y - 2.2}},
+		{{at.X - 1.6, at.Y - 4.2}, {at.X + 1.6, at.Y - 4.2}},
+	}})
 	s.place.marks = append(s.place.marks, Box{at.X - half, at.Y - 4.5, at.X + half, at.Y + high})
 }

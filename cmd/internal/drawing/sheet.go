@@ -21,10 +21,11 @@ const (
 
 // Weights of drawn lines in the search for label positions: the cost of each point covered.
 const (
-	heavy   = 2.5 // ground, slip
-	medium  = 0.8 // water, dimensions, loads, limits
-	light   = 0.3 // strata
-	lighter = 0.06
+	heaviest = 8.0 // dimension lines: a dimension without its arrows says nothing
+	heavy    = 2.5 // ground, slip
+	medium   = 0.8 // water, dimensions, loads, limits
+	light    = 0.3 // strata
+	lighter  = 0.06
 )
 
 // view maps section coordinates to the page.
