@@ -56,13 +56,10 @@ func (o *studyOptions) overrides() []string {
 func readCase(path string) (*casefile.Case, error) {
 	c, err := casefile.Read(path)
 	var onDisk *fs.PathError
-	switch {
-	case errors.As(err, &onDisk):
+	if errors.As(err, &onDisk) {
 		return nil, usagef("cannot read the case file %s: %w", path, onDisk.Err)
-	case err != nil:
-		return nil, &usageError{err}
 	}
-	return c, nil
+	return c, err
 }
 
 // oneArgument refuses anything but one argument, in words of the command.

@@ -2,6 +2,7 @@ package cli
 
 import (
 	"fmt"
+	"slices"
 	"strings"
 )
 
@@ -23,11 +24,12 @@ func quoted(names []string) string {
 	return strings.Join(out, ", ")
 }
 
-// near reports whether a is likely a slip of the pen for b: at most a third of the letters differ, case and the joining of words apart.
+// near reports whether a is likely a slip of the pen for b: the same letters in another order, or at most a third of them different. Case
+// and the joining of words do not count.
 func near(a, b string) bool {
 	plain := strings.NewReplacer("_", " ", "-", " ")
 	s, t := []rune(plain.Replace(strings.ToLower(a))), []rune(plain.Replace(strings.ToLower(b)))
-	return distance(s, t) <= max(1, min(len(s), len(t))/3)
+	return distance(s, t) <= max(1, min(len(s), len(t))/3) || slices.Equal(slices.Sorted(slices.Values(s)), slices.Sorted(slices.Values(t)))
 }
 
 // distance is the least number of letters added, dropped or changed that turns s into t (Levenshtein 1966).
