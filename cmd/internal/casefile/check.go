@@ -72,10 +72,10 @@ func (r *reader) isKind(s *shape, v value, k yaml.Kind) bool {
 
 func (r *reader) wrongType(s *shape, v value) {
 	is := "a single value"
-	switch v.node.Kind {
-	case yaml.SequenceNode:
+	if v.node.Kind == yaml.SequenceNode {
 		is = "a list"
-	case yaml.MappingNode:
+	}
+	if v.node.Kind == yaml.MappingNode {
 		is = "a mapping"
 	}
 	suggestion := "write " + s.String()

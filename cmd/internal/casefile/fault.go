@@ -57,7 +57,7 @@ func caretIndent(line string, column int) string {
 // Faults returns the faults joined in an error from [Read] or [Parse], in the order of the file; nil if it holds none.
 func Faults(err error) []*Fault {
 	var one *Fault
-	if joined, ok := err.(interface{ Unwrap() []error }); ok { //nolint:errorlint // the join itself is taken apart, not searched
+	if joined, ok := err.(interface{ Unwrap() []error }); ok {
 		var all []*Fault
 		for _, e := range joined.Unwrap() {
 			all = append(all, Faults(e)...)

@@ -117,6 +117,8 @@ func figure(x float64) string {
 	return strconv.FormatFloat(x, 'g', -1, 64)
 }
 
+// Constructors of shapes, so that the table of keys reads as a table.
+
 func text(what string) *shape             { return &shape{kind: textKind, what: what} }
 func number(unit string, b bounds) *shape { return &shape{kind: numberKind, unit: unit, bounds: b} }
 func boolean() *shape                     { return &shape{kind: booleanKind} }
@@ -127,10 +129,13 @@ func tuple(parts ...field) *shape         { return &shape{kind: tupleKind, parts
 func list(elem *shape, least, most int) *shape {
 	return &shape{kind: listKind, elem: elem, min: least, max: most}
 }
+
 func named(elem *shape, least, most int) *shape {
 	return &shape{kind: namedKind, elem: elem, min: least, max: most}
 }
-func object(fields ...field) *shape               { return &shape{kind: objectKind, fields: fields} }
+
+func object(fields ...field) *shape { return &shape{kind: objectKind, fields: fields} }
+
 func either(choices ...*shape) *shape             { return &shape{kind: eitherKind, choices: choices} }
 func (s *shape) exactlyOne(keys ...string) *shape { s.oneOf = keys; return s }
 

@@ -134,14 +134,6 @@ func (r *reader) number(v value) (float64, bool) {
 	return x, p == nil
 }
 
-// numberOr returns a number, or what holds without it.
-func (r *reader) numberOr(v value, standard float64) float64 {
-	if x, ok := r.number(v); ok {
-		return x
-	}
-	return standard
-}
-
 // isTrue reports whether the value is there and says true; without it, it is what holds without it.
 func (r *reader) isTrue(v value, standard bool) bool {
 	if s, ok := r.text(v); ok {
