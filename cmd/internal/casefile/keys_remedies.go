@@ -3,6 +3,7 @@ package casefile
 import (
 	"fmt"
 	"math"
+	"strings"
 
 	"standfast/remedies"
 )
@@ -22,6 +23,7 @@ func worksShape(toSize bool) *shape {
 	s := object()
 	for _, k := range remedies.Catalogue() {
 		f := field{key: k.Name, shape: kindShape(k, toSize), standard: "not considered", meaning: k.Summary}
+		f.example = kindExample(f.shape)
 		if k.WhatIf {
 			f.meaning += " A what-if: listed last, never the least-earthworks answer."
 		}
@@ -41,6 +43,22 @@ func kindShape(k remedies.Kind, toSize bool) *shape {
 		s.fields = append(s.fields, parameterField(p, toSize))
 	}
 	return s
+}
+
+// kindExample returns the settings of a remedy that have to be given, and its first size besides if that leaves nothing.
+func kindExample(s *shape) string {
+	var given []string
+	for _, f := range s.fields {
+		if f.required {
+			given = append(given, f.key+": "+f.example)
+		}
+	}
+	for _, f := range s.fields {
+		if len(given) == 0 && f.shape.kind == sizeKind {
+			given = append(given, f.key+": "+f.standard)
+		}
+	}
+	return "{" + strings.Join(given, ", ") + "}"
 }
 
 func choiceField(c remedies.Choice) field {
