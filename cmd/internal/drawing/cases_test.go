@@ -255,7 +255,7 @@ func flat() drawn {
 	j.Section.Strata = []lem.Stratum{
 		{Soil: 0, Top: ground},
 		{Soil: 1, Top: lem.Profile{{X: 0, Y: 20}, {X: 300, Y: 19}, {X: 620, Y: 10}}},
-		{Soil: 2, Top: lem.Profile{{X: 0, Y: 6}, {X: 620, Y: 2}}},
+		{Soil: 2, Top: lem.Profile{{X: 0, Y: -12}, {X: 620, Y: -20}}},
 	}
 	j.Section.Loads = []lem.Surcharge{{Name: "stockpile", FromX: 40, ToX: 296, Pressure: 12}}
 	j.Crest, j.Toe = ground[1], ground[2]

@@ -119,6 +119,9 @@ func (s *sheet) drawDimension(a, b, u xy, l dimLayout) {
 		s.stroke(dimPen, medium, []xy{{e[0].X + v.X*gap, e[0].Y + v.Y*gap}, {e[1].X + v.X*over, e[1].Y + v.Y*over}})
 	}
 	s.stroke(dimPen, heaviest, []xy{l.a, l.b})
+	for _, q := range []xy{l.a, l.b} { // No label hides an arrow.
+		s.place.marks = append(s.place.marks, Box{q.X, q.Y, q.X, q.Y}.grown(arrowHead))
+	}
 	if l.short {
 		const tail = 2 * arrowHead
 		s.stroke(dimPen, heaviest, []xy{{l.a.X - u.X*tail, l.a.Y - u.Y*tail}, l.a}, []xy{l.b, {l.b.X + u.X*tail, l.b.Y + u.Y*tail}})
