@@ -148,7 +148,7 @@ func TestProgress(t *testing.T) {
 	p.show(remedies.Progress{Option: "b", Done: 1, Total: 3})
 	p.show(remedies.Progress{Option: "too soon"})
 	p.clear()
-	want := "\rberm: 1 of 3 done, this one 50 %\rb: 1 of 3 done, this one 0 %    \r" + strings.Repeat(" ", 28) + "\r"
+	want := "\rsizing berm, 2 of 3, 50 %\rsizing b, 2 of 3, 0 %    \r" + strings.Repeat(" ", 21) + "\r"
 	if got := b.String(); got != want {
 		t.Errorf("got %q, want %q", got, want)
 	}

@@ -78,7 +78,7 @@ func (p *progress) show(s remedies.Progress) {
 }
 
 func progressText(s remedies.Progress) string {
-	return fmt.Sprintf("%s: %d of %d done, this one %.0f %%", s.Option, s.Done, s.Total, 100*s.Share)
+	return fmt.Sprintf("sizing %s, %d of %d, %.0f %%", s.Option, s.Done+1, s.Total, 100*s.Share)
 }
 
 // write replaces what stands on the line.

@@ -28,13 +28,14 @@ func sample() (*remedies.Result, Source) {
 	lower.Situations, _ = outcomes(job, lower.Proposal, 1.31, math.NaN(), 1.3)
 	existing := remedies.Option{Name: "existing", Title: "existing slope", Status: remedies.Existing, Proposal: remedies.Start(job)}
 	existing.Situations, _ = outcomes(job, existing.Proposal, 1.1506, 1.0413)
-	return &remedies.Result{
-			Job: job, Settings: remedies.Settings{Seed: 7, Workers: 3}, Existing: existing, Least: "berm",
-			Options: []remedies.Option{berm, drains, regrade, lower},
-		}, Source{
-			File: "made-up.yaml", SHA256: "00ff", Version: "v0", Notes: []string{"toe taken at (52.50, 100.00)"},
-			Files: []string{"result.json", "witnesses.json"},
-		}
+	result := &remedies.Result{
+		Job: job, Settings: remedies.Settings{Seed: 7, Workers: 3}, Existing: existing, Least: "berm",
+		Options: []remedies.Option{berm, drains, regrade, lower},
+	}
+	return result, Source{
+		File: "made-up.yaml", SHA256: "00ff", Version: "v0", Notes: []string{"toe taken at (52.50, 100.00)"},
+		Files: []string{"result.json", "witnesses.json"},
+	}
 }
 
 func sampleJob() *remedies.Job {
