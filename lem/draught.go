@@ -13,6 +13,7 @@ type draught struct {
 	strata   []Profile
 	water    Profile
 	edges    []segment // Everything that bounds soils or water.
+	known    [][]Point // Known slip surfaces, vertical steps drawn out.
 	step     float64   // Width of a drawn-out vertical step, m.
 	from, to float64   // Ends of the columns.
 }
@@ -49,6 +50,9 @@ func draughtOf(s *Section, sit *Situation) *draught {
 			}
 			d.edges = append(d.edges, segment{p, q})
 		}
+	}
+	for i := range s.Known {
+		d.addKnown(s.Known[i].Line)
 	}
 	for _, f := range sit.Water.Free {
 		d.edges = append(d.edges, segment{Point{f.FromX, f.Level}, Point{f.ToX, f.Level}})
@@ -300,7 +304,7 @@ func (m *Model) addLayers(d *draught, c *column, xm float64) {
 		next := m.newLayer(d, c, xm, mid)
 		next.bottom = l
 		n := len(m.layers)
-		if n > int(c.first) && m.layers[n-1].soil == next.soil && m.layers[n-1].gamma == next.gamma {
+		if n > int(c.first) && m.layers[n-1].soil == next.soil && m.layers[n-1].gamma == next.gamma && m.layers[n-1].known == next.known {
 			m.layers[n-1].bottom = l
 		} else {
 			next.sigma, next.slope = sigma.a+next.gamma*top.a, sigma.b+next.gamma*top.b
@@ -346,5 +350,6 @@ func (m *Model) newLayer(d *draught, c *column, x, y float64) layer {
 			l.kind, l.gradient, l.datum = strengthGradient, u.Gradient, lineOver(u.Datum, c.x0, c.x1)
 		}
 	}
+	m.shear(d, &l, c, x, y)
 	return l
 }

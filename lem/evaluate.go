@@ -18,7 +18,7 @@ func (m *Model) FS(ws *Workspace, s *Slip, o Setting) Result {
 	if s.Kind == Circle {
 		cut = m.circleParts(ws, s.Centre, s.Radius)
 	} else {
-		m.polylineParts(ws, s)
+		cut = m.polylineParts(ws, s)
 	}
 	if cut {
 		best.Status = Inadmissible

@@ -19,8 +19,9 @@ type Model struct {
 	pooled bool        // Free water stands somewhere.
 	firm   bool        // A firm base is given.
 
-	left, right float64 // Ends of the ground as given; the columns go on beyond them, level.
-	low, high   float64 // Lowest and highest ground, m.
+	left, right float64   // Ends of the ground as given; the columns go on beyond them, level.
+	low, high   float64   // Lowest and highest ground, m.
+	known       [][]Point // Known slip surfaces, vertical steps drawn out.
 }
 
 // column is a vertical strip of the section; the lines are y = a + b x.
@@ -52,6 +53,7 @@ type layer struct {
 	c, tan       float64 // Cohesion (or cu at the datum), kPa; tangent of the friction angle.
 	gradient     float64
 	datum        line
+	known        int32 // 1 + index of the known slip surface that the layer is the band of; 0: none.
 }
 
 type line struct{ a, b float64 }
@@ -116,6 +118,7 @@ func (m *Model) Compile(s *Section, sit *Situation) error {
 		}
 	}
 	d := draughtOf(s, sit)
+	m.known = d.known
 	xs := d.breakpoints()
 	for i := 0; i+1 < len(xs); i++ {
 		m.addColumn(d, xs[i], xs[i+1])
@@ -146,6 +149,12 @@ func check(s *Section, sit *Situation) error {
 			return ErrEmptySection
 		}
 		lines = append(lines, st.Top)
+	}
+	for i := range s.Known {
+		if len(s.Known[i].Line) < 2 {
+			return ErrEmptySection
+		}
+		lines = append(lines, s.Known[i].Line)
 	}
 	for _, b := range s.Placed {
 		if b.Soil < 0 || b.Soil >= len(s.Soils) {

@@ -10,6 +10,17 @@ type Section struct {
 	Loads  []Surcharge // Vertical pressures on the ground.
 	// FirmBase, when not nil, is a line below which no slip passes.
 	FirmBase Profile
+	// Known are slip surfaces that exist already, with a strength of their own.
+	Known []KnownSlip
+}
+
+// KnownSlip is a slip surface that exists already: a slip that runs along it finds there not the strength of the soil but that of the sheared
+// surface, with the pore pressure of the soil, and that of the water line where the soil acts undrained. A search always looks at it and at
+// slips that share parts of it.
+type KnownSlip struct {
+	Line     Profile // From its head or toe on the left to the other end; not held level beyond its ends.
+	Cohesion float64 // Residual cohesion, kPa.
+	Friction float64 // Residual angle of friction, rad.
 }
 
 // GroundBefore returns the ground before works: the top of the first stratum.

@@ -1,0 +1,40 @@
+package lem
+
+import "math"
+
+// bandShare is half the thickness of the band that stands for a known slip surface, as a share of the section's width: thin enough to weigh
+// nothing and to give nothing away to slips that cross it, thick against rounding.
+const bandShare = 1e-5
+
+// band returns half the thickness of the bands, m.
+func (d *draught) band() float64 { return bandShare / stepWidth * d.step }
+
+// addKnown draws out a known slip surface and adds the edges of its band.
+func (d *draught) addKnown(p Profile) {
+	q := d.drawOut(p)
+	q = q[1 : len(q)-1] // Its ends do not run on.
+	d.known = append(d.known, q)
+	t := d.band()
+	for i := 0; i+1 < len(q); i++ {
+		a, b := q[i], q[i+1]
+		d.edges = append(d.edges,
+			segment{Point{a.X, a.Y + t}, Point{b.X, b.Y + t}},
+			segment{Point{a.X, a.Y - t}, Point{b.X, b.Y - t}})
+	}
+}
+
+// shear gives a layer the strength of a known slip surface if the point of the layer lies in its band. Of surfaces that cross, the last counts.
+func (m *Model) shear(d *draught, l *layer, c *column, x, y float64) {
+	for i, q := range d.known {
+		if x < q[0].X || x > q[len(q)-1].X || math.Abs(polylineAt(q, x)-y) > d.band() {
+			continue
+		}
+		k := &d.s.Known[i]
+		if soil := &d.s.Soils[l.soil]; l.pore == poreNone && soil.HasRu {
+			l.pore, l.ru = poreRu, soil.Ru
+		} else if l.pore == poreNone && !math.IsInf(c.water.at(x), -1) {
+			l.pore = poreLine
+		}
+		l.known, l.kind, l.c, l.tan = int32(i+1), strengthConstant, k.Cohesion, math.Tan(k.Friction)
+	}
+}
