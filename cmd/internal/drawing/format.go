@@ -32,6 +32,9 @@ func number(v float64, decimals int) string {
 	return strings.TrimSuffix(s, ".")
 }
 
+// rounded writes a coordinate with two decimals, to the nearest.
+func rounded(v float64) string { return strconv.FormatFloat(v, 'f', 2, 64) }
+
 // metres writes a length or coordinate with its unit.
 func metres(v float64) string { return number(v, 2) + " m" }
 

@@ -142,8 +142,8 @@ type wish struct {
 	pointed bool    // The label has a leader line however near it stands.
 }
 
-// place finds room for a label near its anchor, best on the side it prefers, and takes it. It reports false if there is none.
-func (p *placer) place(l wish) (spot, bool) {
+// find returns the best room for a label near its anchor and its cost, +Inf if there is none.
+func (p *placer) find(l wish) (spot, float64) {
 	best, least := spot{}, math.Inf(1)
 	try := func(b Box) {
 		if !p.free(b) {
@@ -164,11 +164,7 @@ func (p *placer) place(l wish) (spot, bool) {
 	if math.IsInf(least, 1) {
 		p.sweep(l.w, l.h, try)
 	}
-	if math.IsInf(least, 1) {
-		return spot{}, false
-	}
-	p.take(best, l.anchor)
-	return best, true
+	return best, least
 }
 
 // cost returns the cost of a free box for a label; it may stop early with a cost above the limit.

@@ -55,6 +55,7 @@ type picture struct {
 	gov *remedies.Outcome // The outcome whose slip is drawn; nil: none.
 
 	works          bool // The ground, the bodies or the water differ from the section as read.
+	reshaped       bool // The ground does.
 	x0, x1, lo, hi float64
 	before, ground lem.Profile
 	stage          lem.Profile // Ground of the governing stage where it differs; nil otherwise.
@@ -112,8 +113,9 @@ func (p *picture) gatherWorks() {
 		return
 	}
 	q := p.opt.Proposal
-	p.works = len(q.Section.Placed) > len(p.job.Section.Placed) || q.Quantities.Earthworks() > 0 || q.Quantities.Drain > 0 ||
-		len(q.Dimensions) > 0 || !same(p.sec.Ground, p.sec.GroundBefore())
+	p.reshaped = !same(p.sec.Ground, p.sec.GroundBefore())
+	p.works = p.reshaped || len(q.Section.Placed) > len(p.job.Section.Placed) || q.Quantities.Earthworks() > 0 ||
+		q.Quantities.Drain > 0 || p.waterChanged()
 }
 
 // shownAround is how much ground is shown on each side of what matters in a long section, in heights of the slope.

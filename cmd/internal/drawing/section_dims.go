@@ -11,6 +11,9 @@ import (
 // Offsets of a dimension line from what it measures, points, best first.
 var dimOffsets = []float64{15, -15, 25, -25, 37, -37, 52, -52, 64, -64, 78, 94, 112}
 
+// dimEnd is half the size of what is kept free at the ends of what is measured, points.
+const dimEnd = 2.0
+
 // Costs of a position for a dimension line, beside those of its label. They are set by eye.
 const (
 	offsetCost   = 0.5  // of each point of offset
@@ -42,7 +45,7 @@ func (p *picture) dimension(s *sheet, d remedies.Dimension) {
 		return
 	}
 	if long < 1 || !p.inWindow(d.From.X) || !p.inWindow(d.To.X) {
-		s.label(n, a, above)
+		s.label(n, above, a)
 		return
 	}
 	u := xy{(b.X - a.X) / long, (b.Y - a.Y) / long}
@@ -59,7 +62,7 @@ func (p *picture) dimension(s *sheet, d remedies.Dimension) {
 		}
 	}
 	if math.IsInf(least, 1) {
-		s.label(n, xy{(a.X + b.X) / 2, (a.Y + b.Y) / 2}, above)
+		s.label(n, above, xy{(a.X + b.X) / 2, (a.Y + b.Y) / 2})
 		return
 	}
 	s.drawDimension(a, b, u, best)
@@ -142,7 +145,7 @@ func (p *picture) batter(s *sheet, d remedies.Dimension) {
 		if b.X < a.X {
 			out += math.Pi
 		}
-		s.label(noteOf(bodyFace, inkBlack, 150, d.Label), s.view.at(m), out)
+		s.label(noteOf(bodyFace, inkBlack, 150, d.Label), out, s.view.at(m))
 	}
 }
 
@@ -165,6 +168,6 @@ func (p *picture) labelSlope(s *sheet) {
 		}
 		return name + " (" + number(q.X, 2) + ", " + number(q.Y, 2) + ")"
 	}
-	s.label(noteOf(bodyFace, inkBlack, 150, words("crest", p.job.Crest)), s.view.at(p.job.Crest), above)
-	s.label(noteOf(bodyFace, inkBlack, 150, words("toe", p.job.Toe)), s.view.at(p.job.Toe), below)
+	s.label(noteOf(bodyFace, inkBlack, 150, words("crest", p.job.Crest)), above, s.view.at(p.job.Crest))
+	s.label(noteOf(bodyFace, inkBlack, 150, words("toe", p.job.Toe)), below, s.view.at(p.job.Toe))
 }

@@ -10,7 +10,7 @@ import (
 // fillKey names everything that will be drawn, before the size of the sheet is known.
 func (p *picture) fillKey() {
 	ground := "ground"
-	if p.works {
+	if p.reshaped {
 		p.key.addLine("ground before works", beforePen)
 		ground = "ground after works"
 	}
@@ -174,7 +174,7 @@ func (p *picture) drawLines(s *sheet) {
 		s.stroke(firmPen, medium, s.view.line(crop(p.sec.FirmBase, p.x0, p.x1)))
 	}
 	p.drawWater(s)
-	if p.works {
+	if p.reshaped {
 		s.stroke(beforePen, medium, s.view.line(p.before))
 	}
 	if p.stage != nil {
@@ -193,6 +193,11 @@ func (p *picture) drawSlip(s *sheet) {
 func (p *picture) label(s *sheet) {
 	p.markSlope(s)
 	if p.opt != nil && p.opt.Proposal != nil {
+		for _, d := range p.opt.Proposal.Dimensions { // No label hides where a dimension starts.
+			for _, q := range s.view.line([]lem.Point{d.From, d.To}) {
+				s.place.marks = append(s.place.marks, Box{q.X, q.Y, q.X, q.Y}.grown(dimEnd))
+			}
+		}
 		for _, d := range p.opt.Proposal.Dimensions {
 			if d.Batter {
 				p.batter(s, d)
@@ -209,8 +214,8 @@ func (p *picture) label(s *sheet) {
 	p.labelLoads(s)
 	p.labelSlope(s)
 	p.labelWater(s)
-	p.labelStrata(s)
 	p.labelLimits(s)
+	p.labelStrata(s)
 }
 
 func (p *picture) labelSlip(s *sheet) {
@@ -230,5 +235,5 @@ func (p *picture) labelSlip(s *sheet) {
 	}
 	n.lines = append(n.lines, bodyFace.wrap(clean(name), 150, 2)...)
 	n.lines = append(n.lines, "required "+number(g.Check.Required, 2))
-	s.label(n, s.view.at(p.slip[len(p.slip)/2]), below)
+	s.label(n, below, s.view.at(p.slip[len(p.slip)/2]))
 }

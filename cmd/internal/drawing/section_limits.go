@@ -153,7 +153,7 @@ func (p *picture) bracket(s *sheet, d daylight) (x0, x1, y float64) {
 
 func (p *picture) labelLimits(s *sheet) {
 	put := func(txt string, at xy, prefer side) {
-		s.label(noteOf(bodyFace, limitInk, 120, txt), at, prefer)
+		s.label(noteOf(bodyFace, limitInk, 120, txt), prefer, at)
 	}
 	list, _ := p.fences()
 	for _, f := range list {
@@ -167,18 +167,22 @@ func (p *picture) labelLimits(s *sheet) {
 	}
 	for _, m := range p.job.Limits.MaxLevels {
 		if x0, x1 := max(m.FromX, p.x0), min(m.ToX, p.x1); x0 < x1 {
-			put(m.Name+": works no higher than "+metres(m.Level), s.view.at(lem.Point{X: (x0 + x1) / 2, Y: m.Level}), above)
+			var anchors []xy
+			for _, t := range []float64{0.5, 0.75, 0.9, 0.25, 0.1} {
+				anchors = append(anchors, s.view.at(lem.Point{X: x0 + t*(x1-x0), Y: m.Level}))
+			}
+			s.label(noteOf(bodyFace, limitInk, 120, m.Name+": works no higher than "+metres(m.Level)), above, anchors...)
 		}
 	}
 	for _, d := range p.ranges() {
 		a, b, y := p.bracket(s, d)
-		s.label(noteOf(smallFace, inkGrey, 200, d.name+" between offsets "+metres(d.r.From)+" and "+metres(d.r.To)), xy{(a + b) / 2, y}, above)
+		s.label(noteOf(smallFace, inkGrey, 200, d.name+" between offsets "+metres(d.r.From)+" and "+metres(d.r.To)), above, xy{(a + b) / 2, y})
 	}
 }
 
 func (p *picture) labelOutfall(s *sheet) {
 	if a, ok := p.outfall(s); ok {
-		s.label(noteOf(bodyFace, waterInk, 120, "drain outfall "+metres(*p.job.Limits.Outfall)), a, below)
+		s.label(noteOf(bodyFace, waterInk, 120, "drain outfall "+metres(*p.job.Limits.Outfall)), below, a)
 	}
 }
 
@@ -300,6 +304,6 @@ func (p *picture) labelLoads(s *sheet) {
 		if l.Variable {
 			txt += " (variable)"
 		}
-		s.label(noteOf(bodyFace, loadInk, 130, txt), xy{x, heightAt(up, x)}, above)
+		s.label(noteOf(bodyFace, loadInk, 130, txt), above, xy{x, heightAt(up, x)})
 	}
 }

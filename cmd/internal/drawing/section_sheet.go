@@ -131,13 +131,13 @@ func (p *picture) heading(width float64) heading {
 			h.ink = badInk
 		}
 	}
-	if p.works {
+	if p.works && (o.Proposal.Quantities.Earthworks() > 0 || o.Proposal.Quantities.Drain > 0) {
 		h.lines = append(h.lines, quantities(&o.Proposal.Quantities))
 	}
 	if p.gov != nil {
 		h.lines = append(h.lines, p.slipWords())
 	}
-	if o != nil && o.Status != remedies.MeetsTarget && o.Reason != "" {
+	if o != nil && o.Status != remedies.MeetsTarget && o.Status != remedies.Existing && o.Reason != "" {
 		h.lines = append(h.lines, bodyFace.wrap(clean(title(o.Reason)), width, 3)...)
 	}
 	if g := p.sec.GroundBefore(); p.x0 > g.Left() || p.x1 < g.Right() {
@@ -162,10 +162,10 @@ func (p *picture) slipWords() string {
 	out := "Governing slip: FS " + fsDown(g.FS) + " (" + title(g.Method.String()) + "), " + clean(checkName(&g.Check)) + ", required " +
 		number(g.Check.Required, 2)
 	if g.Slip.Kind == lem.Circle {
-		return out + "; circle about (" + number(g.Slip.Centre.X, 2) + ", " + number(g.Slip.Centre.Y, 2) + "), radius " +
-			metres(g.Slip.Radius) + "."
+		return out + "; circle about (" + rounded(g.Slip.Centre.X) + ", " + rounded(g.Slip.Centre.Y) + "), radius " +
+			rounded(g.Slip.Radius) + " m."
 	}
-	return out + "; polyline from offset " + metres(min(g.From.X, g.To.X)) + " to " + metres(max(g.From.X, g.To.X)) + "."
+	return out + "; polyline from offset " + rounded(min(g.From.X, g.To.X)) + " m to " + rounded(max(g.From.X, g.To.X)) + " m."
 }
 
 func checkName(c *remedies.Check) string {

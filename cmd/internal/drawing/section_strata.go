@@ -60,7 +60,7 @@ func (p *picture) nameBody(s *sheet, n note, outline []lem.Point) {
 			break
 		}
 	}
-	s.label(n, anchor, above)
+	s.label(n, above, anchor)
 }
 
 // holds reports whether a box lies inside a ring: its upper and lower edges do.
@@ -139,7 +139,7 @@ func (p *picture) nameStrip(s *sheet, t strip) {
 		s.write(n, best)
 	case thickest > 0:
 		n.pointed = true
-		s.label(n, anchor, below)
+		s.label(n, below, anchor)
 	}
 }
 

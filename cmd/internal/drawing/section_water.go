@@ -20,6 +20,23 @@ type freeDrawn struct {
 	name string
 }
 
+// waterChanged reports whether the works change a water line of a situation.
+func (p *picture) waterChanged() bool {
+	for i, w := range p.opt.Proposal.Waters {
+		if i >= len(p.job.Situations) {
+			break
+		}
+		var before lem.Profile
+		if at := p.job.Situations[i].Water; at >= 0 && at < len(p.job.Waters) {
+			before = p.job.Waters[at].Line
+		}
+		if w.Drains != nil || !same(before, w.Line) {
+			return true
+		}
+	}
+	return false
+}
+
 // gatherWater chooses the water to draw: every line as read, or the governing situation's before and after works with the others
 // lightly.
 func (p *picture) gatherWater() {
@@ -226,12 +243,11 @@ func (p *picture) labelWater(s *sheet) {
 		}
 	}
 	for _, n := range list { // All marks stand before the first label looks for room.
-		s.label(noteOf(bodyFace, waterInk, 140, n.txt), n.at, above)
+		s.label(noteOf(bodyFace, waterInk, 140, n.txt), above, n.at)
 	}
 	if p.drains != nil && len(p.drains.Invert) > 1 {
 		if d := cropInside(p.drains.Invert, p.x0, p.x1); d != nil {
-			s.label(noteOf(bodyFace, waterInk, 140, "invert of drains"),
-				s.view.at(lem.Point{X: (d.Left() + d.Right()) / 2, Y: d.At((d.Left() + d.Right()) / 2)}), below)
+			s.label(noteOf(bodyFace, waterInk, 140, "invert of drains"), below, s.view.at(lem.Point{X: (d.Left() + d.Right()) / 2, Y: d.At((d.Left() + d.Right()) / 2)}))
 		}
 	}
 }

@@ -125,17 +125,26 @@ func (n note) size() (w, h float64) {
 	return w, h
 }
 
-// label puts a note near its anchor with a leader line where it needs one; a note that finds no room is kept for the foot.
-func (s *sheet) label(n note, anchor xy, prefer side) {
+// label puts a note near the anchor where it stands best, with a leader line where it needs one; a note that finds no room is kept
+// for the foot.
+func (s *sheet) label(n note, prefer side, anchors ...xy) {
 	if len(n.lines) == 0 {
 		return
 	}
 	w, h := n.size()
-	sp, ok := s.place.place(wish{w, h, anchor, prefer, n.clear, n.pointed})
-	if !ok {
+	var sp spot
+	var anchor xy
+	least := math.Inf(1)
+	for _, a := range anchors {
+		if found, cost := s.place.find(wish{w, h, a, prefer, n.clear, n.pointed}); cost < least {
+			sp, least, anchor = found, cost, a
+		}
+	}
+	if math.IsInf(least, 1) {
 		s.unplaced = append(s.unplaced, strings.Join(n.lines, " "))
 		return
 	}
+	s.place.take(sp, anchor)
 	if sp.leader {
 		s.leader(sp.box, anchor)
 	}

@@ -6,6 +6,7 @@ import (
 	"image/color"
 	"math"
 	"slices"
+	"strings"
 
 	"standfast/remedies"
 )
@@ -129,7 +130,7 @@ func curveName(o *remedies.Option) string {
 	case o.Proposal != nil:
 		name += ", " + quantityUp(o.Proposal.Quantities.Earthworks()) + " m³/m"
 	}
-	if o.WhatIf {
+	if o.WhatIf && !strings.Contains(name, "what-if") {
 		name += " (what-if)"
 	}
 	return title(name)
@@ -227,12 +228,12 @@ func (s *sheet) drawCurves(curves []curve, target float64, share bool) {
 	if share {
 		words = "required FS"
 	}
-	s.label(noteOf(strongFace, inkBlack, 150, words), xy{f.MaxX - 60, at}, above)
+	s.label(noteOf(strongFace, inkBlack, 150, words), above, xy{f.MaxX - 60, at})
 	for _, c := range curves {
 		last := c.points[len(c.points)-1]
 		n := noteOf(strongFace, c.style.colour, 170, c.name)
 		n.clear = markerSize
-		s.label(n, s.pagePoint(last.earthworks, last.fs), rightOf)
+		s.label(n, rightOf, s.pagePoint(last.earthworks, last.fs))
 	}
 }
 
