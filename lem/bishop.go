@@ -61,15 +61,3 @@ func (ws *Workspace) bishop(leftward bool) (float64, Status) {
 	}
 	return math.NaN(), NotConverged
 }
-
-// admitted returns F with the verdict of the m-alpha rule.
-func (ws *Workspace) admitted(f float64) (float64, Status) {
-	ss := ws.slice[:ws.n]
-	for i := range ss {
-		s := &ss[i]
-		if s.sin < 0 && s.cos*f+s.sin*s.tan < minMAlpha*f {
-			return f, Inadmissible
-		}
-	}
-	return f, Converged
-}

@@ -2,18 +2,16 @@ package lem
 
 import "math"
 
-// minMAlpha is the least m-alpha = cos(alpha) + sin(alpha) tan(phi)/F of an admissible slip. Below it the base normal force of a steeply
-// rising exit grows without sense; Whitman and Bailey (1967) warn below 0.2. It also bars exits much steeper than passive.
-const minMAlpha = 0.2
-
 // FS evaluates a slip: every part of it below the ground that is deep enough is a slip of its own, and the one with the lowest F counts.
-// It does not allocate once the workspace has grown. Bishop is for circles; a polyline asks for Ordinary or Spencer.
+// It does not allocate once the workspace has grown. Bishop is for circles: on a polyline it is Inadmissible.
 func (m *Model) FS(ws *Workspace, s *Slip, o Setting) Result {
-	best := Result{F: math.NaN(), Screen: math.NaN(), Status: Missed}
-	slices := o.Slices
-	if slices == 0 {
-		slices = DefaultSlices
-	}
+	r, _ := m.lowest(ws, s, &o)
+	return r
+}
+
+// lowest returns the result of the part that counts, and that part.
+func (m *Model) lowest(ws *Workspace, s *Slip, o *Setting) (best Result, at part) {
+	best = Result{F: math.NaN(), Screen: math.NaN(), Status: Missed}
 	var cut bool
 	if s.Kind == Circle {
 		cut = m.circleParts(ws, s.Centre, s.Radius)
@@ -21,7 +19,11 @@ func (m *Model) FS(ws *Workspace, s *Slip, o Setting) Result {
 		cut = m.polylineParts(ws, s)
 	}
 	if cut {
-		best.Status = Inadmissible
+		best.Status, best.Reason = Inadmissible, NotDaylighting
+	}
+	if o.Method == Bishop && s.Kind != Circle {
+		best.Status, best.Reason = Inadmissible, CirclesOnly
+		return best, part{}
 	}
 	for i := 0; i < len(ws.parts); i++ {
 		p := ws.parts[i]
@@ -29,22 +31,33 @@ func (m *Model) FS(ws *Workspace, s *Slip, o Setting) Result {
 		if depth < o.MinDepth || depth <= 0 {
 			continue
 		}
-		r := Result{F: math.NaN(), Screen: math.NaN(), Status: Inadmissible, Depth: depth}
+		r := Result{F: math.NaN(), Screen: math.NaN(), Status: Inadmissible, Reason: BelowFirmBase, Depth: depth}
 		if clear {
-			if s.Kind == Circle {
-				m.sliceCircle(ws, p, s.Centre, s.Radius, slices)
-			} else {
-				m.slicePolyline(ws, p, s, slices)
-			}
+			m.slicePart(ws, p, s, o)
 			m.ends(&r, p)
-			m.solve(ws, o.Method, &r)
+			m.solve(ws, o, &r)
 			if r.Status != Missed && !o.Window.admits(&r) {
 				continue
 			}
 		}
-		best = lower(best, r)
+		if lower(&r, &best) {
+			best, at = r, p
+		}
 	}
-	return best
+	return best, at
+}
+
+// slicePart cuts a part of a slip into slices.
+func (m *Model) slicePart(ws *Workspace, p part, s *Slip, o *Setting) {
+	target := o.Slices
+	if target == 0 {
+		target = DefaultSlices
+	}
+	if s.Kind == Circle {
+		m.sliceCircle(ws, p, s.Centre, s.Radius, target)
+	} else {
+		m.slicePolyline(ws, p, s, target)
+	}
 }
 
 // depthOf returns the greatest depth of a part and whether it clears the firm base.
@@ -60,10 +73,10 @@ func (m *Model) ends(r *Result, p part) {
 	r.To = Point{p.to, m.cols[p.last].ground.at(p.to)}
 }
 
-// lower returns the result that counts for the slip: the lowest F, and above all a part that could not be solved and whose screen lies
-// below that.
-func lower(a, b Result) Result {
-	rank := func(r Result) float64 {
+// lower reports whether result a counts before b for the slip: the lowest F, and above all a part that could not be solved and whose screen
+// lies below that.
+func lower(a, b *Result) bool {
+	rank := func(r *Result) float64 {
 		switch r.Status {
 		case Converged:
 			return r.F
@@ -78,52 +91,67 @@ func lower(a, b Result) Result {
 		}
 		return math.Inf(1)
 	}
-	if rank(b) < rank(a) {
-		return b
-	}
-	return a
+	return rank(a) < rank(b)
 }
 
-// solve finds F of the slices in the workspace by a method, with variable surcharges only where they lower it.
-func (m *Model) solve(ws *Workspace, method Method, r *Result) {
+// solve finds F of the slices in the workspace, with variable surcharges only where they lower it. It reports whether they count.
+func (m *Model) solve(ws *Workspace, o *Setting, r *Result) (loaded bool) {
 	ws.trial++
 	r.Slices = ws.n
 	if !ws.orient(r) {
 		r.Status = Missed
-		return
+		return false
 	}
-	ws.method(method, r)
-	if len(m.varied) == 0 || r.Status != Converged {
-		return
+	if o.Method == MorgensternPrice {
+		ws.sideForce = o.SideForce
 	}
-	if ws.addVariable(m.varied, r.F) {
-		without := *r
-		ws.method(method, r)
-		if r.Status == Converged && without.F < r.F {
-			r.F, r.Lambda = without.F, without.Lambda
-		}
+	ws.method(o.Method, r)
+	if len(m.varied) == 0 || r.Status != Converged || !ws.addVariable(m.varied, r.F) {
+		return false
 	}
+	without := *r
+	ws.method(o.Method, r)
+	if r.Status == Converged && without.F < r.F {
+		r.F, r.Lambda = without.F, without.Lambda
+		return false
+	}
+	return true
 }
 
+// method solves the slices in the workspace by a method; ws.answer keeps the F at which its equations close.
 func (ws *Workspace) method(method Method, r *Result) {
+	f, st := math.NaN(), NotConverged
+	r.Reason = Admissible
+	correction := 1.0
 	switch method {
 	case Ordinary:
-		r.F, r.Status = ws.ordinary(r.Leftward)
+		f, st = ws.ordinary(r.Leftward)
 	case Bishop:
-		r.F, r.Status = ws.bishop(r.Leftward)
+		f, st = ws.bishop(r.Leftward)
 	case Spencer:
-		r.F, r.Lambda, r.Status = ws.spencer(r.Leftward)
-	default:
-		r.F, r.Status = math.NaN(), NotConverged
+		f, r.Lambda, r.Reason, st = ws.morgensternPrice(&SideForce{Shape: Constant}, r.Leftward)
+	case MorgensternPrice:
+		f, r.Lambda, r.Reason, st = ws.morgensternPrice(&ws.sideForce, r.Leftward)
+	case Janbu:
+		f, st = ws.janbu()
+		correction = ws.janbuCorrection(r.Leftward)
+	case JanbuPlain:
+		f, st = ws.janbu()
+	case numMethods:
 	}
-	if r.Status == Converged && !(r.F > 0 && r.F < math.MaxFloat64) {
-		r.Status = NotConverged
+	if st == Converged && !(f > 0 && f < math.MaxFloat64) {
+		st = NotConverged
 	}
-	if r.Status != Converged {
+	if st == Inadmissible && r.Reason == Admissible {
+		r.Reason = SmallMAlpha
+	}
+	ws.answer = f
+	r.F, r.Status = f*correction, st
+	if st != Converged {
 		r.F = math.NaN()
 	}
-	if r.Status == NotConverged {
-		if f, st := ws.ordinary(r.Leftward); st == Converged && f > 0 {
+	if st == NotConverged {
+		if f, ok := ws.ordinary(r.Leftward); ok == Converged && f > 0 {
 			r.Screen = f
 		}
 	}

@@ -19,25 +19,6 @@ type Slip struct {
 	Nodes  []Point // Polyline only, X strictly increasing.
 }
 
-// Method is a published method of slices.
-type Method uint8
-
-// The methods.
-const (
-	Ordinary Method = iota // Fellenius (1936).
-	Bishop                 // Bishop (1955), simplified; circles only.
-	Spencer                // Spencer (1967).
-	numMethods
-)
-
-// String returns the method's name in lower case, as in result files.
-func (m Method) String() string {
-	if m < numMethods {
-		return [numMethods]string{"ordinary", "bishop", "spencer"}[m]
-	}
-	return "unknown"
-}
-
 // Setting says how a slip is evaluated, and which parts of it count.
 type Setting struct {
 	Method Method
@@ -45,6 +26,8 @@ type Setting struct {
 	// MinDepth is the depth of interest, m: parts of the slip whose greatest vertical depth is less are left out.
 	MinDepth float64
 	Window   Window
+	// SideForce is the side-force function of MorgensternPrice; the other methods do not look at it.
+	SideForce SideForce
 }
 
 // Window limits the slips that count by their movement and by where they leave the ground. The zero value lets all count.
@@ -104,7 +87,8 @@ func (s Status) String() string {
 type Result struct {
 	F        float64 // Factor of safety; NaN unless Status is Converged.
 	Status   Status
-	Lambda   float64 // Spencer: ratio of vertical to horizontal interslice force.
+	Reason   Reason  // Why the status is Inadmissible.
+	Lambda   float64 // Spencer and Morgenstern-Price: ratio of vertical to horizontal interslice force where f is 1.
 	From, To Point   // Ends of the part on the ground, left and right.
 	Depth    float64 // Greatest vertical depth of the part below the ground, m.
 	Leftward bool    // True if the part moves to the left.

@@ -11,6 +11,13 @@ type Workspace struct {
 	radius float64 // and radius;
 	tail   Point   // where the slices so far end.
 	trial  int     // Evaluations since the workspace was made.
+
+	answer     float64      // F at which the equations of the last method close, admissible or not.
+	sideForce  SideForce    // Of the setting in force, for MorgensternPrice.
+	side       []float64    // The side-force function between slices, from the head down.
+	sidePeak   float64      // Its greatest absolute value.
+	loadMoment float64      // Moment of the horizontal loads about the middles of the bases, kNm.
+	forces     []sliceForce // Of the last answer that closes forces, from the head down.
 }
 
 // part is an interval of x where a slip lies below the ground, with the columns that hold its ends.
@@ -45,4 +52,11 @@ func (ws *Workspace) add() *slice {
 	}
 	ws.n++
 	return &ws.slice[ws.n-1]
+}
+
+// sliceForce is what a solution does to one slice and to the interface on its downhill side.
+type sliceForce struct {
+	normal float64 // Total normal force on the base, kN.
+	e, x   float64 // Horizontal and vertical interslice force, kN.
+	moment float64 // Of e about the level datum, kNm.
 }

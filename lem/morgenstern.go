@@ -1,0 +1,184 @@
+package lem
+
+import "math"
+
+// Bounds and tolerances of the two equations.
+const (
+	// Bounds of lambda times the greatest f, the tangent of the interslice inclination: -45 to 63 degrees, wider than any that soil can carry.
+	inclineMin, inclineMax = -1.0, 2.0
+
+	closureTol  = 1e-6 // Stop when |dF| <= closureTol * F and |dlambda| <= closureTol: Newton's next step would be of the order of its square.
+	bracketTol  = 1e-9 // The same where lambda is bracketed and the steps shrink more slowly.
+	newtonSteps = 16
+	forceSteps  = 40
+	mostFStep   = 0.3 // Greatest step of Newton's method in F, as a share of F,
+	mostLStep   = 0.4 // and in lambda.
+	scanSteps   = 24
+	bracketing  = 60
+)
+
+// morgensternPrice solves the method of Morgenstern and Price (1965), which is that of Spencer (1967) when the side-force function is constant:
+// the F and lambda at which forces and moments close. Newton's method in both unknowns with exact derivatives, started from a simplified method
+// on the same slip; where that fails, a search in lambda. No start is carried over from other slips, so that an answer never depends on
+// what the workspace did before.
+func (ws *Workspace) morgensternPrice(shape *SideForce, leftward bool) (f, lambda float64, reason Reason, st Status) {
+	f = ws.startF(leftward)
+	ws.prepareClosure(shape, leftward)
+	if !(f > 0) || ws.sidePeak == 0 {
+		return math.NaN(), math.NaN(), Admissible, NotConverged
+	}
+	pole := ws.pole()
+	start := max(f, pole*startAbovePole)
+	f, lambda, ok := ws.newton(start, ws.startLambda(), pole, leftward)
+	if !ok {
+		f, lambda, ok = ws.scanLambda(start, pole, leftward)
+	}
+	if !ok {
+		return math.NaN(), math.NaN(), Admissible, NotConverged
+	}
+	if reason = ws.verdict(f, lambda, leftward); reason != Admissible {
+		return f, lambda, reason, Inadmissible
+	}
+	return f, lambda, reason, Converged
+}
+
+// startAbovePole is how far above the largest pole of m-alpha the iteration starts at least.
+const startAbovePole = 1.01
+
+// startF returns the F of a simplified method: Bishop's on an arc, Janbu's on a polyline, the Ordinary method's where these have none.
+func (ws *Workspace) startF(leftward bool) float64 {
+	var f float64
+	if ws.arc {
+		f, _ = ws.bishop(leftward)
+	} else {
+		f, _ = ws.janbu()
+	}
+	if !(f > 0) {
+		f, _ = ws.ordinary(leftward)
+	}
+	return f
+}
+
+// startLambda is the tangent of 0.7 of the mean inclination of the slip (a common guess, no source), for the greatest f.
+func (ws *Workspace) startLambda() float64 {
+	var drop, width float64
+	for i := range ws.slice[:ws.n] {
+		s := &ws.slice[i]
+		drop += s.sin / s.cos * s.b
+		width += s.b
+	}
+	return 0.7 * max(0, drop/width) / ws.sidePeak
+}
+
+// pole returns the F below which m-alpha of some slice is negative.
+func (ws *Workspace) pole() float64 {
+	var p float64
+	for i := range ws.slice[:ws.n] {
+		if s := &ws.slice[i]; s.sin < 0 && -s.sin*s.tan > p*s.cos {
+			p = -s.sin * s.tan / s.cos
+		}
+	}
+	return p
+}
+
+// newton solves both equations together. It gives up where an iterate leaves the range in which every m-alpha and every 1 + g lambda f is
+// positive.
+func (ws *Workspace) newton(f, lambda, pole float64, leftward bool) (float64, float64, bool) {
+	for range newtonSteps {
+		c := ws.closure(f, lambda, leftward)
+		det := c.eF*c.mL - c.eL*c.mF
+		df := -(c.e*c.mL - c.eL*c.m) / det
+		dl := -(c.eF*c.m - c.e*c.mF) / det
+		if !(c.least > 0) || math.IsNaN(df+dl) || math.IsInf(df+dl, 0) {
+			break
+		}
+		scale := min(1, mostFStep*f/math.Abs(df), mostLStep/(ws.sidePeak*math.Abs(dl)))
+		if f+scale*df <= pole {
+			scale = (f - pole) / (2 * math.Abs(df))
+		}
+		f += scale * df
+		lambda += scale * dl
+		if incline := lambda * ws.sidePeak; !(incline >= inclineMin && incline <= inclineMax) {
+			break
+		}
+		if scale == 1 && math.Abs(df) <= closureTol*f && math.Abs(dl) <= closureTol {
+			return f, lambda, true
+		}
+	}
+	return 0, 0, false
+}
+
+// scanLambda is the safeguarded fallback: for each lambda the force equation gives F, and the change of sign of the moment nearest to
+// lambda = 0 is bracketed over the range of lambda and closed.
+func (ws *Workspace) scanLambda(start, pole float64, leftward bool) (f, lambda float64, ok bool) {
+	prevL, prevM, prevOK := 0.0, 0.0, false
+	best := math.Inf(1)
+	for i := range scanSteps + 1 {
+		l := (inclineMin + (inclineMax-inclineMin)*float64(i)/scanSteps) / ws.sidePeak
+		_, m, good := ws.forceF(start, l, pole, leftward)
+		if good && prevOK && (m > 0) != (prevM > 0) {
+			if a, b, found := ws.bracketed(start, pole, prevL, l, prevM, m, leftward); found && math.Abs(b) < best {
+				f, lambda, ok, best = a, b, true, math.Abs(b)
+			}
+		}
+		prevL, prevM, prevOK = l, m, good
+	}
+	return f, lambda, ok
+}
+
+// bracketed closes in on the lambda between a and b, whose moments have different signs, by regula falsi with the Illinois safeguard.
+func (ws *Workspace) bracketed(start, pole, a, b, ma, mb float64, leftward bool) (f, lambda float64, ok bool) {
+	f = start
+	side := 0
+	for range bracketing {
+		lambda = b - mb*(b-a)/(mb-ma)
+		var m float64
+		if f, m, ok = ws.forceF(f, lambda, pole, leftward); !ok {
+			return 0, 0, false
+		}
+		before := side
+		if (m > 0) == (ma > 0) {
+			a, ma, side = lambda, m, 1
+			if before == 1 {
+				mb /= 2
+			}
+		} else {
+			b, mb, side = lambda, m, -1
+			if before == -1 {
+				ma /= 2
+			}
+		}
+		if m == 0 || math.Abs(b-a) <= bracketTol {
+			return f, lambda, true
+		}
+	}
+	return 0, 0, false
+}
+
+// forceF solves the force equation for F at a given lambda, by Newton's method kept between bounds, and returns the moment left over.
+func (ws *Workspace) forceF(start, lambda, pole float64, leftward bool) (f, moment float64, ok bool) {
+	lo, hi := pole, math.Inf(1)
+	f = start
+	for range forceSteps {
+		c := ws.closure(f, lambda, leftward)
+		if !(c.least > 0) {
+			return 0, 0, false
+		}
+		if c.e > 0 {
+			hi = f
+		} else {
+			lo = f
+		}
+		next := f - c.e/c.eF
+		if !(next > lo && next < hi) { // Outside the bounds, or not a number.
+			if next = (lo + hi) / 2; math.IsInf(hi, 1) {
+				next = 2 * f
+			}
+		}
+		if math.Abs(next-f) <= bracketTol*next {
+			return next, c.m + c.mF*(next-f), true
+		}
+		f = next
+	}
+	return 0, 0, false
+}
