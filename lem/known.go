@@ -1,6 +1,9 @@
 package lem
 
-import "math"
+import (
+	"math"
+	"slices"
+)
 
 // bandShare is half the thickness of the band that stands for a known slip surface, as a share of the section's width: thin enough to weigh
 // nothing and to give nothing away to slips that cross it, thick against rounding.
@@ -36,5 +39,28 @@ func (m *Model) shear(d *draught, l *layer, c *column, x, y float64) {
 			l.pore = poreLine
 		}
 		l.known, l.kind, l.c, l.tan = int32(i+1), strengthConstant, k.Cohesion, math.Tan(k.Friction)
+	}
+}
+
+// tryKnown evaluates the known slip surfaces with every governing method that can, and files them among the polylines, or the unresolved.
+func (s *searcher) tryKnown() {
+	for _, nodes := range s.m.known {
+		for _, method := range s.polyMethods() {
+			c := candidate{slip: Slip{Kind: Polyline, Nodes: slices.Clone(nodes)}, setting: s.setting}
+			c.setting.Method = method
+			c.r = s.m.FS(&s.ws, &c.slip, c.setting)
+			switch c.r.Status {
+			case Converged:
+				s.known = append(s.known, c)
+			case NotConverged:
+				s.failed++
+				if !math.IsNaN(c.r.Screen) {
+					s.unres = append(s.unres, Minimum{c.slip, c.setting, c.r})
+				}
+			case Inadmissible:
+				s.barred++
+			case Missed:
+			}
+		}
 	}
 }

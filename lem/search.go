@@ -31,6 +31,10 @@ func (m *Model) Search(ctx context.Context, o SearchOptions) (Minima, error) {
 		s.found = append(s.found, s.descend(st, s.scale(st)))
 	}
 	s.found = s.distinct(s.found)
+	s.tryKnown()
+	if s.o.Polylines && ctx.Err() == nil {
+		s.searchPolylines(ctx)
+	}
 	s.polish(ctx)
 	return s.minima(), ctx.Err()
 }
@@ -46,6 +50,8 @@ type searcher struct {
 	cells   map[cell]candidate
 	found   []candidate
 	extra   []candidate // From the further methods.
+	polys   []candidate // Polylines.
+	known   []candidate // Known slip surfaces.
 	unres   []Minimum
 	failed  int
 	barred  int
@@ -206,23 +212,26 @@ func compareCandidates(a, b candidate) int {
 // distinct sorts candidates and leaves out those in the basin of a lower one.
 func (s *searcher) distinct(cs []candidate) []candidate {
 	slices.SortFunc(cs, compareCandidates)
-	width := s.m.right - s.m.left
 	var out []candidate
 	for _, c := range cs {
 		if math.IsInf(c.r.F, 1) {
 			continue
 		}
-		same := slices.ContainsFunc(out, func(o candidate) bool {
-			return o.r.Leftward == c.r.Leftward &&
-				math.Abs(o.r.From.X-c.r.From.X) < sameBasinPlace*width &&
-				math.Abs(o.r.To.X-c.r.To.X) < sameBasinPlace*width &&
-				math.Abs(o.r.Depth-c.r.Depth) < sameBasinDepth*o.r.Depth
-		})
+		same := slices.ContainsFunc(out, func(o candidate) bool { return s.sameBasin(&o.r, &c.r) })
 		if !same {
 			out = append(out, c)
 		}
 	}
 	return out
+}
+
+// sameBasin reports whether two answers are close in place, depth and direction.
+func (s *searcher) sameBasin(a, b *Result) bool {
+	width := s.m.right - s.m.left
+	return a.Leftward == b.Leftward &&
+		math.Abs(a.From.X-b.From.X) < sameBasinPlace*width &&
+		math.Abs(a.To.X-b.To.X) < sameBasinPlace*width &&
+		math.Abs(a.Depth-b.Depth) < sameBasinDepth*a.Depth
 }
 
 // polish descends with every further method from the basins that matter.
@@ -251,7 +260,7 @@ func (s *searcher) polish(ctx context.Context) {
 }
 
 func (s *searcher) minima() Minima {
-	all := append(s.found, s.distinct(s.extra)...)
+	all := slices.Concat(s.found, s.distinct(s.extra), s.polys, s.known)
 	slices.SortFunc(all, compareCandidates)
 	out := Minima{Trials: s.ws.trial, NotConverged: s.failed, InadmissibleCut: s.barred}
 	for _, c := range all {

@@ -18,6 +18,9 @@ type SearchOptions struct {
 	Seed     uint64   // Shifts the low-discrepancy sequence.
 	Window   Window   // Slips to look at.
 	Methods  []Method // Governing methods; nil: Bishop and Spencer.
+	// Polylines: look at non-circular slips too: grown from the circles, and along boundaries between soils, the firm base and known slip
+	// surfaces. They are evaluated with the governing methods but for Bishop; with Spencer if there is no other.
+	Polylines bool
 	// Below: basins with F at or below this are all polished with every governing method; 0 polishes the lowest few only.
 	Below float64
 }

@@ -81,3 +81,25 @@ func (q sequence) at(k int) vector {
 	}
 	return v
 }
+
+// sequence4 is the like of sequence in four dimensions: of the root of g^5 = g + 1.
+type sequence4 struct{ shift [4]float64 }
+
+var sequence4Step = func() [4]float64 {
+	const g = 1.16730397826141868425
+	return [4]float64{1 / g, 1 / (g * g), 1 / (g * g * g), 1 / (g * g * g * g)}
+}()
+
+func sequence4Of(seed uint64) sequence4 {
+	a, b := sequenceOf(seed), sequenceOf(^seed)
+	return sequence4{[4]float64{a.shift[0], a.shift[1], a.shift[2], b.shift[0]}}
+}
+
+func (q sequence4) at(k int) [4]float64 {
+	var v [4]float64
+	for i := range v {
+		t := q.shift[i] + float64(k)*sequence4Step[i]
+		v[i] = t - math.Floor(t)
+	}
+	return v
+}

@@ -1,0 +1,210 @@
+package lem
+
+import (
+	"context"
+	"math"
+	"slices"
+)
+
+// Effort of the search for polylines; docs/theory.md tells how it was set.
+const (
+	blockTrials   = 160  // Wedge-shaped trials along each rail,
+	cutTrials     = 80   // and circles cut off by it.
+	trialsPerRail = 3    // Seeds taken from each rail,
+	railSeedsUpTo = 1.6  // with F up to this multiple of the lowest.
+	circleSeeds   = 8    // Seeds taken from the circles,
+	circlesUpTo   = 1.5  // with F up to this multiple of the lowest.
+	coarseSeeds   = 8    // Seeds that are descended from,
+	coarseUpTo    = 1.25 // with F up to this multiple of the lowest.
+	fineSeeds     = 3    // Basins that get more nodes,
+	fineUpTo      = 1.06 // with F up to this multiple of the lowest.
+	coarseTrials  = 320
+	fineTrials    = 700
+	coarseNodes   = 10 // A seed gets nodes up to this number,
+	fineNodes     = 15 // and a basin near the lowest up to this.
+)
+
+// polyTrial is a trial polyline with its answer. Those of a rail carry the parameters they were made from.
+type polyTrial struct {
+	nodes  []Point
+	r      Result
+	family polyFamily
+	rail   int
+	v      [4]float64
+	left   bool // The head is taken to be on the right.
+}
+
+// set makes t a copy of o.
+func (t *polyTrial) set(o *polyTrial) {
+	nodes := append(t.nodes[:0], o.nodes...)
+	*t = *o
+	t.nodes = nodes
+}
+
+func (t *polyTrial) clone() polyTrial {
+	c := *t
+	c.nodes = slices.Clone(t.nodes)
+	return c
+}
+
+// polySearch is the state of a search for polylines: seeds along rails and from circles, a descent in the few parameters of a seed, then in its
+// nodes.
+type polySearch struct {
+	s       *searcher
+	setting Setting
+	rails   []rail
+	trial   polyTrial // Of the moment.
+	stack   []int
+	lowest  float64
+}
+
+// searchPolylines files the critical polylines in s.polys, the circles being done.
+func (s *searcher) searchPolylines(ctx context.Context) {
+	p := &polySearch{s: s, setting: s.setting, lowest: math.Inf(1)}
+	methods := s.polyMethods()
+	p.setting.Method = methods[0]
+	p.rails = s.m.rails(&s.ws)
+	seeds := p.fromCircles()
+	for i := range p.rails {
+		if ctx.Err() != nil {
+			return
+		}
+		seeds = append(seeds, p.alongRail(i)...)
+	}
+	basins := p.improve(ctx, p.distinct(seeds), p.count(coarseSeeds), coarseUpTo, coarseNodes, coarseTrials)
+	basins = p.improve(ctx, basins, p.count(fineSeeds), fineUpTo, fineNodes, fineTrials)
+	s.filePolylines(basins, p.setting)
+	for _, method := range methods[1:] {
+		p.setting.Method = method
+		again := basins[:min(len(basins), p.count(fineSeeds))]
+		s.filePolylines(p.improve(ctx, again, len(again), fineUpTo, 0, coarseTrials), p.setting)
+	}
+	s.polys = s.distinct(s.polys)
+}
+
+// polyMethods lists the governing methods that polylines can be evaluated with.
+func (s *searcher) polyMethods() []Method {
+	ms := slices.DeleteFunc(slices.Clone(s.methods), func(m Method) bool { return m == Bishop })
+	if len(ms) == 0 {
+		ms = []Method{Spencer}
+	}
+	return ms
+}
+
+func (s *searcher) filePolylines(ts []polyTrial, o Setting) {
+	for i := range ts {
+		t := &ts[i]
+		s.polys = append(s.polys, candidate{slip: Slip{Kind: Polyline, Nodes: slices.Clone(t.nodes)}, setting: o, r: t.r})
+	}
+}
+
+// count scales a number of seeds with the effort.
+func (p *polySearch) count(n int) int { return int(math.Ceil(float64(n) * math.Sqrt(p.s.o.Effort))) }
+
+// try evaluates the nodes of a trial; without an admissible answer its F is +Inf. The reason goes into the counts.
+func (p *polySearch) try(t *polyTrial) {
+	slip := Slip{Kind: Polyline, Nodes: t.nodes}
+	t.r = p.s.m.FS(&p.s.ws, &slip, p.setting)
+	switch t.r.Status {
+	case Converged:
+		if p.s.m.sound(t.nodes, &t.r) {
+			p.lowest = min(p.lowest, t.r.F)
+			return
+		}
+		p.s.barred++
+	case NotConverged:
+		p.s.failed++
+	case Inadmissible:
+		p.s.barred++
+	case Missed:
+	}
+	t.r.F = math.Inf(1)
+}
+
+// fromCircles returns the polylines inscribed in the circles near the lowest.
+func (p *polySearch) fromCircles() []polyTrial {
+	var out []polyTrial
+	circles := slices.Clone(p.s.found)
+	slices.SortFunc(circles, compareCandidates)
+	for _, c := range circles[:min(len(circles), p.count(circleSeeds))] {
+		if c.r.F > max(circlesUpTo*circles[0].r.F, p.s.o.Below) {
+			break
+		}
+		t := polyTrial{nodes: inscribed(nil, c.slip.Centre, c.slip.Radius, c.r.From, c.r.To, circlePieces)}
+		if !p.mend(t.nodes) {
+			continue
+		}
+		if p.try(&t); !math.IsInf(t.r.F, 1) {
+			out = append(out, t)
+		}
+	}
+	return out
+}
+
+// distinct sorts trials and leaves out those in the basin of a lower one.
+func (p *polySearch) distinct(ts []polyTrial) []polyTrial {
+	slices.SortStableFunc(ts, func(a, b polyTrial) int {
+		return compareCandidates(candidate{r: a.r}, candidate{r: b.r})
+	})
+	var out []polyTrial
+	for i := range ts {
+		same := func(o polyTrial) bool { return p.s.sameBasin(&o.r, &ts[i].r) }
+		if !math.IsInf(ts[i].r.F, 1) && !slices.ContainsFunc(out, same) {
+			out = append(out, ts[i])
+		}
+	}
+	return out
+}
+
+// improve descends from the lowest of the trials, sorted, in their nodes; the others stay as they are.
+func (p *polySearch) improve(ctx context.Context, ts []polyTrial, most int, upTo float64, nodes, budget int) []polyTrial {
+	out := make([]polyTrial, 0, len(ts))
+	for i := range ts {
+		t := ts[i].clone()
+		if i < most && t.r.F <= max(upTo*ts[0].r.F, p.s.o.Below) && concave(t.nodes) && ctx.Err() == nil {
+			if nodes > 0 {
+				t.nodes = insertNodes(thinNodes(t.nodes), nodes)
+			}
+			p.try(&t)
+			if math.IsInf(t.r.F, 1) {
+				t = ts[i].clone()
+				p.try(&t)
+			}
+			p.descend(&t, budget)
+		}
+		out = append(out, t)
+	}
+	return p.distinct(out)
+}
+
+// thinNodes leaves out nodes that hardly bend the line.
+func thinNodes(nodes []Point) []Point {
+	const tol = hairShare / 10
+	length := nodes[len(nodes)-1].X - nodes[0].X
+	out := nodes[:1]
+	for i := 1; i < len(nodes); i++ {
+		if i+1 < len(nodes) {
+			q, p, next := out[len(out)-1], nodes[i], nodes[i+1]
+			if on := q.Y + (next.Y-q.Y)*(p.X-q.X)/(next.X-q.X); math.Abs(on-p.Y) <= tol*length {
+				continue
+			}
+		}
+		out = append(out, nodes[i])
+	}
+	return out
+}
+
+// insertNodes halves the longest pieces until there are so many nodes.
+func insertNodes(nodes []Point, n int) []Point {
+	for len(nodes) < n {
+		k, longest := 0, 0.0
+		for i := 1; i < len(nodes); i++ {
+			if d := math.Hypot(nodes[i].X-nodes[i-1].X, nodes[i].Y-nodes[i-1].Y); d > longest {
+				k, longest = i, d
+			}
+		}
+		a, b := nodes[k-1], nodes[k]
+		nodes = slices.Insert(nodes, k, Point{(a.X + b.X) / 2, (a.Y + b.Y) / 2})
+	}
+	return nodes
+}
