@@ -333,6 +333,19 @@ func TestNotesAndWarnings(t *testing.T) {
 	}
 }
 
+// TestUndrainedTakesClaysOnly reads a case with cu for a soil that is no clay: it stays drained.
+func TestUndrainedTakesClaysOnly(t *testing.T) {
+	src := strings.Replace(small, "friction: 24}}", "friction: 24}, undrained: {strength: 30}}\n  silt: {unit_weight: 19, drained: {cohesion: 2, friction: 30}, undrained: {strength: 40}, clay: false}", 1)
+	src = strings.Replace(src, "required_fs: 1.3", "strength: undrained, required_fs: 1.3", 1)
+	c, err := Parse("x.yaml", []byte(src))
+	if err != nil {
+		t.Fatal(err)
+	}
+	if diff := cmp.Diff([]bool{true, false}, c.Job.Situations[0].Undrained); diff != "" {
+		t.Errorf("undrained soils (-want +got):\n%s", diff)
+	}
+}
+
 // TestUndrainedOnlyCase reads a case that is undrained throughout and needs no drained strength.
 func TestUndrainedOnlyCase(t *testing.T) {
 	src := strings.Replace(small, "drained: {cohesion: 2, friction: 24}", "undrained: {strength: 30}", 1)
