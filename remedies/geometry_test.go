@@ -172,3 +172,39 @@ func TestFaults(t *testing.T) {
 		})
 	}
 }
+
+// TestRunsAbove parts stretches that touch in a point, so that each outline is simple.
+func TestRunsAbove(t *testing.T) {
+	ground := lem.Profile{{X: 0, Y: 0}, {X: 1, Y: -1}, {X: 2, Y: 0}, {X: 3, Y: -2}, {X: 4, Y: 0}, {X: 5, Y: 1}, {X: 6, Y: 1}}
+	runs := runsAbove(lem.Profile{{X: 0, Y: 0}, {X: 6, Y: 0}}, ground)
+	if len(runs) != 2 {
+		t.Fatalf("%d runs, want 2", len(runs))
+	}
+	near(t, "first", runs[0].area, 1, 1e-12)
+	near(t, "second", runs[1].area, 2, 1e-12)
+	samePoints(t, runs[1].outline(), []lem.Point{{X: 2, Y: 0}, {X: 4, Y: 0}, {X: 3, Y: -2}})
+}
+
+// TestPathLeavesOut lists the points that a path does not keep.
+func TestPathLeavesOut(t *testing.T) {
+	tests := []struct {
+		name string
+		add  []lem.Point
+		want []lem.Point
+	}{
+		{"repeated", []lem.Point{{X: 0, Y: 0}, {X: 0, Y: 1e-12}, {X: 1, Y: 1}}, []lem.Point{{X: 0, Y: 0}, {X: 1, Y: 1}}},
+		{"on the way", []lem.Point{{X: 0, Y: 0}, {X: 1, Y: 1}, {X: 2, Y: 2}, {X: 3, Y: 3}}, []lem.Point{{X: 0, Y: 0}, {X: 3, Y: 3}}},
+		{"on a step", []lem.Point{{X: 0, Y: 0}, {X: 0, Y: 1}, {X: 0, Y: 2}, {X: 1, Y: 3}}, []lem.Point{{X: 0, Y: 0}, {X: 0, Y: 2}, {X: 1, Y: 3}}},
+		{"spike on a step", []lem.Point{{X: 0, Y: 0}, {X: 0, Y: 3}, {X: 0, Y: 2}, {X: 1, Y: 3}}, []lem.Point{{X: 0, Y: 0}, {X: 0, Y: 2}, {X: 1, Y: 3}}},
+		{"nearly a step", []lem.Point{{X: 0, Y: 0}, {X: 1, Y: 0}, {X: 1 + 1e-12, Y: 2}}, []lem.Point{{X: 0, Y: 0}, {X: 1, Y: 0}, {X: 1, Y: 2}}},
+	}
+	for _, tt := range tests {
+		t.Run(tt.name, func(t *testing.T) {
+			var p path
+			for _, q := range tt.add {
+				p.add(q.X, q.Y)
+			}
+			samePoints(t, p, tt.want)
+		})
+	}
+}

@@ -1,6 +1,7 @@
 package remedies
 
 import (
+	"slices"
 	"strings"
 	"testing"
 
@@ -87,6 +88,21 @@ func TestOrderOfWorks(t *testing.T) {
 	near(t, "earthworks", a.Quantities.Earthworks(), b.Quantities.Earthworks(), 0)
 	samePoints(t, a.Waters[0].Drains.Invert, b.Waters[0].Drains.Invert)
 }
+
+// TestTrenchUnderBerm checks that a berm over the trenches is not dug through: they come first.
+func TestTrenchUnderBerm(t *testing.T) {
+	drains := request("trench_drains", nil, 2, 6, 0.6, 0.5, nan, nan)
+	alone := apply(t, cutting(), drains)
+	both := apply(t, cutting(), drains, request("berm", fillOf(sandFill), 2.5, 6, 2))
+	near(t, "dig", both.Quantities.TrenchDig, alone.Quantities.TrenchDig, 1e-12)
+	near(t, "dig", alone.Quantities.TrenchDig, 22.5*2*0.6/6, 1e-12)
+	cut := apply(t, cutting(), drains, request("regrade", nil, 3, 0)) // the trench loses what the regrade cuts between toe and crest
+	near(t, "dig after cut", cut.Quantities.TrenchDig, (22.5*2-areaCutAbove2m())*0.6/6, 1e-9)
+}
+
+// areaCutAbove2m returns the part of the cut 1V:2.5H to 1V:3H over the trench, 22.5 m long: the cut is x/2.5 - x/3 deep at x from the
+// toe, nowhere 2 m.
+func areaCutAbove2m() float64 { return (1/2.5 - 1/3.0) * 22.5 * 22.5 / 2 }
 
 // TestWaterAndCuts checks that lines are clipped to cut ground, artesian ones are not, and nothing else changes.
 func TestWaterAndCuts(t *testing.T) {
@@ -208,5 +224,43 @@ func TestOneStageForSeveralFills(t *testing.T) {
 	p := apply(t, j, request("regrade", fillOf(sandFill), 3, 0.5), request("berm", fillOf(rockfill), 2, 4, 2))
 	if len(p.Stages) != 1 || p.Stages[0].Section != &p.Section || len(p.Stages[0].Section.Placed) != 2 {
 		t.Errorf("stages %+v", p.Stages)
+	}
+}
+
+// TestBranches applies several works to one proposal: none sees another, and the proposal stays as it was.
+func TestBranches(t *testing.T) {
+	j := cutting()
+	requests := []Request{
+		request("regrade", fillOf(sandFill), 3, 0.5),
+		request("berm", fillOf(sandFill), 2.5, 6, 2),
+		request("buttress", fillOf(rockfill), 1, 2, 2),
+		request("unload", nil, 2, 10, 2),
+		request("water_lowering", nil, 1),
+		request("trench_drains", nil, 2, 6, 0.6, 0.5, nan, nan),
+	}
+	rs, err := NewRemedies(j, requests)
+	if err != nil {
+		t.Fatal(err)
+	}
+	base := rs[0].Apply(j, Start(j), requests[0].Fixed())
+	base.Section.Placed = append(make([]lem.Body, 0, 9), base.Section.Placed...) // room to append in place, were it shared
+	line, loaded := base.Waters[0].Line, slices.Clone(base.loaded)
+	var placed [][]lem.Body
+	var branches []*Proposal
+	for i, r := range rs[1:] {
+		b := r.Apply(j, base, requests[i+1].Fixed())
+		branches = append(branches, b)
+		placed = append(placed, slices.Clone(b.Section.Placed))
+	}
+	for i, b := range branches {
+		for k, body := range b.Section.Placed {
+			if body.Soil != placed[i][k].Soil {
+				t.Errorf("branch %d has the body of another", i)
+			}
+		}
+	}
+	samePoints(t, base.Waters[0].Line, line)
+	if base.Waters[0].Drains != nil || !slices.Equal(base.loaded, loaded) || len(base.variants) != 0 || len(base.Section.Placed) != 1 {
+		t.Error("the proposal worked on has changed")
 	}
 }

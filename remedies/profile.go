@@ -206,7 +206,7 @@ func runsAbove(a, b lem.Profile) []run {
 
 // outline returns the region of a run as a clockwise simple outline.
 func (r *run) outline() []lem.Point {
-	out := path(slices.Clone(r.top))
+	out := slices.Clone(r.top)
 	for i := len(r.under) - 1; i >= 0; i-- {
 		out.add(r.under[i].X, r.under[i].Y)
 	}

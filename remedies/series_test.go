@@ -19,7 +19,7 @@ func TestMeanHead(t *testing.T) {
 		{"S/H = 2", 2, 0.5, 1e-12, "closed form: f(r) + f(4/r) = 1 at r = 2"},
 		{"S/H = 3", 3, 0.644, 0.0005, "closed form: the series to three decimals"},
 		{"drains far apart", 1e6, 1, 1e-5, "limit: no drain, no fall"},
-		{"drains close", 1e-6, 8 * 1.0517997902646449 / math.Pow(math.Pi, 3) * 1e-6, 1e-18, "limit: tanh is 1"},
+		{"drains close", 1e-6, 8 * 1.0517997902646449 / (math.Pi * math.Pi * math.Pi) * 1e-6, 1e-18, "limit: tanh is 1"},
 	}
 	for _, tt := range tests {
 		t.Run(tt.name, func(t *testing.T) { near(t, "mean head", meanHead(tt.r), tt.want, tt.tol) })
@@ -37,8 +37,8 @@ func TestHeadTwins(t *testing.T) {
 			mid += sign * math.Tanh(n*math.Pi/r) / (n * n)
 			sign = -sign
 		}
-		mean *= 8 / math.Pow(math.Pi, 3) * r
-		mid *= 4 / math.Pow(math.Pi, 2) * r
+		mean *= 8 / (math.Pi * math.Pi * math.Pi) * r
+		mid *= 4 / (math.Pi * math.Pi) * r
 		if math.Abs(meanHead(r)-mean) > 1e-7 || math.Abs(midspanHead(r)-mid) > 1e-7 {
 			t.Fatalf("r = %g: %g and %g, want %g and %g", r, meanHead(r), midspanHead(r), mean, mid)
 		}

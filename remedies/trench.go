@@ -2,6 +2,7 @@ package remedies
 
 import (
 	"math"
+	"slices"
 
 	"standfast/lem"
 )
@@ -51,13 +52,16 @@ func (d *trenchDrains) Apply(j *Job, on *Proposal, x []float64) *Proposal {
 		}
 		p.variants = append(p.variants, variant{situation: i, note: midspanNote, water: mid})
 	}
-	d.explain(p, x)
+	d.explain(j, p, x)
 	p.finish(j)
 	return p
 }
 
-// explain notes where the fall of the head comes from.
-func (d *trenchDrains) explain(p *Proposal, x []float64) {
+// explain notes where the fall of the head comes from, and whether any situation counts blocked drains.
+func (d *trenchDrains) explain(j *Job, p *Proposal, x []float64) {
+	if !slices.ContainsFunc(j.Situations, func(s Situation) bool { return s.DrainsWorking < 1 }) {
+		p.note("trench drains: no design situation takes the drains as partly blocked")
+	}
 	if math.IsNaN(x[drainEffectiveness]) {
 		p.note("trench drains: pore pressure from the series for drains down to soil of low permeability, the water line taken as fed from the surface")
 		return
@@ -139,7 +143,9 @@ func clipped(p lem.Profile, from, to float64) lem.Profile {
 // measure adds the quantities and the dimension of the trenches and checks the limits.
 func (d *trenchDrains) measure(j *Job, p *Proposal, s *slope, t *trench) {
 	var area, length float64
-	for _, r := range runsAbove(clipped(p.Section.Ground, t.from, t.to), t.invert) {
+	// Trenches are dug after cuts and before fills.
+	top := spliced(p.Section.Ground, j.Section.Ground, t.from, t.to, lower)
+	for _, r := range runsAbove(clipped(top, t.from, t.to), t.invert) {
 		area += r.area
 	}
 	for i := 1; i < len(t.invert); i++ {

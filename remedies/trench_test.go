@@ -9,7 +9,7 @@ import (
 	"standfast/lem"
 )
 
-// level returns the cutting with a level base of stiff clay and a water line along the ground, so that drains have one head.
+// benchJob returns the cutting as a bench with a level base of stiff clay and a water line along the ground, so that drains have one head.
 func benchJob() *Job {
 	j := cutting()
 	ground := lem.Profile{{X: 0, Y: 103}, {X: 20, Y: 103}, {X: 40, Y: 103 - 1e-6}, {X: 80, Y: 103 - 1e-6}}
@@ -67,6 +67,40 @@ func TestTrenchDrains(t *testing.T) {
 				t.Errorf("checks %s, want %s", s, want)
 			}
 		})
+	}
+}
+
+// TestLoweredLine compares the lowered line with its definition at every station of drains down a slope.
+func TestLoweredLine(t *testing.T) {
+	j := cutting()
+	p := apply(t, j, request("trench_drains", toStiffClay(), 4, 5, 0.6, nan, nan, nan))
+	if len(p.Violations) > 0 {
+		t.Fatal(p.Violations)
+	}
+	w := &p.Waters[0]
+	lowered := LoweredLine(w)
+	rises := 0
+	for i, q := range w.Drains.Invert[1 : len(w.Drains.Invert)-1] {
+		r := w.Drains.Ratio[i+1]
+		near(t, "lowered line", lowered.At(q.X), w.Line.At(q.X)-r*max(0, w.Line.At(q.X)-q.Y), 1e-9)
+		if r != w.Drains.Ratio[i] {
+			rises++
+		}
+	}
+	if rises < 10 {
+		t.Errorf("the ratio varies at %d stations only", rises)
+	}
+	for i := 1; i < len(lowered); i++ {
+		if x := lowered[i].X; x == lowered[i-1].X && x != w.Drains.Invert.Left() && x != w.Drains.Invert.Right() {
+			t.Errorf("step in the lowered line at x = %g", x)
+		}
+	}
+	if first := w.Drains.Invert[0]; lowered.At(first.X-1e-6) != w.Line.At(first.X-1e-6) {
+		t.Error("lowered beyond the end of the drains")
+	}
+	dry := lem.Water{}
+	if LoweredLine(&dry) != nil {
+		t.Error("dry ground has got a line")
 	}
 }
 
