@@ -11,6 +11,7 @@ const (
 	leaderFrom   = 9.0  // points beyond which a label needs a leader line
 	leaderCost   = 9.0  // of needing a leader line
 	leaderWeight = 30.0 // of each point of a leader line that a label covers
+	hitCost      = 14.0 // of each heavy line that a label touches, beside what it covers
 	crossCost    = 25.0 // of each heavy line that a leader line crosses
 	buriedCost   = 40.0 // of a leader line that starts under another label
 	leaderClear  = 2.5  // points between a leader line and other texts
@@ -68,7 +69,11 @@ func (p *placer) covered(b Box) float64 {
 		if max(s.a.X, s.b.X) < g.MinX || min(s.a.X, s.b.X) > g.MaxX || max(s.a.Y, s.b.Y) < g.MinY || min(s.a.Y, s.b.Y) > g.MaxY {
 			continue
 		}
-		cost += s.weight * clippedLength(s.a, s.b, g)
+		long := clippedLength(s.a, s.b, g)
+		cost += s.weight * long
+		if long > 0 && s.weight >= heavy {
+			cost += hitCost
+		}
 	}
 	for _, l := range p.leader {
 		cost += leaderWeight * clippedLength(l[0], l[1], g)

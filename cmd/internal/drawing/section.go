@@ -203,7 +203,7 @@ func (p *picture) chooseHeight() {
 		}
 	}
 	p.lo = floor
-	p.lo -= 0.1 * max(p.hi-p.lo, (p.x1-p.x0)/20)
+	p.lo -= 0.14 * max(p.hi-p.lo, (p.x1-p.x0)/20)
 }
 
 // otherLines returns the strata and water lines in the window.

@@ -100,6 +100,9 @@ func insideOf(ring []xy) []xy {
 	return out
 }
 
+// stripGap is kept free between a name and the edges of its layer, points.
+const stripGap = 0.8
+
 // nameSteps is the number of places along the section where a name is tried.
 const nameSteps = 40
 
@@ -120,7 +123,7 @@ func (p *picture) nameStrip(s *sheet, t strip) {
 			thickest, anchor = high-low, xy{s.view.at(lem.Point{X: x}).X, (low + high) / 2}
 		}
 		low, high = room(s, t, x, w/2+2)
-		for y := low + 1.5; y+h+1.5 <= high; y += max(3, (high-low-h-3)/6) {
+		for y := low + stripGap; y+h+stripGap <= high; y += max(3, (high-low-h)/6) {
 			c := s.view.at(lem.Point{X: x}).X
 			b := Box{c - w/2, y, c + w/2, y + h}
 			if !s.place.free(b) {
