@@ -3,6 +3,7 @@ package report
 import (
 	"fmt"
 	"io"
+	"slices"
 
 	"github.com/jedib0t/go-pretty/v6/table"
 
@@ -25,11 +26,13 @@ func WriteAssessment(w io.Writer, f *File, look Look) error {
 	return p.err
 }
 
-// methods returns the names of all methods.
-func methods() []string {
+// methodsOf returns the names of the methods that answered in any situation, in the engine's order.
+func methodsOf(o *Option) []string {
 	var names []string
 	for m := lem.Ordinary; m.String() != "unknown"; m++ {
-		names = append(names, m.String())
+		if slices.ContainsFunc(o.Situations, func(a Answer) bool { _, ok := a.FSByMethod[m.String()]; return ok }) {
+			names = append(names, m.String())
+		}
 	}
 	return names
 }
@@ -38,13 +41,14 @@ func methods() []string {
 func (p *printer) factors(o *Option) {
 	p.heading("Factor of safety of the slope as it is, by method on the critical slip (rounded down)")
 	columns := []column{{head: "situation", most: 32}, {head: "FS", right: true}, {head: "required", right: true}, {head: "governs"}}
-	for _, m := range methods() {
+	methods := methodsOf(o)
+	for _, m := range methods {
 		columns = append(columns, column{head: m, right: true})
 	}
 	var rows []table.Row
 	for _, s := range o.Situations {
 		row := table.Row{s.Name, FactorText(s.FS), RequiredText(Number(s.RequiredFS)), method(s.Found)}
-		for _, m := range methods() {
+		for _, m := range methods {
 			fs, ok := s.FSByMethod[m]
 			if !ok {
 				fs = nan

@@ -5,9 +5,6 @@ import (
 	"standfast/remedies"
 )
 
-// governing are the methods whose lowest value is the FS of a circular slip, as lem.SearchOptions has it by default.
-var governing = []lem.Method{lem.Bishop, lem.Spencer}
-
 // meetsTarget is the status of an option that meets the target.
 var meetsTarget = remedies.MeetsTarget.String()
 
@@ -147,7 +144,7 @@ func certificateOf(o *remedies.Option) *Certificate {
 		}
 		out.Audit.Lowest = append(out.Audit.Lowest, low)
 	}
-	for _, m := range governing {
+	for _, m := range lem.GoverningMethods(lem.Circle) {
 		out.Audit.Methods = append(out.Audit.Methods, m.String())
 	}
 	return out
