@@ -28,7 +28,7 @@ func (m *Model) lowest(ws *Workspace, s *Slip, o *Setting) (best Result, at part
 	for i := 0; i < len(ws.parts); i++ {
 		p := ws.parts[i]
 		depth, clear := m.depthOf(s, p)
-		if depth < o.MinDepth || depth <= 0 {
+		if depth < o.MinDepth || depth <= stepWidth*(m.right-m.left) { // A sliver no deeper than a drawn-out step is wide is rounding.
 			continue
 		}
 		r := Result{F: math.NaN(), Screen: math.NaN(), Status: Inadmissible, Reason: BelowFirmBase, Depth: depth}
