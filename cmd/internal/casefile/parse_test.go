@@ -121,8 +121,8 @@ func TestEmbankmentIsFilled(t *testing.T) {
 	if !j.Section.Loads[0].Variable || j.Direction != lem.RightwardOnly || j.Head != (lem.Range{From: 2, To: 33}) {
 		t.Errorf("load %+v, direction %v, head %v", j.Section.Loads[0], j.Direction, j.Head)
 	}
-	for i, a := range j.Requests[1].Axes {
-		k, _ := remedies.Find("unload")
+	for i, a := range j.Requests[4].Axes {
+		k, _ := remedies.Find("water_lowering")
 		if a != k.Parameters[i].Default {
 			t.Errorf("an empty remedy has %+v, want the default %+v", a, k.Parameters[i].Default)
 		}
