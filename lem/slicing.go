@@ -5,62 +5,113 @@ import "math"
 // crossingMargin is the share of a slice's width within which a boundary is taken to pass through the slice's end.
 const crossingMargin = 1e-6
 
-// sliceCircle cuts a part of a circle into slices of equal angle: never across a column's edge, and cut again where the base passes from
-// one layer into the next, so that the answer converges with the square of the slice width. Inside a column the arc is walked by rotation,
-// half a slice at a time.
+// leastAngle is the least angle of a slice, rad: what an arc cuts off a column by rounding only is left out.
+const leastAngle = 1e-10
+
+// sliceCircle cuts a part of a circle into slices of equal angle: never across a column's edge nor across a boundary between layers, however
+// short the arc's dip into the next layer, so that the answer converges with the square of the slice width.
 func (m *Model) sliceCircle(ws *Workspace, p part, c Point, r float64, target int) {
 	ws.n, ws.arc, ws.centre, ws.radius = 0, true, c, r
-	angle := func(x float64) float64 { return math.Asin(min(max((x-c.X)/r, -1), 1)) }
-	theta := angle(p.from)
-	width := (angle(p.to) - theta) / float64(max(target, MinSlices))
+	theta := ws.angle(p.from)
+	width := (ws.angle(p.to) - theta) / float64(max(target, MinSlices))
 	for i := p.first; i <= p.last; i++ {
 		col := &m.cols[i]
-		end := min(col.x1, p.to)
-		if end <= p.from {
+		a, b := max(col.x0, p.from), min(col.x1, p.to)
+		if b <= a {
 			continue
 		}
-		next := angle(end)
-		n := max(1, int(math.Ceil((next-theta)/width-crossingMargin)))
-		a := arcBase{delta: (next - theta) / float64(n)}
-		a.sinHalf, a.cosHalf = math.Sincos(a.delta / 2)
-		// Area between arc and chord, R^2/2 (delta - sin delta), over the chord: how far the arc lies below it on the average.
-		a.bulge = r * (a.delta - 2*a.sinHalf*a.cosHalf) / (4 * a.sinHalf)
-		sin, cos := math.Sincos(theta)
-		ws.tail = Point{c.X + r*sin, c.Y - r*cos}
-		k := m.layerAt(col, col.first, ws.tail.X, ws.tail.Y) // At the left end of the next slice.
-		for range n {
-			a.sin, a.cos = sin*a.cosHalf+cos*a.sinHalf, cos*a.cosHalf-sin*a.sinHalf
-			nextSin, nextCos := a.sin*a.cosHalf+a.cos*a.sinHalf, a.cos*a.cosHalf-a.sin*a.sinHalf
-			k = m.addArc(ws, col, k, &a, Point{c.X + r*nextSin, c.Y - r*nextCos})
-			sin, cos = nextSin, nextCos
+		k := col.first
+		if col.last-col.first > 1 {
+			m.arcCuts(ws, col, a, b)
+			for _, x := range ws.cuts {
+				next := ws.angle(x)
+				k = m.addArc(ws, col, k, theta, next, width)
+				theta = next
+			}
 		}
+		next := ws.angle(b)
+		m.addArc(ws, col, k, theta, next, width)
 		theta = next
 	}
 }
 
-// arcBase is the base of one slice of a circle; angles are from the vertical through the centre, positive to the right.
-type arcBase struct {
-	delta            float64 // Angle of the slice, rad.
-	sinHalf, cosHalf float64 // Of delta/2.
-	sin, cos         float64 // Of the angle at the middle.
-	bulge            float64 // Mean distance of the arc from its chord, m.
+// angle returns the angle of the arc at x from the vertical through the centre, positive to the right.
+func (ws *Workspace) angle(x float64) float64 {
+	return math.Asin(min(max((x-ws.centre.X)/ws.radius, -1), 1))
 }
 
-// addArc adds the slice over an arc inside one column, from a point in layer k to the point end. It returns the layer at the end.
-func (m *Model) addArc(ws *Workspace, col *column, k int32, a *arcBase, end Point) int32 {
+// arcLevel returns the level of the arc at x.
+func (ws *Workspace) arcLevel(x float64) float64 {
+	dx := x - ws.centre.X
+	return ws.centre.Y - math.Sqrt(max(0, ws.radius*ws.radius-dx*dx))
+}
+
+// arcCuts lists in ws.cuts, from left to right, where the arc crosses boundaries between layers of a column from x = a to b.
+func (m *Model) arcCuts(ws *Workspace, col *column, a, b float64) {
+	ws.cuts = ws.cuts[:0]
 	c, r := ws.centre, ws.radius
-	if m.layerAt(col, k, end.X, end.Y) != k {
-		t := ws.tail
-		ws.tail = end
-		return m.addBase(ws, col, k, t.X, t.Y, end.X, end.Y)
+	ya, yb := ws.arcLevel(a), ws.arcLevel(b)
+	for k := col.first; k < col.last-1; k++ {
+		l := m.layers[k].bottom
+		aboveA, aboveB := l.at(a) > ya, l.at(b) > yb
+		if aboveA && aboveB { // The arc hangs below its chord, and so below the line.
+			continue
+		}
+		// As for the ground in circleParts.
+		e := l.at(c.X) - c.Y
+		qa, qb, qc := 1+l.b*l.b, e*l.b, e*e-r*r
+		disc, mid := qb*qb-qa*qc, c.X-qb/qa
+		if aboveA == aboveB && (disc <= 0 || mid <= a || mid >= b) {
+			continue
+		}
+		half := math.Sqrt(max(disc, 0)) / qa
+		if !aboveA { // It goes under on the left.
+			ws.cut(mid-half, a, b)
+		}
+		if !aboveB {
+			ws.cut(mid+half, a, b)
+		}
 	}
-	ws.tail = end
-	s := ws.add()
-	s.sin, s.cos = -a.sin, a.cos
-	s.b = 2 * r * a.sinHalf * a.cos
-	s.x = c.X + r*a.cosHalf*a.sin
-	s.y = c.Y - r*a.cosHalf*a.cos - a.bulge/a.cos
-	m.fill(s, col, &m.layers[k], r*a.delta)
+}
+
+// cut files x in ws.cuts in ascending order if it lies between a and b.
+func (ws *Workspace) cut(x, a, b float64) {
+	if x <= a || x >= b {
+		return
+	}
+	ws.cuts = append(ws.cuts, x)
+	for i := len(ws.cuts) - 1; i > 0 && ws.cuts[i] < ws.cuts[i-1]; i-- {
+		ws.cuts[i], ws.cuts[i-1] = ws.cuts[i-1], ws.cuts[i]
+	}
+}
+
+// addArc adds the slices over an arc from angle from to angle to, which lies in one layer; it is walked by rotation, half a slice at a time.
+// k is where to start looking for the layer; it returns the layer.
+func (m *Model) addArc(ws *Workspace, col *column, k int32, from, to, width float64) int32 {
+	if to-from <= leastAngle {
+		return k
+	}
+	c, r := ws.centre, ws.radius
+	n := max(1, int(math.Ceil((to-from)/width-crossingMargin)))
+	delta := (to - from) / float64(n)
+	sinHalf, cosHalf := math.Sincos(delta / 2)
+	// Area between arc and chord, R^2/2 (delta - sin delta), over the chord: how far the arc lies below it on the average.
+	bulge := r * (delta - 2*sinHalf*cosHalf) / (4 * sinHalf)
+	sin, cos := math.Sincos(from)
+	first := true
+	for range n {
+		midSin, midCos := sin*cosHalf+cos*sinHalf, cos*cosHalf-sin*sinHalf
+		sin, cos = midSin*cosHalf+midCos*sinHalf, midCos*cosHalf-midSin*sinHalf
+		s := ws.add()
+		s.sin, s.cos = -midSin, midCos
+		s.b = 2 * r * sinHalf * midCos
+		s.x = c.X + r*cosHalf*midSin
+		s.y = c.Y - r*cosHalf*midCos - bulge/midCos
+		if first {
+			k, first = m.layerAt(col, k, s.x, s.y), false
+		}
+		m.fill(s, col, &m.layers[k], r*delta)
+	}
 	return k
 }
 
@@ -110,11 +161,6 @@ func (m *Model) addSlice(ws *Workspace, col *column, k int32, x0, y0, x1, y1 flo
 	length := math.Sqrt(b*b + dy*dy)
 	s.x, s.y, s.b = (x0+x1)/2, (y0+y1)/2, b
 	s.cos, s.sin = b/length, -dy/length
-	if ws.arc { // The arc bulges below its chord: its mean level and its length, to the second order.
-		bulge := length * length / ws.radius
-		s.y -= bulge * length / (12 * b)
-		length += bulge * length / (24 * ws.radius)
-	}
 	m.fill(s, col, &m.layers[k], length)
 }
 

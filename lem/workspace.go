@@ -6,11 +6,11 @@ type Workspace struct {
 	n      int // Slices in use.
 	parts  []part
 	slice  []slice
-	arc    bool    // The slip is a circle:
-	centre Point   // its centre
-	radius float64 // and radius;
-	tail   Point   // where the slices so far end.
-	trial  int     // Evaluations since the workspace was made.
+	arc    bool      // The slip is a circle:
+	centre Point     // its centre
+	radius float64   // and radius;
+	cuts   []float64 // where it crosses layers in the column at hand.
+	trial  int       // Evaluations since the workspace was made.
 
 	answer     float64      // F at which the equations of the last method close, admissible or not.
 	sideForce  SideForce    // Of the setting in force, for MorgensternPrice.

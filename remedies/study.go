@@ -121,7 +121,7 @@ func size(ctx context.Context, j *Job, s *Settings, r *Request, existing *Option
 	if err != nil {
 		return nil, err
 	}
-	o := &Option{Name: w.name, Title: w.title, Remedies: kindNames(w), WhatIf: w.whatIf}
+	o := &Option{Name: w.name, Title: w.title, Remedies: w.kinds, WhatIf: w.whatIf}
 	x := res.X
 	found := res.Lowest
 	if x == nil {
@@ -158,14 +158,6 @@ func size(ctx context.Context, j *Job, s *Settings, r *Request, existing *Option
 		}
 	}
 	return o, nil
-}
-
-func kindNames(w *works) []string {
-	var names []string
-	for _, k := range w.kinds {
-		names = append(names, k.Name)
-	}
-	return names
 }
 
 // costFunc is the Cost of an optimize.Problem.

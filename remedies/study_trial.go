@@ -17,7 +17,7 @@ func checkTrial(ctx context.Context, j *Job, s *Settings, t *Trial) (*Option, er
 	d := z.openProposal(w.apply(j, x))
 	defer d.Close()
 	o := &Option{
-		Name: t.Name, Title: t.Name, Remedies: kindNames(w), WhatIf: w.whatIf, Trial: true, Status: Fails,
+		Name: t.Name, Title: t.Name, Remedies: w.kinds, WhatIf: w.whatIf, Trial: true, Status: Fails,
 		Parameters: w.values(x), Proposal: d.proposal,
 	}
 	found, err := d.searchBoth(ctx)

@@ -1,46 +1,39 @@
 package remedies
 
 import (
-	"fmt"
 	"math"
 
 	"standfast/optimize"
 )
 
-// works are one or more remedies applied in order, with the parameters that are sized gathered in one vector.
+// works are one or more remedies applied together, with the parameters that are sized gathered in one vector.
 type works struct {
-	name     string
-	title    string
-	kinds    []Kind
-	requests []Request
-	remedies []Remedy
-	axes     []optimize.Axis // Of all remedies, absent parameters left out.
-	units    []string        // By axis.
-	whatIf   bool
+	name   string
+	title  string
+	kinds  []string
+	remedy Remedy          // All of them as one; nil: no works.
+	sized  []bool          // By parameter of all remedies: false if it is absent.
+	axes   []optimize.Axis // Of the parameters that are present.
+	units  []string        // By axis.
+	whatIf bool
 }
 
 // newWorks makes the works of requests. Its error is a fault of a request, in words for the user.
 func newWorks(j *Job, name string, requests []Request) (*works, error) {
-	w := &works{name: name, requests: requests}
+	remedy, err := Combine(j, requests)
+	if err != nil {
+		return nil, err
+	}
+	w := &works{name: name, remedy: remedy}
 	for i := range requests {
-		r := &requests[i]
-		kind, ok := Find(r.Kind)
-		if !ok {
-			return nil, fmt.Errorf("remedies: no remedy is called %q", r.Kind)
-		}
-		if len(r.Axes) != len(kind.Parameters) {
-			return nil, fmt.Errorf("remedies: %s has %d parameters, the request %d", kind.Name, len(kind.Parameters), len(r.Axes))
-		}
-		remedy, err := kind.New(j, r)
-		if err != nil {
-			return nil, fmt.Errorf("%s: %w", kind.Name, err)
-		}
-		w.kinds, w.remedies = append(w.kinds, kind), append(w.remedies, remedy)
+		kind, _ := Find(requests[i].Kind)
+		w.kinds = append(w.kinds, kind.Name)
 		w.whatIf = w.whatIf || kind.WhatIf
 		if w.title += kind.Title; i+1 < len(requests) {
 			w.title += " with "
 		}
-		for k, axis := range r.Axes {
+		for k, axis := range requests[i].Axes {
+			w.sized = append(w.sized, axis.Name != "")
 			if axis.Name == "" {
 				continue
 			}
@@ -55,20 +48,19 @@ func newWorks(j *Job, name string, requests []Request) (*works, error) {
 
 // apply puts the works of a parameter vector on the existing slope.
 func (w *works) apply(j *Job, x []float64) *Proposal {
-	p := Start(j)
+	full := make([]float64, len(w.sized))
 	next := 0
-	for i, remedy := range w.remedies {
-		full := make([]float64, len(w.requests[i].Axes))
-		for k, axis := range w.requests[i].Axes {
-			full[k] = math.NaN()
-			if axis.Name != "" {
-				full[k] = x[next]
-				next++
-			}
+	for i, sized := range w.sized {
+		full[i] = math.NaN()
+		if sized {
+			full[i] = x[next]
+			next++
 		}
-		p = remedy.Apply(j, p, full)
 	}
-	return p
+	if w.remedy == nil {
+		return Start(j)
+	}
+	return w.remedy.Apply(j, Start(j), full)
 }
 
 // values returns the parameters of a design with names and units.

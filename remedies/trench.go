@@ -93,6 +93,14 @@ func (d *trenchDrains) trench(j *Job, s *slope, p *Proposal, x []float64) (*tren
 		return nil, false
 	}
 	bottom := shifted(before, -x[drainDepth])
+	if o := j.Limits.Outfall; o != nil { // The trench runs shallower towards its outlet, so that it can discharge.
+		level := lem.Profile{{X: t.from, Y: *o}, {X: t.to, Y: *o}}
+		if over, at := highest(level, before, t.from, t.to); over > limitSlack {
+			p.violate("outfall", over, "the ground at x = %s m lies %s m below the outfall, level %s m: trench drains cannot discharge there", metres(at), metres(over), metres(*o))
+			return nil, false
+		}
+		bottom = spliced(bottom, level, t.from, t.to, upper)
+	}
 	if d.soil != noSoil {
 		firm, ok := firstTop(&j.Section, d.soil, t.from, t.to)
 		name := j.Section.Soils[d.soil].Name
@@ -156,15 +164,12 @@ func (d *trenchDrains) measure(j *Job, p *Proposal, s *slope, t *trench) {
 	p.Quantities.Stone += area * t.width / t.spacing
 	p.Quantities.Drain += length / t.spacing
 
-	left, right, low := "head of trench drains", "outlet of trench drains", t.invert[len(t.invert)-1]
+	left, right := "head of trench drains", "outlet of trench drains"
 	if s.mirrored {
-		left, right, low = right, left, t.invert[0]
+		left, right = right, left
 	}
 	p.checkSpan(j, t.from, t.to, left, right)
 	p.checkDig(j, t.invert, t.from, t.to, "trench drain")
-	if o := j.Limits.Outfall; o != nil && *o-low.Y > limitSlack {
-		p.violate("outfall", *o-low.Y, "invert of trench drains at their low end, x = %s m, is at level %s m, outfall is at %s m", metres(low.X), metres(low.Y), metres(*o))
-	}
 	middle := (t.from + t.to) / 2
 	p.Dimensions = append(p.Dimensions, lengthDim("drain depth",
 		lem.Point{X: middle, Y: j.Section.Ground.At(middle)}, lem.Point{X: middle, Y: t.invert.At(middle)}))

@@ -124,11 +124,12 @@ func TestTrenchDrainFaults(t *testing.T) {
 		detail  string
 		by      float64
 	}{
-		{"too shallow", request("trench_drains", toStiffClay(), 2, 6, 0.6, nan, nan, nan), "low_permeability", "do not reach the top of stiff clay at x = 20.00 m, 3.00 m below ground: deepen them or give an effectiveness", 1},
+		{"too shallow", request("trench_drains", toStiffClay(), 2, 6, 0.6, nan, 20, 36), "low_permeability", "do not reach the top of stiff clay at x = 20.00 m, 3.00 m below ground: deepen them or give an effectiveness", 1},
 		{"too close", request("trench_drains", toStiffClay(), 4, 0.6, 0.6, nan, nan, nan), "layout of the trench drains", "leave no ground between them", 0},
 		{"outside", request("trench_drains", toStiffClay(), 4, 6, 0.6, nan, 20, 90), "layout of the trench drains", "reach outside the section", 10},
 		{"no length", request("trench_drains", toStiffClay(), 4, 6, 0.6, nan, 30, 30), "layout of the trench drains", "have no length", 0},
-		{"below outfall", request("trench_drains", toStiffClay(), 4, 6, 0.6, nan, nan, nan), "outfall", "low end, x = 40.00 m, is at level 100.00 m, outfall is at 100.50 m", 0.5},
+		{"held up by the outfall", request("trench_drains", toStiffClay(), 4, 6, 0.6, nan, nan, nan), "low_permeability", "do not reach the top of stiff clay at x = 40.00 m", 0.5},
+		{"no fall", request("trench_drains", nil, 4, 6, 0.6, 0.7, 20, 41), "outfall", "cannot discharge", 0.5},
 	}
 	for _, tt := range tests {
 		t.Run(tt.name, func(t *testing.T) {
