@@ -12,10 +12,11 @@ type draught struct {
 	ground   Profile
 	strata   []Profile
 	water    Profile
-	edges    []segment // Everything that bounds soils or water.
-	known    [][]Point // Known slip surfaces, vertical steps drawn out.
-	step     float64   // Width of a drawn-out vertical step, m.
-	from, to float64   // Ends of the columns.
+	edges    []segment   // Everything that bounds soils or water.
+	known    [][]Point   // Known slip surfaces, vertical steps drawn out.
+	free     []FreeWater // Free water, held on beyond the ends of the ground.
+	step     float64     // Width of a drawn-out vertical step, m.
+	from, to float64     // Ends of the columns.
 }
 
 // segment is part of a boundary from left to right; upright ones only give a breakpoint.
@@ -55,6 +56,14 @@ func draughtOf(s *Section, sit *Situation) *draught {
 		d.addKnown(s.Known[i].Line)
 	}
 	for _, f := range sit.Water.Free {
+		// Water that reaches an end of the ground goes on beyond it, as the ground does: a wall of water there would drive slips.
+		if f.FromX <= s.Ground.Left() {
+			f.FromX = d.from
+		}
+		if f.ToX >= s.Ground.Right() {
+			f.ToX = d.to
+		}
+		d.free = append(d.free, f)
 		d.edges = append(d.edges, segment{Point{f.FromX, f.Level}, Point{f.ToX, f.Level}})
 	}
 	if sit.Water.HasFreeDrainingLevel {
@@ -121,7 +130,7 @@ func (d *draught) breakpoints() []float64 {
 		add(l.FromX)
 		add(l.ToX)
 	}
-	for _, f := range d.sit.Water.Free {
+	for _, f := range d.free {
 		add(f.FromX)
 		add(f.ToX)
 	}
@@ -250,7 +259,7 @@ func (m *Model) addWater(d *draught, c *column, xm float64) {
 		c.water = lineOver(d.water, c.x0, c.x1)
 	}
 	lowest := min(c.ground.at(c.x0), c.ground.at(c.x1))
-	for _, f := range w.Free { // Water that reaches to a vertical face stands against all of the drawn-out step.
+	for _, f := range d.free { // Water that reaches to a vertical face stands against all of the drawn-out step.
 		if f.FromX-d.step < xm && xm < f.ToX+d.step && f.Level > lowest+d.step {
 			c.free = max(c.free, f.Level)
 		}
