@@ -30,7 +30,9 @@ func Start(j *Job) *Proposal {
 		loaded:     make([]float64, n),
 	}
 	for _, s := range j.Situations {
-		p.Waters = append(p.Waters, waterAt(j, s.Water, s.Free))
+		w := waterAt(j, s.Water, s.Free)
+		w.Drains = s.Drains
+		p.Waters = append(p.Waters, w)
 	}
 	if j.Stage.Given {
 		p.stageWater = waterAt(j, j.Stage.Water, nil)

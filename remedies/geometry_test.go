@@ -153,7 +153,7 @@ func TestFaults(t *testing.T) {
 		{"regrade steeper", request("regrade", nil, 2, 0), "ground within the section", "steeper than the slope", 0},
 		{"regrade off the section", request("regrade", nil, 7, 0), "ground within the section", "meets no ground at its top", 109 - (100 + 52.5/7)},
 		{"unload below toe", request("unload", nil, 10, 5, 2), "shape of the platform", "10.00 m below the crest lies below the toe, 9.00 m", 1},
-		{"unload undercuts", request("unload", nil, 4, 1, 1), "shape of the platform", "comes out on the face at x = 38.3333 m, short of the crest at x = 30.00 m", 8 + 1.0/3},
+		{"unload undercuts", request("unload", nil, 4, 1, 1), "shape of the platform", "comes out on the face at x = 38.33 m, short of the crest at x = 30.00 m", 8 + 1.0/3},
 		{"unload off the section", request("unload", nil, 2, 34, 4), "ground within the section", "back batter at 1V:4.0H meets no ground", 1.75},
 		{"berm above crest", request("berm", fill, 9.5, 5, 2), "shape of the berm", "9.50 m above the toe lies above the crest, 9.00 m", 0.5},
 		{"berm off the section", request("berm", fill, 5, 20, 10), "ground within the section", "outer face of berm at 1V:10.0H meets no ground", 5 - (80-60)/10},

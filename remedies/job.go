@@ -54,7 +54,9 @@ type Situation struct {
 	// FS of the existing slope in this situation.
 	RequiredFS      float64
 	RatioToExisting float64
-	DrainsWorking   float64 // Share of the drains' effect that counts in this situation, 0 to 1.
+	// Drains lower the pore pressure already, as in a proposed section; nil: none.
+	Drains        *lem.Drawdown
+	DrainsWorking float64 // Share of the drains' effect that counts in this situation, 0 to 1.
 }
 
 // StageSettings hold for construction stages.

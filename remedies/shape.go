@@ -61,11 +61,7 @@ func batterText(n float64) string {
 	return "1V:" + s + "H"
 }
 
-// metres prints a length or a position with two decimals, more only where the size has more, up to four.
+// metres prints a length or a position to the centimetre.
 func metres(v float64) string {
-	s := strconv.FormatFloat(math.Round(v*1e4)/1e4+0, 'f', -1, 64)
-	if d := strings.IndexByte(s, '.'); d >= 0 && len(s)-d-1 > 2 {
-		return s
-	}
-	return strconv.FormatFloat(v, 'f', 2, 64)
+	return strconv.FormatFloat(math.Round(v*100)/100+0, 'f', 2, 64)
 }

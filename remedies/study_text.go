@@ -3,14 +3,17 @@ package remedies
 import (
 	"math"
 	"strconv"
+	"strings"
 )
 
-// floorFS prints a factor of safety to three decimals, never rounded up.
+// floorFS prints a factor of safety to three decimals, never rounded up: what follows the third decimal is dropped.
 func floorFS(f float64) string {
 	if math.IsNaN(f) {
 		return "not found"
 	}
-	return strconv.FormatFloat(math.Floor(f*1000)/1000, 'f', 3, 64)
+	s := strconv.FormatFloat(f, 'f', -1, 64)
+	whole, fraction, _ := strings.Cut(s, ".")
+	return whole + "." + (fraction + "000")[:3]
 }
 
 // fsText prints a required factor of safety as short as it is.

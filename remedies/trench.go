@@ -109,8 +109,13 @@ func (d *trenchDrains) trench(j *Job, s *slope, p *Proposal, x []float64) (*tren
 			return nil, false
 		}
 		if short, at := highest(bottom, firm, t.from, t.to); short > limitSlack && math.IsNaN(x[drainEffectiveness]) {
+			if dug, _ := highest(shifted(before, -x[drainDepth]), firm, t.from, t.to); dug <= limitSlack {
+				p.violate("outfall", short, "the outfall, level %s m, keeps trench drains %s m above the top of %s at x = %s m: end them further up or give an effectiveness",
+					metres(*j.Limits.Outfall), metres(short), name, metres(at))
+				return nil, false
+			}
 			p.violate("low_permeability", short, "trench drains %s m deep do not reach the top of %s at x = %s m, %s m below ground: deepen them or give an effectiveness",
-				metres(x[drainDepth]), name, metres(at), metres(x[drainDepth]+short))
+				metres(x[drainDepth]), name, metres(at), metres(before.At(at)-firm.At(at)))
 			return nil, false
 		}
 		bottom = spliced(bottom, firm, t.from, t.to, upper)

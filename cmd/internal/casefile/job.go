@@ -25,11 +25,10 @@ type builder struct {
 	*reader
 	job           remedies.Job
 	soils, waters names
-	soilValues    []value         // By soil.
-	stratumValues []value         // By stratum of the section.
-	drains        []*lem.Drawdown // By situation.
-	before        lem.Profile     // Ground before works; nil if it has a fault.
-	finished      bool            // The case is a proposed section: it names the ground before works.
+	soilValues    []value     // By soil.
+	stratumValues []value     // By stratum of the section.
+	before        lem.Profile // Ground before works; nil if it has a fault.
+	finished      bool        // The case is a proposed section: it names the ground before works.
 }
 
 // build returns a builder with the job that the case describes; it means something only if no fault is recorded.

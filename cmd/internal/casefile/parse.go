@@ -14,7 +14,6 @@ import (
 
 	"go.yaml.in/yaml/v4"
 
-	"standfast/lem"
 	"standfast/remedies"
 )
 
@@ -24,12 +23,11 @@ const MaxSize = 5 << 20
 // Case is a case file that has been read.
 type Case struct {
 	Job      *remedies.Job
-	File     string          // Name of the file, as given.
-	SHA256   string          // Of the file's bytes, in hexadecimal.
-	Finished bool            // A proposed section, which names the ground before works: it is assessed, and nothing is sized on it.
-	Drains   []*lem.Drawdown // Of a proposed section: lowering by its drains, by situation; nil where there is none.
-	Notes    []string        // What was deduced or holds without being written, to be printed.
-	Warnings []string        // What is legal but probably not meant, each with file and line.
+	File     string   // Name of the file, as given.
+	SHA256   string   // Of the file's bytes, in hexadecimal.
+	Finished bool     // A proposed section, which names the ground before works: it is assessed, and nothing is sized on it.
+	Notes    []string // What was deduced or holds without being written, to be printed.
+	Warnings []string // What is legal but probably not meant, each with file and line.
 }
 
 // Read reads the case file at path. Its error joins one [*Fault] for each thing wrong with the file (see [Faults]), or is the
@@ -62,7 +60,7 @@ func Parse(name string, src []byte) (*Case, error) {
 	sum := sha256.Sum256(src)
 	return &Case{
 		Job: &b.job, File: name, SHA256: hex.EncodeToString(sum[:]),
-		Drains: b.drains, Finished: b.finished, Notes: r.notes, Warnings: r.warned,
+		Finished: b.finished, Notes: r.notes, Warnings: r.warned,
 	}, nil
 }
 

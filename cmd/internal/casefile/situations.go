@@ -36,8 +36,8 @@ func (b *builder) readSituations(v value) {
 		if share := b.get(item, "drains_working"); b.usable(share) {
 			s.DrainsWorking, _ = parseShare(share.node)
 		}
+		s.Drains = b.drawdown(b.get(item, "drains"))
 		b.job.Situations = append(b.job.Situations, s)
-		b.drains = append(b.drains, b.drawdown(b.get(item, "drains")))
 	}
 }
 

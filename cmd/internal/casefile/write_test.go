@@ -56,7 +56,7 @@ func compareProposal(t *testing.T, c *Case, o *remedies.Option, again *Case) {
 		checks := map[string][2]any{
 			"line":      {p.Waters[i].Line, line},
 			"free":      {p.Waters[i].Free, s.Free},
-			"drains":    {p.Waters[i].Drains, again.Drains[i]},
+			"drains":    {p.Waters[i].Drains, again.Job.Situations[i].Drains},
 			"name":      {want.Name, s.Name},
 			"undrained": {want.Undrained, s.Undrained},
 			"kh":        {want.Kh, s.Kh},

@@ -51,6 +51,9 @@ func runCompare(c *cobra.Command, o *compareOptions, path string) error {
 	if err := applyOnly(read.Job, o.only); err != nil {
 		return err
 	}
+	if len(read.Job.Requests)+len(read.Job.Trials) == 0 {
+		return nothingToSize(path, read.Finished)
+	}
 	out := o.out
 	if out == "" {
 		out = caseName(path) + "-works"
@@ -103,4 +106,12 @@ func (o *compareOptions) print(c *cobra.Command, f *report.File, out string) err
 	}
 	_, err := fmt.Fprintf(w, "\nResults, drawings and proposed sections are in %s\n", filepath.ToSlash(out))
 	return err
+}
+
+// nothingToSize says why a case asks compare for nothing.
+func nothingToSize(path string, proposed bool) error {
+	if proposed {
+		return usagef("%s is a proposed section: there is nothing to size in it; use `standfast assess %s`", path, path)
+	}
+	return usagef("%s names no `remedies` and no `trials`; name some, or use `standfast assess %s`", path, path)
 }
