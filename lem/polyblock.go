@@ -163,9 +163,9 @@ func (p *polySearch) buildCut(t *polyTrial, a, b Point) bool {
 func (p *polySearch) composite(t *polyTrial, c Point, r float64, over part, a, b Point) {
 	m := p.s.m
 	from, to := Point{over.from, m.groundAt(over.from)}, Point{over.to, m.groundAt(over.to)}
-	t.nodes = inscribed(t.nodes, c, r, from, a, arcPieces)
+	t.nodes = inscribed(t.nodes, c, r, from, a, arcPieces, arcPiece)
 	t.nodes = p.rails[t.rail].appendBetween(t.nodes, a.X, b.X)
-	t.nodes = inscribed(t.nodes, c, r, b, to, arcPieces)
+	t.nodes = inscribed(t.nodes, c, r, b, to, arcPieces, arcPiece)
 }
 
 // descendRail improves a trial of a rail in its parameters, one after the other, with steps that grow on success and shrink on failure.

@@ -53,7 +53,8 @@ type polySearch struct {
 	s       *searcher
 	setting Setting
 	rails   []rail
-	trial   polyTrial // Of the moment.
+	trial   polyTrial   // Of the moment.
+	lost    []polyTrial // Trials that did not converge, some of those with the lowest screens.
 	stack   []int
 	lowest  float64
 }
@@ -73,29 +74,35 @@ func (s *searcher) searchPolylines(ctx context.Context) {
 	}
 	basins := p.improve(ctx, p.distinct(seeds), p.count(coarseSeeds), coarseUpTo, coarseNodes, coarseTrials)
 	basins = p.improve(ctx, basins, p.count(fineSeeds), fineUpTo, fineNodes, fineTrials)
-	s.filePolylines(basins, p.setting)
+	s.polys = append(s.polys, candidatesOf(basins, p.setting)...)
 	for _, method := range methods[1:] {
 		p.setting.Method = method
 		again := basins[:min(len(basins), p.count(fineSeeds))]
-		s.filePolylines(p.improve(ctx, again, len(again), fineUpTo, 0, coarseTrials), p.setting)
+		again = p.improve(ctx, again, len(again), fineUpTo, 0, coarseTrials)
+		s.polys = append(s.polys, candidatesOf(again, p.setting)...)
 	}
-	s.polys = s.distinct(s.polys)
+	p.setting.Method = methods[0]
+	s.polys = append(s.polys, s.distinct(p.resolve(methods))...)
 }
 
-// polyMethods lists the governing methods that polylines can be evaluated with.
+// polyMethods lists the methods that polylines are evaluated with.
 func (s *searcher) polyMethods() []Method {
-	ms := slices.DeleteFunc(slices.Clone(s.methods), func(m Method) bool { return m == Bishop })
+	ms := slices.DeleteFunc(slices.Clone(s.o.Methods), func(m Method) bool { return m == Bishop })
 	if len(ms) == 0 {
-		ms = []Method{Spencer}
+		ms = GoverningMethods(Polyline)
 	}
 	return ms
 }
 
-func (s *searcher) filePolylines(ts []polyTrial, o Setting) {
+// candidatesOf returns trials as candidates of the search, without those that have no answer.
+func candidatesOf(ts []polyTrial, o Setting) []candidate {
+	var out []candidate
 	for i := range ts {
-		t := &ts[i]
-		s.polys = append(s.polys, candidate{slip: Slip{Kind: Polyline, Nodes: slices.Clone(t.nodes)}, setting: o, r: t.r})
+		if t := &ts[i]; !math.IsInf(t.r.F, 1) {
+			out = append(out, candidate{slip: Slip{Kind: Polyline, Nodes: slices.Clone(t.nodes)}, setting: o, r: t.r})
+		}
 	}
+	return out
 }
 
 // count scales a number of seeds with the effort.
@@ -114,6 +121,7 @@ func (p *polySearch) try(t *polyTrial) {
 		p.s.barred++
 	case NotConverged:
 		p.s.failed++
+		p.keepLost(t)
 	case Inadmissible:
 		p.s.barred++
 	case Missed:
@@ -130,7 +138,7 @@ func (p *polySearch) fromCircles() []polyTrial {
 		if c.r.F > max(circlesUpTo*circles[0].r.F, p.s.o.Below) {
 			break
 		}
-		t := polyTrial{nodes: inscribed(nil, c.slip.Centre, c.slip.Radius, c.r.From, c.r.To, circlePieces)}
+		t := polyTrial{nodes: inscribed(nil, c.slip.Centre, c.slip.Radius, c.r.From, c.r.To, circlePieces, flattest)}
 		if !p.mend(t.nodes) {
 			continue
 		}

@@ -7,12 +7,16 @@ import "math"
 const (
 	steepestHead  = 80 * math.Pi / 180 // The head may not be steeper.
 	exitAllowance = 15 * math.Pi / 180 // The exit may not rise more steeply than Rankine's passive wedge, 45 degrees - phi/2, and this.
-	turnTol       = 1e-6               // A bend to the wrong side of less than this, as a difference of slope, is rounding.
-	shortestPiece = 2e-3               // Nodes of a trial stay this share of its length apart.
-	mostDeepening = 1.6                // A trial shallower than the depth of interest is deepened by at most this factor.
-	deepenings    = 3                  // It takes more than one where the ground bends over a piece.
-	arcPieces     = 4                  // Straight pieces for each arc of a composite slip,
-	circlePieces  = 7                  // and for a whole circle.
+	// In a concave slip every part rises against its uphill neighbour and is dragged down by it: lambda is positive. The equations of
+	// force and moment have further roots with lambda well below 0 and a low F, which no slip can follow.
+	leastLambda   = -0.1
+	turnTol       = 1e-6 // A bend to the wrong side of less than this, as a difference of slope, is rounding.
+	shortestPiece = 2e-3 // Nodes of a trial stay this share of its length apart.
+	mostDeepening = 1.6  // A trial shallower than the depth of interest is deepened by at most this factor.
+	deepenings    = 3    // It takes more than one where the ground bends over a piece.
+	circlePieces  = 7    // Straight pieces for a whole circle.
+	arcPiece      = 0.25 // Greatest angle of the pieces of the arcs of a composite slip, rad.
+	arcPieces     = 4    // The most of them to an arc.
 )
 
 // concave reports whether the nodes bend to the right side only.
@@ -63,11 +67,13 @@ func appendArc(dst []Point, c Point, r, from, to float64, pieces int) []Point {
 	return dst
 }
 
-// inscribed appends the polyline that stands for the part of a circle between two points of it.
-func inscribed(dst []Point, c Point, r float64, from, to Point, pieces int) []Point {
+// inscribed appends the polyline that stands for the part of a circle between two points of it: so many pieces, fewer where they would be
+// shorter than an angle.
+func inscribed(dst []Point, c Point, r float64, from, to Point, most int, piece float64) []Point {
 	angle := func(p Point) float64 { return math.Asin(min(max((p.X-c.X)/r, -1), 1)) }
+	a, b := angle(from), angle(to)
 	dst = append(dst, from)
-	dst = appendArc(dst, c, r, angle(from), angle(to), pieces)
+	dst = appendArc(dst, c, r, a, b, min(most, int(math.Ceil((b-a)/piece))))
 	return append(dst, to)
 }
 
@@ -123,8 +129,11 @@ func (p *polySearch) deepen(nodes []Point) bool {
 	return false
 }
 
-// sound reports whether head and exit of an answer are no steeper than the rules allow.
+// sound reports whether head and exit of an answer are no steeper than the rules allow, and the interslice forces those of a slip that moves.
 func (m *Model) sound(nodes []Point, r *Result) bool {
+	if r.Lambda < leastLambda {
+		return false
+	}
 	left, right := slopeAt(nodes, r.From.X, 1), slopeAt(nodes, r.To.X, -1)
 	head, exit, x := -left, right, r.To.X
 	if r.Leftward {

@@ -78,7 +78,7 @@ type cell struct {
 func newSearcher(m *Model, o SearchOptions) *searcher {
 	s := &searcher{m: m, o: o, methods: o.Methods, cells: map[cell]candidate{}, lowest: math.Inf(1)}
 	if len(s.methods) == 0 {
-		s.methods = []Method{Bishop, Spencer}
+		s.methods = GoverningMethods(Circle)
 	}
 	if s.o.Slices == 0 {
 		s.o.Slices = DefaultSlices
@@ -86,7 +86,7 @@ func newSearcher(m *Model, o SearchOptions) *searcher {
 	if s.o.Effort == 0 {
 		s.o.Effort = 1
 	}
-	s.setting = Setting{Method: s.methods[0], Slices: s.o.Slices, MinDepth: o.MinDepth, Window: o.Window}
+	s.setting = Setting{Method: s.methods[0], Slices: s.o.Slices, MinDepth: o.MinDepth, Window: o.Window, SideForce: o.SideForce}
 	s.zones = m.zones()
 	return s
 }

@@ -17,10 +17,11 @@ type SearchOptions struct {
 	Effort   float64  // Multiple of the default number of trials; 0 means 1.
 	Seed     uint64   // Shifts the low-discrepancy sequence.
 	Window   Window   // Slips to look at.
-	Methods  []Method // Governing methods; nil: Bishop and Spencer.
+	Methods  []Method // Governing methods; nil: those of GoverningMethods.
 	// Polylines: look at non-circular slips too: grown from the circles, and along boundaries between soils, the firm base and known slip
-	// surfaces. They are evaluated with the governing methods but for Bishop; with Spencer if there is no other.
+	// surfaces. They are evaluated with the methods but for Bishop; with those that govern polylines if there is no other.
 	Polylines bool
+	SideForce SideForce // Side-force function where Morgenstern-Price is among the methods.
 	// Below: basins with F at or below this are all polished with every governing method; 0 polishes the lowest few only.
 	Below float64
 }
