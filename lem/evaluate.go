@@ -157,16 +157,20 @@ func (ws *Workspace) method(method Method, r *Result) {
 	}
 }
 
+// levelShare is the share of the moments of single slices below which their sum is taken to be rounding: the ground is level there.
+const levelShare = 1e-9
+
 // orient turns the signs of the slices to the direction in which the weight drives the slip, and reports whether it drives it at all.
 func (ws *Workspace) orient(r *Result) bool {
-	var d float64
+	var d, sum float64
 	ss := ws.slice[:ws.n]
 	for i := range ss {
+		t := ss[i].q * ss[i].sin
 		if ws.arc {
-			d += ss[i].q * (ws.centre.X - ss[i].x)
-		} else {
-			d += ss[i].q * ss[i].sin
+			t = ss[i].q * (ws.centre.X - ss[i].x)
 		}
+		d += t
+		sum += math.Abs(t)
 	}
 	r.Leftward = d < 0
 	if r.Leftward {
@@ -174,7 +178,7 @@ func (ws *Workspace) orient(r *Result) bool {
 			ss[i].sin, ss[i].h = -ss[i].sin, -ss[i].h
 		}
 	}
-	return d != 0
+	return math.Abs(d) > levelShare*sum
 }
 
 // driving returns what the resistance is compared with, kN: for an arc the overturning moment of all loads about the centre over the

@@ -101,10 +101,11 @@ func drawWater(t *rapid.T, g Profile, sit *Situation) {
 	}
 }
 
-// drawCircle draws an arc through two points of the ground, one on top and one about the toe.
+// drawCircle draws an arc through two points of the ground, one on top and one about the toe, but through no vertex: whether an arc that
+// touches one is cut there is a matter of rounding.
 func drawCircle(t *rapid.T, s *Section) Slip {
 	right := s.Ground.Right() - 30
-	x0, x1 := between(t, -20, right*0.45, "head"), between(t, right*0.5, right+15, "exit")
+	x0, x1 := between(t, -20, right*0.45, "head")+0.0037, between(t, right*0.5, right+15, "exit")+0.0041
 	a, b := Point{x0, s.Ground.At(x0)}, Point{x1, s.Ground.At(x1)}
 	half := between(t, 0.25, 1.2, "half angle")
 	chord := math.Hypot(b.X-a.X, b.Y-a.Y)
