@@ -185,26 +185,33 @@ func (ws *Workspace) orient(r *Result) bool {
 // radius, for a polyline the sum of the loads along the base.
 func (ws *Workspace) driving(leftward bool) float64 {
 	var d float64
-	ss := ws.slice[:ws.n]
+	for i := range ws.slice[:ws.n] {
+		d += ws.drive(&ws.slice[i], leftward)
+	}
+	return d / ws.lever()
+}
+
+// lever is what drive is to be divided by: the radius of an arc, 1 for a polyline.
+func (ws *Workspace) lever() float64 {
+	if ws.arc {
+		return ws.radius
+	}
+	return 1
+}
+
+// drive returns the part of one slice in driving, times the lever.
+func (ws *Workspace) drive(s *slice, leftward bool) float64 {
 	if !ws.arc {
-		for i := range ss {
-			d += ss[i].q*ss[i].sin + (ss[i].h+ss[i].k)*ss[i].cos
-		}
-		return d
+		return s.q*s.sin + (s.h+s.k)*s.cos
 	}
-	for i := range ss {
-		s := &ss[i]
-		d += s.q * (ws.centre.X - s.x)
-	}
+	d := s.q * (ws.centre.X - s.x)
 	if leftward {
 		d = -d
 	}
-	for i := range ss {
-		if s := &ss[i]; s.h != 0 || s.k != 0 {
-			d += s.h*(ws.centre.Y-s.hy) + s.k*(ws.centre.Y-s.ky)
-		}
+	if s.h != 0 || s.k != 0 {
+		d += s.h*(ws.centre.Y-s.hy) + s.k*(ws.centre.Y-s.ky)
 	}
-	return d / ws.radius
+	return d
 }
 
 // addVariable puts every variable surcharge on the slices where, by Bishop's influence of a small load at this F, it lowers F on the

@@ -15,12 +15,13 @@ const (
 	mostLStep   = 0.4 // and in lambda.
 	scanSteps   = 24
 	bracketing  = 60
+	mostF       = 10 // The force equation is followed up to this multiple of the start.
 )
 
 // morgensternPrice solves the method of Morgenstern and Price (1965), which is that of Spencer (1967) when the side-force function is constant:
 // the F and lambda at which forces and moments close. Newton's method in both unknowns with exact derivatives, started from a simplified method
-// on the same slip; where that fails, a search in lambda. No start is carried over from other slips, so that an answer never depends on
-// what the workspace did before.
+// on the same slip; where that finds nothing, or an answer far off or bent the wrong way, a search in lambda. No start is carried over from
+// other slips, so that an answer never depends on what the workspace did before.
 func (ws *Workspace) morgensternPrice(shape *SideForce, leftward bool) (f, lambda float64, reason Reason, st Status) {
 	f = ws.startF(leftward)
 	ws.prepareClosure(shape, leftward)
@@ -30,17 +31,29 @@ func (ws *Workspace) morgensternPrice(shape *SideForce, leftward bool) (f, lambd
 	pole := ws.pole()
 	start := max(f, pole*startAbovePole)
 	f, lambda, ok := ws.newton(start, ws.startLambda(), pole, leftward)
-	if !ok {
-		f, lambda, ok = ws.scanLambda(start, pole, leftward)
+	if ok {
+		reason = ws.judge(f, lambda, leftward).Reason
 	}
-	if !ok {
+	doubtful := !ok || f > farFromStart*start || f*farFromStart < start || reason != Admissible && lambda < 0
+	if doubtful && start < scanUpTo {
+		if a, b, why, found := ws.scanLambda(start, pole, leftward); found && (!ok || why == Admissible) {
+			f, lambda, reason, ok = a, b, why, true
+		}
+	}
+	switch {
+	case !ok:
 		return math.NaN(), math.NaN(), Admissible, NotConverged
-	}
-	if reason = ws.verdict(f, lambda, leftward); reason != Admissible {
+	case reason != Admissible:
 		return f, lambda, reason, Inadmissible
 	}
 	return f, lambda, reason, Converged
 }
+
+// When the fallback is called.
+const (
+	farFromStart = 3  // An answer further from its start than by this ratio is looked at twice: the equations have answers without sense too.
+	scanUpTo     = 10 // Slips whose simplified F is above this are not: they do not matter, and there are many in a search.
+)
 
 // startAbovePole is how far above the largest pole of m-alpha the iteration starts at least.
 const startAbovePole = 1.01
@@ -108,22 +121,24 @@ func (ws *Workspace) newton(f, lambda, pole float64, leftward bool) (float64, fl
 	return 0, 0, false
 }
 
-// scanLambda is the safeguarded fallback: for each lambda the force equation gives F, and the change of sign of the moment nearest to
-// lambda = 0 is bracketed over the range of lambda and closed.
-func (ws *Workspace) scanLambda(start, pole float64, leftward bool) (f, lambda float64, ok bool) {
+// scanLambda is the safeguarded fallback: for each lambda the force equation gives F, and every change of sign of the moment over the range of
+// lambda is bracketed and closed. Of several answers an admissible one counts first, then the one nearest to lambda = 0.
+func (ws *Workspace) scanLambda(start, pole float64, leftward bool) (f, lambda float64, reason Reason, ok bool) {
 	prevL, prevM, prevOK := 0.0, 0.0, false
-	best := math.Inf(1)
 	for i := range scanSteps + 1 {
 		l := (inclineMin + (inclineMax-inclineMin)*float64(i)/scanSteps) / ws.sidePeak
-		_, m, good := ws.forceF(start, l, pole, leftward)
+		fl, m, good := ws.forceF(start, l, pole, leftward)
 		if good && prevOK && (m > 0) != (prevM > 0) {
-			if a, b, found := ws.bracketed(start, pole, prevL, l, prevM, m, leftward); found && math.Abs(b) < best {
-				f, lambda, ok, best = a, b, true, math.Abs(b)
+			if a, b, found := ws.bracketed(fl, pole, prevL, l, prevM, m, leftward); found {
+				why := ws.judge(a, b, leftward).Reason
+				if !ok || why == Admissible && reason != Admissible || (why == Admissible) == (reason == Admissible) && math.Abs(b) < math.Abs(lambda) {
+					f, lambda, reason, ok = a, b, why, true
+				}
 			}
 		}
 		prevL, prevM, prevOK = l, m, good
 	}
-	return f, lambda, ok
+	return f, lambda, reason, ok
 }
 
 // bracketed closes in on the lambda between a and b, whose moments have different signs, by regula falsi with the Illinois safeguard.
@@ -161,7 +176,7 @@ func (ws *Workspace) forceF(start, lambda, pole float64, leftward bool) (f, mome
 	f = start
 	for range forceSteps {
 		c := ws.closure(f, lambda, leftward)
-		if !(c.least > 0) {
+		if !(c.least > 0) || f > mostF*start {
 			return 0, 0, false
 		}
 		if c.e > 0 {

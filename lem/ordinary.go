@@ -11,18 +11,28 @@ func (ws *Workspace) ordinary(leftward bool) (float64, Status) {
 		return math.NaN(), NotConverged
 	}
 	var r float64
-	ss := ws.slice[:ws.n]
-	free := false
-	for i := range ss {
-		free = free || ss[i].h != 0 || ss[i].q != ss[i].soilW && ss[i].variable == 0
-	}
-	for i := range ss {
-		s := &ss[i]
-		n := s.q*s.cos - s.k*s.sin - s.ul
-		if free {
-			n = (s.q-s.ul*s.cos)*s.cos - s.k*s.sin
-		}
-		r += s.cl + n*s.tan
+	free := ws.wetted()
+	for i := range ws.slice[:ws.n] {
+		s := &ws.slice[i]
+		r += s.cl + s.ordinaryNormal(free)*s.tan
 	}
 	return r / d, Converged
+}
+
+// wetted reports whether free water loads the slip.
+func (ws *Workspace) wetted() bool {
+	for i := range ws.slice[:ws.n] {
+		if s := &ws.slice[i]; s.h != 0 || s.q != s.soilW && s.variable == 0 {
+			return true
+		}
+	}
+	return false
+}
+
+// ordinaryNormal returns N' of the Ordinary method on a slice of a slip that free water loads or not, kN.
+func (s *slice) ordinaryNormal(free bool) float64 {
+	if free {
+		return (s.q-s.ul*s.cos)*s.cos - s.k*s.sin
+	}
+	return s.q*s.cos - s.k*s.sin - s.ul
 }

@@ -18,9 +18,9 @@ const (
 	// InclinedForce: the force between slices is so inclined that 1 + lambda f tan(alpha - phi_m) is not positive: it stands in line with the
 	// reaction of the base, and the slice cannot be in equilibrium. Spencer and Morgenstern-Price only, like those that follow.
 	InclinedForce
-	// ThrustOutside: where the interslice force is at least a fifth of its greatest value, the line of thrust lies more than half the height
-	// of the interface below the slip or above the ground (common practice wants it inside; the margin is ours, since a thrust line somewhat
-	// outside changes F little).
+	// ThrustOutside: |E| times the distance of the line of thrust from the body, below the slip or above the ground, exceeds 0.3 of the greatest
+	// |E| times the greatest height of an interface. Common practice wants the line inside; the margin is ours: a line somewhat outside, or far
+	// outside where E passes through zero below a head in tension, changes F little.
 	ThrustOutside
 	// BaseTension: the total normal forces on the base that pull outweigh those that press: the body would hang on its base. Some tension near
 	// the head, as cohesion brings with it, is no reason (common practice, no source).
@@ -44,13 +44,12 @@ func (r Reason) String() string {
 // Limits of the rules of admissibility.
 const (
 	// minMAlpha is the least m-alpha of an admissible slip.
-	minMAlpha    = 0.2
-	thrustBelow  = 0.5 // Thrust may run this share of the interface's height below its base
-	thrustAbove  = 0.5 // or above the ground,
-	thrustCounts = 0.2 // looked at where the interslice force is at least this share of its greatest value.
+	minMAlpha   = 0.2
+	mostThrust  = 0.3 // Of Verdict.Thrust.
+	mostTension = 1.0 // Of Verdict.Tension.
 )
 
-// admitted returns F with the verdict of the m-alpha rule.
+// admitted returns F with the verdict of the m-alpha rule, for methods that have no other.
 func (ws *Workspace) admitted(f float64) (float64, Status) {
 	ss := ws.slice[:ws.n]
 	for i := range ss {
@@ -62,35 +61,63 @@ func (ws *Workspace) admitted(f float64) (float64, Status) {
 	return f, Converged
 }
 
-// verdict judges an answer that closes forces and moments.
-func (ws *Workspace) verdict(f, lambda float64, leftward bool) Reason {
-	if _, st := ws.admitted(f); st != Converged {
-		return SmallMAlpha
-	}
-	if !ws.trace(f, lambda, leftward) {
-		return InclinedForce
-	}
-	var greatest, press, pull float64
-	fs := ws.forces[:ws.n]
-	for j := range fs {
-		greatest = max(greatest, fs[j].e, -fs[j].e)
-		press += max(fs[j].normal, 0)
-		pull -= min(fs[j].normal, 0)
-	}
-	for j := range ws.n - 1 {
-		if math.Abs(fs[j].e) < thrustCounts*greatest {
-			continue
+// Verdict is what the rules of admissibility found on an answer, with the numbers behind it.
+type Verdict struct {
+	Reason      Reason
+	LeastMAlpha float64 // The least m-alpha of the bases that rise towards the exit; 1 if none is below.
+	// Thrust is the greatest |E| times distance of the line of thrust from the body over the greatest |E| times the greatest height of an
+	// interface; 0 if the line runs inside.
+	Thrust  float64
+	Tension float64 // Sum of the total normal forces that pull over the sum of those that press.
+}
+
+// judge applies the rules to an answer that closes forces and moments.
+func (ws *Workspace) judge(f, lambda float64, leftward bool) Verdict {
+	v := Verdict{LeastMAlpha: ws.leastMAlpha(f)}
+	upright := ws.trace(f, lambda, leftward)
+	var greatest, highest, outside, press, pull float64
+	for j := range ws.forces[:ws.n] {
+		now := &ws.forces[j]
+		press += max(now.normal, 0)
+		pull -= min(now.normal, 0)
+		if j == ws.n-1 {
+			break
 		}
 		base, height := ws.interfaceAt(j, leftward)
-		level := fs[j].moment/fs[j].e + ws.slice[0].y
-		if above := level - base; height > 0 && (above < -thrustBelow*height || above > (1+thrustAbove)*height) {
-			return ThrustOutside
+		arm := now.moment - now.e*(base-ws.slice[0].y) // E times the height of the thrust above the slip.
+		if now.e < 0 {
+			arm = -arm
+		}
+		e := math.Abs(now.e)
+		outside = max(outside, -arm, arm-e*height)
+		greatest, highest = max(greatest, e), max(highest, height)
+	}
+	if outside > 0 {
+		v.Thrust = outside / (greatest * highest)
+	}
+	v.Tension = pull / press
+	switch {
+	case v.LeastMAlpha < minMAlpha:
+		v.Reason = SmallMAlpha
+	case !upright:
+		v.Reason = InclinedForce
+	case v.Thrust > mostThrust:
+		v.Reason = ThrustOutside
+	case !(v.Tension <= mostTension):
+		v.Reason = BaseTension
+	}
+	return v
+}
+
+// leastMAlpha returns the least m-alpha of the bases that rise towards the exit.
+func (ws *Workspace) leastMAlpha(f float64) float64 {
+	least := 1.0
+	for i := range ws.slice[:ws.n] {
+		if s := &ws.slice[i]; s.sin < 0 {
+			least = min(least, s.cos+s.sin*s.tan/f)
 		}
 	}
-	if pull > press {
-		return BaseTension
-	}
-	return Admissible
+	return least
 }
 
 // trace runs through the slices at an answer and keeps the forces in ws.forces. It reports whether every 1 + g lambda f is positive.
@@ -121,6 +148,11 @@ func (ws *Workspace) trace(f, lambda float64, leftward bool) bool {
 		ws.forces[j], was = now, now
 	}
 	return ok
+}
+
+// thrust returns the level of the line of thrust at the downhill side of the j-th slice from the head.
+func (ws *Workspace) thrust(j int) float64 {
+	return ws.forces[j].moment/ws.forces[j].e + ws.slice[0].y
 }
 
 // interfaceAt returns the level of the slip at the downhill side of the j-th slice from the head, and the height of the ground above it,
