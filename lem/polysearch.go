@@ -77,8 +77,13 @@ func (s *searcher) searchPolylines(ctx context.Context) {
 	s.polys = append(s.polys, candidatesOf(basins, p.setting)...)
 	for _, method := range methods[1:] {
 		p.setting.Method = method
-		again := basins[:min(len(basins), p.count(fineSeeds))]
-		again = p.improve(ctx, again, len(again), fineUpTo, 0, coarseTrials)
+		again := make([]polyTrial, min(len(basins), p.count(fineSeeds)))
+		for i := range again {
+			again[i] = basins[i].clone()
+			p.try(&again[i])
+		}
+		again = p.distinct(again)
+		again = p.improve(ctx, again, len(again), fineUpTo, fineNodes, coarseTrials)
 		s.polys = append(s.polys, candidatesOf(again, p.setting)...)
 	}
 	p.setting.Method = methods[0]
@@ -170,36 +175,36 @@ func (p *polySearch) improve(ctx context.Context, ts []polyTrial, most int, upTo
 	for i := range ts {
 		t := ts[i].clone()
 		if i < most && t.r.F <= max(upTo*ts[0].r.F, p.s.o.Below) && concave(t.nodes) && ctx.Err() == nil {
-			if nodes > 0 {
-				t.nodes = insertNodes(thinNodes(t.nodes), nodes)
-			}
+			t.nodes = insertNodes(thinNodes(t.nodes, nodes), nodes)
 			p.try(&t)
-			if math.IsInf(t.r.F, 1) {
-				t = ts[i].clone()
-				p.try(&t)
-			}
 			p.descend(&t, budget)
+			if !(t.r.F < ts[i].r.F) { // Fewer nodes may have cost more than the descent gained.
+				t = ts[i].clone()
+			}
 		}
 		out = append(out, t)
 	}
 	return p.distinct(out)
 }
 
-// thinNodes leaves out nodes that hardly bend the line.
-func thinNodes(nodes []Point) []Point {
+// thinNodes leaves out nodes that do not bend the line, and then those that bend it least until there are at most so many.
+func thinNodes(nodes []Point, most int) []Point {
 	const tol = hairShare / 10
 	length := nodes[len(nodes)-1].X - nodes[0].X
-	out := nodes[:1]
-	for i := 1; i < len(nodes); i++ {
-		if i+1 < len(nodes) {
-			q, p, next := out[len(out)-1], nodes[i], nodes[i+1]
-			if on := q.Y + (next.Y-q.Y)*(p.X-q.X)/(next.X-q.X); math.Abs(on-p.Y) <= tol*length {
-				continue
+	for len(nodes) > 2 {
+		k, least := 0, math.Inf(1)
+		for i := 1; i+1 < len(nodes); i++ {
+			a, p, b := nodes[i-1], nodes[i], nodes[i+1]
+			if area := math.Abs((p.X-a.X)*(b.Y-a.Y) - (p.Y-a.Y)*(b.X-a.X)); area < least {
+				k, least = i, area
 			}
 		}
-		out = append(out, nodes[i])
+		if len(nodes) <= most && least > tol*length*(nodes[k+1].X-nodes[k-1].X) {
+			break
+		}
+		nodes = slices.Delete(nodes, k, k+1)
 	}
-	return out
+	return nodes
 }
 
 // insertNodes halves the longest pieces until there are so many nodes.

@@ -15,8 +15,8 @@ const (
 	mostDeepening = 1.6  // A trial shallower than the depth of interest is deepened by at most this factor.
 	deepenings    = 3    // It takes more than one where the ground bends over a piece.
 	circlePieces  = 7    // Straight pieces for a whole circle.
-	arcPiece      = 0.25 // Greatest angle of the pieces of the arcs of a composite slip, rad.
-	arcPieces     = 4    // The most of them to an arc.
+	arcPiece      = 0.13 // Greatest angle of the pieces of the arcs of a composite slip, rad: F within 0.1 % of the arc,
+	arcPieces     = 12   // and the most of them to an arc.
 )
 
 // concave reports whether the nodes bend to the right side only.
