@@ -462,3 +462,51 @@ func TestGrazingArcIsMissed(t *testing.T) {
 		}
 	}
 }
+
+// TestSlicesAgreeWithTwin compares the weight of every slice and the pore pressure at its base with sums over the section.
+func TestSlicesAgreeWithTwin(t *testing.T) {
+	slices := 0
+	rapid.Check(t, func(t *rapid.T) {
+		s, sit := drawSection(t)
+		slip := drawCircle(t, s)
+		sit.Undrained = nil
+		var m Model
+		if err := m.Compile(s, sit); err != nil {
+			t.Fatal(err)
+		}
+		var ws Workspace
+		m.FS(&ws, &slip, Setting{Method: Ordinary})
+		for i := range ws.n {
+			sl := &ws.slice[i]
+			if sl.b < 0.01 { // Where a vertical step is drawn out.
+				continue
+			}
+			slices++
+			const samples = 4000
+			above := twinWeight(s, &sit.Water, sl.x, sl.y, samples)
+			load := 0.0
+			for _, l := range s.Loads {
+				if sl.x > l.FromX && sl.x < l.ToX {
+					load += l.Pressure
+				}
+			}
+			// A sample may fall on either side of a boundary.
+			tol := 10 * max(0.2, s.Ground.At(sl.x)-sl.y) / samples
+			if got := sl.soilW / sl.b; math.Abs(got-above-load) > tol {
+				t.Fatalf("slice at x = %.3f, base %.3f: %.4f kPa of ground and surcharge, twin %.4f", sl.x, sl.y, got, above+load)
+			}
+			soil := s.Soils[twinSoil(s, sl.x, sl.y)]
+			u := GammaW * max(0, twinHead(s, &sit.Water, sl.x, sl.y)-sl.y)
+			if soil.HasRu {
+				u = soil.Ru * above
+			}
+			delta := sl.b / (slip.Radius * sl.cos)
+			if got := sl.ul * sl.cos / sl.b; math.Abs(got-u) > u*delta*delta/10+tol {
+				t.Fatalf("slice at x = %.3f, base %.3f: u = %.4f kPa, twin %.4f", sl.x, sl.y, got, u)
+			}
+		}
+	})
+	if slices < 500 {
+		t.Errorf("only %d slices compared", slices)
+	}
+}
