@@ -219,6 +219,8 @@ func TestReasons(t *testing.T) {
 	long := uniform(Profile{{-400, 400 * math.Tan(20*degree)}, {400, -400 * math.Tan(20*degree)}}, Soil{UnitWeight: 19, Cohesion: 5, Friction: 25 * degree})
 	fall := func(x, y float64) Point { return Point{x, -x*math.Tan(20*degree) + y} }
 	sheet := Slip{Kind: Polyline, Nodes: []Point{fall(-102.4, 0.6), fall(-100, -2), fall(100, -2), fall(110, 0.6)}}
+	clay := uniform(face(8, 45*degree, 40), Soil{UnitWeight: 19, Cohesion: 65})
+	bent := Slip{Kind: Polyline, Nodes: []Point{{-26, 8}, {-12, -10}, {2, 0}}}
 	tests := []struct {
 		name   string
 		s      *Section
@@ -231,6 +233,7 @@ func TestReasons(t *testing.T) {
 		{"below firm base", firm, deep, Setting{Method: Bishop}, BelowFirmBase, false},
 		{"Bishop on a polyline", long, sheet, Setting{Method: Bishop}, CirclesOnly, false},
 		{"steep exit", sand, Slip{Kind: Polyline, Nodes: []Point{{-25, 8}, {-10, -2}, {-0.6, -2}, {0.2, 0}}}, Setting{Method: JanbuPlain}, SmallMAlpha, true},
+		{"sharp bend in clay", clay, bent, Setting{Method: Spencer}, ReversedDrag, true},
 		{"half sine on a sheet slide", long, sheet, Setting{Method: MorgensternPrice}, ThrustOutside, true},
 		{"Spencer on a sheet slide", long, sheet, Setting{Method: Spencer}, Admissible, true},
 	}

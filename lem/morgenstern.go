@@ -20,7 +20,7 @@ const (
 
 // morgensternPrice solves the method of Morgenstern and Price (1965), which is that of Spencer (1967) when the side-force function is constant:
 // the F and lambda at which forces and moments close. Newton's method in both unknowns with exact derivatives, started from a simplified method
-// on the same slip; where that finds nothing, or an answer far off or bent the wrong way, a search in lambda. No start is carried over from
+// on the same slip; where that finds nothing, or an answer far off or inadmissible with lambda below 0, a search in lambda. No start is carried over from
 // other slips, so that an answer never depends on what the workspace did before.
 func (ws *Workspace) morgensternPrice(shape *SideForce, leftward bool) (f, lambda float64, reason Reason, st Status) {
 	f = ws.startF(leftward)

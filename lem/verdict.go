@@ -18,6 +18,9 @@ const (
 	// InclinedForce: the force between slices is so inclined that 1 + lambda f tan(alpha - phi_m) is not positive: it stands in line with the
 	// reaction of the base, and the slice cannot be in equilibrium. Spencer and Morgenstern-Price only, like those that follow.
 	InclinedForce
+	// ReversedDrag: lambda f is below -0.1 where f is greatest: the downhill side of a slice would hold up the uphill side, which sinks. On sharply
+	// bent slips the two equations have such roots, with an F too low, alone or beside the true one (the margin is ours).
+	ReversedDrag
 	// ThrustOutside: |E| times the distance of the line of thrust from the body, below the slip or above the ground, exceeds 0.3 of the greatest
 	// |E| times the greatest height of an interface. Common practice wants the line inside; the margin is ours: a line somewhat outside, or far
 	// outside where E passes through zero below a head in tension, changes F little.
@@ -30,7 +33,7 @@ const (
 
 var reasonWords = [numReasons]string{
 	"admissible", "slip does not daylight at both ends", "slip passes below the firm base", "method is for circles only",
-	"m-alpha too small at the exit", "interslice force too inclined", "line of thrust far outside", "tension over the base",
+	"m-alpha too small at the exit", "interslice force too inclined", "interslice drag reversed", "line of thrust far outside", "tension over the base",
 }
 
 // String returns the reason in words.
@@ -45,8 +48,9 @@ func (r Reason) String() string {
 const (
 	// minMAlpha is the least m-alpha of an admissible slip.
 	minMAlpha   = 0.2
-	mostThrust  = 0.3 // Of Verdict.Thrust.
-	mostTension = 1.0 // Of Verdict.Tension.
+	leastDrag   = -0.1 // Of Verdict.Drag.
+	mostThrust  = 0.3  // Of Verdict.Thrust.
+	mostTension = 1.0  // Of Verdict.Tension.
 )
 
 // admitted returns F with the verdict of the m-alpha rule, for methods that have no other.
@@ -65,6 +69,7 @@ func (ws *Workspace) admitted(f float64) (float64, Status) {
 type Verdict struct {
 	Reason      Reason
 	LeastMAlpha float64 // The least m-alpha of the bases that rise towards the exit; 1 if none is below.
+	Drag        float64 // lambda f where f is greatest: the vertical over the horizontal force between slices.
 	// Thrust is the greatest |E| times distance of the line of thrust from the body over the greatest |E| times the greatest height of an
 	// interface; 0 if the line runs inside.
 	Thrust  float64
@@ -73,7 +78,7 @@ type Verdict struct {
 
 // judge applies the rules to an answer that closes forces and moments.
 func (ws *Workspace) judge(f, lambda float64, leftward bool) Verdict {
-	v := Verdict{LeastMAlpha: ws.leastMAlpha(f)}
+	v := Verdict{LeastMAlpha: ws.leastMAlpha(f), Drag: lambda * ws.sidePeak}
 	upright := ws.trace(f, lambda, leftward)
 	var greatest, highest, outside, press, pull float64
 	for j := range ws.forces[:ws.n] {
@@ -101,6 +106,8 @@ func (ws *Workspace) judge(f, lambda float64, leftward bool) Verdict {
 		v.Reason = SmallMAlpha
 	case !upright:
 		v.Reason = InclinedForce
+	case v.Drag < leastDrag:
+		v.Reason = ReversedDrag
 	case v.Thrust > mostThrust:
 		v.Reason = ThrustOutside
 	case !(v.Tension <= mostTension):
