@@ -7,8 +7,8 @@ import (
 	"testing"
 )
 
-// strataSection is a slope of three strata with a water line, invented; n strata on request, evenly spaced.
-func strataSection(strata int) (*Section, *Situation) {
+// benchSection is a slope of three strata with a water line, invented; n strata on request, evenly spaced.
+func benchSection(strata int) (*Section, *Situation) {
 	g := Profile{{-40, 12}, {0, 12}, {24, 0}, {64, 0}}
 	s := &Section{Ground: g}
 	for i := range strata {
@@ -26,7 +26,7 @@ func strataSection(strata int) (*Section, *Situation) {
 func benchSlip() Slip { return Slip{Centre: Point{20, 22}, Radius: 24.5} }
 
 func TestEvaluationsDoNotAllocate(t *testing.T) {
-	s, sit := strataSection(3)
+	s, sit := benchSection(3)
 	s.Loads = []Surcharge{{FromX: -8, ToX: -2, Pressure: 10}, {FromX: -8, ToX: 4, Pressure: 10, Variable: true}}
 	m := compiled(t, s, sit)
 	circle := benchSlip()
@@ -104,7 +104,7 @@ func plainBishop(lines *[4]plainLine, soils []Soil, tans []float64, c Point, r, 
 
 // plain prepares the plain loop for the section of the benchmarks.
 func plain(t testing.TB) (run func() float64, engine func() float64) {
-	s, sit := strataSection(3)
+	s, sit := benchSection(3)
 	m := compiled(t, s, sit)
 	slip := benchSlip()
 	r := evaluate(t, m, slip, Setting{Method: Bishop, Slices: 30})
@@ -150,7 +150,7 @@ func BenchmarkBishop(b *testing.B) {
 }
 
 func BenchmarkEveryMethod(b *testing.B) {
-	s, sit := strataSection(3)
+	s, sit := benchSection(3)
 	m := compiled(b, s, sit)
 	slip := benchSlip()
 	for _, method := range allMethods() {
@@ -165,7 +165,7 @@ func BenchmarkEveryMethod(b *testing.B) {
 }
 
 func BenchmarkSlices(b *testing.B) {
-	s, sit := strataSection(3)
+	s, sit := benchSection(3)
 	m := compiled(b, s, sit)
 	slip := benchSlip()
 	for _, n := range []int{15, 30, 60, 120, 240} {
@@ -181,7 +181,7 @@ func BenchmarkSlices(b *testing.B) {
 
 func BenchmarkStrata(b *testing.B) {
 	for _, n := range []int{1, 3, 5, 10, 20} {
-		s, sit := strataSection(n)
+		s, sit := benchSection(n)
 		m := compiled(b, s, sit)
 		slip := benchSlip()
 		b.Run(fmt.Sprint(n), func(b *testing.B) {
@@ -196,7 +196,7 @@ func BenchmarkStrata(b *testing.B) {
 
 func BenchmarkCompile(b *testing.B) {
 	for _, n := range []int{1, 3, 10, 20} {
-		s, sit := strataSection(n)
+		s, sit := benchSection(n)
 		b.Run(fmt.Sprint(n), func(b *testing.B) {
 			var m Model
 			b.ReportAllocs()
@@ -210,7 +210,7 @@ func BenchmarkCompile(b *testing.B) {
 }
 
 func BenchmarkCircleSearch(b *testing.B) {
-	s, sit := strataSection(3)
+	s, sit := benchSection(3)
 	m := compiled(b, s, sit)
 	for _, sampler := range []Sampler{ByDaylight, ByCentre} {
 		b.Run([]string{"by daylight", "by centre"}[sampler], func(b *testing.B) {

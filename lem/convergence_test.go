@@ -31,7 +31,7 @@ func convergenceCases() []struct {
 	add("Fredlund and Krahn 3", s, &Situation{}, slip)
 	add("Giam and Donald 1(c)", giamLayered(), &Situation{}, Slip{Centre: Point{34.3, 42.3}, Radius: 17.9})
 	add("Giam and Donald 1(d)", giamLayered(), &Situation{Kh: 0.15}, Slip{Centre: Point{35.5, 52}, Radius: 27.8})
-	layered, sit := strataSection(3)
+	layered, sit := benchSection(3)
 	add("three strata, water line", layered, sit, benchSlip())
 	drained := *sit
 	drained.Water.Drains = &Drawdown{Invert: Profile{{2, 4}, {20, -1}}, Ratio: []float64{0.3, 0.7}, Fade: 2}
