@@ -49,27 +49,28 @@ type Detail struct {
 // SliceRow is one line of the slice table, from left to right. Directions are those of the movement: horizontal forces are positive downhill,
 // alpha is positive where the base falls in the direction of movement.
 type SliceRow struct {
-	X, Width     float64 // Middle and width, m.
-	Base, Ground float64 // Levels of the base (on an arc its mean) and of the ground at X, m.
-	Inclination  float64 // alpha, rad.
-	Length       float64 // l, of the base, m.
-	Soil         int     // At the base: index into Section.Soils.
-	Weight       float64 // Of the ground, kN.
-	Surcharge    float64 // On the ground, permanent, and variable where it counts, kN.
-	Water        float64 // Weight of free water on the ground, kN.
-	Vertical     float64 // Q: the sum of the three, kN.
-	Push         float64 // H: horizontal push of free water on the ground, kN,
-	PushLevel    float64 // and its level, m.
-	Quake        float64 // K: horizontal earthquake force, kN,
-	QuakeLevel   float64 // and its level, m.
-	Pore         float64 // u on the base, kPa.
-	Cohesion     float64 // c on the base, kPa.
-	TanFriction  float64 // tan phi on the base.
-	MAlpha       float64
-	Normal       float64 // N', effective, kN.
-	Shear        float64 // S, mobilised, kN.
-	Resisting    float64 // Its part of the sum, kN.
-	Driving      float64 // Its part of the sum, kN.
+	X, Width      float64 // Middle and width, m.
+	Base, Ground  float64 // Levels of the base (on an arc its mean) and of the ground at X, m.
+	Inclination   float64 // alpha, rad.
+	Length        float64 // l, of the base, m.
+	Soil          int     // At the base: index into Section.Soils.
+	Weight        float64 // Of the ground, kN.
+	Surcharge     float64 // On the ground, permanent, and variable where it counts, kN.
+	Water         float64 // Weight of free water on the ground, kN.
+	QuakeVertical float64 // Vertical earthquake force, positive downwards, kN.
+	Vertical      float64 // Q: the sum of the four, kN.
+	Push          float64 // H: horizontal push of free water on the ground, kN,
+	PushLevel     float64 // and its level, m.
+	Quake         float64 // K: other horizontal force, kN: earthquake, horizontal part of loads, water in the tension crack,
+	QuakeLevel    float64 // and its level, m.
+	Pore          float64 // u on the base, kPa.
+	Cohesion      float64 // c on the base, kPa.
+	TanFriction   float64 // tan phi on the base.
+	MAlpha        float64
+	Normal        float64 // N', effective, kN.
+	Shear         float64 // S, mobilised, kN.
+	Resisting     float64 // Its part of the sum, kN.
+	Driving       float64 // Its part of the sum, kN.
 }
 
 // Interface is a side between two slices, or an end of the slip.
@@ -104,8 +105,8 @@ func (m *Model) Detail(s *Slip, o Setting) (Detail, error) {
 	}
 	if again := r; !m.solve(&ws, &o, &again) { // Variable surcharges, if any, do not count: without them.
 		m.slicePart(&ws, p, s, &o)
-		ws.orient(&again)
-		ws.method(o.Method, &again)
+		m.begin(&ws, &o, &again)
+		m.answer(&ws, o.Method, &again)
 	}
 	d.F, d.Correction = ws.answer, 1
 	if o.Method == Janbu {
@@ -135,7 +136,6 @@ func (d *Detail) judge(ws *Workspace) {
 // list fills in the table from the workspace.
 func (d *Detail) list(m *Model, ws *Workspace, bare []float64) {
 	forces := d.Setting.Method != Ordinary && d.Setting.Method != Bishop
-	free := ws.wetted()
 	for i := range ws.slice[:ws.n] {
 		s := &ws.slice[i]
 		row := s.row(m, ws.baseLength(s), bare[i])
@@ -143,7 +143,7 @@ func (d *Detail) list(m *Model, ws *Workspace, bare []float64) {
 		row.MAlpha = s.cos + s.sin*t
 		switch {
 		case d.Setting.Method == Ordinary:
-			row.Normal = s.ordinaryNormal(free)
+			row.Normal = ws.ordinaryNormal(s)
 		case forces:
 			row.Normal = ws.forces[ws.fromHead(i, d.Result.Leftward)].normal - s.ul
 		default:
@@ -171,10 +171,11 @@ func (d *Detail) list(m *Model, ws *Workspace, bare []float64) {
 func (s *slice) row(m *Model, length, bare float64) SliceRow {
 	col := &m.cols[m.columnAt(s.x)]
 	layer := &m.layers[m.layerAt(col, col.first, s.x, s.y)]
-	permanent := col.pressure * s.b
+	permanent := col.pressure.at(s.x) * s.b
 	row := SliceRow{
 		X: s.x, Width: s.b, Base: s.y, Ground: s.ground, Inclination: math.Atan2(s.sin, s.cos), Length: length, Soil: int(layer.soil),
-		Weight: s.soilW - permanent, Surcharge: permanent + s.q - bare, Water: bare - s.soilW, Vertical: s.q,
+		Weight: s.soilW - permanent, Surcharge: permanent + s.q - bare, Water: bare - s.soilW*m.vert,
+		QuakeVertical: (m.vert - 1) * s.soilW, Vertical: s.q,
 		Pore: s.ul / length, Cohesion: s.cl / length, TanFriction: s.tan,
 	}
 	if s.h != 0 {

@@ -12,6 +12,10 @@ type draught struct {
 	ground   Profile
 	strata   []Profile
 	water    Profile
+	own      []Profile   // By soil: its own water line; nil: none.
+	before   []Profile   // By soil: water before works, of soils whose undrained strength hangs on it.
+	ratio    bool        // There is such a soil.
+	crack    Profile     // Bottom of the tension crack, when it is given as a line.
 	edges    []segment   // Everything that bounds soils or water.
 	known    [][]Point   // Known slip surfaces, vertical steps drawn out.
 	free     []FreeWater // Free water, held on beyond the ends of the ground.
@@ -43,6 +47,7 @@ func draughtOf(s *Section, sit *Situation) *draught {
 		d.water = d.drawOut(sit.Water.Line)
 		d.addLine(d.water)
 	}
+	d.addSoilWater()
 	for _, b := range s.Placed {
 		for i, p := range b.Outline {
 			q := b.Outline[(i+1)%len(b.Outline)]
@@ -93,6 +98,32 @@ func (d *draught) drawOut(p Profile) Profile {
 	return append(q, Point{max(d.to, p.Right()+1), p[len(p)-1].Y})
 }
 
+// addSoilWater draws out the water lines of single soils, those before works, and the bottom of the crack.
+func (d *draught) addSoilWater() {
+	for _, w := range d.sit.Water.BySoil {
+		if d.own == nil {
+			d.own = make([]Profile, len(d.s.Soils))
+		}
+		d.own[w.Soil] = d.drawOut(w.Line)
+		d.addLine(d.own[w.Soil])
+	}
+	for i := range d.s.Soils {
+		if i >= len(d.sit.Undrained) || !d.sit.Undrained[i] || !d.s.Soils[i].Undrained.byRatio() {
+			continue
+		}
+		if !d.ratio {
+			d.ratio, d.before = true, make([]Profile, len(d.s.Soils))
+		}
+		if w := d.s.Soils[i].Undrained.WaterBefore; len(w) > 0 {
+			d.before[i] = d.drawOut(w)
+			d.addLine(d.before[i])
+		}
+	}
+	if k := d.s.Crack; k != nil && len(k.Line) > 0 {
+		d.crack = d.drawOut(k.Line)
+	}
+}
+
 func (d *draught) addLine(p Profile) {
 	for i := 0; i+1 < len(p); i++ {
 		d.edges = append(d.edges, segment{p[i], p[i+1]})
@@ -107,8 +138,8 @@ func (d *draught) breakpoints() []float64 {
 			xs = append(xs, x)
 		}
 	}
-	addBuried := func(p Point) { // A vertex above the ground in force bounds nothing.
-		if p.Y <= d.ground.At(p.X)+d.step {
+	addBuried := func(p Point) { // A vertex above the ground in force bounds nothing, unless the stress before works counts.
+		if d.ratio || p.Y <= d.ground.At(p.X)+d.step {
 			add(p.X)
 		}
 	}
@@ -121,10 +152,21 @@ func (d *draught) breakpoints() []float64 {
 			}
 		}
 	}
-	for _, line := range []Profile{d.ground, d.water, d.s.FirmBase} {
+	for _, line := range append([]Profile{d.ground, d.water, d.s.FirmBase, d.crack}, d.own...) {
 		for _, p := range line { // A head above the ground counts too.
 			add(p.X)
 		}
+	}
+	if d.crack != nil { // It does not run on beyond its ends.
+		add(d.s.Crack.Line.Left())
+		add(d.s.Crack.Line.Right())
+	}
+	for _, p := range d.sit.Water.Points {
+		add(p.X)
+	}
+	for _, l := range d.s.LineLoads {
+		add(l.X - d.step/2)
+		add(l.X + d.step/2)
 	}
 	for _, l := range d.s.Loads {
 		add(l.FromX)
@@ -198,13 +240,19 @@ func lineOver(p Profile, x0, x1 float64) line {
 	return line{ya - k*xa, k}
 }
 
-// soilAt returns the soil at a point: the last placed body that holds it, else the lowest stratum whose top is not below it.
-func soilAt(s *Section, x, y float64) int {
+// SoilAt returns the soil at a point, as if the ground were above it: the last placed body that holds the point, else the lowest stratum whose
+// top is not below it; above all tops it is the first stratum.
+func (s *Section) SoilAt(x, y float64) int {
 	for i := len(s.Placed) - 1; i >= 0; i-- {
 		if inside(s.Placed[i].Outline, x, y) {
 			return s.Placed[i].Soil
 		}
 	}
+	return s.stratumAt(x, y)
+}
+
+// stratumAt is SoilAt without the placed bodies.
+func (s *Section) stratumAt(x, y float64) int {
 	for i := len(s.Strata) - 1; i > 0; i-- {
 		if s.Strata[i].Top.At(x) >= y {
 			return s.Strata[i].Soil
@@ -237,16 +285,9 @@ func (m *Model) addColumn(d *draught, x0, x1 float64) {
 		c.firm = lineOver(d.s.FirmBase, x0, x1)
 	}
 	m.addWater(d, &c, xm)
-	for _, l := range d.s.Loads {
-		if !l.Variable && l.FromX < xm && xm < l.ToX {
-			c.pressure += l.Pressure
-		}
-	}
-	for i, l := range m.varied {
-		if l.FromX < xm && xm < l.ToX {
-			c.variable |= 1 << i
-		}
-	}
+	c.crack = d.crackOver(&c)
+	c.surface = d.s.SoilAt(xm, c.ground.at(xm)-d.step)
+	m.addLoads(d, &c, xm)
 	m.addLayers(d, &c, xm)
 	c.last = int32(len(m.layers))
 	m.cols = append(m.cols, c)
@@ -289,15 +330,7 @@ func (m *Model) addLayers(d *draught, c *column, xm float64) {
 			}
 		}
 	}
-	slices.SortFunc(below, func(p, q line) int {
-		switch a, b := p.at(xm), q.at(xm); {
-		case a > b:
-			return -1
-		case a < b:
-			return 1
-		}
-		return 0
-	})
+	slices.SortFunc(below, func(p, q line) int { return compareDown(p.at(xm), q.at(xm)) })
 	below = append(below, nowhere)
 	top := c.ground
 	var sigma line // Weight of the layers above the present one.
@@ -313,7 +346,7 @@ func (m *Model) addLayers(d *draught, c *column, xm float64) {
 		next := m.newLayer(d, c, xm, mid)
 		next.bottom = l
 		n := len(m.layers)
-		if n > int(c.first) && m.layers[n-1].soil == next.soil && m.layers[n-1].gamma == next.gamma && m.layers[n-1].known == next.known {
+		if n > int(c.first) && m.layers[n-1].continues(&next) {
 			m.layers[n-1].bottom = l
 		} else {
 			next.sigma, next.slope = sigma.a+next.gamma*top.a, sigma.b+next.gamma*top.b
@@ -327,38 +360,49 @@ func (m *Model) addLayers(d *draught, c *column, xm float64) {
 	}
 }
 
+// continues reports whether the next layer down is the same but for its place.
+func (l *layer) continues(next *layer) bool {
+	return l.soil == next.soil && l.gamma == next.gamma && l.known == next.known && l.gradient == next.gradient && l.datum == next.datum
+}
+
 // newLayer returns the layer that holds the point, without its place in the column.
 func (m *Model) newLayer(d *draught, c *column, x, y float64) layer {
-	i := soilAt(d.s, x, y)
+	i := d.s.SoilAt(x, y)
 	soil := &d.s.Soils[i]
 	l := layer{soil: int32(i), gamma: soil.UnitWeight, pore: poreNone}
-	head := c.water.at(x)
-	if soil.FreeDraining && (d.sit.Water.HasFreeDrainingLevel || !math.IsInf(c.free, -1)) {
-		l.pore, l.freeLevel = poreLevel, c.free
-		if d.sit.Water.HasFreeDrainingLevel {
-			l.freeLevel = max(l.freeLevel, d.sit.Water.FreeDrainingLevel)
-		}
-		head = l.freeLevel
-	} else if !math.IsInf(head, -1) {
-		l.pore = poreLine
-	}
-	if y < head && soil.SaturatedUnitWeight > 0 {
+	if y < m.setPore(d, &l, c, x) && soil.SaturatedUnitWeight > 0 {
 		l.gamma = soil.SaturatedUnitWeight
 	}
-	if soil.HasRu {
-		l.pore, l.ru = poreRu, soil.Ru
+	if m.shear(d, &l, x, y) {
+		return l
+	}
+	if i < len(d.sit.Undrained) && d.sit.Undrained[i] {
+		d.setUndrained(&l, c, x, y)
+		return l
 	}
 	l.c, l.tan = soil.Cohesion, math.Tan(soil.Friction)
-	if i < len(d.sit.Undrained) && d.sit.Undrained[i] {
-		u := soil.Undrained
-		l.pore, l.c, l.tan = poreNone, u.Strength, 0
-		switch {
-		case len(u.Points) > 0:
-			l.kind = strengthPoints
-		case u.Gradient != 0 && len(u.Datum) > 0:
-			l.kind, l.gradient, l.datum = strengthGradient, u.Gradient, lineOver(u.Datum, c.x0, c.x1)
-		}
+	if p := soil.PowerLaw; p != nil {
+		l.kind, l.curve, m.curved = strengthCurved, p.envelope(), true
+		_, l.tan = l.curve.tangent(AtmosphericPressure)
 	}
-	m.shear(d, &l, c, x, y)
 	return l
 }
+
+// setUndrained gives a layer the undrained strength of its soil.
+func (d *draught) setUndrained(l *layer, c *column, x, y float64) {
+	u := d.s.Soils[l.soil].Undrained
+	l.pore, l.c, l.tan = poreNone, u.Strength, 0
+	switch {
+	case len(u.Points) > 0:
+		l.kind = strengthPoints
+	case u.byRatio():
+		base, perMetre := d.effectiveBefore(c, d.before[l.soil], x, y)
+		l.kind, l.c = strengthRatio, u.Minimum
+		l.gradient, l.datum = u.Ratio*perMetre, line{u.Ratio * base.a, u.Ratio * base.b}
+	case u.Gradient != 0 && len(u.Datum) > 0:
+		l.kind, l.gradient, l.datum = strengthGradient, u.Gradient, lineOver(u.Datum, c.x0, c.x1)
+	}
+}
+
+// byRatio reports whether cu hangs on the stress before works.
+func (u *UndrainedStrength) byRatio() bool { return u.Ratio != 0 && len(u.Points) == 0 }

@@ -34,6 +34,9 @@ func (m *Model) lowest(ws *Workspace, s *Slip, o *Setting) (best Result, at part
 		r := Result{F: math.NaN(), Screen: math.NaN(), Status: Inadmissible, Reason: BelowFirmBase, Depth: depth}
 		if clear {
 			m.slicePart(ws, p, s, o)
+			if m.crack != nil && !m.shorten(ws, &p, s, o, &r) {
+				continue
+			}
 			m.ends(&r, p)
 			m.solve(ws, o, &r)
 			if r.Status != Missed && !o.Window.admits(&r) {
@@ -98,24 +101,44 @@ func lower(a, b *Result) bool {
 func (m *Model) solve(ws *Workspace, o *Setting, r *Result) (loaded bool) {
 	ws.trial++
 	r.Slices = ws.n
-	if !ws.orient(r) {
+	if !m.begin(ws, o, r) {
 		r.Status = Missed
 		return false
 	}
-	if o.Method == MorgensternPrice {
-		ws.sideForce = o.SideForce
-	}
-	ws.method(o.Method, r)
-	if len(m.varied) == 0 || r.Status != Converged || !ws.addVariable(m.varied, r.F) {
+	m.answer(ws, o.Method, r)
+	if len(m.varied) == 0 || r.Status != Converged || !ws.addVariable(m.varied, r.F, r.Leftward) {
 		return false
 	}
 	without := *r
-	ws.method(o.Method, r)
+	m.answer(ws, o.Method, r)
 	if r.Status == Converged && without.F < r.F {
 		r.F, r.Lambda = without.F, without.Lambda
 		return false
 	}
 	return true
+}
+
+// begin makes the slices in the workspace ready to be solved. It reports whether anything drives them.
+func (m *Model) begin(ws *Workspace, o *Setting, r *Result) bool {
+	if !ws.orient(r) {
+		return false
+	}
+	if m.sheared || r.Crack > 0 {
+		m.pushes(ws, r)
+	}
+	if o.Method == MorgensternPrice {
+		ws.sideForce = o.SideForce
+	}
+	return true
+}
+
+// answer solves the slices in the workspace by a method.
+func (m *Model) answer(ws *Workspace, method Method, r *Result) {
+	if m.curved {
+		ws.settle(method, r)
+		return
+	}
+	ws.method(method, r)
 }
 
 // method solves the slices in the workspace by a method; ws.answer keeps the F at which its equations close.
@@ -162,7 +185,20 @@ const levelShare = 1e-9
 
 // orient turns the signs of the slices to the direction in which the weight drives the slip, and reports whether it drives it at all.
 func (ws *Workspace) orient(r *Result) bool {
-	var d, sum float64
+	d, sum := ws.turning()
+	r.Leftward = d < 0
+	if r.Leftward {
+		ss := ws.slice[:ws.n]
+		for i := range ss {
+			ss[i].sin, ss[i].h = -ss[i].sin, -ss[i].h
+		}
+	}
+	return math.Abs(d) > levelShare*sum
+}
+
+// turning returns what drives the slices, not yet oriented, to the right, and the sum of its absolute parts: for an arc the moment of the
+// vertical loads about the centre, for a polyline their sum along the base.
+func (ws *Workspace) turning() (d, sum float64) {
 	ss := ws.slice[:ws.n]
 	for i := range ss {
 		t := ss[i].q * ss[i].sin
@@ -172,13 +208,7 @@ func (ws *Workspace) orient(r *Result) bool {
 		d += t
 		sum += math.Abs(t)
 	}
-	r.Leftward = d < 0
-	if r.Leftward {
-		for i := range ss {
-			ss[i].sin, ss[i].h = -ss[i].sin, -ss[i].h
-		}
-	}
-	return math.Abs(d) > levelShare*sum
+	return d, sum
 }
 
 // driving returns what the resistance is compared with, kN: for an arc the overturning moment of all loads about the centre over the
@@ -212,31 +242,4 @@ func (ws *Workspace) drive(s *slice, leftward bool) float64 {
 		d += s.h*(ws.centre.Y-s.hy) + s.k*(ws.centre.Y-s.ky)
 	}
 	return d
-}
-
-// addVariable puts every variable surcharge on the slices where, by Bishop's influence of a small load at this F, it lowers F on the
-// whole. A load on a slice raises F where tan(alpha) < tan(phi)/F (Hutchinson 1977). It reports whether any was put on.
-func (ws *Workspace) addVariable(loads []Surcharge, f float64) bool {
-	added := false
-	ss := ws.slice[:ws.n]
-	for i := range loads {
-		bit := uint64(1) << i
-		var influence float64
-		for k := range ss {
-			if s := &ss[k]; s.variable&bit != 0 {
-				influence += s.b * (s.tan/(s.cos+s.sin*s.tan/f) - f*s.sin)
-			}
-		}
-		if influence*loads[i].Pressure >= 0 {
-			continue
-		}
-		added = true
-		for k := range ss {
-			if s := &ss[k]; s.variable&bit != 0 {
-				s.q += loads[i].Pressure * s.b
-				s.frees += loads[i].Pressure * s.b * s.tan
-			}
-		}
-	}
-	return added
 }

@@ -26,20 +26,17 @@ func (d *draught) addKnown(p Profile) {
 	}
 }
 
-// shear gives a layer the strength of a known slip surface if the point of the layer lies in its band. Of surfaces that cross, the last counts.
-func (m *Model) shear(d *draught, l *layer, c *column, x, y float64) {
+// shear gives a layer, whose pore pressure is set, the strength of a known slip surface if the point of the layer lies in its band, and reports
+// whether it does. Of surfaces that cross, the last counts.
+func (m *Model) shear(d *draught, l *layer, x, y float64) bool {
 	for i, q := range d.known {
 		if x < q[0].X || x > q[len(q)-1].X || math.Abs(polylineAt(q, x)-y) > d.band() {
 			continue
 		}
 		k := &d.s.Known[i]
-		if soil := &d.s.Soils[l.soil]; l.pore == poreNone && soil.HasRu {
-			l.pore, l.ru = poreRu, soil.Ru
-		} else if l.pore == poreNone && !math.IsInf(c.water.at(x), -1) {
-			l.pore = poreLine
-		}
-		l.known, l.kind, l.c, l.tan = int32(i+1), strengthConstant, k.Cohesion, math.Tan(k.Friction)
+		l.known, l.c, l.tan = int32(i+1), k.Cohesion, math.Tan(k.Friction)
 	}
+	return l.known != 0
 }
 
 // tryKnown evaluates the known slip surfaces with every governing method that can, and files them among the polylines, or the unresolved.

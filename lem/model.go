@@ -1,6 +1,7 @@
 package lem
 
 import (
+	"cmp"
 	"errors"
 	"fmt"
 	"math"
@@ -11,13 +12,18 @@ import (
 // straight, so that weights and pore pressures are linear functions. It keeps no reference to the Section. A Model is read-only after
 // Compile and may be used by many goroutines, each with its own Workspace.
 type Model struct {
-	cols   []column
-	layers []layer
-	kh     float64
-	soils  []strength  // By soil of the section.
-	varied []Surcharge // Variable surcharges.
-	pooled bool        // Free water stands somewhere.
-	firm   bool        // A firm base is given.
+	cols    []column
+	layers  []layer
+	kh      float64
+	vert    float64     // 1 + kv: vertical force over weight.
+	soils   []strength  // By soil of the section.
+	varied  []Surcharge // Variable surcharges.
+	pooled  bool        // Free water stands somewhere.
+	firm    bool        // A firm base is given.
+	sheared bool        // Some load has a horizontal part.
+	curved  bool        // Some soil has a curved envelope.
+	crack   *crackWater // Water in the tension crack; nil: there is none.
+	points  []vertical  // Pore pressures at points.
 
 	left, right float64   // Ends of the ground as given; the columns go on beyond them, level.
 	low, high   float64   // Lowest and highest ground, m.
@@ -31,9 +37,12 @@ type column struct {
 	tangent     float64 // sin of the ground's inclination: where an arc runs parallel to the ground, dx = tangent * radius.
 	water       line    // Piezometric head, free water included; level -Inf if dry.
 	free        float64 // Level of free water; -Inf if none.
-	pressure    float64 // Permanent surcharge, kPa.
+	pressure    line    // Permanent surcharge, kPa.
+	shear       float64 // Horizontal pressure on the ground to the right, kPa.
 	variable    uint64  // Bit set of Model.varied acting here.
 	firm        line    // Firm base; -Inf if none.
+	crack       line    // Bottom of the tension crack; +Inf where there is none.
+	surface     int     // Soil at the ground.
 	invert      line    // Drains' invert, when drained.
 	ratio       line    // Drains' ratio lowered, when drained.
 	fade        float64 // m; 0: no drains here.
@@ -47,13 +56,15 @@ type layer struct {
 	gamma        float64
 	soil         int32
 	pore         poreKind
-	freeLevel    float64 // For pore == poreLevel.
+	head         line    // For pore == poreOwn.
+	unit         float64 // For poreLine and poreOwn: pressure per metre of depth below the head, kN/m3.
 	ru           float64 // For pore == poreRu.
 	kind         strengthKind
-	c, tan       float64 // Cohesion (or cu at the datum), kPa; tangent of the friction angle.
+	c, tan       float64 // Cohesion (or cu at the datum, or least cu), kPa; tangent of the friction angle.
 	gradient     float64
 	datum        line
-	known        int32 // 1 + index of the known slip surface that the layer is the band of; 0: none.
+	curve        envelope // For kind == strengthCurved.
+	known        int32    // 1 + index of the known slip surface that the layer is the band of; 0: none.
 }
 
 type line struct{ a, b float64 }
@@ -65,10 +76,11 @@ var nowhere = line{a: math.Inf(-1)}
 type poreKind uint8
 
 const (
-	poreNone  poreKind = iota // Undrained or dry.
-	poreLine                  // Piezometric line of the column.
-	poreRu                    // Ratio to the weight above.
-	poreLevel                 // Free-draining: hydrostatic below a level.
+	poreNone   poreKind = iota // Undrained or dry.
+	poreLine                   // Piezometric line of the column.
+	poreRu                     // Ratio to the weight above.
+	poreOwn                    // Head line of the layer: a soil's own line, or the level in a free-draining soil.
+	porePoints                 // Interpolated between points.
 )
 
 type strengthKind uint8
@@ -77,6 +89,8 @@ const (
 	strengthConstant strengthKind = iota // c and tan.
 	strengthGradient                     // cu = c + gradient * depth below datum.
 	strengthPoints                       // cu interpolated between points.
+	strengthRatio                        // cu = max(c, datum - gradient * y).
+	strengthCurved                       // Curved envelope.
 )
 
 // strength is what the model keeps of a soil.
@@ -105,12 +119,15 @@ func (m *Model) Compile(s *Section, sit *Situation) error {
 		return err
 	}
 	m.cols, m.layers, m.soils, m.varied = m.cols[:0], m.layers[:0], m.soils[:0], m.varied[:0]
-	m.kh = sit.Kh
+	m.kh, m.vert = sit.Kh, 1+sit.Kv
 	m.left, m.right = s.Ground.Left(), s.Ground.Right()
 	m.low, m.high = extent(s.Ground)
 	m.pooled, m.firm = len(sit.Water.Free) > 0, s.FirmBase != nil
+	m.sheared, m.curved = false, false
+	m.crack = crackWaterOf(s.Crack)
+	m.points = pressureVerticals(sit.Water.Points)
 	for i := range s.Soils {
-		m.soils = append(m.soils, strength{verticals: verticals(s.Soils[i].Undrained)})
+		m.soils = append(m.soils, strength{verticals: strengthVerticals(s.Soils[i].Undrained)})
 	}
 	for _, l := range s.Loads {
 		if l.Variable {
@@ -141,6 +158,12 @@ func check(s *Section, sit *Situation) error {
 	}
 	var errs []error
 	lines := []Profile{s.Ground, s.FirmBase, sit.Water.Line}
+	for _, w := range sit.Water.BySoil {
+		lines = append(lines, w.Line)
+	}
+	if s.Crack != nil {
+		lines = append(lines, s.Crack.Line)
+	}
 	for _, st := range s.Strata {
 		if st.Soil < 0 || st.Soil >= len(s.Soils) {
 			errs = append(errs, fmt.Errorf("%w: stratum of soil %d", ErrNoSuchSoil, st.Soil))
@@ -178,15 +201,7 @@ func check(s *Section, sit *Situation) error {
 	}
 	for _, l := range lines {
 		errs = append(errs, finite(l))
-		if !slices.IsSortedFunc(l, func(a, b Point) int {
-			switch {
-			case a.X < b.X:
-				return -1
-			case a.X > b.X:
-				return 1
-			}
-			return 0
-		}) {
+		if !slices.IsSortedFunc(l, compareX) {
 			errs = append(errs, ErrNotLeftToRight)
 		}
 	}
@@ -199,8 +214,14 @@ func check(s *Section, sit *Situation) error {
 	if variable > 64 {
 		errs = append(errs, ErrTooManyVariable)
 	}
+	errs = append(errs, checkWater(s, &sit.Water), checkStrength(s), checkLoads(s, sit), s.Crack.check())
 	return errors.Join(errs...)
 }
+
+func compareX(a, b Point) int { return cmp.Compare(a.X, b.X) }
+
+// compareDown sorts levels from the top down.
+func compareDown(a, b float64) int { return cmp.Compare(b, a) }
 
 func finite(ps []Point) error {
 	for _, p := range ps {

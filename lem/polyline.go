@@ -157,7 +157,7 @@ func (m *Model) polylineDepth(p part, s *Slip) (depth float64, clear bool) {
 
 // slicePolyline cuts a part of a polyline into slices; nodes and column edges are always slice edges.
 func (m *Model) slicePolyline(ws *Workspace, p part, s *Slip, target int) {
-	ws.n, ws.arc = 0, false
+	ws.n, ws.wet, ws.arc = 0, false, false
 	width := (p.to - p.from) / float64(max(target, MinSlices))
 	w := m.walk(s.Nodes, p.from, p.to, p.first)
 	for w.next() {

@@ -7,7 +7,11 @@ type Section struct {
 	Soils  []Soil      // Indexed by Stratum.Soil and Body.Soil.
 	Strata []Stratum   // From the surface down; Strata[0].Top is the ground before works.
 	Placed []Body      // Painted over the strata in order; clipped to Ground.
-	Loads  []Surcharge // Vertical pressures on the ground.
+	Loads  []Surcharge // Pressures on the ground.
+	// LineLoads are forces along lines on the ground.
+	LineLoads []LineLoad
+	// Crack, when not nil, is the tension crack in which a slip ends at its head.
+	Crack *TensionCrack
 	// FirmBase, when not nil, is a line below which no slip passes.
 	FirmBase Profile
 	// Known are slip surfaces that exist already, with a strength of their own.
@@ -38,11 +42,13 @@ type Body struct {
 	Outline []Point
 }
 
-// Surcharge is a vertical pressure on the ground between FromX and ToX.
+// Surcharge is a pressure on the ground between FromX and ToX, per horizontal area.
 type Surcharge struct {
 	Name       string
 	FromX, ToX float64 // m, FromX < ToX.
-	Pressure   float64 // kPa, positive downwards.
+	Pressure   float64 // At FromX, kPa, positive downwards.
+	Rise       float64 // Pressure at ToX less that at FromX, kPa; straight between. 0: uniform.
+	Shear      float64 // Horizontal pressure, kPa, positive to the right; uniform.
 	Variable   bool    // Left out on slips whose FS it would raise; takes no earthquake force.
 }
 
@@ -50,6 +56,15 @@ type Surcharge struct {
 type Water struct {
 	Line Profile // Piezometric line; u = GammaW x vertical depth below it. nil: dry. It may lie above ground.
 	Free []FreeWater
+	// BySoil are piezometric lines that hold in one soil instead of Line: perched or artesian water. Drains do not lower them. Where free water
+	// stands on the soil itself, the head in it is at least the water's level.
+	BySoil []SoilWater
+	// InclinedLine: u = GammaW h cos^2(beta) below every line, h being the vertical depth below it and beta its inclination there: seepage
+	// parallel to the line, with equipotentials at right angles to it (infinite slope; Skempton and DeLory 1957).
+	InclinedLine bool
+	// Points are pore pressures that are known. Where there are any they hold instead of all lines, in all soils but those with ru and
+	// free-draining ones whose level is known; saturated weight still follows the lines. Drains do not lower them.
+	Points []PressurePoint
 	// Drains, when not nil, lower the pore pressure below Line.
 	Drains *Drawdown
 	// FreeDrainingLevel, when HasFreeDrainingLevel, is the level to which free-draining soils fill, m; without it, and
@@ -57,6 +72,16 @@ type Water struct {
 	FreeDrainingLevel    float64
 	HasFreeDrainingLevel bool
 }
+
+// SoilWater is the piezometric line of one soil.
+type SoilWater struct {
+	Soil int // Index into Section.Soils.
+	Line Profile
+}
+
+// PressurePoint is a pore pressure known at a point, kPa. Points are interpolated like those of [StrengthPoint]: the pressure is held above the
+// highest and below the lowest point of a vertical, so that a point with pressure 0 belongs at the water table. Suction counts as 0.
+type PressurePoint struct{ X, Y, Pressure float64 }
 
 // FreeWater stands on the ground up to Level between FromX and ToX. It alone loads the face.
 type FreeWater struct{ Level, FromX, ToX float64 }
@@ -83,4 +108,5 @@ type Situation struct {
 	Water     Water
 	Undrained []bool  // By soil: true uses Soil.Undrained, false the effective strength. nil: all drained.
 	Kh        float64 // Horizontal pseudo-static coefficient, outward, on the weight of ground and permanent surcharge.
+	Kv        float64 // Vertical pseudo-static coefficient, positive downward, on the same weight; greater than -1.
 }

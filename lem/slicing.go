@@ -11,7 +11,7 @@ const leastAngle = 1e-10
 // sliceCircle cuts a part of a circle into slices of equal angle: never across a column's edge nor across a boundary between layers, however
 // short the arc's dip into the next layer, so that the answer converges with the square of the slice width.
 func (m *Model) sliceCircle(ws *Workspace, p part, c Point, r float64, target int) {
-	ws.n, ws.arc, ws.centre, ws.radius = 0, true, c, r
+	ws.n, ws.wet, ws.arc, ws.centre, ws.radius = 0, false, true, c, r
 	theta := ws.angle(p.from)
 	width := (ws.angle(p.to) - theta) / float64(max(target, MinSlices))
 	for i := p.first; i <= p.last; i++ {
@@ -110,7 +110,7 @@ func (m *Model) addArc(ws *Workspace, col *column, k int32, from, to, width floa
 		if first {
 			k, first = m.layerAt(col, k, s.x, s.y), false
 		}
-		m.fill(s, col, &m.layers[k], r*delta)
+		ws.wet = m.fill(s, col, &m.layers[k], r*delta) || ws.wet
 	}
 	return k
 }
@@ -161,54 +161,69 @@ func (m *Model) addSlice(ws *Workspace, col *column, k int32, x0, y0, x1, y1 flo
 	length := math.Sqrt(b*b + dy*dy)
 	s.x, s.y, s.b = (x0+x1)/2, (y0+y1)/2, b
 	s.cos, s.sin = b/length, -dy/length
-	m.fill(s, col, &m.layers[k], length)
+	ws.wet = m.fill(s, col, &m.layers[k], length) || ws.wet
 }
 
-// fill works out the forces on a slice whose geometry is set and whose base, of the given length, lies in layer l of the column.
-func (m *Model) fill(s *slice, col *column, l *layer, length float64) {
+// fill works out the forces on a slice whose geometry is set and whose base, of the given length, lies in layer l of the column. It reports whether
+// free water loads the slice.
+func (m *Model) fill(s *slice, col *column, l *layer, length float64) (wet bool) {
 	b := s.b
 	weight := l.sigma + l.slope*s.x - l.gamma*s.y
-	s.soilW = (weight + col.pressure) * b
-	s.q, s.h, s.k = s.soilW, 0, 0
+	pressure := col.pressure.at(s.x)
+	s.soilW = (weight + pressure) * b
+	s.q, s.h, s.k = s.soilW*m.vert, 0, 0
 	s.variable = col.variable
 	s.ground = col.ground.at(s.x)
 	if m.pooled {
-		s.press(col.free, col.ground.b)
+		wet = s.press(col.free, col.ground.b)
 	}
 	var u float64
 	switch l.pore {
 	case poreNone:
 	case poreLine:
-		u = GammaW * max(0, col.head(s.x, s.y)-s.y)
+		u = l.unit * max(0, col.head(s.x, s.y)-s.y)
 	case poreRu:
 		u = l.ru * weight
-	case poreLevel:
-		u = GammaW * max(0, l.freeLevel-s.y)
+	case poreOwn:
+		u = l.unit * max(0, l.head.at(s.x)-s.y)
+	case porePoints:
+		u = max(0, interpolated(m.points, s.x, s.y))
 	}
-	c := l.c
+	c, tan := l.c, l.tan
 	switch l.kind {
 	case strengthConstant:
 	case strengthGradient:
 		c += l.gradient * max(0, l.datum.at(s.x)-s.y)
 	case strengthPoints:
-		c = undrainedAt(m.soils[l.soil].verticals, s.x, s.y)
+		c = interpolated(m.soils[l.soil].verticals, s.x, s.y)
+	case strengthRatio:
+		c = max(c, l.datum.at(s.x)-l.gradient*s.y)
+	case strengthCurved: // At a first guess of the normal stress.
+		c, tan = l.curve.tangent((weight + pressure - u) * s.cos * s.cos)
 	}
-	s.tan = l.tan
+	if m.curved {
+		s.length, s.curve = length, l.curve
+	}
+	if m.sheared {
+		s.shear = col.shear
+	}
+	s.tan = tan
 	s.cl, s.ul = c*length, u*length
-	s.frees = s.cl*s.cos + (s.q-s.ul*s.cos)*l.tan
+	s.frees = s.cl*s.cos + (s.q-s.ul*s.cos)*tan
 	if m.kh != 0 {
 		s.k = m.kh * s.soilW
 		s.ky = m.weightLevel(col, l, s, weight)
 	}
+	return wet
 }
 
-// press puts free water on the ground over a slice, which has the given slope. On a vertical face, drawn out to a slope that only part of may
+// press puts free water on the ground over a slice, which has the given slope, and reports whether there is any. On a vertical face, drawn out to a slope that only part of may
 // stand in water, the push must act at its own level, a third of the depth above the foot.
-func (s *slice) press(free, slope float64) {
+func (s *slice) press(free, slope float64) bool {
 	half := math.Abs(slope) * s.b / 2
 	deep, shallow := free-(s.ground-half), max(0, free-(s.ground+half))
 	if !(deep > 0) {
-		return
+		return false
 	}
 	wet := s.b
 	if shallow == 0 && half > 0 {
@@ -218,6 +233,7 @@ func (s *slice) press(free, slope float64) {
 	s.q += p
 	s.h = p * slope
 	s.hy = free - 2.0/3*(deep*deep+deep*shallow+shallow*shallow)/(deep+shallow)
+	return true
 }
 
 // head returns the level of the piezometric head at a point, drains counted: see Drawdown.
@@ -244,7 +260,8 @@ func (col *column) head(x, y float64) float64 {
 // layer that the base lies in.
 func (m *Model) weightLevel(col *column, base *layer, s *slice, weight float64) float64 {
 	top := s.ground
-	moment := col.pressure * top
+	pressure := col.pressure.at(s.x)
+	moment := pressure * top
 	for i := col.first; i < col.last; i++ {
 		l := &m.layers[i]
 		bottom := s.y
@@ -257,7 +274,7 @@ func (m *Model) weightLevel(col *column, base *layer, s *slice, weight float64) 
 			break
 		}
 	}
-	if total := weight + col.pressure; total > 0 {
+	if total := weight + pressure; total > 0 {
 		return moment / total
 	}
 	return s.y

@@ -92,6 +92,7 @@ type Result struct {
 	From, To Point   // Ends of the part on the ground, left and right.
 	Depth    float64 // Greatest vertical depth of the part below the ground, m.
 	Leftward bool    // True if the part moves to the left.
+	Crack    float64 // Depth of the tension crack that the slip ends in at its head, m; From or To is then the mouth of the crack. 0: none.
 	Slices   int     // Number of slices used.
 	Screen   float64 // When NotConverged: FS of the Ordinary method on the same part, as a screen; else NaN.
 }

@@ -11,7 +11,8 @@ type Soil struct {
 	Cohesion            float64 // Effective cohesion c', kPa.
 	Friction            float64 // Effective angle of friction phi', rad.
 	Undrained           *UndrainedStrength
-	Ru                  float64 // Pore pressure as a ratio to the weight of soil above; used instead of any water line when HasRu.
+	PowerLaw            *PowerLaw // When not nil, the effective strength instead of Cohesion and Friction.
+	Ru                  float64   // Pore pressure as a ratio to the weight of soil above; used instead of any water line when HasRu.
 	HasRu               bool
 	FreeDraining        bool // Pore pressure only below Water.FreeDrainingLevel or below free water.
 }
@@ -22,6 +23,11 @@ type UndrainedStrength struct {
 	Gradient float64         // Increase of cu per metre of depth below Datum, kPa/m; no decrease above it.
 	Datum    Profile         // Line that depth is measured from; needed when Gradient is not 0.
 	Points   []StrengthPoint // When present, cu is interpolated between these and the other fields are not used.
+	// Ratio, when not 0, makes cu = max(Minimum, Ratio x effective vertical stress before works), whatever is placed or cut; Strength and
+	// Gradient are then not used. The stress is that of the ground before works, of its strata and of WaterBefore, without surcharge.
+	Ratio       float64
+	Minimum     float64 // kPa.
+	WaterBefore Profile // Piezometric line before works; nil: dry.
 }
 
 // StrengthPoint is an undrained strength known at a point. Points of one x make a vertical: cu is linear in level on it and held

@@ -5,51 +5,71 @@ import (
 	"sort"
 )
 
-// vertical holds the undrained strengths known on one vertical, from the top down.
+// sample is a value known at a point.
+type sample struct{ x, y, v float64 }
+
+// vertical holds the values known on one vertical, from the top down.
 type vertical struct {
-	x  float64
-	y  []float64
-	cu []float64
+	x float64
+	y []float64
+	v []float64
 }
 
-// verticals groups strength points by x.
-func verticals(u *UndrainedStrength) []vertical {
-	if u == nil || len(u.Points) == 0 {
+// strengthVerticals groups the points of an undrained strength by x.
+func strengthVerticals(u *UndrainedStrength) []vertical {
+	if u == nil {
 		return nil
 	}
-	ps := slices.Clone(u.Points)
+	ps := make([]sample, len(u.Points))
+	for i, p := range u.Points {
+		ps[i] = sample{p.X, p.Y, p.Strength}
+	}
+	return verticals(ps)
+}
+
+// pressureVerticals groups points of pore pressure by x.
+func pressureVerticals(points []PressurePoint) []vertical {
+	ps := make([]sample, len(points))
+	for i, p := range points {
+		ps[i] = sample{p.X, p.Y, p.Pressure}
+	}
+	return verticals(ps)
+}
+
+// verticals groups samples by x; it sorts them.
+func verticals(ps []sample) []vertical {
 	sort.SliceStable(ps, func(i, j int) bool {
-		if ps[i].X != ps[j].X {
-			return ps[i].X < ps[j].X
+		if ps[i].x != ps[j].x {
+			return ps[i].x < ps[j].x
 		}
-		return ps[i].Y > ps[j].Y
+		return ps[i].y > ps[j].y
 	})
 	var vs []vertical
 	for _, p := range ps {
-		if len(vs) == 0 || vs[len(vs)-1].x != p.X {
-			vs = append(vs, vertical{x: p.X})
+		if len(vs) == 0 || vs[len(vs)-1].x != p.x {
+			vs = append(vs, vertical{x: p.x})
 		}
 		v := &vs[len(vs)-1]
-		v.y, v.cu = append(v.y, p.Y), append(v.cu, p.Strength)
+		v.y, v.v = append(v.y, p.y), append(v.v, p.v)
 	}
-	return vs
+	return slices.Clip(vs)
 }
 
 func (v *vertical) at(y float64) float64 {
 	n := len(v.y)
 	if y >= v.y[0] {
-		return v.cu[0]
+		return v.v[0]
 	}
 	for i := 1; i < n; i++ {
 		if y >= v.y[i] {
-			return v.cu[i] + (v.cu[i-1]-v.cu[i])*(y-v.y[i])/(v.y[i-1]-v.y[i])
+			return v.v[i] + (v.v[i-1]-v.v[i])*(y-v.y[i])/(v.y[i-1]-v.y[i])
 		}
 	}
-	return v.cu[n-1]
+	return v.v[n-1]
 }
 
-// undrainedAt interpolates cu at a point: linear on each vertical and between verticals, held beyond.
-func undrainedAt(vs []vertical, x, y float64) float64 {
+// interpolated returns the value at a point: linear on each vertical and between verticals, held beyond.
+func interpolated(vs []vertical, x, y float64) float64 {
 	n := len(vs)
 	if x <= vs[0].x {
 		return vs[0].at(y)

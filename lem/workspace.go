@@ -10,6 +10,7 @@ type Workspace struct {
 	centre Point     // its centre
 	radius float64   // and radius;
 	cuts   []float64 // where it crosses layers in the column at hand.
+	wet    bool      // Free water loads some slice.
 	trial  int       // Evaluations since the workspace was made.
 
 	answer     float64      // F at which the equations of the last method close, admissible or not.
@@ -39,9 +40,12 @@ type slice struct {
 	h        float64 // Horizontal push of free water on the ground, positive in the direction of movement, kN.
 	hy       float64 // Level at which h acts, m.
 	ground   float64 // Level of the ground at x, m.
-	k        float64 // Horizontal earthquake force, kN.
+	k        float64 // Other horizontal force, positive in the direction of movement, kN: earthquake, horizontal part of loads, water in the crack.
 	ky       float64 // Level at which k acts, m.
 	variable uint64  // Variable surcharges over the slice.
+	shear    float64 // Horizontal pressure on the ground to the right, kPa; set where some load has any.
+	length   float64 // Of the base, m; this and curve are set where some soil has a curved envelope.
+	curve    envelope
 	frees    float64 // Shear resistance term of Bishop: c b + (q - u b) tan.
 }
 
