@@ -17,6 +17,7 @@ func keep(t *testing.T, name string, f *Figure) {
 	}
 	for ext, write := range map[string]func(*os.File) error{
 		".png": func(w *os.File) error { return f.WritePNG(w) }, ".svg": func(w *os.File) error { return f.WriteSVG(w) },
+		".pdf": func(w *os.File) error { return f.WritePDF(w) },
 	} {
 		w, err := os.Create(filepath.Join(*pictures, name+ext))
 		if err != nil {

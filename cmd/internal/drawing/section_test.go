@@ -145,14 +145,14 @@ func TestNothingToDraw(t *testing.T) {
 }
 
 func TestFilesAreTheSameEachTime(t *testing.T) {
-	var last [2][]byte
+	var last [3][]byte
 	for range 2 {
 		d := cuttingWithBerm()
 		f, err := Section(d.job, d.opt, Options{Credit: "<drawn> & \"checked\" \x01\U0001f600"})
 		if err != nil {
 			t.Fatal(err)
 		}
-		for i, write := range []func(io.Writer) error{f.WriteSVG, f.WritePNG} {
+		for i, write := range []func(io.Writer) error{f.WriteSVG, f.WritePNG, f.WritePDF} {
 			var b bytes.Buffer
 			if err := write(&b); err != nil {
 				t.Fatal(err)
