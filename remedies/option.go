@@ -139,6 +139,9 @@ type TradeoffPoint struct {
 	Earthworks float64 // m3/m.
 	Drain      float64 // m per m run.
 	Parameters []Value
+	Proposal   *Proposal // The works of this point.
+	Situations []Outcome // Answers to the design situations, searched and not audited; Required is as specified, without the shift.
+	Stages     []Outcome // Answers to the stages, likewise.
 }
 
 // Result is the whole answer to a job.

@@ -31,24 +31,48 @@ func (z *sizing) curve(ctx context.Context, o *Option, res *optimize.Result[Cut]
 			return nil, err
 		}
 		pool = r.Pool
-		x, low := r.X, 0.0
-		if x == nil {
-			if x, low = r.Best.X, r.Best.Margin; x == nil {
-				break
-			}
-		} else {
-			low = r.Lowest[0].Margin
+		point, err := c.point(ctx, &r)
+		if err != nil || point == nil {
+			return out, err
 		}
-		q := z.w.apply(z.j, x).Quantities
-		out = append(out, TradeoffPoint{
-			Shift: shift, RequiredFS: g.Check.Required + shift, Reached: g.Check.Required + shift + low,
-			Earthworks: q.Earthworks(), Drain: q.Drain, Parameters: z.w.values(x),
-		})
+		point.Shift, point.RequiredFS = shift, g.Check.Required+shift
+		point.Reached += point.RequiredFS
+		out = append(out, *point)
 		if r.X == nil { // The most that the remedy can do.
 			break
 		}
 	}
 	return out, nil
+}
+
+// point lays out the answer to one shift: the least works that meet it, or the most that the remedy can do; nil if it can do nothing. Its
+// Reached is the least margin over every check.
+func (z *sizing) point(ctx context.Context, r *optimize.Result[Cut]) (*TradeoffPoint, error) {
+	x := r.X
+	if x == nil {
+		x = r.Best.X
+	}
+	if x == nil {
+		return nil, nil
+	}
+	p := z.w.apply(z.j, x)
+	d := z.openProposal(p)
+	defer d.Close()
+	found, low := r.Lowest, r.Best.Margin
+	if r.X != nil {
+		low = found[0].Margin
+	} else {
+		var err error
+		if found, err = d.Search(ctx, optimize.Effort{Seed: 1}); err != nil {
+			return nil, err
+		}
+		found = append(found, r.Best.Binding)
+	}
+	t := &TradeoffPoint{
+		Reached: low, Earthworks: p.Quantities.Earthworks(), Drain: p.Quantities.Drain, Parameters: z.w.values(x), Proposal: p,
+	}
+	t.Situations, t.Stages = split(d.outcomes(found))
+	return t, nil
 }
 
 // shifts returns the shifts of the required FS at which a curve has points, ascending, 0 among them.

@@ -26,10 +26,7 @@ func (b *builder) option(o *remedies.Option) Option {
 		})
 	}
 	for _, t := range o.Tradeoff {
-		out.Tradeoff = append(out.Tradeoff, TradePoint{
-			RequiredFS: Number(t.RequiredFS), Shift: t.Shift, ReachedFS: Number(t.Reached), Earthworks: Number(t.Earthworks),
-			Parameters: parametersOf(t.Parameters),
-		})
+		out.Tradeoff = append(out.Tradeoff, b.tradePoint(&t))
 	}
 	out.Certificate = certificateOf(o)
 	b.addProposal(&out, o)
@@ -98,16 +95,39 @@ func totalsOf(q *Quantities, length float64) Totals {
 	}
 }
 
+// tradePoint lays out one point of a curve.
+func (b *builder) tradePoint(t *remedies.TradeoffPoint) TradePoint {
+	s := b.section(&t.Proposal.Section)
+	out := TradePoint{
+		RequiredFS: Number(t.RequiredFS), Shift: t.Shift, ReachedFS: Number(t.Reached), Earthworks: Number(t.Earthworks),
+		Parameters: parametersOf(t.Parameters), Quantities: b.quantities(&t.Proposal.Quantities), Ground: s.Ground, Placed: s.Placed,
+		Water: map[string]Water{}, Checks: make([]Answer, 0, len(t.Situations)+len(t.Stages)),
+	}
+	for _, list := range [][]remedies.Outcome{t.Situations, t.Stages} {
+		for i := range list {
+			a := answer(&list[i])
+			a.RequiredFS += t.Shift
+			out.Checks = append(out.Checks, a)
+			out.Water[a.Name] = water(&list[i].Check.Situation.Water, t.Proposal.Section.Soils)
+		}
+	}
+	return out
+}
+
+// answer lays out the answer to one check.
+func answer(o *remedies.Outcome) Answer {
+	c := &o.Check
+	a := Answer{Name: c.Label(), RequiredFS: c.Required, Found: found(o)}
+	if c.Note != "" {
+		a.VariantOf, a.Variant = c.Name, c.Note
+	}
+	return a
+}
+
 // addAnswers adds the answers to situations and stages.
 func (b *builder) addAnswers(out *Option, o *remedies.Option) {
 	for i := range o.Situations {
-		s := &o.Situations[i]
-		c := &s.Check
-		a := Answer{Name: c.Label(), RequiredFS: c.Required, Found: found(s)}
-		if c.Note != "" {
-			a.VariantOf, a.Variant = c.Name, c.Note
-		}
-		out.Situations = append(out.Situations, a)
+		out.Situations = append(out.Situations, answer(&o.Situations[i]))
 	}
 	for i := range o.Stages {
 		s := &o.Stages[i]

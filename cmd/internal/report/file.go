@@ -160,6 +160,7 @@ type Totals struct {
 	Dispose    float64 `json:"dispose_m3"`    // Material taken away, m3 bank.
 	Drain      float64 `json:"drain_m"`       // Length of drain, m.
 	Strip      float64 `json:"strip_m2"`      // Existing ground stripped, m2.
+	Loads      *Number `json:"lorry_loads"`   // Lorry loads to bring and to take away; null without the load of a lorry.
 	Cost       *Number `json:"cost"`          // Cost; null without rates.
 	Carbon     *Number `json:"carbon_t"`      // Carbon, t; null without factors.
 }
@@ -249,8 +250,13 @@ type AuditLow struct {
 type TradePoint struct {
 	RequiredFS Number               `json:"required_fs"`         // Asked for, in the situation that governs the sized option.
 	Shift      float64              `json:"shift"`               // Added to the required FS of every check.
-	ReachedFS  Number               `json:"reached_fs"`          // FS of that situation at this design.
+	ReachedFS  Number               `json:"reached_fs"`          // Required FS and the least margin of every check at this design.
 	Earthworks Number               `json:"earthworks_m3_per_m"` // Least earthworks, m3/m.
 	Cost       *Number              `json:"cost"`                // Cost; null without rates.
 	Parameters map[string]Parameter `json:"parameters"`          // Dimensions of the design.
+	Quantities Quantities           `json:"quantities"`          // Per metre run of the works.
+	Ground     []Point              `json:"ground"`              // Ground after these works, from left to right.
+	Placed     []Body               `json:"placed"`              // Fill and exchanged ground, as in a section.
+	Water      map[string]Water     `json:"water"`               // By name of the check, as in a section.
+	Checks     []Answer             `json:"checks"`              // Situations, then stages: searched, not audited; what is required includes the shift.
 }

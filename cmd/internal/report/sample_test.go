@@ -123,7 +123,7 @@ func sampleBerm(job *remedies.Job) remedies.Option {
 			Pool:        []remedies.Cut{{Check: 0, Setting: lem.Setting{Method: lem.Bishop, Slices: 40, MinDepth: 1}, Slip: situations[0].Slip}, {Check: 2, Slip: lem.Slip{Kind: lem.Polyline, Nodes: []lem.Point{{X: 30, Y: 105}, {X: 55, Y: 99}}}}},
 			Witnesses:   []remedies.Witness{{X: []float64{1.4, 4, 2, math.NaN()}, Earthworks: 5.01, Cut: 0, FS: 1.2987}, {X: []float64{1.5, 3.75, 2, math.NaN()}, Earthworks: 5.06, Cut: 1, FS: 1.3024}},
 		},
-		Tradeoff: []remedies.TradeoffPoint{{Shift: 0.05, RequiredFS: 1.35, Reached: 1.3562, Earthworks: 8.8, Parameters: []remedies.Value{{Name: "height", Unit: "m", Value: 2}}}},
+		Tradeoff: []remedies.TradeoffPoint{{Shift: 0.05, RequiredFS: 1.35, Reached: 1.3562, Earthworks: 8.8, Parameters: []remedies.Value{{Name: "height", Unit: "m", Value: 2}}, Proposal: p, Situations: situations, Stages: stages}},
 	}
 }
 
