@@ -28,6 +28,15 @@ func (m Method) String() string {
 	return "unknown"
 }
 
+// Methods returns every method, in the order in which they are listed.
+func Methods() []Method {
+	out := make([]Method, numMethods)
+	for i := range out {
+		out[i] = Method(i)
+	}
+	return out
+}
+
 // GoverningMethods returns the methods whose lowest FS governs slips of a kind: they close moments, and all forces but for Bishop, whose
 // error on circles is small (Whitman and Bailey 1967). Ordinary and Janbu are for comparison.
 func GoverningMethods(kind SlipKind) []Method {

@@ -31,6 +31,7 @@ func bermKind() Kind {
 			},
 		},
 		Choices: []Choice{{Name: "fill", Soil: true, Meaning: "Soil of the fill."}},
+		Place:   "toe",
 		order:   orderFill,
 		New:     newBerm,
 	}
@@ -49,8 +50,8 @@ func bermShape(noun string) func(*slope, []float64) shape {
 		if height > s.height()+sameLevel {
 			return noShape(limit, height-s.height(), "top of %s %s m above the toe lies above the crest, %s m above the toe", noun, metres(height), metres(s.height()))
 		}
-		level := s.toe.Y + height
-		flat := ray(s.before, lem.Point{X: s.toe.X, Y: level}, math.Inf(1))
+		crown := s.toe.Y + height
+		flat := ray(s.before, lem.Point{X: s.toe.X, Y: crown}, math.Inf(1))
 		inner, ok := meet(flat, s.before, s.toe.X, s.crest.X, lower)
 		if !ok {
 			return noShape(limit, 0, "top of %s %s m above the toe does not meet the face", noun, metres(height))
@@ -59,14 +60,14 @@ func bermShape(noun string) func(*slope, []float64) shape {
 		if !ok {
 			return noShape(limit, 0, "top of %s %s m above the toe does not meet the new face", noun, metres(height))
 		}
-		edge := lem.Point{X: inner.X + width, Y: level}
-		if under := s.ground.At(edge.X) - level; under > sameLevel {
+		edge := lem.Point{X: inner.X + width, Y: crown}
+		if under := s.ground.At(edge.X) - crown; under > sameLevel {
 			return noShape(limit, under, "outer edge of %s at x = %s m lies below the ground", noun, metres(s.x(edge.X)))
 		}
-		face := ray(s.ground, edge, n)
-		foot, ok := meet(face, s.ground, edge.X, s.ground.Right(), lower)
+		outer := ray(s.ground, edge, n)
+		foot, ok := meet(outer, s.ground, edge.X, s.ground.Right(), lower)
 		if !ok || edge.X > s.ground.Right() {
-			end := face[len(face)-1]
+			end := outer[len(outer)-1]
 			return noShape("ground within the section", end.Y-levelRight(s.ground, end.X), "outer face of %s at %s meets no ground in the section", noun, batterText(n))
 		}
 		return shape{
@@ -77,6 +78,8 @@ func bermShape(noun string) func(*slope, []float64) shape {
 				lengthDim("height", lem.Point{X: edge.X, Y: s.toe.Y}, edge),
 				batterDim(edge, foot, n),
 			},
+			faces:  []face{{batter: n}},
+			levels: []level{{what: "top of " + noun, width: width, haul: true}},
 		}
 	}
 }

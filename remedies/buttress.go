@@ -30,6 +30,7 @@ func buttressKind() Kind {
 			},
 		},
 		Choices: []Choice{{Name: "fill", Soil: true, Meaning: "Soil of the rockfill; it must be free-draining."}},
+		Place:   "toe",
 		order:   orderFill,
 		New:     newButtress,
 	}

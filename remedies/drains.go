@@ -57,6 +57,7 @@ func trenchDrainsKind() Kind {
 		Choices: []Choice{
 			{Name: "low_permeability", Soil: true, Optional: true, Meaning: "Soil of low permeability that the trenches reach down to; their invert is taken at its top."},
 		},
+		Place: "water",
 		order: orderDrains,
 		New:   newTrenchDrains,
 	}

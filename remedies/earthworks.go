@@ -49,6 +49,9 @@ func (w *earthworks) build(j *Job, p *Proposal, sh *shape, mirrored bool) {
 		left, right = right, left
 	}
 	p.checkFences(j, done, left, right)
+	if len(done) > 0 {
+		p.checkForm(j, sh, w.soil != noSoil && j.Section.Soils[w.soil].FreeDraining, w.noun)
+	}
 }
 
 // cutTo lowers the ground, measures the cut by soil, clips the water lines to it and checks the no-dig zones. It returns the

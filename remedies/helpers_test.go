@@ -99,7 +99,7 @@ func mirrorPoints(ps []lem.Point) []lem.Point {
 	return out
 }
 
-// request returns a request of fixed sizes; NaN leaves an optional parameter out.
+// request returns a request of fixed sizes; NaN, or sizes that end early, leave optional parameters out.
 func request(kind string, soils map[string]int, x ...float64) Request {
 	k, ok := Find(kind)
 	if !ok {
@@ -108,9 +108,9 @@ func request(kind string, soils map[string]int, x ...float64) Request {
 	r := DefaultRequest(&k)
 	r.Soils = soils
 	for i, p := range k.Parameters {
-		r.Axes[i] = optimize.Axis{Name: p.Name, Min: x[i], Max: x[i]}
-		if math.IsNaN(x[i]) {
-			r.Axes[i] = optimize.Axis{}
+		r.Axes[i] = optimize.Axis{}
+		if i < len(x) && !math.IsNaN(x[i]) {
+			r.Axes[i] = optimize.Axis{Name: p.Name, Min: x[i], Max: x[i]}
 		}
 	}
 	return r

@@ -23,6 +23,8 @@ type Job struct {
 
 	Requests []Request // Remedies to size.
 	Trials   []Trial   // The user's own works, only checked.
+	// Combinations are sized together beyond the pairs: each lists names of kinds in Requests.
+	Combinations [][]string
 }
 
 // Facing returns +1 if the slope descends to the right, -1 if it descends to the left.
@@ -71,7 +73,26 @@ type Limits struct {
 	Left, Right *Fence // The works stay between; nil: no limit on that side.
 	KeepClear   []KeepClear
 	MaxLevels   []MaxLevel
+	Overhead    []Overhead
 	Outfall     *float64 // Lowest level at which a drain can discharge, m; nil: none given.
+	Batters     Batters
+	MinBench    float64  // Least width of a bench, m; 0: no limit.
+	MinHaul     float64  // Least width of a berm, buttress or platform that plant travels on, m; 0: no limit.
+	MaxImport   *float64 // Most fill brought to the site, compacted m3 for the whole length; nil: no limit.
+}
+
+// Batters are the steepest faces allowed, as n of 1V:nH; 0: no limit.
+type Batters struct {
+	Permanent float64 // Faces that stay, such as for mowing; a face of free-draining rockfill is not held to it.
+	Temporary float64 // Faces that stand open during construction.
+}
+
+// Overhead is a line or a structure above the ground: the ground after works must stay clear of it by the clearance.
+type Overhead struct {
+	Name       string
+	FromX, ToX float64
+	Level      float64 // Of its lowest part, m.
+	Clearance  float64 // m.
 }
 
 // Fence is a side limit of the works.

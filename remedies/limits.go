@@ -81,11 +81,53 @@ func (p *Proposal) checkLoad(j *Job, up lem.Profile, from, to float64, noun stri
 		}
 	}
 	for _, m := range j.Limits.MaxLevels {
-		limit := lem.Profile{{X: m.FromX, Y: m.Level}, {X: m.ToX, Y: m.Level}}
-		h, x := highest(up, limit, math.Max(from, m.FromX), math.Min(to, m.ToX))
-		if h > limitSlack {
+		if h, x := above(up, m.Level, math.Max(from, m.FromX), math.Min(to, m.ToX)); h > limitSlack {
 			p.violate(named(m.Name, "maximum level"), h, "%s rises to level %s m at x = %s m, limit %s is %s m",
 				noun, metres(m.Level+h), metres(x), named(m.Name, "maximum level"), metres(m.Level))
+		}
+	}
+	for _, o := range j.Limits.Overhead {
+		if h, x := above(up, o.Level-o.Clearance, math.Max(from, o.FromX), math.Min(to, o.ToX)); h > limitSlack {
+			name := named(o.Name, "overhead line")
+			p.violate(name, h, "%s rises %s m into the clearance of %s at x = %s m: %s m below level %s m", noun, metres(h), name, metres(x), metres(o.Clearance), metres(o.Level))
+		}
+	}
+}
+
+// above returns the greatest height of a line above a level between x = from and x = to, and where; -Inf if the interval is empty.
+func above(line lem.Profile, level, from, to float64) (height, x float64) {
+	return highest(line, lem.Profile{{X: from, Y: level}, {X: to, Y: level}}, from, to)
+}
+
+// Names of the limits that have none of the user's own.
+const (
+	limitBatter    = "steepest permanent batter"
+	limitTemporary = "steepest temporary batter"
+	limitBench     = "minimum bench width"
+	limitHaul      = "minimum haul width"
+)
+
+// checkForm checks the batters and widths of a shape. Rockfill faces are not mown.
+func (p *Proposal) checkForm(j *Job, sh *shape, rockfill bool, noun string) {
+	l := &j.Limits
+	for _, f := range sh.faces {
+		least, name := l.Batters.Permanent, limitBatter
+		if f.temporary {
+			least, name = l.Batters.Temporary, limitTemporary
+		} else if rockfill {
+			continue
+		}
+		if least-f.batter > limitSlack {
+			p.violate(name, least-f.batter, "face of %s at %s is steeper than the %s, %s", noun, batterText(f.batter), name, batterText(least))
+		}
+	}
+	for _, v := range sh.levels {
+		least, name := l.MinBench, limitBench
+		if v.haul {
+			least, name = l.MinHaul, limitHaul
+		}
+		if least-v.width > limitSlack {
+			p.violate(name, least-v.width, "%s is %s m wide, %s is %s m", v.what, metres(v.width), name, metres(least))
 		}
 	}
 }

@@ -18,6 +18,7 @@ func waterLoweringKind() Kind {
 			},
 		},
 		WhatIf: true,
+		Place:  "water",
 		order:  orderWater,
 		New:    newWaterLowering,
 	}

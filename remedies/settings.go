@@ -6,8 +6,10 @@ type Settings struct {
 	Seed      uint64  // Of the searches.
 	Slices    int     // Slices of a slip in a search; 0: the engine's default.
 	Allowance float64 // FS by which an answer must exceed the requirement; 0: DefaultAllowance.
-	Curves    bool    // Also size each option for a range of required FS.
+	Curves    bool    // Also size each single remedy for a range of required FS.
+	Pairs     bool    // Also size every compatible pair of remedies.
 	Progress  func(Progress)
+	Finished  func(*Option) // Told of each option as soon as it is known, single remedies first.
 }
 
 // DefaultAllowance is the allowance for the search being finite: a design is accepted when every FS is at least the required FS

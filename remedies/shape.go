@@ -15,7 +15,43 @@ type shape struct {
 	cut, fill    bool        // What the works may do.
 	uphill, foot string      // Names of the ends, for messages: "top of cut", "toe of berm".
 	dims         []Dimension
+	faces        []face
+	levels       []level
 	faults       []Violation // Why the shape does not exist.
+}
+
+// face is a sloping part of a shape, for the limits on batters.
+type face struct {
+	batter    float64 // n of 1V:nH.
+	temporary bool    // It stands open during construction only.
+}
+
+// level is a level part of a shape, for the limits on widths.
+type level struct {
+	what  string // "bench", "top of berm".
+	width float64
+	haul  bool // Plant has to travel on it; else it is a bench.
+}
+
+// flat is the fall over the length of a part of a shape below which it is level: far below any batter, far above rounding.
+const flat = 1e-6
+
+// describe adds the dimensions, faces and benches of a line of benches and faces. A stretch too short to set out is left out.
+func (s *shape) describe(line lem.Profile) {
+	for i := 1; i < len(line); i++ {
+		a, b := line[i-1], line[i]
+		fall := a.Y - b.Y
+		switch {
+		case b.X-a.X <= sameLevel:
+		case fall <= flat*(b.X-a.X):
+			s.dims = append(s.dims, lengthDim("bench width", a, b))
+			s.levels = append(s.levels, level{what: "bench", width: b.X - a.X})
+		default:
+			n := (b.X - a.X) / fall
+			s.dims = append(s.dims, batterDim(a, b, n))
+			s.faces = append(s.faces, face{batter: n})
+		}
+	}
 }
 
 // from and to return the ends of the shape in x.

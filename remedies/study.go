@@ -11,58 +11,82 @@ import (
 	"standfast/optimize"
 )
 
-// Study answers a job: it assesses the slope as it is, sizes every remedy asked for and checks the user's own works. The answer depends
-// on the job and the settings only, not on the number of workers. The error is that of the context, or a fault of a request.
+// Study answers a job: it assesses the slope as it is, sizes every remedy asked for, then pairs of them, and checks the user's own works. The
+// answer depends on the job and the settings only, not on the number of workers. The error is that of the context, or a fault of a
+// request.
 func Study(ctx context.Context, job *Job, s Settings) (*Result, error) {
 	s = s.resolved()
 	j, existing, err := assess(ctx, job, &s)
 	if err != nil {
 		return nil, err
 	}
-	res := &Result{Job: j, Settings: s, Existing: *existing}
+	st := &study{ctx: ctx, j: j, s: &s, existing: existing, pools: map[string][]pooled{}}
 	needed := !adequate(existing, &s)
-	total := len(j.Trials)
+	var groups [][]Request
 	if needed {
-		total += len(j.Requests)
-	} else {
-		res.Least = existing.Name
+		groups = j.groups(s.Pairs)
 	}
-	done := 0
-	tell := func(name string, share float64) {
-		if s.Progress != nil {
-			s.Progress(Progress{Option: name, Done: done, Total: total, Share: share})
-		}
-	}
-	if needed {
-		for i := range j.Requests {
-			tell(j.Requests[i].Kind, 0)
-			o, err := size(ctx, j, &s, &j.Requests[i], existing, tell)
-			if err != nil {
-				return nil, err
-			}
-			res.Options = append(res.Options, *o)
-			done++
+	st.total = len(groups) + len(j.Trials)
+	for _, g := range groups {
+		if err := st.size(g); err != nil {
+			return nil, err
 		}
 	}
 	for i := range j.Trials {
-		tell(j.Trials[i].Name, 0)
-		o, err := checkTrial(ctx, j, &s, &j.Trials[i])
-		if err != nil {
+		if err := st.check(&j.Trials[i]); err != nil {
 			return nil, err
 		}
-		res.Options = append(res.Options, *o)
-		done++
 	}
+	res := &Result{Job: j, Settings: s, Existing: *existing, Options: st.options}
 	rank(res.Options)
-	if needed {
-		for i := range res.Options {
-			if o := &res.Options[i]; o.Status == MeetsTarget && !o.WhatIf {
-				res.Least = o.Name
-				break
-			}
+	if !needed {
+		res.Least = existing.Name
+		return res, nil
+	}
+	for i := range res.Options {
+		if o := &res.Options[i]; o.Status == MeetsTarget && !o.WhatIf {
+			res.Least = o.Name
+			break
 		}
 	}
 	return res, nil
+}
+
+// study is the state of one Study.
+type study struct {
+	ctx      context.Context
+	j        *Job
+	s        *Settings
+	existing *Option
+	options  []Option
+	total    int                 // Options in all.
+	pools    map[string][]pooled // Slips known from sizing a remedy, by its name.
+}
+
+// tell reports progress.
+func (st *study) tell(name string, share float64) {
+	if st.s.Progress != nil {
+		st.s.Progress(Progress{Option: name, Done: len(st.options), Total: st.total, Share: share})
+	}
+}
+
+// check checks a trial of the user's own.
+func (st *study) check(t *Trial) error {
+	st.tell(t.Name, 0)
+	o, err := checkTrial(st.ctx, st.j, st.s, t)
+	if err != nil {
+		return err
+	}
+	st.add(o)
+	return nil
+}
+
+// add files an option and hands it on.
+func (st *study) add(o *Option) {
+	st.options = append(st.options, *o)
+	if st.s.Finished != nil {
+		st.s.Finished(o)
+	}
 }
 
 // resolved returns the settings with defaults filled in.
@@ -107,19 +131,21 @@ func rank(os []Option) {
 	})
 }
 
-// size sizes one remedy.
-func size(ctx context.Context, j *Job, s *Settings, r *Request, existing *Option, tell func(string, float64)) (*Option, error) {
-	w, err := newWorks(j, r.Kind, []Request{*r})
+// size sizes the remedies of a group together.
+func (st *study) size(group []Request) error {
+	w, err := newWorks(st.j, groupName(group), group)
 	if err != nil {
-		return nil, err
+		return err
 	}
-	z := newSizing(j, w, s)
-	if g := existing.Governing(); g != nil {
+	st.tell(w.name, 0)
+	z := newSizing(st.j, w, st.s)
+	if g := st.existing.Governing(); g != nil {
 		z.existingMargin = g.Margin()
 	}
-	res, err := z.minimize(ctx, z.cost, nil, tell)
+	ctx := st.ctx
+	res, err := z.minimize(ctx, z.cost, st.start(z, group), st.tell)
 	if err != nil {
-		return nil, err
+		return err
 	}
 	o := &Option{Name: w.name, Title: w.title, Remedies: w.kinds, WhatIf: w.whatIf}
 	x := res.X
@@ -131,12 +157,12 @@ func size(ctx context.Context, j *Job, s *Settings, r *Request, existing *Option
 		x = w.smallest()
 	}
 	o.Parameters = w.values(x)
-	o.Proposal = w.apply(j, x)
+	o.Proposal = w.apply(st.j, x)
 	d := z.openProposal(o.Proposal)
 	defer d.Close()
 	if res.X == nil && res.Best.X != nil {
 		if found, err = d.searchBoth(ctx); err != nil {
-			return nil, err
+			return err
 		}
 	}
 	if len(found) > 0 {
@@ -144,20 +170,22 @@ func size(ctx context.Context, j *Job, s *Settings, r *Request, existing *Option
 	}
 	z.judge(o, &res)
 	if o.Status == Infeasible {
-		if err := z.explain(ctx, o, &res, tell); err != nil {
-			return nil, err
+		if err := z.explain(ctx, o, &res, st.tell); err != nil {
+			return err
 		}
 	}
 	if res.X != nil {
 		o.StepLess = z.stepsLess(&res)
 	}
 	o.Certificate = z.certificate(&res)
-	if s.Curves {
+	if st.s.Curves && len(group) == 1 {
 		if o.Tradeoff, err = z.curve(ctx, o, &res); err != nil {
-			return nil, err
+			return err
 		}
 	}
-	return o, nil
+	st.keep(w.name, d.checks, res.Pool)
+	st.add(o)
+	return nil
 }
 
 // costFunc is the Cost of an optimize.Problem.

@@ -44,7 +44,7 @@ func (d *design) addMethods(o *Outcome, check int) {
 	if math.IsNaN(o.FS) {
 		return
 	}
-	for _, method := range []lem.Method{lem.Ordinary, lem.Bishop, lem.Spencer} {
+	for _, method := range lem.Methods() {
 		s := o.setting
 		s.Method = method
 		r := d.model(check).FS(&d.ws, &o.Slip, s)

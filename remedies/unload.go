@@ -46,12 +46,12 @@ func unloadShape(s *slope, x []float64) shape {
 	if depth > s.height()+sameLevel {
 		return noShape(limit, depth-s.height(), "platform %s m below the crest lies below the toe, %s m below the crest", metres(depth), metres(s.height()))
 	}
-	level := s.crest.Y - depth
-	front, ok := meet(ray(s.before, lem.Point{X: s.crest.X, Y: level}, math.Inf(1)), s.before, s.crest.X, s.toe.X, upper)
+	floor := s.crest.Y - depth
+	front, ok := meet(ray(s.before, lem.Point{X: s.crest.X, Y: floor}, math.Inf(1)), s.before, s.crest.X, s.toe.X, upper)
 	if !ok {
 		return noShape(limit, 0, "platform %s m below the crest does not come out on the face", metres(depth))
 	}
-	back := lem.Point{X: front.X - width, Y: level}
+	back := lem.Point{X: front.X - width, Y: floor}
 	if back.X < s.before.Left() {
 		return noShape("ground within the section", s.before.Left()-back.X, "back of platform at x = %s m lies outside the section", metres(s.x(back.X)))
 	}
@@ -72,8 +72,13 @@ func unloadShape(s *slope, x []float64) shape {
 	line.add(top.X, top.Y)
 	line.add(back.X, back.Y)
 	line.add(front.X, front.Y)
+	var faces []face
 	if top.X < back.X { // else the platform comes out at its back as well
 		dims = append(dims, batterDim(top, back, n))
+		faces = append(faces, face{batter: n})
 	}
-	return shape{line: lem.Profile(line), cut: true, uphill: "top of back batter", foot: "front of platform", dims: dims}
+	return shape{
+		line: lem.Profile(line), cut: true, uphill: "top of back batter", foot: "front of platform", dims: dims,
+		faces: faces, levels: []level{{what: "platform", width: width, haul: true}},
+	}
 }
