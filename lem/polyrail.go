@@ -69,6 +69,36 @@ func (m *Model) rails(ws *Workspace) []rail {
 	return out
 }
 
+// beds lists the boundaries between soils, moved up by a hair, that circles may rest on.
+func (m *Model) beds() []rail {
+	width := m.right - m.left
+	var out []rail
+	for _, b := range m.boundaries() {
+		if b.pts[len(b.pts)-1].X-b.pts[0].X >= shortestRail*width && !math.IsInf(b.below[0], 1) {
+			out = append(out, b.offset(hairShare*width))
+		}
+	}
+	return out
+}
+
+// rises returns how far the rail comes up above the lower arc of a circle at most, between two x, m; negative if it stays below.
+func (r *rail) rises(c Point, radius, from, to float64) float64 {
+	most := math.Inf(-1)
+	r2 := radius * radius
+	for i := 1; i < len(r.pts); i++ {
+		a, b := r.pts[i-1], r.pts[i]
+		x0, x1 := max(a.X, from), min(b.X, to)
+		if x0 > x1 {
+			continue
+		}
+		k := (b.Y - a.Y) / (b.X - a.X)
+		x := min(max(c.X+radius*k/math.Hypot(1, k), x0), x1) // Where the arc is parallel.
+		dx := x - c.X
+		most = max(most, a.Y+k*(x-a.X)-c.Y+math.Sqrt(max(0, r2-dx*dx)))
+	}
+	return most
+}
+
 // shareAbove returns over what share of its length the soil above is the weaker.
 func (b *boundary) shareAbove() float64 {
 	var length, upper float64

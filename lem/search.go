@@ -8,7 +8,8 @@ import (
 
 // Search constants: how many trials the default effort spends, and what counts as the same basin. docs/theory.md tells how they were set.
 const (
-	trialsPerPair   = 18   // Trials for each pair of head and exit zones, ByDaylight.
+	trialsPerPair   = 24   // Trials for each pair of head and exit zones, ByDaylight,
+	tangentsPerPair = 2    // and for each boundary between soils that they may touch.
 	trialsByCentre  = 9000 // Trials in all, ByCentre.
 	startsUpTo      = 2.0  // Cells up to this multiple of the lowest F are descended from,
 	polishUpTo      = 1.10 // basins up to this multiple are polished with every further method.
@@ -189,15 +190,12 @@ func (s *searcher) starts() []candidate {
 	return out
 }
 
+// lowestAround reports whether the cells that share a side with a cell have no lower F.
 func (s *searcher) lowestAround(k cell, f float64) bool {
-	for dh := -1; dh <= 1; dh++ {
-		for de := -1; de <= 1; de++ {
-			for dd := -1; dd <= 1; dd++ {
-				n := cell{k.head + dh, k.exit + de, k.depth + dd, k.leftward}
-				if o, ok := s.cells[n]; ok && o.r.F < f {
-					return false
-				}
-			}
+	for _, d := range [...][3]int{{1, 0, 0}, {-1, 0, 0}, {0, 1, 0}, {0, -1, 0}, {0, 0, 1}, {0, 0, -1}} {
+		n := cell{k.head + d[0], k.exit + d[1], k.depth + d[2], k.leftward}
+		if o, ok := s.cells[n]; ok && o.r.F < f {
+			return false
 		}
 	}
 	return true

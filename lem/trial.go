@@ -10,6 +10,7 @@ const (
 	flattest       = 0.02 // Least half angle of an arc, rad.
 	roundest       = 1.65 // Greatest half angle, rad: a little beyond a half circle.
 	projectSteps   = 10   // Steps to bring an arc to the depth of interest or up to the firm base.
+	tangentSteps   = 20   // Halvings of the half angle to bring an arc to a boundary.
 	depthOvershoot = 1e-3 // An arc is brought to within this share above the depth of interest.
 )
 
@@ -170,6 +171,55 @@ func (s *searcher) sweep(ctx context.Context) {
 			}
 		}
 	}
+	s.sweepTangents(ctx)
+}
+
+// sweepTangents tries arcs that just touch a boundary between soils from above: minima often rest on one, and are narrow there.
+func (s *searcher) sweepTangents(ctx context.Context) {
+	q := sequenceOf(s.o.Seed + 1)
+	n := int(math.Ceil(tangentsPerPair * s.o.Effort))
+	k := 0
+	for _, bed := range s.m.beds() {
+		for i, a := range s.zones {
+			for _, b := range s.zones[i+1:] {
+				if ctx.Err() != nil {
+					return
+				}
+				if !s.mayFail(a, b) {
+					continue
+				}
+				for range n {
+					v := q.at(k)
+					k++
+					x0, x1 := a.From+v[0]*(a.To-a.From), b.From+v[1]*(b.To-b.From)
+					if half, ok := s.m.tangentAngle(&bed, x0, x1); ok {
+						s.note(s.try(vector{x0, x1, half}))
+					}
+				}
+			}
+		}
+	}
+}
+
+// tangentAngle returns the half angle of the arc through the ground at two places that touches a bed from above, if there is one.
+func (m *Model) tangentAngle(bed *rail, x0, x1 float64) (half float64, ok bool) {
+	a, b := Point{x0, m.groundAt(x0)}, Point{x1, m.groundAt(x1)}
+	rises := func(half float64) float64 {
+		c, r := arcThrough(a, b, half)
+		return bed.rises(c, r, x0, x1)
+	}
+	lo, hi := flattest, roundest
+	if !(rises(lo) < 0 && rises(hi) > 0) {
+		return 0, false
+	}
+	for range tangentSteps {
+		if mid := (lo + hi) / 2; rises(mid) > 0 {
+			hi = mid
+		} else {
+			lo = mid
+		}
+	}
+	return lo, true
 }
 
 // mayFail reports whether slips between two zones, a left of b, can move in a wanted direction and daylight in the wanted ranges.
