@@ -105,6 +105,7 @@ func (p *polySearch) descend(t *polyTrial, budget int) {
 		to.r.F = math.Inf(1)
 		if p.shift(to.nodes, d, by); p.mend(to.nodes) {
 			p.try(to)
+			to.trim()
 		}
 	}
 	p.follow(t, &m, budget)

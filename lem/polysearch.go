@@ -175,6 +175,7 @@ func (p *polySearch) improve(ctx context.Context, ts []polyTrial, most int, upTo
 	for i := range ts {
 		t := ts[i].clone()
 		if i < most && t.r.F <= max(upTo*ts[0].r.F, p.s.o.Below) && concave(t.nodes) && ctx.Err() == nil {
+			t.trim()
 			t.nodes = insertNodes(thinNodes(t.nodes, nodes), nodes)
 			p.try(&t)
 			p.descend(&t, budget)

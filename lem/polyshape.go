@@ -129,6 +129,24 @@ func (p *polySearch) deepen(nodes []Point) bool {
 	return false
 }
 
+// trim leaves only the part of the nodes that its answer is of, where the ground cuts off more than a piece; the longest pieces are halved to keep
+// the number. What is cut off would only stand in the way of the descent.
+func (t *polyTrial) trim() {
+	n := len(t.nodes)
+	from, to := t.r.From, t.r.To
+	gap := shortestPiece * (t.nodes[n-1].X - t.nodes[0].X)
+	if math.IsInf(t.r.F, 1) || from.X-t.nodes[0].X <= gap && t.nodes[n-1].X-to.X <= gap {
+		return
+	}
+	kept := append(t.nodes[:0:0], from)
+	for _, p := range t.nodes {
+		if p.X > from.X+gap && p.X < to.X-gap {
+			kept = append(kept, p)
+		}
+	}
+	t.nodes = append(t.nodes[:0], insertNodes(append(kept, to), n)...)
+}
+
 // sound reports whether head and exit of an answer are no steeper than the rules allow, and the interslice forces those of a slip that moves.
 func (m *Model) sound(nodes []Point, r *Result) bool {
 	if r.Lambda < leastLambda {
