@@ -26,7 +26,7 @@ func Start(j *Job) *Proposal {
 	n := len(j.Section.Soils)
 	p := &Proposal{
 		Section:    j.Section,
-		Quantities: Quantities{Cut: make([]float64, n), Fill: make([]float64, n)},
+		Quantities: newQuantities(n),
 		loaded:     make([]float64, n),
 	}
 	for _, s := range j.Situations {
@@ -47,8 +47,7 @@ func (p *Proposal) clone() *Proposal {
 	q.Waters = slices.Clone(p.Waters)
 	q.variants = slices.Clone(p.variants)
 	q.Stages = slices.Clone(p.Stages)
-	q.Quantities.Cut = slices.Clone(p.Quantities.Cut)
-	q.Quantities.Fill = slices.Clone(p.Quantities.Fill)
+	q.Quantities = p.Quantities.clone()
 	q.loaded = slices.Clone(p.loaded)
 	q.Violations = slices.Clone(p.Violations)
 	q.Dimensions = slices.Clone(p.Dimensions)
@@ -83,6 +82,7 @@ func situationCheck(p *Proposal, i int, s *Situation, note string, w lem.Water) 
 // finish brings what depends on the whole of the works up to date.
 func (p *Proposal) finish(j *Job) {
 	p.Quantities.Strip = stripped(j.Section.Ground, p.Section.Ground)
+	p.checkImport(j)
 	p.stageChecks(j)
 }
 

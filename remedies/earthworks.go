@@ -2,6 +2,7 @@ package remedies
 
 import (
 	"fmt"
+	"math"
 
 	"standfast/lem"
 )
@@ -60,6 +61,7 @@ func (p *Proposal) cutTo(j *Job, after lem.Profile, noun string) []run {
 	runs := runsAbove(p.Section.Ground, after)
 	for _, r := range runs {
 		addSoilAreas(p.Quantities.Cut, &p.Section, p.Section.Ground, after, r.from, r.to)
+		p.addTopsoil(j, after, r.from, r.to)
 		p.checkDig(j, after, r.from, r.to, noun)
 	}
 	p.Section.Ground = after
@@ -74,6 +76,7 @@ func (p *Proposal) fillTo(j *Job, after lem.Profile, soil int, noun string) []ru
 	runs := runsAbove(after, ground)
 	for _, r := range runs {
 		p.Quantities.Fill[soil] += r.area
+		p.addBase(j, soil, r.from, r.to)
 		addSoilAreas(p.loaded, &p.Section, ground, shifted(ground, r.from-r.to), r.from, r.to)
 		p.checkLoad(j, after, r.from, r.to, noun)
 	}
@@ -82,6 +85,32 @@ func (p *Proposal) fillTo(j *Job, after lem.Profile, soil int, noun string) []ru
 	}
 	p.Section.Ground = after
 	return runs
+}
+
+// addTopsoil measures the part of a cut that lies within the strip depth.
+func (p *Proposal) addTopsoil(j *Job, after lem.Profile, from, to float64) {
+	depth := j.Economics.StripDepth
+	if depth == 0 {
+		return
+	}
+	under := spliced(after, shifted(j.Section.Ground, -depth), from, to, upper)
+	addSoilAreas(p.Quantities.Topsoil, &p.Section, p.Section.Ground, under, from, to)
+}
+
+// benchedFrom is the slope of ground, rise over run, above which it is benched before it is filled: 1V:5H (common practice, no source).
+const benchedFrom = 0.2
+
+// addBase measures the ground before works under a fill: where it is stripped, and where it is benched.
+func (p *Proposal) addBase(j *Job, soil int, from, to float64) {
+	for _, q := range pieces(p.Section.Ground, j.Section.Ground, from, to) {
+		if q.apart() { // cut or filled already
+			continue
+		}
+		p.Quantities.FillBase[soil] += q.x1 - q.x0
+		if math.Abs(q.a1-q.a0) > benchedFrom*(q.x1-q.x0) {
+			p.Quantities.FaceRun += q.x1 - q.x0
+		}
+	}
 }
 
 // violate adds a violation.

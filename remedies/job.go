@@ -16,6 +16,8 @@ type Job struct {
 	Stage      StageSettings
 
 	Limits    Limits
+	OnSite    []OnSiteFill  // Material of the site that may serve as fill; none: all fill is brought, all cut is taken away.
+	Economics Economics     // Rates and factors of the user's own.
 	MinDepth  float64       // Depth of interest: slips nowhere deeper below ground than this are left out, m.
 	Head      lem.Range     // Daylight range of slips at the head; zero: everywhere.
 	Exit      lem.Range     // Daylight range of slips at the toe; zero: everywhere.

@@ -2,6 +2,7 @@ package remedies
 
 import (
 	"math"
+	"slices"
 
 	"standfast/lem"
 )
@@ -138,4 +139,20 @@ func named(name, otherwise string) string {
 		return otherwise
 	}
 	return name
+}
+
+// limitImport names the limit on imported fill.
+const limitImport = "maximum import"
+
+// checkImport checks the limit on imported fill against the works so far. Its violation is in m3 for the whole length.
+func (p *Proposal) checkImport(j *Job) {
+	if j.Limits.MaxImport == nil {
+		return
+	}
+	p.Violations = slices.DeleteFunc(p.Violations, func(v Violation) bool { return v.Limit == limitImport })
+	b := BalanceOf(j, &p.Quantities)
+	brought := (sum(b.Import) + p.Quantities.Stone) * j.Length
+	if over := brought - *j.Limits.MaxImport; over > limitSlack {
+		p.violate(limitImport, over, "%.0f m3 of fill have to be brought, the %s is %.0f m3", math.Ceil(brought-limitSlack), limitImport, *j.Limits.MaxImport)
+	}
 }

@@ -102,7 +102,7 @@ type Check struct {
 type Violation struct {
 	Limit  string  // Name of the limit.
 	Detail string  // In words, such as "toe of berm at x = 59.3 m, limit 58.5 m".
-	By     float64 // How far beyond, m.
+	By     float64 // How far beyond, m; m3 for the limit on imported fill.
 	// Geometry says that the works cannot be drawn at all, whatever the limits of the site.
 	Geometry bool
 }

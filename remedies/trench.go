@@ -155,18 +155,21 @@ func clipped(p lem.Profile, from, to float64) lem.Profile {
 
 // measure adds the quantities and the dimension of the trenches and checks the limits.
 func (d *trenchDrains) measure(j *Job, p *Proposal, s *slope, t *trench) {
-	var area, length float64
 	// Trenches are dug after cuts and before fills.
 	top := spliced(p.Section.Ground, j.Section.Ground, t.from, t.to, lower)
-	for _, r := range runsAbove(clipped(top, t.from, t.to), t.invert) {
-		area += r.area
-	}
+	dug := make([]float64, len(p.Quantities.Dig))
+	addSoilAreas(dug, &p.Section, top, t.invert, t.from, t.to)
+	var length float64
 	for i := 1; i < len(t.invert); i++ {
 		a, b := t.invert[i-1], t.invert[i]
 		length += math.Hypot(b.X-a.X, b.Y-a.Y)
 	}
-	p.Quantities.TrenchDig += area * t.width / t.spacing
-	p.Quantities.Stone += area * t.width / t.spacing
+	share := t.width / t.spacing
+	for i, a := range dug {
+		p.Quantities.Dig[i] += a * share
+	}
+	p.Quantities.TrenchDig += sum(dug) * share
+	p.Quantities.Stone += sum(dug) * share
 	p.Quantities.Drain += length / t.spacing
 
 	left, right := "head of trench drains", "outlet of trench drains"
