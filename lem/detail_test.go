@@ -220,6 +220,7 @@ func TestReasons(t *testing.T) {
 	fall := func(x, y float64) Point { return Point{x, -x*math.Tan(20*degree) + y} }
 	sheet := Slip{Kind: Polyline, Nodes: []Point{fall(-102.4, 0.6), fall(-100, -2), fall(100, -2), fall(110, 0.6)}}
 	clay := uniform(face(8, 45*degree, 40), Soil{UnitWeight: 19, Cohesion: 65})
+	wall := uniform(face(8, 85*degree, 40), Soil{UnitWeight: 19, Cohesion: 20})
 	bent := Slip{Kind: Polyline, Nodes: []Point{{-26, 8}, {-12, -10}, {2, 0}}}
 	tests := []struct {
 		name   string
@@ -234,12 +235,17 @@ func TestReasons(t *testing.T) {
 		{"Bishop on a polyline", long, sheet, Setting{Method: Bishop}, CirclesOnly, false},
 		{"steep exit", sand, Slip{Kind: Polyline, Nodes: []Point{{-25, 8}, {-10, -2}, {-0.6, -2}, {0.2, 0}}}, Setting{Method: JanbuPlain}, SmallMAlpha, true},
 		{"sharp bend in clay", clay, bent, Setting{Method: Spencer}, ReversedDrag, true},
+		{"earthquake pulls a wall off", wall, Slip{Kind: Polyline, Nodes: []Point{{-1.7, 8}, {-0.9, 4}, {0.7, 0}}}, Setting{Method: Spencer}, BaseTension, true},
 		{"half sine on a sheet slide", long, sheet, Setting{Method: MorgensternPrice}, ThrustOutside, true},
 		{"Spencer on a sheet slide", long, sheet, Setting{Method: Spencer}, Admissible, true},
 	}
 	for _, tt := range tests {
 		t.Run(tt.name, func(t *testing.T) {
-			m := compiled(t, tt.s, &Situation{})
+			sit := &Situation{}
+			if tt.s == wall {
+				sit.Kh = 0.3
+			}
+			m := compiled(t, tt.s, sit)
 			d, err := m.Detail(&tt.slip, tt.o)
 			if d.Result.Reason != tt.want || d.Verdict.Reason != tt.want {
 				t.Errorf("%v, verdict %+v, want %v", d.Result, d.Verdict, tt.want)

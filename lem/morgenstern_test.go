@@ -3,6 +3,7 @@ package lem
 import (
 	"math"
 	"slices"
+	"strings"
 	"testing"
 )
 
@@ -33,15 +34,16 @@ var (
 // methodCases returns the cutting with and without earthquake, free water and surcharges, on a circle and on a polyline, both ways round.
 func methodCases() []methodCase {
 	var out []methodCase
-	for _, load := range []string{"plain", "quake", "pool", "surcharges"} {
+	for _, load := range []string{"plain", "quake", "pool", "pool and quake", "surcharges"} {
 		for _, slip := range []Slip{cuttingCircle, cuttingPolyline} {
 			s, sit := cutting()
-			switch load {
-			case "quake":
+			if strings.Contains(load, "quake") {
 				sit.Kh = 0.1
-			case "pool":
+			}
+			if strings.Contains(load, "pool") {
 				sit.Water.Free = []FreeWater{{5, 20, 70}}
-			case "surcharges":
+			}
+			if load == "surcharges" {
 				s.Loads = []Surcharge{{FromX: 5, ToX: 15, Pressure: 10}, {FromX: 15, ToX: 20, Pressure: 20, Variable: true}, {FromX: 45, ToX: 60, Pressure: 15, Variable: true}}
 			}
 			name := load + " circle"

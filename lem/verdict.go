@@ -15,25 +15,22 @@ const (
 	// SmallMAlpha: where the base rises towards the exit, m-alpha = cos(alpha) + sin(alpha) tan(phi)/F is below 0.2 (Whitman and Bailey 1967
 	// warn below 0.2; recalled from memory), so that the normal force on the base grows without sense. It also bars exits much steeper than passive.
 	SmallMAlpha
-	// InclinedForce: the force between slices is so inclined that 1 + lambda f tan(alpha - phi_m) is not positive: it stands in line with the
-	// reaction of the base, and the slice cannot be in equilibrium. Spencer and Morgenstern-Price only, like those that follow.
-	InclinedForce
-	// ReversedDrag: lambda f is below -0.1 where f is greatest: the downhill side of a slice would hold up the uphill side, which sinks. On sharply
+	// ReversedDrag, of Spencer and Morgenstern-Price like those that follow: lambda f is below -0.1 where f is greatest: the downhill side of a slice would hold up the uphill side, which sinks. On sharply
 	// bent slips the two equations have such roots, with an F too low, alone or beside the true one (the margin is ours).
 	ReversedDrag
+	// BaseTension: the total normal forces on the base that pull outweigh those that press: the body would hang on its base. Some tension near the
+	// head, as cohesion brings with it, is no reason (the margin is ours).
+	BaseTension
 	// ThrustOutside: |E| times the distance of the line of thrust from the body, below the slip or above the ground, exceeds 0.3 of the greatest
 	// |E| times the greatest height of an interface. Common practice wants the line inside; the margin is ours: a line somewhat outside, or far
 	// outside where E passes through zero below a head in tension, changes F little.
 	ThrustOutside
-	// BaseTension: the total normal forces on the base that pull outweigh those that press: the body would hang on its base. Some tension near
-	// the head, as cohesion brings with it, is no reason (common practice, no source).
-	BaseTension
 	numReasons
 )
 
 var reasonWords = [numReasons]string{
 	"admissible", "slip does not daylight at both ends", "slip passes below the firm base", "method is for circles only",
-	"m-alpha too small at the exit", "interslice force too inclined", "interslice drag reversed", "line of thrust far outside", "tension over the base",
+	"m-alpha too small at the exit", "interslice drag reversed", "tension over the base", "line of thrust far outside",
 }
 
 // String returns the reason in words.
@@ -79,7 +76,7 @@ type Verdict struct {
 // judge applies the rules to an answer that closes forces and moments.
 func (ws *Workspace) judge(f, lambda float64, leftward bool) Verdict {
 	v := Verdict{LeastMAlpha: ws.leastMAlpha(f), Drag: lambda * ws.sidePeak}
-	upright := ws.trace(f, lambda, leftward)
+	ws.trace(f, lambda, leftward)
 	var greatest, highest, outside, press, pull float64
 	for j := range ws.forces[:ws.n] {
 		now := &ws.forces[j]
@@ -104,14 +101,12 @@ func (ws *Workspace) judge(f, lambda float64, leftward bool) Verdict {
 	switch {
 	case v.LeastMAlpha < minMAlpha:
 		v.Reason = SmallMAlpha
-	case !upright:
-		v.Reason = InclinedForce
 	case v.Drag < leastDrag:
 		v.Reason = ReversedDrag
-	case v.Thrust > mostThrust:
-		v.Reason = ThrustOutside
 	case !(v.Tension <= mostTension):
 		v.Reason = BaseTension
+	case v.Thrust > mostThrust:
+		v.Reason = ThrustOutside
 	}
 	return v
 }
@@ -127,15 +122,14 @@ func (ws *Workspace) leastMAlpha(f float64) float64 {
 	return least
 }
 
-// trace runs through the slices at an answer and keeps the forces in ws.forces. It reports whether every 1 + g lambda f is positive.
-func (ws *Workspace) trace(f, lambda float64, leftward bool) bool {
+// trace runs through the slices at an answer and keeps the forces in ws.forces.
+func (ws *Workspace) trace(f, lambda float64, leftward bool) {
 	ss := ws.slice[:ws.n]
 	if len(ws.forces) < len(ss) {
 		ws.forces = make([]sliceForce, 2*len(ss))
 	}
 	datum := ss[0].y
 	var was sliceForce
-	ok := true
 	for j := range ss {
 		s := &ss[ws.fromHead(j, leftward)]
 		t := s.tan / f
@@ -143,7 +137,6 @@ func (ws *Workspace) trace(f, lambda float64, leftward bool) bool {
 		g := (s.sin - s.cos*t) * m
 		c := (s.cl - s.ul*s.tan) / f
 		right := 1 + g*lambda*ws.side[j+1]
-		ok = ok && right > 0
 		var now sliceForce
 		now.e = (was.e + g*was.x + s.h + s.k + g*s.q - c*m) / right
 		now.x = lambda * ws.side[j+1] * now.e
@@ -154,7 +147,6 @@ func (ws *Workspace) trace(f, lambda float64, leftward bool) bool {
 		}
 		ws.forces[j], was = now, now
 	}
-	return ok
 }
 
 // thrust returns the level of the line of thrust at the downhill side of the j-th slice from the head.
