@@ -14,7 +14,9 @@
 //
 // # Methods
 //
-// Ordinary (Fellenius 1936), Bishop simplified (Bishop 1955) and Spencer (Spencer 1967). The factor of safety is defined on
+// Ordinary (Fellenius 1936), Bishop simplified (Bishop 1955), Spencer (Spencer 1967), Morgenstern-Price (Morgenstern and Price
+// 1965) with a side-force function, and Janbu simplified (Janbu 1954, 1973) with and without its correction. [GoverningMethods]
+// tells which govern; [Reason] lists the rules of admissibility; [Model.Detail] gives the slice table. The factor of safety is defined on
 // strength: tau = (c + (sigma - u) tan phi)/F along the whole slip.
 //
 // # Assumptions and limits
