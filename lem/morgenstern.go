@@ -40,6 +40,11 @@ func (ws *Workspace) morgensternPrice(shape *SideForce, leftward bool) (f, lambd
 			f, lambda, reason, ok = a, b, why, true
 		}
 	}
+	if !ok || reason != Admissible {
+		if free, idle := ws.idleSlices(start, pole, leftward); idle {
+			return free, 0, Admissible, Converged
+		}
+	}
 	switch {
 	case !ok:
 		return math.NaN(), math.NaN(), Admissible, NotConverged
@@ -49,10 +54,31 @@ func (ws *Workspace) morgensternPrice(shape *SideForce, leftward bool) (f, lambd
 	return f, lambda, reason, Converged
 }
 
-// When the fallback is called.
+// idleSlices looks for the F at which every slice is in equilibrium on its own, as on a plane without cohesion: there is then no force between
+// slices, moments close whatever lambda is, and there is no line of thrust to judge.
+func (ws *Workspace) idleSlices(start, pole float64, leftward bool) (f float64, ok bool) {
+	for i := range ws.slice[:ws.n] {
+		if ws.slice[i].cl != 0 {
+			return 0, false
+		}
+	}
+	if f, _, ok = ws.forceF(start, 0, pole, leftward); !ok {
+		return 0, false
+	}
+	ws.trace(f, 0, leftward)
+	var load, greatest float64
+	for i := range ws.slice[:ws.n] {
+		load += math.Abs(ws.slice[i].q)
+		greatest = max(greatest, math.Abs(ws.forces[i].e))
+	}
+	return f, greatest <= idleShare*load
+}
+
+// When the fallback is called, and what counts as no force between slices.
 const (
-	farFromStart = 3  // An answer further from its start than by this ratio is looked at twice: the equations have answers without sense too.
-	scanUpTo     = 10 // Slips whose simplified F is above this are not: they do not matter, and there are many in a search.
+	idleShare    = 1e-6 // Of the vertical load.
+	farFromStart = 3    // An answer further from its start than by this ratio is looked at twice: the equations have answers without sense too.
+	scanUpTo     = 10   // Slips whose simplified F is above this are not: they do not matter, and there are many in a search.
 )
 
 // startAbovePole is how far above the largest pole of m-alpha the iteration starts at least.
