@@ -197,14 +197,16 @@ func (ws *Workspace) orient(r *Result) bool {
 }
 
 // turning returns what drives the slices, not yet oriented, to the right, and the sum of its absolute parts: for an arc the moment of the
-// vertical loads about the centre, for a polyline their sum along the base.
+// vertical loads about the centre, for a polyline the horizontal thrust that its bases would have to take without any friction, sum(Q
+// tan(alpha)). A line that this does not drive cannot slide that way at any F, however much of it is steep.
 func (ws *Workspace) turning() (d, sum float64) {
 	ss := ws.slice[:ws.n]
 	for i := range ss {
-		t := ss[i].q * ss[i].sin
-		if ws.arc {
-			t = ss[i].q * (ws.centre.X - ss[i].x)
+		t := ws.centre.X - ss[i].x
+		if !ws.arc {
+			t = ss[i].sin / ss[i].cos
 		}
+		t *= ss[i].q
 		d += t
 		sum += math.Abs(t)
 	}

@@ -58,7 +58,8 @@ const (
 )
 
 // janbuCorrection returns f0 = 1 + b1 (d/L - 1.4 (d/L)^2), which makes up for the vertical forces between slices that the simplified method
-// leaves out. L is the straight length from the head to the exit of the slip, d its greatest distance from that line.
+// leaves out. L is the straight length from the head to the exit of the slip, d its greatest distance from that line. Beyond d/L = 1/1.4 the
+// parabola falls below 1, where it has no meaning; f0 then stays 1, on the safe side.
 func (ws *Workspace) janbuCorrection(leftward bool) float64 {
 	ss := ws.slice[:ws.n]
 	b1 := janbuGeneral
@@ -74,7 +75,7 @@ func (ws *Workspace) janbuCorrection(leftward bool) float64 {
 		b1 = janbuCohesionless
 	}
 	share := ws.sag(leftward)
-	return 1 + b1*(share-1.4*share*share)
+	return 1 + b1*max(0, share-1.4*share*share)
 }
 
 // sag returns the greatest distance of the slip from the straight line between its ends over the length of that line.
