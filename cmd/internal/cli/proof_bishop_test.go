@@ -1,114 +1,273 @@
 package cli
 
 import (
-	"encoding/json"
 	"math"
 	"slices"
+	"sort"
 )
 
-// This file is a stranger's analysis: Bishop's simplified method written from the textbook, which knows of the program only what stands in
-// result.json (docs/outputs.md). It shares no code with the engine, and is as plain and slow as it can be.
+// stranger is a plain analysis of one check by Bishop's simplified method (Bishop 1955, Geotechnique 5), from result.json alone: vertical
+// slices of equal width, one column of soil a slice, F by repeated substitution. It shares no code with the engine.
+type stranger struct {
+	file     *theirFile
+	section  *theirSection
+	water    theirWater
+	strength theirStrength
+	kh       float64
+}
 
-// The parts of result.json that a stranger needs.
-type (
-	theirFile struct {
-		Settings struct {
-			Depth     float64 `json:"depth_of_interest_m"`
-			GammaW    float64 `json:"gamma_w_kN_m3"`
-			Direction string  `json:"direction"`
-			Ranges    struct {
-				Head *[2]float64 `json:"head"`
-				Exit *[2]float64 `json:"exit"`
-			} `json:"search_ranges"`
-		} `json:"settings"`
-		Soils      map[string]theirSoil `json:"soils"`
-		Situations []struct {
-			Name     string         `json:"name"`
-			Strength map[string]any `json:"-"`
-			Raw      any            `json:"strength"`
-			Kh       float64        `json:"kh"`
-		} `json:"situations"`
-		Existing theirOption   `json:"existing"`
-		Options  []theirOption `json:"options"`
-		Least    *string       `json:"least_earthworks"`
-	}
-	theirSoil struct {
-		Dry     float64 `json:"unit_weight_kN_m3"`
-		Wet     float64 `json:"saturated_unit_weight_kN_m3"`
-		Drained struct {
-			C   float64 `json:"cohesion_kPa"`
-			Phi float64 `json:"friction_angle_deg"`
-		} `json:"drained"`
-		Undrained *struct {
-			Strength float64      `json:"strength_kPa"`
-			Gradient float64      `json:"gradient_kPa_per_m"`
-			DatumY   float64      `json:"datum_y"`
-			Datum    [][2]float64 `json:"datum"`
-			Points   [][3]float64 `json:"points"`
-		} `json:"undrained"`
-	}
-	theirOption struct {
-		Name       string        `json:"name"`
-		Status     string        `json:"status"`
-		Reason     string        `json:"reason"`
-		Binds      string        `json:"binds_on"`
-		Situations []theirAnswer `json:"situations"`
-		Stages     []theirAnswer `json:"stages"`
-		Section    theirSection  `json:"section"`
-	}
-	theirAnswer struct {
-		Name     string             `json:"name"`
-		Required float64            `json:"required_fs"`
-		FS       *float64           `json:"fs"`
-		ByMethod map[string]float64 `json:"fs_by_method"`
-		Slip     *theirSlip         `json:"slip"`
-		Depth    float64            `json:"slip_depth_m"`
-		Strength any                `json:"strength"` // Stages only, like what follows.
-		Kh       float64            `json:"kh"`
-		Section  theirSection       `json:"section"`
-	}
-	theirSlip struct {
-		Kind   string     `json:"kind"`
-		Centre [2]float64 `json:"centre"`
-		Radius float64    `json:"radius"`
-		From   [2]float64 `json:"from"`
-		To     [2]float64 `json:"to"`
-	}
-	theirSection struct {
-		Ground [][2]float64 `json:"ground"`
-		Strata []struct {
-			Soil string       `json:"soil"`
-			Top  [][2]float64 `json:"top"`
-		} `json:"strata"`
-		Placed []struct {
-			Soil    string       `json:"soil"`
-			Outline [][2]float64 `json:"outline"`
-		} `json:"placed"`
-		Surcharges []theirLoad           `json:"surcharges"`
-		FirmBase   [][2]float64          `json:"firm_base"`
-		Water      map[string]theirWater `json:"water"`
-	}
-	theirLoad struct {
-		From, To float64
-		KPa      float64
-		Variable bool
-	}
-	theirWater struct {
-		Line   [][2]float64                    `json:"line"`
-		Free   []struct{ Level, From, To float64 } `json:"-"`
-		BySoil map[string]struct {
-			Ru    *float64 `json:"ru"`
-			Level *float64 `json:"level_y"`
-		} `json:"by_soil"`
-		Drains *struct {
-			Before [][2]float64 `json:"line_before"`
-			Invert [][2]float64 `json:"invert"`
-			Ratio  []float64    `json:"ratio"`
-			Fade   float64      `json:"fade_m"`
-		} `json:"drains"`
-	}
-)
+// leastMAlpha bars slips with exits so steep that the force on their base has no sense (Whitman and Bailey 1967 warn below 0.2).
+const leastMAlpha = 0.2
 
-var _ = json.Marshal
-var _ = math.Pi
-var _ = slices.Sort[[]int]
+// at returns the level of a line, held level beyond its ends.
+func (l theirLine) at(x float64) float64 {
+	i := sort.Search(len(l), func(k int) bool { return l[k][0] >= x })
+	switch i {
+	case 0:
+		return l[0][1]
+	case len(l):
+		return l[i-1][1]
+	}
+	a, b := l[i-1], l[i]
+	return a[1] + (b[1]-a[1])*(x-a[0])/(b[0]-a[0])
+}
+
+// crossings returns the levels at which the vertical at x meets a closed outline.
+func (l theirLine) crossings(x float64) (ys []float64) {
+	for i, b := range l {
+		if a := l[(i+len(l)-1)%len(l)]; (a[0] < x) != (b[0] < x) {
+			ys = append(ys, a[1]+(b[1]-a[1])*(x-a[0])/(b[0]-a[0]))
+		}
+	}
+	return ys
+}
+
+// soil returns the soil at a point: the last body placed there, else the lowest stratum that reaches so high.
+func (g *stranger) soil(x, y float64) string {
+	for i := len(g.section.Placed) - 1; i >= 0; i-- {
+		above := 0
+		for _, c := range g.section.Placed[i].Outline.crossings(x) {
+			if c > y {
+				above++
+			}
+		}
+		if above%2 == 1 {
+			return g.section.Placed[i].Soil
+		}
+	}
+	for i := len(g.section.Strata) - 1; i > 0; i-- {
+		if g.section.Strata[i].Top.at(x) >= y {
+			return g.section.Strata[i].Soil
+		}
+	}
+	return g.section.Strata[0].Soil
+}
+
+// pool returns the level of water standing on the ground at x, -Inf if there is none. Like the ground it goes on beyond the ends.
+func (g *stranger) pool(x float64) float64 {
+	level := math.Inf(-1)
+	x = min(max(x, g.section.Ground[0][0]), g.section.Ground[len(g.section.Ground)-1][0])
+	for _, f := range g.water.Free {
+		if f.From <= x && x <= f.To && f.Level > g.section.Ground.at(x) {
+			level = max(level, f.Level)
+		}
+	}
+	return level
+}
+
+// head returns the piezometric level at a point in a soil, and the level of the water line there without drains.
+func (g *stranger) head(soil string, x, y float64) (head, line float64) {
+	line = g.pool(x)
+	if by, ok := g.water.BySoil[soil]; ok && by.Ru == nil && (by.Level != nil || !math.IsInf(line, -1)) {
+		if by.Level != nil {
+			line = max(line, *by.Level)
+		}
+		return line, line
+	}
+	before, d := g.water.Line, g.water.Drains
+	if d != nil {
+		before = d.Before
+	}
+	if before != nil {
+		line = max(line, before.at(x))
+	}
+	if d == nil || x <= d.Invert[0][0] || x >= d.Invert[len(d.Invert)-1][0] {
+		return line, line
+	}
+	ratios := slices.Clone(d.Invert)
+	for i := range ratios {
+		ratios[i][1] = d.Ratio[i]
+	}
+	invert, ratio := d.Invert.at(x), ratios.at(x)
+	switch {
+	case invert >= line || y <= invert-d.Fade:
+		return line, line
+	case y >= invert:
+		return line - ratio*(line-y), line
+	}
+	return line - ratio*(line-invert)*(1-(invert-y)/d.Fade), line
+}
+
+// column returns the weight of the ground above a point, kPa, and the level of its centroid.
+func (g *stranger) column(x, y float64) (weight, centroid float64) {
+	top := g.section.Ground.at(x)
+	levels := []float64{y, top}
+	for _, s := range g.section.Strata {
+		levels = append(levels, s.Top.at(x))
+	}
+	for _, p := range g.section.Placed {
+		levels = append(levels, p.Outline.crossings(x)...)
+	}
+	for soil := range g.file.Soils {
+		_, line := g.head(soil, x, y)
+		levels = append(levels, line)
+	}
+	slices.Sort(levels)
+	for i := 1; i < len(levels); i++ {
+		a, b := levels[i-1], levels[i]
+		if a < y || b > top || a == b {
+			continue
+		}
+		soil := g.soil(x, (a+b)/2)
+		gamma := g.file.Soils[soil].Moist
+		if _, line := g.head(soil, x, y); (a+b)/2 < line {
+			gamma = g.file.Soils[soil].Wet
+		}
+		weight += gamma * (b - a)
+		centroid += gamma * (b - a) * (a + b) / 2
+	}
+	return weight, centroid / weight
+}
+
+// shear returns cohesion, kPa, and tan(phi) of a soil at a point.
+func (g *stranger) shear(soil string, x, y float64) (c, tan float64) {
+	s := g.file.Soils[soil]
+	if !g.strength.undrained(soil) {
+		return s.Drained.Cohesion, math.Tan(s.Drained.Friction * math.Pi / 180)
+	}
+	u := s.Undrained
+	switch {
+	case len(u.Points) > 0:
+		verticals := map[float64]theirLine{} // By x: strength against level.
+		for _, p := range u.Points {
+			verticals[p[0]] = append(verticals[p[0]], theirPoint{p[1], p[2]})
+		}
+		var across theirLine // Strength at this level against x.
+		for at, v := range verticals {
+			slices.SortFunc(v, func(a, b theirPoint) int { return slices.Compare(a[:], b[:]) })
+			across = append(across, theirPoint{at, v.at(y)})
+		}
+		slices.SortFunc(across, func(a, b theirPoint) int { return slices.Compare(a[:], b[:]) })
+		return across.at(x), 0
+	case u.DatumY != nil:
+		return u.Strength + u.Gradient*max(0, *u.DatumY-y), 0
+	case u.Datum != nil:
+		return u.Strength + u.Gradient*max(0, u.Datum.at(x)-y), 0
+	}
+	return u.Strength, 0
+}
+
+// theirSlice is a slice: its base and forces. Signs of sin and push are those of a slip to the right.
+type theirSlice struct{ x, b, sin, q, u, c, tan, push, shake float64 }
+
+// cut cuts the arc between x = from and to into n slices. It reports false if the arc is not wholly in the ground, too shallow or through
+// the firm base.
+func (g *stranger) cut(c theirPoint, r, from, to float64, n int) (ss []theirSlice, ok bool) {
+	depth, b := 0.0, (to-from)/float64(n)
+	for i := range n {
+		s := theirSlice{x: from + b*(float64(i)+0.5), b: b}
+		y := c[1] - math.Sqrt(r*r-(s.x-c[0])*(s.x-c[0]))
+		ground := g.section.Ground.at(s.x)
+		if !(ground > y) || g.section.FirmBase != nil && y < g.section.FirmBase.at(s.x) {
+			return nil, false
+		}
+		depth = max(depth, ground-y)
+		s.sin = (c[0] - s.x) / r
+		soil := g.soil(s.x, y)
+		weight, centroid := g.column(s.x, y)
+		s.c, s.tan = g.shear(soil, s.x, y)
+		if by := g.water.BySoil[soil]; by.Ru != nil {
+			s.u = *by.Ru * weight
+		} else {
+			head, _ := g.head(soil, s.x, y)
+			s.u = g.file.Settings.GammaW * max(0, head-y)
+		}
+		if g.strength.undrained(soil) {
+			s.u = 0
+		}
+		s.q = weight * b
+		s.shake = g.kh * s.q * (c[1] - centroid)
+		for _, l := range g.section.Surcharges {
+			if l.Kind == "permanent" && l.From < s.x && s.x < l.To {
+				s.q += l.KPa * b
+				s.shake += g.kh * l.KPa * b * (c[1] - ground)
+			}
+		}
+		if p := g.file.Settings.GammaW * (g.pool(s.x) - ground); p > 0 {
+			s.q += p * b
+			s.push = p * (g.section.Ground.at(s.x+b/2) - g.section.Ground.at(s.x-b/2)) * (c[1] - ground)
+		}
+		ss = append(ss, s)
+	}
+	return ss, depth > g.file.Settings.Depth*shallower
+}
+
+// shallower forgives the deepest point of a slip falling between two slices.
+const shallower = 0.995
+
+// bishop returns F of slices of an arc of radius r, NaN if the slip is not admissible, and whether it moves to the left. Variable
+// surcharges are left out, one by one, where they raise F.
+func (g *stranger) bishop(ss []theirSlice, r float64) (f float64, leftward bool) {
+	var weigh float64
+	for _, s := range ss {
+		weigh += s.q * s.sin
+	}
+	sense := 1.0
+	if leftward = weigh < 0; leftward {
+		sense = -1
+	}
+	f = solveBishop(ss, r, sense)
+	for _, l := range g.section.Surcharges {
+		if l.Kind != "variable" {
+			continue
+		}
+		loaded := slices.Clone(ss)
+		for i := range loaded {
+			if s := &loaded[i]; l.From < s.x && s.x < l.To {
+				s.q += l.KPa * s.b
+			}
+		}
+		if with := solveBishop(loaded, r, sense); with < f {
+			ss, f = loaded, with
+		}
+	}
+	return f, leftward
+}
+
+// solveBishop finds F by repeated substitution; sense is 1 for a slip to the right, -1 to the left.
+func solveBishop(ss []theirSlice, r, sense float64) float64 {
+	f := 1.0
+	for range 200 {
+		var resisting, driving float64
+		admissible := true
+		for _, s := range ss {
+			sin := s.sin * sense
+			m := math.Sqrt(1-sin*sin) + sin*s.tan/f
+			admissible = admissible && (m >= leastMAlpha || sin >= 0)
+			resisting += (s.c*s.b + (s.q-s.u*s.b)*s.tan) / m
+			driving += s.q*sin + (s.push*sense+s.shake)/r
+		}
+		next := resisting / driving
+		if !(next > 0) {
+			return math.NaN()
+		}
+		if math.Abs(next-f) < 1e-8 {
+			if !admissible {
+				return math.NaN()
+			}
+			return next
+		}
+		f = next
+	}
+	return math.NaN()
+}

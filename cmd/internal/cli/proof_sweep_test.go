@@ -40,7 +40,7 @@ stages: {water: summer, required_fs: 1.15}
 limits:
   works_between: {left: 6, right: 37.5}
 remedies:
-  regrade: {fill: sand fill, batter: 1.5 to 3.5 by 0.05, pivot: 0 to 0.5 by 0.05}
+  regrade: {fill: sand fill, batter: 1.5 to 3.5 by 0.05, pivot: 0 to 1 by 0.1}
 `
 
 // TestNothingCheaper goes through the whole lattice of a remedy without the optimiser. Areas and limits are worked out again from the two
