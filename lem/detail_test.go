@@ -35,7 +35,7 @@ func TestDetailGivesF(t *testing.T) {
 		var resisting, driving float64
 		for i, s := range d.Slices {
 			sin, cos := math.Sincos(s.Inclination)
-			if q := s.Weight + s.Surcharge + s.Water; !within(q, s.Vertical, 1e-12) {
+			if q := s.Weight + s.Surcharge + s.Water + s.QuakeVertical; !within(q, s.Vertical, 1e-12) {
 				t.Errorf("slice %d: Q = %g, parts add to %g", i, s.Vertical, q)
 			}
 			shear := (s.Cohesion*s.Length + s.Normal*s.TanFriction) / f
