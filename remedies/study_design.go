@@ -138,7 +138,7 @@ func (d *design) searchAll(ctx context.Context, e optimize.Effort) ([][]optimize
 func (d *design) searchOne(ctx context.Context, i int, e optimize.Effort) ([]optimize.Found[Cut], error) {
 	o := lem.SearchOptions{
 		Slices: d.z.s.Slices, MinDepth: d.z.j.MinDepth, Seed: e.Seed + d.z.s.Seed, Window: d.z.j.window(),
-		Below: d.required(i) + d.z.s.Allowance,
+		Below: d.required(i) + d.z.s.Allowance, Polylines: true,
 	}
 	if e.Audit {
 		o.Sampler, o.Effort, o.Slices = lem.ByCentre, auditEffort, auditSlices*d.z.s.Slices
