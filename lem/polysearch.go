@@ -19,7 +19,7 @@ const (
 	fineSeeds     = 3    // Basins that get more nodes,
 	fineUpTo      = 1.06 // with F up to this multiple of the lowest.
 	coarseTrials  = 320
-	fineTrials    = 700
+	fineTrials    = 1000
 	coarseNodes   = 10 // A seed gets nodes up to this number,
 	fineNodes     = 15 // and a basin near the lowest up to this.
 )
@@ -83,7 +83,7 @@ func (s *searcher) searchPolylines(ctx context.Context) {
 			p.try(&again[i])
 		}
 		again = p.distinct(again)
-		again = p.improve(ctx, again, len(again), fineUpTo, fineNodes, coarseTrials)
+		again = p.improve(ctx, again, len(again), fineUpTo, fineNodes, fineTrials)
 		s.polys = append(s.polys, candidatesOf(again, p.setting)...)
 	}
 	p.setting.Method = methods[0]

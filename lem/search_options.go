@@ -40,7 +40,7 @@ type Minima struct {
 	// lowest screen first, at most MaxUnresolved of them.
 	Unresolved      []Minimum
 	Trials          int // Slip evaluations spent.
-	NotConverged    int // Trials that no governing method could solve.
+	NotConverged    int // Trials that no governing method could solve; of polylines, that the first of them could not.
 	InadmissibleCut int // Trials left out by the rules of admissibility.
 }
 
