@@ -16,7 +16,8 @@ func filled(height, width, batter float64) (s *Section, inner, outer, toe float6
 	return &Section{
 		Ground: Profile{{-40, 9}, {0, 9}, {inner, height}, {outer, height}, {toe, 0}, {80, 0}},
 		Soils: []Soil{
-			{UnitWeight: 19, Cohesion: 4, Friction: 24 * degree}, {UnitWeight: 17, Cohesion: 2, Friction: 20 * degree},
+			{UnitWeight: 19, Cohesion: 4, Friction: 24 * degree},
+			{UnitWeight: 17, Cohesion: 2, Friction: 20 * degree},
 			{UnitWeight: 20, Friction: 36 * degree},
 		},
 		Strata: []Stratum{{0, before}, {1, Profile{{-40, -1}, {80, -1}}}, {2, Profile{{-40, -5}, {80, -5}}}},
