@@ -56,6 +56,34 @@ func TestPublishedPolylines(t *testing.T) {
 	}
 }
 
+// TestPublishedDyke checks the dyke on layered clay whose non-circular slip is far below its circle: circle 1.453 (Bishop), non-circular 1.17
+// (Spencer).
+func TestPublishedDyke(t *testing.T) {
+	const source = "Christian, Ladd and Baecher (1994), J. Geotech. Engng 120(12); Duncan, Wright and Brandon (2014), ch. 7; recalled from memory"
+	g := Profile{{-100, 0}, {0, 0}, {18, 6}, {74.6, 6}, {92.6, 12}, {160, 12}}
+	level := func(y float64) Profile { return Profile{{-100, y}, {160, y}} }
+	s := &Section{
+		Ground: g,
+		Soils: []Soil{
+			{UnitWeight: 20, Friction: 30 * degree},
+			{UnitWeight: 19, Cohesion: 41},
+			{UnitWeight: 19, Cohesion: 34.5},
+			{UnitWeight: 20.5, Cohesion: 31.2},
+		},
+		Strata:   []Stratum{{0, g}, {1, level(0)}, {2, level(-4)}, {3, level(-12)}},
+		FirmBase: level(-18.5),
+	}
+	m := compiled(t, s, &Situation{})
+	// The shallow slip on the dyke's own face is not meant.
+	o := SearchOptions{MinDepth: 8, Window: Window{Direction: LeftwardOnly}}
+	if f := lowestBy(t, m, Bishop, o).Result.F; !within(f, 1.453, 0.01) {
+		t.Errorf("circle: F = %.4f, want 1.453 (%s)", f, source)
+	}
+	if f := lowestPolyline(t, m, Spencer, o).Result.F; !within(f, 1.17, 0.015) {
+		t.Errorf("polyline: F = %.4f, want 1.17 (%s)", f, source)
+	}
+}
+
 // fredlundWeak is the slope of Fredlund and Krahn with a thin weak layer about the level 17 ft, in feet and pounds.
 func fredlundWeak(ru float64) *Section {
 	g := Profile{{0, 60}, {60, 60}, {140, 20}, {200, 20}}
