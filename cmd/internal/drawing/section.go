@@ -54,6 +54,7 @@ type picture struct {
 	sec *lem.Section
 	gov *remedies.Outcome // The outcome whose slip is drawn; nil: none.
 
+	whole          bool // Show the whole section, however long.
 	works          bool // The ground, the bodies or the water differ from the section as read.
 	reshaped       bool // The ground does.
 	x0, x1, lo, hi float64
@@ -128,7 +129,7 @@ const shownWhole = 1.6
 func (p *picture) chooseWidth() {
 	g := p.sec.GroundBefore()
 	p.x0, p.x1 = g.Left(), g.Right()
-	if p.opt == nil {
+	if p.opt == nil || p.whole {
 		return
 	}
 	lo, hi := min(p.job.Crest.X, p.job.Toe.X), max(p.job.Crest.X, p.job.Toe.X)
@@ -190,7 +191,7 @@ func (p *picture) chooseHeight() {
 	}
 	// Lines far below the slope are shown only in the section as read: they would make the slope small.
 	deepest := p.lo - 0.6*(p.hi-p.lo)
-	if p.opt == nil {
+	if p.opt == nil || p.whole {
 		deepest = math.Inf(-1)
 	}
 	floor := p.lo
