@@ -106,7 +106,9 @@ func (m *Model) shorten(ws *Workspace, p *part, s *Slip, o *Setting, r *Result) 
 	m.slicePart(ws, *p, s, o)
 	y := s.levelAt(x)
 	ground := m.cols[col].ground.at(x)
-	r.Crack = max(0, ground-y)
+	if r.Crack = ground - y; r.Crack <= stepWidth*(m.right-m.left) { // Rounding: it daylights as it would without.
+		r.Crack = 0
+	}
 	after, _ := ws.turning()
 	return after != 0 && after < 0 == leftward
 }
@@ -118,6 +120,19 @@ func (s *Slip) levelAt(x float64) float64 {
 	}
 	dx := x - s.Centre.X
 	return s.Centre.Y - math.Sqrt(max(0, s.Radius*s.Radius-dx*dx))
+}
+
+// uncracked returns the ends on the ground of the part of a circle that an answer is for, as they would be without a crack.
+func (m *Model) uncracked(ws *Workspace, s *Slip, r *Result) (from, to Point) {
+	if r.Crack > 0 {
+		m.circleParts(ws, s.Centre, s.Radius)
+		for _, p := range ws.parts {
+			if mid := (r.From.X + r.To.X) / 2; p.from < mid && mid < p.to {
+				return Point{p.from, m.groundAt(p.from)}, Point{p.to, m.groundAt(p.to)}
+			}
+		}
+	}
+	return r.From, r.To
 }
 
 // crackOnCircle returns where an arc, coming from its head, first passes below the bottom of the crack, and in which column.

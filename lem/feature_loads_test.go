@@ -162,3 +162,23 @@ func TestVerticalEarthquakeScalesWeight(t *testing.T) {
 		sameF(t, a, &Situation{Kv: kv, Water: w}, b, &Situation{Water: w}, 1e-9)
 	}
 }
+
+// TestVariableInclinedLoad: a variable load that pushes the slip counts as a permanent one does, and one that holds it back does not count.
+func TestVariableInclinedLoad(t *testing.T) {
+	for _, slip := range bankSlips() {
+		for _, method := range []Method{Ordinary, JanbuPlain, Spencer} {
+			f := func(shear float64, variable bool) float64 {
+				s := bank()
+				s.Loads = []Surcharge{{FromX: -4, ToX: 2, Shear: shear, Variable: variable}}
+				return evaluate(t, compiled(t, s, &Situation{}), slip, Setting{Method: method}).F
+			}
+			bare := f(0, false)
+			if a, b := f(5, true), f(5, false); !within(a, b, 1e-9) || !(a < bare) {
+				t.Errorf("%v: pushed by a variable load F = %.5f, permanent %.5f, without %.5f", method, a, b, bare)
+			}
+			if a, b := f(-5, true), f(-5, false); !within(a, bare, 1e-9) || !(b > bare) {
+				t.Errorf("%v: held by a variable load F = %.5f, permanent %.5f, without %.5f", method, a, b, bare)
+			}
+		}
+	}
+}

@@ -155,12 +155,18 @@ func (m *Model) polylineDepth(p part, s *Slip) (depth float64, clear bool) {
 	return depth, clear
 }
 
+// leastShare is the least width of a slice of a polyline, as a share of that aimed at.
+const leastShare = 1e-9
+
 // slicePolyline cuts a part of a polyline into slices; nodes and column edges are always slice edges.
 func (m *Model) slicePolyline(ws *Workspace, p part, s *Slip, target int) {
 	ws.n, ws.wet, ws.arc = 0, false, false
 	width := (p.to - p.from) / float64(max(target, MinSlices))
 	w := m.walk(s.Nodes, p.from, p.to, p.first)
 	for w.next() {
+		if w.x1-w.x0 <= leastShare*width { // Left over by rounding: its slope would be anything.
+			continue
+		}
 		n := max(1, int(math.Ceil((w.x1-w.x0)/width-crossingMargin)))
 		k := w.at.first
 		dx, dy := (w.x1-w.x0)/float64(n), (w.y1-w.y0)/float64(n)

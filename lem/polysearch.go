@@ -143,7 +143,8 @@ func (p *polySearch) fromCircles() []polyTrial {
 		if c.r.F > max(circlesUpTo*circles[0].r.F, p.s.o.Below) {
 			break
 		}
-		t := polyTrial{nodes: inscribed(nil, c.slip.Centre, c.slip.Radius, c.r.From, c.r.To, circlePieces, flattest)}
+		from, to := p.s.m.uncracked(&p.s.ws, &c.slip, &c.r)
+		t := polyTrial{nodes: inscribed(nil, c.slip.Centre, c.slip.Radius, from, to, circlePieces, flattest)}
 		if !p.mend(t.nodes) {
 			continue
 		}

@@ -73,7 +73,7 @@ func (m *Model) setPore(d *draught, l *layer, c *column, x float64) (saturated f
 	switch {
 	case soil.HasRu:
 		l.pore, l.ru = poreRu, soil.Ru
-	case len(m.points) > 0 && !(l.pore == poreOwn && !hasOwn):
+	case len(m.points) > 0 && (l.pore != poreOwn || hasOwn):
 		l.pore = porePoints
 	}
 	return saturated

@@ -33,12 +33,9 @@ func checkStrength(s *Section) error {
 }
 
 // effectiveBefore returns the effective vertical stress before works near a point of a column as base.at(x) - perMetre y, kPa. It holds between the
-// boundaries of strata and water before works; above the ground before works it is 0.
+// boundaries of strata and water before works; above the ground before works it is negative.
 func (d *draught) effectiveBefore(c *column, water Profile, x, y float64) (base line, perMetre float64) {
 	top := lineOver(d.strata[0], c.x0, c.x1)
-	if y >= top.at(x) {
-		return line{}, 0
-	}
 	head := nowhere
 	if water != nil {
 		head = lineOver(water, c.x0, c.x1)
