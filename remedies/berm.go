@@ -38,7 +38,7 @@ func bermKind() Kind {
 }
 
 func newBerm(_ *Job, r *Request) (Remedy, error) {
-	return &earthworks{noun: "berm", soil: r.soil("fill"), shape: bermShape("berm")}, nil
+	return &earthworks{noun: "berm", soil: r.soil("fill"), fills: true, shape: bermShape("berm")}, nil
 }
 
 // bermShape is a level top at height x[0] above the toe, of width x[1] from where it meets the face before works to its outer edge,

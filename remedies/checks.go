@@ -8,9 +8,6 @@ import (
 	"standfast/lem"
 )
 
-// EndOfConstruction is the name of the stage in which fill has been placed and clays have not drained yet.
-const EndOfConstruction = "end of construction"
-
 // loadedArea is the area of a clay under fill below which it does not count as loaded, m2: rounding.
 const loadedArea = 1e-6
 
@@ -47,6 +44,7 @@ func (p *Proposal) clone() *Proposal {
 	q.Waters = slices.Clone(p.Waters)
 	q.variants = slices.Clone(p.variants)
 	q.Stages = slices.Clone(p.Stages)
+	q.plant = slices.Clone(p.plant)
 	q.Quantities = p.Quantities.clone()
 	q.loaded = slices.Clone(p.loaded)
 	q.Violations = slices.Clone(p.Violations)
@@ -83,7 +81,7 @@ func situationCheck(p *Proposal, i int, s *Situation, note string, w lem.Water) 
 func (p *Proposal) finish(j *Job) {
 	p.Quantities.Strip = stripped(j.Section.Ground, p.Section.Ground)
 	p.checkImport(j)
-	p.stageChecks(j)
+	p.addStages(j)
 }
 
 // stripped returns the length along the ground before works over which the ground has changed.
@@ -95,31 +93,6 @@ func stripped(before, after lem.Profile) float64 {
 		}
 	}
 	return length
-}
-
-// stageChecks sets the end-of-construction check. It is there for every size of works that may place fill in a job that has clay;
-// where this size loads no clay it is a check of the finished works, drained, with the water of stages. Drains do not count in it.
-func (p *Proposal) stageChecks(j *Job) {
-	if !p.mayFill {
-		return
-	}
-	if !j.Stage.Given {
-		p.note("construction stages are not checked: the case has no stage settings")
-		return
-	}
-	if !slices.Contains(j.Clay, true) {
-		return
-	}
-	c := Check{
-		Name: EndOfConstruction, Stage: true, Section: &p.Section, SituationI: -1, Required: j.Stage.RequiredFS,
-		Situation: lem.Situation{Name: EndOfConstruction, Water: p.stageWater, Undrained: p.undrainedClays(j)},
-	}
-	at := slices.IndexFunc(p.Stages, func(s Check) bool { return s.Name == EndOfConstruction })
-	if at < 0 {
-		p.Stages = append(p.Stages, c)
-		return
-	}
-	p.Stages[at] = c
 }
 
 // undrainedClays returns which soils act undrained at the end of construction: once fill loads any clay, all clays with an undrained

@@ -11,6 +11,8 @@ import (
 type earthworks struct {
 	noun  string // For messages: "berm".
 	soil  int    // Soil of the fill; noSoil: none was named and nothing may be filled.
+	cuts  bool   // Some size may cut.
+	fills bool   // Some size is meant to fill, and not only a hollow of the ground.
 	shape func(s *slope, x []float64) shape
 }
 
@@ -18,6 +20,8 @@ type earthworks struct {
 func (w *earthworks) Apply(j *Job, on *Proposal, x []float64) *Proposal {
 	p := on.clone()
 	p.mayFill = p.mayFill || w.soil != noSoil
+	p.mayCut = p.mayCut || w.cuts
+	p.fillFirst = p.fillFirst || w.fills
 	f := slopeOf(j, on)
 	sh := w.shape(f, x).own(f)
 	p.Violations = append(p.Violations, sh.faults...)
@@ -50,8 +54,28 @@ func (w *earthworks) build(j *Job, p *Proposal, sh *shape, mirrored bool) {
 		left, right = right, left
 	}
 	p.checkFences(j, done, left, right)
+	p.plantOn(j, sh)
 	if len(done) > 0 {
 		p.checkForm(j, sh, w.soil != noSoil && j.Section.Soils[w.soil].FreeDraining, w.noun)
+	}
+}
+
+// plantOn lets plant stand on the level parts of a shape, and behind the top of a shape that has none.
+func (p *Proposal) plantOn(j *Job, sh *shape) {
+	level := false
+	for i := 1; i < len(sh.line); i++ {
+		a, b := sh.line[i-1], sh.line[i]
+		if math.Abs(b.Y-a.Y) <= flat*(b.X-a.X) {
+			p.addPlant(j, a.X, b.X)
+			level = true
+		}
+	}
+	switch {
+	case level:
+	case j.Facing() > 0:
+		p.addPlant(j, sh.from()-plantStrip, sh.from())
+	default:
+		p.addPlant(j, sh.to(), sh.to()+plantStrip)
 	}
 }
 

@@ -68,6 +68,7 @@ type StageSettings struct {
 	Given      bool    // False: the case has no stage settings and stages are not checked, which the output says.
 	Water      int     // Index into Job.Waters; -1: dry.
 	RequiredFS float64 // FS required in every stage.
+	Plant      float64 // Pressure of construction plant, kPa; 0: none is counted. Usual: 10 to 20 kPa (common practice, no source).
 }
 
 // Limits are the limits of the works.

@@ -222,7 +222,7 @@ func TestEndOfConstruction(t *testing.T) {
 func TestOneStageForSeveralFills(t *testing.T) {
 	j := cutting()
 	p := apply(t, j, request("regrade", fillOf(sandFill), 3, 0.5), request("berm", fillOf(rockfill), 2, 4, 2))
-	if len(p.Stages) != 1 || p.Stages[0].Section != &p.Section || len(p.Stages[0].Section.Placed) != 2 {
+	if len(p.Stages) != 2 || p.Stages[1].Name != EndOfConstruction || p.Stages[1].Section != &p.Section || len(p.Section.Placed) != 2 {
 		t.Errorf("stages %+v", p.Stages)
 	}
 }

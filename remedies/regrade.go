@@ -71,17 +71,17 @@ func regradeKind() Kind {
 
 // newRegrade makes the remedy; without a fill soil a face that runs above the ground is a violation.
 func newRegrade(_ *Job, r *Request) (Remedy, error) {
-	given := func(i int) bool { return r.Axes[i].Name != "" }
 	benches := r.Axes[regradeBenches]
 	switch {
-	case !given(regradeBenches) && (given(regradeInterval) || given(regradeFirst) || given(regradeWidth) || given(regradeUpper)):
+	case !r.has(regradeBenches) && (r.has(regradeInterval) || r.has(regradeFirst) || r.has(regradeWidth) || r.has(regradeUpper)):
 		return nil, fmt.Errorf("%w: regrade: bench_interval, first_bench, bench_width and upper_batter need benches: give their number", ErrRequest)
-	case given(regradeBenches) && (benches.Min != math.Trunc(benches.Min) || benches.Step != math.Trunc(benches.Step)):
+	case r.has(regradeBenches) && (benches.Min != math.Trunc(benches.Min) || benches.Step != math.Trunc(benches.Step)):
 		return nil, fmt.Errorf("%w: regrade: benches is a whole number", ErrRequest)
-	case given(regradeBenches) && benches.Max > 0 && !given(regradeWidth):
+	case r.has(regradeBenches) && benches.Max > 0 && !r.has(regradeWidth):
 		return nil, fmt.Errorf("%w: regrade: benches need a bench_width", ErrRequest)
 	}
-	return &earthworks{noun: "regraded face", soil: r.soil("fill"), shape: regradeShape}, nil
+	soil := r.soil("fill")
+	return &earthworks{noun: "regraded face", soil: soil, cuts: true, fills: soil != noSoil && r.Axes[regradePivot].Max > 0, shape: regradeShape}, nil
 }
 
 // regradeShape is the face at batter x[0] through the point at share x[1] of the height on the toe-crest chord, with its benches, run

@@ -81,10 +81,15 @@ type Proposal struct {
 	NotChecked []string    // Checks that could not be made, each with the reason; an option that has any cannot meet the target.
 	Notes      []string    // What the works changed silently, such as a water line clipped to the new ground.
 
-	variants   []variant // Further states of the water in which situations must be met.
-	stageWater lem.Water // Of the job's stages, after works.
-	mayFill    bool      // Some size of the works applied can place fill.
-	loaded     []float64 // By soil: area of it that fill loads, m2.
+	variants   []variant       // Further states of the water in which situations must be met.
+	stageWater lem.Water       // Of the job's stages, after works.
+	mayCut     bool            // Some size of the works applied can cut.
+	mayFill    bool            // Some size of the works applied can place fill.
+	fillFirst  bool            // Fill is among the works applied that has to come before any cut.
+	drained    *lem.Drawdown   // Of the drains applied, on the stage's water; nil if no drains are applied or they lower nothing there.
+	mayDrain   bool            // Drains are among the works applied.
+	plant      []lem.Surcharge // Where plant works: on the level parts of the works.
+	loaded     []float64       // By soil: area of it that fill loads, m2.
 }
 
 // Check is a state that the works must stand in: a design situation or a construction stage.
@@ -96,6 +101,10 @@ type Check struct {
 	Situation  lem.Situation
 	Required   float64 // FS required.
 	SituationI int     // Index into Job.Situations that the check belongs to; -1 for a stage.
+	// Advisory: nothing is asked of it. Required is 0, so that it never governs; its FS is told beside the check that does.
+	Advisory bool
+	// Panels, when not nil, says that the section is the mean over open and intact lengths of a hole dug in panels.
+	Panels *Panels
 }
 
 // Violation is a limit of the works that a design breaks.

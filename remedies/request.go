@@ -20,6 +20,9 @@ func (r *Request) soil(choice string) int {
 	return noSoil
 }
 
+// has reports whether parameter i is present.
+func (r *Request) has(i int) bool { return r.Axes[i].Name != "" }
+
 // Fixed returns the parameter vector at the lower end of every axis, NaN for absent parameters: the sizes of a trial.
 func (r *Request) Fixed() []float64 {
 	x := make([]float64, len(r.Axes))

@@ -1,6 +1,7 @@
 package remedies
 
 import (
+	"math"
 	"slices"
 	"sort"
 
@@ -9,34 +10,6 @@ import (
 
 // noSoil is returned where there is no soil.
 const noSoil = -1
-
-// soilAt returns the index of the soil at a point, as if the ground were above it: the last placed body that holds the point, else
-// the lowest stratum whose top is at or above it.
-func soilAt(s *lem.Section, x, y float64) int {
-	for i := len(s.Placed) - 1; i >= 0; i-- {
-		if inside(s.Placed[i].Outline, x, y) {
-			return s.Placed[i].Soil
-		}
-	}
-	for i := len(s.Strata) - 1; i >= 0; i-- {
-		if s.Strata[i].Top.At(x) >= y {
-			return s.Strata[i].Soil
-		}
-	}
-	return noSoil
-}
-
-// inside reports whether a point lies within a simple outline (even number of crossings above it: outside).
-func inside(outline []lem.Point, x, y float64) bool {
-	in := false
-	for i, b := range outline {
-		a := outline[(i+len(outline)-1)%len(outline)]
-		if (a.X > x) != (b.X > x) && a.Y+(b.Y-a.Y)*(x-a.X)/(b.X-a.X) > y {
-			in = !in
-		}
-	}
-	return in
-}
 
 // addSoilAreas adds to dst, by soil, the area of each soil between under and top where top is the higher, from x = from to to.
 // In a slab of x in which no two lines cross, the thickness of every soil is linear, so the column at mid-slab gives it exactly.
@@ -57,9 +30,7 @@ func addSoilAreas(dst []float64, s *lem.Section, top, under lem.Profile, from, t
 		}
 		sort.Float64s(levels)
 		for k := 1; k < len(levels); k++ {
-			if soil := soilAt(s, x, (levels[k-1]+levels[k])/2); soil != noSoil {
-				dst[soil] += (levels[k] - levels[k-1]) * width
-			}
+			dst[s.SoilAt(x, (levels[k-1]+levels[k])/2)] += (levels[k] - levels[k-1]) * width
 		}
 	}
 }
@@ -133,3 +104,48 @@ func boundaries(s *lem.Section, from, to float64) []lem.Profile {
 	}
 	return lines
 }
+
+// slabLayers calls f for every part of one soil between under and top from x = from to x = to, with its outline: a quadrilateral or a
+// triangle between two verticals.
+func slabLayers(s *lem.Section, top, under lem.Profile, from, to float64, f func(soil int, outline []lem.Point)) {
+	slabs := soilSlabs(s, top, under, from, to)
+	lines := boundaries(s, from, to)
+	for i := 1; i < len(slabs); i++ {
+		x0, x1 := slabs[i-1], slabs[i]
+		x := (x0 + x1) / 2
+		hi, lo := edgeOf(top, x0, x1), edgeOf(under, x0, x1)
+		if hi.mid() <= lo.mid() {
+			continue
+		}
+		edges := []edge{lo, hi}
+		for _, l := range lines {
+			if e := edgeOf(l, x0, x1); e.mid() > lo.mid() && e.mid() < hi.mid() {
+				edges = append(edges, e)
+			}
+		}
+		sort.Slice(edges, func(a, b int) bool { return edges[a].mid() < edges[b].mid() })
+		for k := 1; k < len(edges); k++ {
+			a, b := edges[k-1], edges[k]
+			if b.mid()-a.mid() <= sameLevel {
+				continue
+			}
+			var out path
+			out.add(x0, b.y0)
+			out.add(x1, b.y1)
+			out.add(x1, a.y1)
+			out.add(x0, a.y0)
+			if n := len(out); math.Hypot(out[n-1].X-out[0].X, out[n-1].Y-out[0].Y) <= sameLevel {
+				out = out[:n-1]
+			}
+			f(s.SoilAt(x, (a.mid()+b.mid())/2), out)
+		}
+	}
+}
+
+// edge is a line over a slab: its levels at both ends.
+type edge struct{ y0, y1 float64 }
+
+func (e edge) mid() float64 { return (e.y0 + e.y1) / 2 }
+
+// edgeOf returns a profile over a slab in which it is straight.
+func edgeOf(p lem.Profile, x0, x1 float64) edge { return edge{levelRight(p, x0), levelLeft(p, x1)} }

@@ -37,6 +37,10 @@ func (d *trenchDrains) Apply(j *Job, on *Proposal, x []float64) *Proposal {
 	if ok {
 		d.measure(j, p, f, t)
 	}
+	p.mayDrain = true
+	if line := j.Stage.Water; ok && j.Stage.Given && line != dry && !j.Waters[line].Artesian {
+		p.drained = t.drawdown(j.Waters[line].Line, 1, meanFall(x[drainEffectiveness]))
+	}
 	for i, s := range j.Situations {
 		if s.Water == dry || s.DrainsWorking == 0 {
 			continue

@@ -34,7 +34,7 @@ func unloadKind() Kind {
 }
 
 func newUnload(*Job, *Request) (Remedy, error) {
-	return &earthworks{noun: "unloading", soil: noSoil, shape: unloadShape}, nil
+	return &earthworks{noun: "unloading", soil: noSoil, cuts: true, shape: unloadShape}, nil
 }
 
 // unloadShape is a level platform at depth x[0] below the crest, of width x[1] from where it comes out on the face, and a back
