@@ -136,8 +136,10 @@ func TestPublishedHandTables(t *testing.T) {
 		source: smith + "Example 5.3 (a)", arc: 10.7 * 76 * degree,
 		soils: []Soil{{UnitWeight: 19.3, Cohesion: 20, Friction: 20 * degree}},
 		rows: []row{
-			{width: 2, weight: 71.4, sin: sine(-5.9)}, {width: 2, weight: 167.9, sin: sine(14.5)},
-			{width: 2, weight: 223.9, sin: sine(31.3)}, {width: 2, weight: 148.6, sin: sine(45.7)},
+			{width: 2, weight: 71.4, sin: sine(-5.9)},
+			{width: 2, weight: 167.9, sin: sine(14.5)},
+			{width: 2, weight: 223.9, sin: sine(31.3)},
+			{width: 2, weight: 148.6, sin: sine(45.7)},
 		},
 	}
 	tests := []struct {
@@ -175,8 +177,10 @@ func TestSmithDeepCircle(t *testing.T) {
 	upper := Soil{UnitWeight: 19.3, Cohesion: 20, Friction: 20 * degree}
 	lower := Soil{UnitWeight: 19.3, Cohesion: 75, Friction: 7 * degree}
 	h := handTable{soils: []Soil{upper, lower}, rows: []row{
-		{width: 3, weight: 71.4, sin: sine(-31), soil: 1}, {width: 3, weight: 187.2, sin: sine(-10), soil: 1},
-		{width: 3, weight: 320.4, sin: sine(9), soil: 1}, {width: 3, weight: 370.6, sin: sine(30), soil: 1},
+		{width: 3, weight: 71.4, sin: sine(-31), soil: 1},
+		{width: 3, weight: 187.2, sin: sine(-10), soil: 1},
+		{width: 3, weight: 320.4, sin: sine(9), soil: 1},
+		{width: 3, weight: 370.6, sin: sine(30), soil: 1},
 		{width: 3, weight: 276.0, sin: sine(54), soil: 0},
 	}}
 	ws := h.workspace()
