@@ -10,7 +10,7 @@ import (
 // TestPolylineMeetsGround checks how a polyline is cut at the ground and run on to daylight (by construction of the geometry).
 func TestPolylineMeetsGround(t *testing.T) {
 	// A slope of 1:2, 10 m high, and further right a hill.
-	hill := Profile{{-40, 10}, {0, 10}, {20, 0}, {40, 0}, {50, 5}, {60, 0}, {90, 0}}
+	hill := Profile{{-40, 10}, {0, 10}, {20, 0}, {40, 0}, {50, 5}, {60, 0}, {90, 3}}
 	tests := []struct {
 		name   string
 		ground Profile
@@ -23,6 +23,7 @@ func TestPolylineMeetsGround(t *testing.T) {
 		{"ends below run on to the first daylight, not through the hill", hill, []Point{{0, 6}, {8, 2}, {16, 1}, {20, -0.5}, {21, -0.4}}, [][2]float64{{-8, 25}}, false},
 		{"cut in two by a valley", hill, []Point{{-4, 10}, {2, 6}, {58, 1}}, nil, false},
 		{"never daylights", hill, []Point{{0, 5}, {10, 0}, {20, -4}}, nil, true},
+		{"never daylights on the left", hill, []Point{{0, -4}, {10, 0}, {18, 2}}, nil, true},
 		{"wholly in the air", hill, []Point{{0, 12}, {10, 11}, {20, 12}}, nil, false},
 		{"through a vertex of the ground", hill, []Point{{0, 10}, {10, 1}, {20, 0}}, [][2]float64{{0, 20}}, false},
 	}

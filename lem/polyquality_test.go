@@ -219,6 +219,29 @@ func randomNodes(m *Model, ws *Workspace, rng *rand.Rand, o Setting) []Point {
 	return at
 }
 
+// TestCircleSearchQuality measures the default search for circles against one with more effort in the other parametrisation.
+func TestCircleSearchQuality(t *testing.T) {
+	const tol = 0.003
+	sections, effort := 25, 4.0
+	if longRun() {
+		sections, effort = 60, 50
+	}
+	var worst float64
+	for seed := range uint64(sections) {
+		s, sit, special := inventedSection(seed)
+		m := compiled(t, s, sit)
+		o := SearchOptions{MinDepth: 1}
+		got := lowestBy(t, m, Bishop, o).Result.F
+		o.Sampler, o.Effort, o.Seed = ByCentre, effort, 99
+		want := lowestBy(t, m, Bishop, o).Result.F
+		worst = max(worst, got/want-1)
+		if !(got <= want*(1+tol)) {
+			t.Errorf("section %d %s: F = %.4f, the reference found %.4f", seed, special, got, want)
+		}
+	}
+	t.Logf("worst: %.3f %% above the reference", 100*worst)
+}
+
 // TestSearchQuality measures the default search against one with 50 times its effort in the other parametrisation, and against random walks.
 func TestSearchQuality(t *testing.T) {
 	sections, effort, n, steps := 5, 4.0, 1, 3000

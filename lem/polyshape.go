@@ -130,12 +130,12 @@ func (p *polySearch) deepen(nodes []Point) bool {
 }
 
 // trim leaves only the part of the nodes that its answer is of, where the ground cuts off more than a piece; the longest pieces are halved to keep
-// the number. What is cut off would only stand in the way of the descent.
+// the number. What is cut off would only stand in the way of the descent. Above a tension crack nothing is cut off.
 func (t *polyTrial) trim() {
 	n := len(t.nodes)
 	from, to := t.r.From, t.r.To
 	gap := shortestPiece * (t.nodes[n-1].X - t.nodes[0].X)
-	if math.IsInf(t.r.F, 1) || from.X-t.nodes[0].X <= gap && t.nodes[n-1].X-to.X <= gap {
+	if math.IsInf(t.r.F, 1) || t.r.Crack > 0 || from.X-t.nodes[0].X <= gap && t.nodes[n-1].X-to.X <= gap {
 		return
 	}
 	kept := append(t.nodes[:0:0], from)
