@@ -132,7 +132,7 @@ func (p *printer) answer(f *File) {
 	if o == nil || o == &f.Existing {
 		return
 	}
-	for _, s := range []string{f.stepLess(o), certificate(o)} {
+	for _, s := range []string{f.StepLessText(o), o.CertificateText()} {
 		if s != "" {
 			p.para("", s)
 		}

@@ -18,11 +18,11 @@ func sizeOf(name string, value float64, unit string) string {
 	return words + " " + SizeText(value) + " " + unit
 }
 
-// dimensions returns the dimensions of an option in words, in the order of its remedy.
-func dimensions(o *Option) string {
+// Dimensions returns dimensions of an option in words, in the order of its remedy: its own, or those of a point of its trade-off.
+func (o *Option) Dimensions(parameters map[string]Parameter) string {
 	var out []string
 	for _, name := range o.Order {
-		if v, ok := o.Parameters[name]; ok && v.Value.Known() {
+		if v, ok := parameters[name]; ok && v.Value.Known() {
 			out = append(out, sizeOf(name, float64(v.Value), v.Unit))
 		}
 	}
@@ -101,7 +101,7 @@ func (f *File) Recommendation() string {
 		return "Nothing is needed: the slope as it is meets the required factor of safety in every situation."
 	} else if o != nil {
 		return fmt.Sprintf("Least earthworks: %s, %s m3 per metre run (%s m3 over %s m): %s.",
-			o.Title, QuantityText(o.Quantities.Earthworks), TotalText(o.Totals.Earthworks), SizeText(f.Case.Length), dimensions(o))
+			o.Title, QuantityText(o.Quantities.Earthworks), TotalText(o.Totals.Earthworks), SizeText(f.Case.Length), o.Dimensions(o.Parameters))
 	}
 	o := f.Nearest()
 	if o == nil {
@@ -116,8 +116,8 @@ func (f *File) Recommendation() string {
 	return s + "."
 }
 
-// stepLess tells in one sentence why one step less of each dimension fails.
-func (f *File) stepLess(o *Option) string {
+// StepLessText tells in one sentence why one step less of each dimension fails; empty if there is nothing to tell.
+func (f *File) StepLessText(o *Option) string {
 	var parts []string
 	for _, s := range o.StepLess {
 		size := sizeOf(s.Parameter, s.Value, o.Parameters[s.Parameter].Unit)
@@ -137,8 +137,8 @@ func (f *File) stepLess(o *Option) string {
 	return "A step less fails: " + strings.Join(parts, "; ") + "."
 }
 
-// certificate tells in one sentence what the answer rests on.
-func certificate(o *Option) string {
+// CertificateText tells in one sentence what the answer rests on; empty if nothing was sized.
+func (o *Option) CertificateText() string {
 	c := o.Certificate
 	if c == nil {
 		return ""
