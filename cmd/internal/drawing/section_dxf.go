@@ -28,10 +28,17 @@ const (
 
 // dxfLayers are the layers with colours by index that differ on a dark screen and in print.
 var dxfLayers = []dxf.Layer{
-	{Name: layerExisting, Colour: 8, Line: dxf.Dashed}, {Name: layerProposed, Colour: 7, Line: dxf.Solid}, {Name: layerStrata, Colour: 33, Line: dxf.Solid},
-	{Name: layerWater, Colour: 150, Line: dxf.Solid}, {Name: layerDrains, Colour: 160, Line: dxf.DashDot}, {Name: layerSlips, Colour: 220, Line: dxf.Solid},
-	{Name: layerLimits, Colour: 43, Line: dxf.DashDot}, {Name: layerLoads, Colour: 203, Line: dxf.Solid}, {Name: layerCut, Colour: 32, Line: dxf.Solid},
-	{Name: layerFill, Colour: 106, Line: dxf.Solid}, {Name: layerText, Colour: 7, Line: dxf.Solid},
+	{Name: layerExisting, Colour: 8, Line: dxf.Dashed},
+	{Name: layerProposed, Colour: 7, Line: dxf.Solid},
+	{Name: layerStrata, Colour: 33, Line: dxf.Solid},
+	{Name: layerWater, Colour: 150, Line: dxf.Solid},
+	{Name: layerDrains, Colour: 160, Line: dxf.DashDot},
+	{Name: layerSlips, Colour: 220, Line: dxf.Solid},
+	{Name: layerLimits, Colour: 43, Line: dxf.DashDot},
+	{Name: layerLoads, Colour: 203, Line: dxf.Solid},
+	{Name: layerCut, Colour: 32, Line: dxf.Solid},
+	{Name: layerFill, Colour: 106, Line: dxf.Solid},
+	{Name: layerText, Colour: 7, Line: dxf.Solid},
 }
 
 // Measures of a section as DXF, in shares of its span.
@@ -45,10 +52,14 @@ const (
 	capitals  = 0.716 // Height of capitals as a share of the type size, Liberation Sans.
 	dxfBelow  = 40.0  // Room for labels below the section, points of the sheet.
 	spanRatio = 20.0  // Heights of the slope beyond which a longer section has no larger texts.
+	leastSpan = 0.05  // Share of the section below which texts and hatches get no smaller, so that their number stays within bounds.
 )
 
 // span is the length that texts, dashes and hatches are sized by, m.
-func (p *picture) span() float64 { return min(p.x1-p.x0, spanRatio*max(p.job.Height(), 1)) }
+func (p *picture) span() float64 {
+	whole := p.x1 - p.x0
+	return max(min(whole, spanRatio*p.job.Height()), leastSpan*whole)
+}
 
 // SectionDXF writes a cross-section as a DXF drawing (release 12) in real coordinates: metres, offset across and level up, the whole length
 // of the section. It shows what [Section] shows, and the slip of every situation and stage; circular slips are true arcs. The same section

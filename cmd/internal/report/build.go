@@ -24,12 +24,16 @@ func New(r *remedies.Result, src Source) *File {
 			Title: r.Job.Title, File: src.File, SHA256: src.SHA256, Length: r.Job.Length,
 			Crest: point(r.Job.Crest), Toe: point(r.Job.Toe), Notes: list(src.Notes),
 		},
-		Program:  Program{Version: src.Version},
-		Settings: settingsOf(r, src.Overrides),
-		Soils:    b.soilTable(),
-		Options:  make([]Option, 0, len(r.Options)),
-		Cautions: Cautions(),
-		Files:    list(src.Files),
+		Program:       Program{Version: src.Version},
+		Settings:      settingsOf(r, src.Overrides),
+		Soils:         b.soilTable(),
+		SoilOrder:     list(b.soils),
+		WaterLines:    b.waterLines(),
+		Limits:        limitsOf(&r.Job.Limits),
+		StageSettings: b.stageSettings(),
+		Options:       make([]Option, 0, len(r.Options)),
+		Cautions:      Cautions(),
+		Files:         list(src.Files),
 	}
 	f.Existing = b.option(&r.Existing)
 	for i := range r.Options {
@@ -145,6 +149,7 @@ func (b *builder) situations(r *remedies.Result) []Situation {
 		working := Number(s.DrainsWorking)
 		base := Situation{
 			Name: s.Name, RequiredFS: s.RequiredFS, Strength: strengthOf(b.soils, s.Undrained), Kh: s.Kh, DrainsWorking: &working,
+			WaterLine: b.waterName(s.Water),
 		}
 		if o := answerTo(&r.Existing, i); o != nil && s.RatioToExisting != 0 {
 			base.RequiredFS = o.Check.Required
@@ -182,7 +187,7 @@ func (b *builder) variants(r *remedies.Result, i int) []Situation {
 				at[name] = n
 				out = append(out, Situation{
 					Name: name, RequiredFS: c.Required, Strength: strengthOf(b.soils, c.Situation.Undrained), Kh: c.Situation.Kh,
-					VariantOf: b.job.Situations[i].Name, Variant: c.Note,
+					WaterLine: b.waterName(b.job.Situations[i].Water), VariantOf: b.job.Situations[i].Name, Variant: c.Note,
 				})
 			}
 			out[n].AppliesTo = append(out[n].AppliesTo, o.Name)

@@ -63,6 +63,7 @@ func (b *builder) addProposal(out *Option, o *remedies.Option) {
 	out.Quantities = b.quantities(&p.Quantities)
 	out.Totals = totalsOf(&out.Quantities, b.job.Length)
 	out.Section = b.section(&p.Section)
+	out.Measured = dimensionsOf(p.Dimensions)
 	for _, c := range remedies.Checks(b.job, p) {
 		if !c.Stage {
 			out.Section.Water[c.Label()] = water(&c.Situation.Water, p.Section.Soils)

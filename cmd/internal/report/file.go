@@ -10,9 +10,14 @@ type File struct {
 	Program    Program         `json:"program"`                                     // What answered.
 	Settings   Settings        `json:"settings"`                                    // Settings in force, after defaults and command-line flags.
 	Soils      map[string]Soil `json:"soils"`                                       // Every soil of the case by name.
-	Situations []Situation     `json:"situations"`                                  // Design situations, with the variants that single options add.
-	Existing   Option          `json:"existing"`                                    // The slope as it is.
-	Options    []Option        `json:"options"`                                     // In ascending earthworks; what-ifs behind them, those that fail last.
+	SoilOrder  []string        `json:"soil_order"`                                  // Names of the soils in the order of the case.
+	WaterLines []WaterLine     `json:"water_lines"`                                 // Piezometric lines before works.
+	Limits     SiteLimits      `json:"limits"`                                      // Limits of the works.
+	// What every construction stage must stand; null: the case has no stage settings and stages were not checked.
+	StageSettings *StageSettings `json:"stage_settings" jsonschema:"nullable"`
+	Situations    []Situation    `json:"situations"` // Design situations, with the variants that single options add.
+	Existing      Option         `json:"existing"`   // The slope as it is.
+	Options       []Option       `json:"options"`    // In ascending earthworks; what-ifs behind them, those that fail last.
 	// Name of the option with the least earthworks of those that meet the target, "existing" if nothing is needed, null if nothing
 	// meets it.
 	LeastEarthworks *string  `json:"least_earthworks" jsonschema:"nullable"`
@@ -88,6 +93,7 @@ type Situation struct {
 	Name          string   `json:"name"`                             // Name, as in the situations and the water of an option.
 	RequiredFS    float64  `json:"required_fs"`                      // FS required.
 	Strength      Strength `json:"strength"`                         // "drained", "undrained", or one of these words for every soil.
+	WaterLine     string   `json:"water_line"`                       // Name of its water line before works; empty: dry.
 	Kh            float64  `json:"kh"`                               // Horizontal pseudo-static coefficient, outward.
 	Kv            float64  `json:"kv"`                               // Vertical pseudo-static coefficient; always 0.
 	DrainsWorking *Number  `json:"drains_working"`                   // Share of the drains' effect that counts, 0 to 1; null in a variant.
@@ -110,6 +116,7 @@ type Option struct {
 
 	Parameters map[string]Parameter `json:"parameters"`      // Dimensions found, by name.
 	Order      []string             `json:"parameter_order"` // Names of the parameters in the order of the remedy.
+	Measured   []Dimension          `json:"dimensions"`      // What a drawing of the works dimensions.
 	Quantities Quantities           `json:"quantities"`      // Per metre run of the works.
 	Totals     Totals               `json:"totals"`          // For the whole length of the works.
 

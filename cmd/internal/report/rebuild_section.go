@@ -1,0 +1,70 @@
+package report
+
+import (
+	"math"
+
+	"standfast/lem"
+)
+
+// section turns a section back, with every soil of the case.
+func (b *rebuilder) section(s *Section) lem.Section {
+	out := lem.Section{Ground: b.line(s.Ground), FirmBase: b.line(s.FirmBase)}
+	for _, name := range b.file.SoilOrder {
+		out.Soils = append(out.Soils, b.soil(name))
+	}
+	for _, t := range s.Strata {
+		out.Strata = append(out.Strata, lem.Stratum{Soil: b.soilIndex(t.Soil), Top: b.line(t.Top)})
+	}
+	if len(out.Ground) == 0 || len(out.Strata) == 0 || len(out.GroundBefore()) == 0 {
+		b.wrong("a section has no ground")
+	}
+	for _, p := range s.Placed {
+		out.Placed = append(out.Placed, lem.Body{Soil: b.soilIndex(p.Soil), Outline: b.points(p.Outline)})
+	}
+	for _, l := range s.Surcharges {
+		out.Loads = append(out.Loads, lem.Surcharge{Name: l.Name, FromX: l.FromX, ToX: l.ToX, Pressure: l.Pressure, Variable: l.Kind == "variable"})
+	}
+	return out
+}
+
+func (b *rebuilder) soilIndex(name string) int {
+	i, ok := b.soils[name]
+	if !ok {
+		b.wrong("there is no soil %q", name)
+	}
+	return i
+}
+
+func (b *rebuilder) soil(name string) lem.Soil {
+	s := b.file.Soils[name]
+	out := lem.Soil{
+		Name: name, UnitWeight: s.UnitWeight, SaturatedUnitWeight: s.SaturatedUnitWeight, Cohesion: s.Drained.Cohesion,
+		Friction: s.Drained.Friction * math.Pi / 180, FreeDraining: s.FreeDraining,
+	}
+	if s.Ru != nil {
+		out.Ru, out.HasRu = *s.Ru, true
+	}
+	if u := s.Undrained; u != nil {
+		out.Undrained = &lem.UndrainedStrength{Strength: u.Strength, Gradient: u.Gradient, Datum: b.line(u.Datum)}
+		for _, p := range u.Points {
+			out.Undrained.Points = append(out.Undrained.Points, lem.StrengthPoint{X: p[0], Y: p[1], Strength: p[2]})
+		}
+	}
+	return out
+}
+
+// water turns the water of a check back: its line is that before drains.
+func (b *rebuilder) water(w Water) lem.Water {
+	out := lem.Water{Line: b.line(w.Line)}
+	for _, f := range w.FreeWater {
+		out.Free = append(out.Free, lem.FreeWater{Level: f.Level, FromX: f.FromX, ToX: f.ToX})
+	}
+	if d := w.Drains; d != nil {
+		out.Line = b.line(d.LineBefore)
+		out.Drains = &lem.Drawdown{Invert: b.line(d.Invert), Ratio: d.Ratio, Fade: d.Fade}
+		if len(d.Ratio) != len(d.Invert) {
+			b.wrong("drains have %d points and %d ratios", len(d.Invert), len(d.Ratio))
+		}
+	}
+	return out
+}

@@ -1,0 +1,125 @@
+package report
+
+import (
+	"bytes"
+	"errors"
+	"math"
+	"strings"
+	"testing"
+
+	"standfast/cmd/internal/drawing"
+)
+
+// drawings returns every drawing of a result as SVG and DXF, by name.
+func drawings(t *testing.T, f *File) map[string]string {
+	t.Helper()
+	r, err := Rebuild(f)
+	if err != nil {
+		t.Fatal(err)
+	}
+	out := map[string]string{}
+	for i := range r.Options {
+		o := &r.Options[i]
+		fig, err := drawing.Section(r.Job, o, drawing.Options{})
+		if err != nil {
+			t.Fatal(err)
+		}
+		var svg, dxf bytes.Buffer
+		if err := errors.Join(fig.WriteSVG(&svg), drawing.SectionDXF(&dxf, r.Job, o)); err != nil {
+			t.Fatal(err)
+		}
+		out[o.Name+".svg"], out[o.Name+".dxf"] = svg.String(), dxf.String()
+	}
+	return out
+}
+
+// What a result file is turned back into is drawn as the result itself is, to the byte.
+func TestRebuildDrawsTheSame(t *testing.T) {
+	result, src := sample()
+	f, err := Decode(strings.NewReader(encoded(t, New(result, src))))
+	if err != nil {
+		t.Fatal(err)
+	}
+	got := drawings(t, f)
+	for i := range result.Options {
+		o := &result.Options[i]
+		fig, err := drawing.Section(result.Job, o, drawing.Options{})
+		if err != nil {
+			t.Fatal(err)
+		}
+		var svg, dxf bytes.Buffer
+		if err := errors.Join(fig.WriteSVG(&svg), drawing.SectionDXF(&dxf, result.Job, o)); err != nil {
+			t.Fatal(err)
+		}
+		if got[o.Name+".svg"] != svg.String() {
+			t.Errorf("%s: the drawing differs", o.Name)
+		}
+		if got[o.Name+".dxf"] != dxf.String() {
+			t.Errorf("%s: the DXF differs", o.Name)
+		}
+	}
+}
+
+func TestRebuildRefuses(t *testing.T) {
+	good := encoded(t, New(sample()))
+	for _, c := range []struct{ name, old, new, want string }{
+		{"an earlier version", `"soil_order"`, `"soil_orders"`, "soils or section"},
+		{"a soil that is not there", `{"soil": "clay", "top"`, `{"soil": "silt", "top"`, `no soil "silt"`},
+		{"a coordinate that no case has", `"ground": [[0, 109]`, `"ground": [[-1e300, 109]`, "out of bounds"},
+		{"a line that runs back", `"ground": [[0, 109], [30, 109]`, `"ground": [[0, 109], [-30, 109]`, "runs back"},
+		{"a line that is a point", `"line": [[0, 106], [75, 99]]`, `"line": [[0, 106]]`, "no length"},
+		{"a water line that is not there", `"water_line": "spring"`, `"water_line": "autumn"`, `no water line "autumn"`},
+		{"a circle without a radius", `"radius": 20.5`, `"radius": 0`, "without centre or radius"},
+	} {
+		t.Run(c.name, func(t *testing.T) {
+			src := strings.Replace(good, c.old, c.new, 1)
+			if src == good {
+				t.Fatalf("nothing to replace: %s", c.old)
+			}
+			f, err := Decode(strings.NewReader(src))
+			if err != nil {
+				t.Fatal(err)
+			}
+			if _, err := Rebuild(f); !errors.Is(err, ErrIncomplete) || !strings.Contains(err.Error(), c.want) {
+				t.Errorf("got %v, want %q", err, c.want)
+			}
+		})
+	}
+}
+
+// A result file that somebody changed is drawn or refused; nothing panics.
+func FuzzRebuild(f *testing.F) {
+	var b bytes.Buffer
+	if err := New(sample()).Encode(&b); err != nil {
+		f.Fatal(err)
+	}
+	good := b.Bytes()
+	f.Add(uint16(0), byte(0))
+	f.Fuzz(func(t *testing.T, at uint16, c byte) {
+		src := bytes.Clone(good)
+		src[int(at)%len(src)] = c
+		file, err := Decode(bytes.NewReader(src))
+		if err != nil {
+			return
+		}
+		r, err := Rebuild(file)
+		if err != nil {
+			return
+		}
+		if _, err := drawing.Section(r.Job, &r.Options[0], drawing.Options{}); err != nil && !errors.Is(err, drawing.ErrNothingToDraw) {
+			t.Fatal(err)
+		}
+	})
+}
+
+// An FS that is not known stays so.
+func TestRebuildKeepsUnknown(t *testing.T) {
+	result, src := sample()
+	r, err := Rebuild(New(result, src))
+	if err != nil {
+		t.Fatal(err)
+	}
+	if fs := r.Options[3].Situations[1].FS; !math.IsNaN(fs) {
+		t.Errorf("an FS that is not known became %v", fs)
+	}
+}
