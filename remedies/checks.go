@@ -73,7 +73,7 @@ func Checks(j *Job, p *Proposal) []Check {
 func situationCheck(p *Proposal, i int, s *Situation, note string, w lem.Water) Check {
 	return Check{
 		Name: s.Name, Note: note, Section: &p.Section, SituationI: i, Required: s.RequiredFS,
-		Situation: lem.Situation{Name: s.Name, Water: w, Undrained: s.Undrained, Kh: s.Kh},
+		Situation: lem.Situation{Name: s.Name, Water: w, Undrained: s.Undrained, Kh: s.Kh, Kv: s.Kv},
 	}
 }
 

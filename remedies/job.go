@@ -40,9 +40,20 @@ func (j *Job) Facing() float64 {
 // Height returns the height of the slope from toe to crest, m.
 func (j *Job) Height() float64 { return j.Crest.Y - j.Toe.Y }
 
-// WaterLine is a piezometric line under its name. A line is clipped to the ground where works cut below it, unless it is artesian.
+// WaterLine is a state of the pore water under its name: a piezometric line, with what differs from it. A line is clipped to the ground where
+// works cut below it, unless it is artesian.
 type WaterLine struct {
 	Name     string
+	Line     lem.Profile // nil: dry but for what follows.
+	Artesian bool
+	BySoil   []SoilLine          // Lines of single soils, in place of Line.
+	Points   []lem.PressurePoint // Known pore pressures, in place of all lines. Works do not change them.
+	Inclined bool                // Pressure below every line is reduced by the square of the cosine of its inclination.
+}
+
+// SoilLine is the piezometric line of one soil: perched or artesian water.
+type SoilLine struct {
+	Soil     int
 	Line     lem.Profile
 	Artesian bool
 }
@@ -54,6 +65,7 @@ type Situation struct {
 	Free      []lem.FreeWater
 	Undrained []bool  // By soil; nil: all drained.
 	Kh        float64 // Outward pseudo-static coefficient.
+	Kv        float64 // Vertical pseudo-static coefficient, positive downward.
 	// RequiredFS is the factor of safety required. When RatioToExisting is not 0 it is resolved by Study as that ratio times the
 	// FS of the existing slope in this situation.
 	RequiredFS      float64

@@ -1,6 +1,8 @@
 package remedies
 
 import (
+	"slices"
+
 	"standfast/lem"
 	"standfast/optimize"
 )
@@ -33,11 +35,23 @@ func (waterLowering) Apply(j *Job, on *Proposal, x []float64) *Proposal {
 	p := on.clone()
 	stage := p.stageWater
 	p.eachWater(j, func(line int, w *lem.Water) {
-		if j.Waters[line].Artesian {
-			p.note("water line %q is artesian and is not lowered", j.Waters[line].Name)
-			return
+		l := &j.Waters[line]
+		switch {
+		case len(l.Points) > 0:
+			p.note("pore pressures at points of %q are not lowered", l.Name)
+		case l.Artesian:
+			p.note("water line %q is artesian and is not lowered", l.Name)
+		default:
+			w.Line = shifted(w.Line, -x[0])
 		}
-		w.Line = shifted(w.Line, -x[0])
+		w.BySoil = slices.Clone(w.BySoil)
+		for i, own := range l.BySoil {
+			if own.Artesian {
+				p.note("water line %q is artesian in %s and is not lowered there", l.Name, j.Section.Soils[own.Soil].Name)
+				continue
+			}
+			w.BySoil[i].Line = shifted(w.BySoil[i].Line, -x[0])
+		}
 	})
 	p.stageWater = stage
 	p.note("a what-if: water lines lie %s m lower by means that are not designed here", metres(x[0]))

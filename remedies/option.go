@@ -37,6 +37,7 @@ type Outcome struct {
 	Slip     lem.Slip
 	From, To lem.Point // Where the slip leaves the ground.
 	Depth    float64   // Greatest vertical depth of the slip below the ground, m.
+	Crack    float64   // Depth of the tension crack that the slip ends in at its head, m; 0: none.
 	Resolved bool      // False: a trial that no governing method could solve had a screen below the required FS.
 
 	setting lem.Setting // With what the slip was found.

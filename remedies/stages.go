@@ -51,9 +51,18 @@ func (j *Job) before(ground lem.Profile) (*lem.Section, lem.Water) {
 	s := j.Section
 	s.Ground = ground
 	w := waterAt(j, j.Stage.Water, nil)
-	if j.Stage.Water != dry && !j.Waters[j.Stage.Water].Artesian {
-		for _, r := range runsAbove(j.Section.Ground, ground) {
+	if j.Stage.Water == dry {
+		return &s, w
+	}
+	l := &j.Waters[j.Stage.Water]
+	for _, r := range runsAbove(j.Section.Ground, ground) {
+		if w.Line != nil && !l.Artesian {
 			w.Line = spliced(w.Line, ground, r.from, r.to, lower)
+		}
+		for i, own := range l.BySoil {
+			if !own.Artesian {
+				w.BySoil[i].Line = spliced(w.BySoil[i].Line, ground, r.from, r.to, lower)
+			}
 		}
 	}
 	return &s, w

@@ -52,7 +52,7 @@ func (d *design) addMethods(o *Outcome, check int) {
 			o.ByMethod[method] = r.F
 		}
 		if method == o.Method {
-			o.From, o.To, o.Depth = r.From, r.To, r.Depth
+			o.From, o.To, o.Depth, o.Crack = r.From, r.To, r.Depth, r.Crack
 		}
 	}
 }

@@ -1,7 +1,9 @@
 package remedies
 
 import (
+	"fmt"
 	"math"
+	"slices"
 
 	"standfast/lem"
 )
@@ -13,7 +15,11 @@ const dry = -1
 func waterAt(j *Job, line int, free []lem.FreeWater) lem.Water {
 	w := lem.Water{Free: free}
 	if line != dry {
-		w.Line = j.Waters[line].Line
+		l := &j.Waters[line]
+		w.Line, w.Points, w.InclinedLine = l.Line, l.Points, l.Inclined
+		for _, own := range l.BySoil {
+			w.BySoil = append(w.BySoil, lem.SoilWater{Soil: own.Soil, Line: own.Line})
+		}
 	}
 	if j.Limits.Outfall != nil {
 		w.FreeDrainingLevel, w.HasFreeDrainingLevel = *j.Limits.Outfall, true
@@ -42,18 +48,35 @@ func (p *Proposal) eachWater(j *Job, f func(line int, w *lem.Water)) {
 // clipWater lowers every line that is not artesian to the ground where the works have cut below it.
 func (p *Proposal) clipWater(j *Job, cut []run) {
 	p.eachWater(j, func(line int, w *lem.Water) {
+		l := &j.Waters[line]
+		w.BySoil = slices.Clone(w.BySoil)
 		for _, r := range cut {
-			h, _ := highest(w.Line, p.Section.Ground, r.from, r.to)
-			switch {
-			case h <= sameLevel:
-			case j.Waters[line].Artesian:
-				p.note("water line %q is artesian and keeps its head above the new ground", j.Waters[line].Name)
-			default:
-				w.Line = spliced(w.Line, p.Section.Ground, r.from, r.to, lower)
-				p.note("water line %q is lowered to the new ground where the works cut below it", j.Waters[line].Name)
+			w.Line = p.clipLine(fmt.Sprintf("water line %q", l.Name), w.Line, l.Artesian, r)
+			for i, own := range l.BySoil {
+				name := fmt.Sprintf("water line %q in %s", l.Name, j.Section.Soils[own.Soil].Name)
+				w.BySoil[i].Line = p.clipLine(name, w.BySoil[i].Line, own.Artesian, r)
+			}
+			if len(l.Points) > 0 {
+				p.note("pore pressures at points of %q stay as they are where the works cut", l.Name)
 			}
 		}
 	})
+}
+
+// clipLine returns a water line lowered to the new ground over a cut, unless it is artesian; there may be none.
+func (p *Proposal) clipLine(name string, line lem.Profile, artesian bool, cut run) lem.Profile {
+	if line == nil {
+		return nil
+	}
+	switch h, _ := highest(line, p.Section.Ground, cut.from, cut.to); {
+	case h <= sameLevel:
+	case artesian:
+		p.note("%s is artesian and keeps its head above the new ground", name)
+	default:
+		p.note("%s is lowered to the new ground where the works cut below it", name)
+		return spliced(line, p.Section.Ground, cut.from, cut.to, lower)
+	}
+	return line
 }
 
 // LoweredLine returns the piezometric line with what drains lower it by at their invert: the line itself outside the drains and
