@@ -18,6 +18,8 @@ type Job struct {
 	Limits    Limits
 	OnSite    []OnSiteFill  // Material of the site that may serve as fill; none: all fill is brought, all cut is taken away.
 	Economics Economics     // Rates and factors of the user's own.
+	Objective Objective     // What is made least.
+	Swings    Swings        // How far inputs may be off, for the sensitivity of the answer.
 	MinDepth  float64       // Depth of interest: slips nowhere deeper below ground than this are left out, m.
 	Head      lem.Range     // Daylight range of slips at the head; zero: everywhere.
 	Exit      lem.Range     // Daylight range of slips at the toe; zero: everywhere.

@@ -63,6 +63,9 @@ type Option struct {
 	Stages     []Outcome
 	StepLess   []StepLess // Why one step less of each parameter fails.
 
+	Relaxations []Relaxation // What moving a limit that binds would save.
+	Sensitivity []Bar        // How the least FS swings with the inputs.
+
 	Certificate *Certificate // nil for the existing slope and for trials.
 	Tradeoff    []TradeoffPoint
 }

@@ -2,14 +2,16 @@ package remedies
 
 // Settings are the settings of a study. The zero value is the default.
 type Settings struct {
-	Workers   int     // Goroutines; 0: all cores. The answer does not depend on it.
-	Seed      uint64  // Of the searches.
-	Slices    int     // Slices of a slip in a search; 0: the engine's default.
-	Allowance float64 // FS by which an answer must exceed the requirement; 0: DefaultAllowance.
-	Curves    bool    // Also size each single remedy for a range of required FS.
-	Pairs     bool    // Also size every compatible pair of remedies.
-	Progress  func(Progress)
-	Finished  func(*Option) // Told of each option as soon as it is known, single remedies first.
+	Workers     int     // Goroutines; 0: all cores. The answer does not depend on it.
+	Seed        uint64  // Of the searches.
+	Slices      int     // Slices of a slip in a search; 0: the engine's default.
+	Allowance   float64 // FS by which an answer must exceed the requirement; 0: DefaultAllowance.
+	Curves      bool    // Also size each single remedy for a range of required FS.
+	Pairs       bool    // Also size every compatible pair of remedies.
+	Relaxations bool    // Also size each answer with the limits that bind moved a little.
+	Sensitivity bool    // Also swing the job's inputs by Job.Swings, for the existing slope and each single remedy.
+	Progress    func(Progress)
+	Finished    func(*Option) // Told of each option as soon as it is known, single remedies first.
 }
 
 // DefaultAllowance is the allowance for the search being finite: a design is accepted when every FS is at least the required FS

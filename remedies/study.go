@@ -20,6 +20,12 @@ func Study(ctx context.Context, job *Job, s Settings) (*Result, error) {
 	if err != nil {
 		return nil, err
 	}
+	if s.Sensitivity && j.Swings.Any() {
+		z := newSizing(j, &works{name: existing.Name, title: existing.Title}, &s)
+		if existing.Sensitivity, err = z.sensitivity(ctx, existing.Proposal); err != nil {
+			return nil, err
+		}
+	}
 	st := &study{ctx: ctx, j: j, s: &s, existing: existing, pools: map[string][]pooled{}}
 	needed := !adequate(existing, &s)
 	var groups [][]Request
@@ -38,7 +44,7 @@ func Study(ctx context.Context, job *Job, s Settings) (*Result, error) {
 		}
 	}
 	res := &Result{Job: j, Settings: s, Existing: *existing, Options: st.options}
-	rank(res.Options)
+	rank(j, res.Options)
 	if !needed {
 		res.Least = existing.Name
 		return res, nil
@@ -103,8 +109,8 @@ func (s Settings) resolved() Settings {
 	return s
 }
 
-// rank sorts options: those that meet the target in ascending earthworks, what-ifs behind them, those that fail last.
-func rank(os []Option) {
+// rank sorts options: those that meet the target in ascending order of the objective, what-ifs behind them, those that fail last.
+func rank(j *Job, os []Option) {
 	class := func(o *Option) int {
 		switch {
 		case o.Status == MeetsTarget && !o.WhatIf:
@@ -121,7 +127,7 @@ func rank(os []Option) {
 			return c
 		}
 		qa, qb := &a.Proposal.Quantities, &b.Proposal.Quantities
-		switch ea, eb := qa.Earthworks(), qb.Earthworks(); {
+		switch ea, eb := j.Objective.value(j, qa), j.Objective.value(j, qb); {
 		case ea < eb || ea == eb && qa.Drain < qb.Drain:
 			return -1
 		case ea > eb || qa.Drain > qb.Drain:
@@ -141,6 +147,9 @@ func (st *study) size(group []Request) error {
 	z := newSizing(st.j, w, st.s)
 	if g := st.existing.Governing(); g != nil {
 		z.existingMargin = g.Margin()
+	}
+	if err := z.priced(); err != nil {
+		return err
 	}
 	ctx := st.ctx
 	res, err := z.minimize(ctx, z.cost, st.start(z, group), st.tell)
@@ -178,6 +187,16 @@ func (st *study) size(group []Request) error {
 		o.StepLess = z.stepsLess(&res)
 	}
 	o.Certificate = z.certificate(&res)
+	if st.s.Relaxations && o.Status == MeetsTarget {
+		if o.Relaxations, err = z.relaxations(ctx, &res); err != nil {
+			return err
+		}
+	}
+	if j := st.j; j.Swings.Any() && st.s.Sensitivity && len(group) == 1 && !o.WhatIf {
+		if o.Sensitivity, err = z.sensitivity(ctx, o.Proposal); err != nil {
+			return err
+		}
+	}
 	if st.s.Curves && len(group) == 1 {
 		if o.Tradeoff, err = z.curve(ctx, o, &res); err != nil {
 			return err
@@ -191,7 +210,7 @@ func (st *study) size(group []Request) error {
 // costFunc is the Cost of an optimize.Problem.
 type costFunc func(x []float64) (cost, tie float64, ok bool)
 
-// cost returns the earthworks of a design within the limits; fewer drains break ties.
+// cost returns the objective of a design within the limits; fewer drains break ties.
 func (z *sizing) cost(x []float64) (cost, tie float64, ok bool) {
 	p := z.w.apply(z.j, x)
 	cost, tie = z.price(p, x)
@@ -200,10 +219,11 @@ func (z *sizing) cost(x []float64) (cost, tie float64, ok bool) {
 
 // price returns what is made least. A what-if has no works: the least change is the first parameter's.
 func (z *sizing) price(p *Proposal, x []float64) (cost, tie float64) {
+	cost = z.j.Objective.value(z.j, &p.Quantities)
 	if z.w.whatIf && len(x) > 0 {
-		return p.Quantities.Earthworks(), x[0]
+		return cost, x[0]
 	}
-	return p.Quantities.Earthworks(), p.Quantities.Drain
+	return cost, p.Quantities.Drain
 }
 
 // minimize runs the optimiser over the lattice of the works.
