@@ -8,7 +8,10 @@ func Catalogue() []Kind {
 		unloadKind(),
 		bermKind(),
 		buttressKind(),
+		lightweightKind(),
+		shearKeyKind(),
 		trenchDrainsKind(),
+		drilledDrainsKind(),
 		waterLoweringKind(),
 	}
 }

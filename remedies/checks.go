@@ -45,6 +45,7 @@ func (p *Proposal) clone() *Proposal {
 	q.variants = slices.Clone(p.variants)
 	q.Stages = slices.Clone(p.Stages)
 	q.plant = slices.Clone(p.plant)
+	q.exchanged = slices.Clone(p.exchanged)
 	q.Quantities = p.Quantities.clone()
 	q.loaded = slices.Clone(p.loaded)
 	q.Violations = slices.Clone(p.Violations)
@@ -79,16 +80,21 @@ func situationCheck(p *Proposal, i int, s *Situation, note string, w lem.Water) 
 
 // finish brings what depends on the whole of the works up to date.
 func (p *Proposal) finish(j *Job) {
-	p.Quantities.Strip = stripped(j.Section.Ground, p.Section.Ground)
+	p.Quantities.Strip = stripped(j.Section.Ground, p.Section.Ground, p.exchanged)
 	p.checkImport(j)
 	p.addStages(j)
 }
 
-// stripped returns the length along the ground before works over which the ground has changed.
-func stripped(before, after lem.Profile) float64 {
+// stripped returns the length along the ground before works over which the ground has changed or was exchanged.
+func stripped(before, after lem.Profile, exchanged []lem.Range) float64 {
+	var breaks []float64
+	for _, r := range exchanged {
+		breaks = append(breaks, r.From, r.To)
+	}
 	var length float64
-	for _, p := range pieces(before, after, before.Left(), before.Right()) {
-		if p.apart() {
+	for _, p := range pieces(before, after, before.Left(), before.Right(), breaks...) {
+		mid := (p.x0 + p.x1) / 2
+		if p.apart() || slices.ContainsFunc(exchanged, func(r lem.Range) bool { return r.From < mid && mid < r.To }) {
 			length += math.Hypot(p.x1-p.x0, p.a1-p.a0)
 		}
 	}

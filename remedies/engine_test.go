@@ -32,7 +32,7 @@ func circleThrough(a, b lem.Point, rise float64) lem.Slip {
 // changed).
 func TestBermBeyondExit(t *testing.T) {
 	j := cutting()
-	j.Clay = make([]bool, 4)
+	j.Clay = make([]bool, 5)
 	slip := circleThrough(lem.Point{X: 26, Y: 109}, lem.Point{X: 46, Y: 102.6}, 12)
 	before := Checks(j, Start(j))
 	after := Checks(j, apply(t, j, request("berm", fillOf(sandFill), 2, 5, 2)))
@@ -48,7 +48,8 @@ func TestBermBeyondExit(t *testing.T) {
 func TestEngineTakesEveryProposal(t *testing.T) {
 	compared := 0
 	rapid.Check(t, func(t *rapid.T) {
-		j, first, second := anyJob(t), anyRequest(t), anyRequest(t)
+		j := anyJob(t)
+		first, second := anyPair(t)
 		m := mirrorJob(j)
 		// The ends are off the vertices of the ground: through one, rounding would decide which slices it has.
 		exit := j.Toe.X + rapid.Float64Range(0.1, 5).Draw(t, "exit")

@@ -14,6 +14,7 @@ const (
 	stiffClay
 	sandFill
 	rockfill
+	lightFill
 )
 
 // cutting returns an invented cutting: 9 m high at 1V:2.5H with level ground behind the crest at x = 30 and beyond the toe at 52.5.
@@ -30,6 +31,7 @@ func cutting() *Job {
 				stiffClay: {Name: "stiff clay", UnitWeight: 20, Cohesion: 4, Friction: phi, Undrained: &lem.UndrainedStrength{Strength: 60}},
 				sandFill:  {Name: "sand fill", UnitWeight: 19.5, Friction: 0.61},
 				rockfill:  {Name: "rockfill", UnitWeight: 20, Friction: 0.7, FreeDraining: true},
+				lightFill: {Name: "light fill", UnitWeight: 6, Friction: 0.6},
 			},
 			Strata: []lem.Stratum{
 				{Soil: clay, Top: ground},
@@ -37,7 +39,7 @@ func cutting() *Job {
 			},
 		},
 		Crest: lem.Point{X: 30, Y: 109}, Toe: lem.Point{X: 52.5, Y: 100},
-		Clay: []bool{true, true, false, false},
+		Clay: []bool{true, true, false, false, false},
 		Waters: []WaterLine{
 			{Name: "high", Line: lem.Profile{{X: 0, Y: 107.6}, {X: 30, Y: 106.8}, {X: 52.5, Y: 100}, {X: 80, Y: 99.5}}},
 			{Name: "deep", Artesian: true, Line: lem.Profile{{X: 0, Y: 108}, {X: 80, Y: 104}}},

@@ -54,7 +54,7 @@ func (p *Proposal) refill(j *Job, sh *shape, mirrored bool, soil int, noun strin
 		p.addTopsoil(j, after, r.from, r.to)
 		p.checkDig(j, after, r.from, r.to, noun)
 		p.Quantities.Fill[soil] += r.area
-		addSoilAreas(p.loaded, &p.Section, after, shifted(after, r.from-r.to), r.from, r.to)
+		p.exchanged = append(p.exchanged, lem.Range{From: r.from, To: r.to})
 	}
 	for i := range runs {
 		p.Section.Placed = append(p.Section.Placed, lem.Body{Soil: soil, Outline: runs[i].outline()})

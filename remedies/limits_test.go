@@ -158,24 +158,24 @@ func TestEndOfConstruction(t *testing.T) {
 		notChecked string
 		note       string
 	}{
-		{name: "fill on clay", request: berm, undrained: []bool{true, true, false, false}, stages: 1},
-		{name: "no cu near the fill", change: func(j *Job) { noStrength(j, stiffClay) }, request: berm, undrained: []bool{true, false, false, false}, stages: 1, notChecked: "end of construction: not checked: no cu given for stiff clay"},
+		{name: "fill on clay", request: berm, undrained: []bool{true, true, false, false, false}, stages: 1},
+		{name: "no cu near the fill", change: func(j *Job) { noStrength(j, stiffClay) }, request: berm, undrained: []bool{true, false, false, false, false}, stages: 1, notChecked: "end of construction: not checked: no cu given for stiff clay"},
 		{
 			name: "no cu deeper than the base of the fill is wide",
 			change: func(j *Job) {
 				noStrength(j, stiffClay)
 				j.Section.Strata[1].Top = lem.Profile{{X: 0, Y: 60}, {X: 80, Y: 60}}
 			},
-			request: berm, undrained: []bool{true, false, false, false}, stages: 1,
+			request: berm, undrained: []bool{true, false, false, false, false}, stages: 1,
 		},
 		{
 			name: "sand above clay within reach",
 			change: func(j *Job) {
 				j.Clay[clay] = false
 			},
-			request: berm, undrained: []bool{false, true, false, false}, stages: 1,
+			request: berm, undrained: []bool{false, true, false, false, false}, stages: 1,
 		},
-		{name: "no clay", change: func(j *Job) { j.Clay = make([]bool, 4) }, request: berm},
+		{name: "no clay", change: func(j *Job) { j.Clay = make([]bool, 5) }, request: berm},
 		{name: "no stage settings", change: func(j *Job) { j.Stage = StageSettings{} }, request: berm, note: "construction stages are not checked: the case has no stage settings"},
 		{name: "cut only", request: request("regrade", nil, 3, 0)},
 		{name: "fill possible but none at this size", request: request("regrade", fillOf(sandFill), 3, 0), stages: 1},

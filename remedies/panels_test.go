@@ -123,7 +123,7 @@ func TestOpenKeyStory(t *testing.T) {
 	j.Section.Strata = []lem.Stratum{
 		{Soil: clay, Top: j.Section.Ground},
 		{Soil: stiffClay, Top: lem.Profile{{X: 0, Y: 106.1}, {X: 30, Y: 105.5}, {X: 52.5, Y: 97.5}, {X: 75, Y: 97.3}}},
-		{Soil: 4, Top: lem.Profile{{X: 0, Y: 96}, {X: 75, Y: 95.5}}},
+		{Soil: lightFill + 1, Top: lem.Profile{{X: 0, Y: 96}, {X: 75, Y: 95.5}}},
 	}
 	j.Section.Loads = []lem.Surcharge{{FromX: 20, ToX: 29, Pressure: 5}}
 	j.Waters = []WaterLine{{Name: "summer", Line: lem.Profile{{X: 0, Y: 105.6}, {X: 22, Y: 105}, {X: 30, Y: 104.2}, {X: 40, Y: 102}, {X: 52.5, Y: 99.2}, {X: 75, Y: 98.6}}}}

@@ -65,7 +65,8 @@ func regradeKind() Kind {
 		Choices: []Choice{
 			{Name: "fill", Soil: true, Optional: true, Meaning: "Soil of the fill; needed where the new face runs above the ground."},
 		},
-		New: newRegrade,
+		Place: "face",
+		New:   newRegrade,
 	}
 }
 

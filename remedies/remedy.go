@@ -32,18 +32,19 @@ type Kind struct {
 	Parameters []Parameter
 	Choices    []Choice
 	WhatIf     bool   // Shows what could be; listed last and never the least-earthworks answer.
-	Place      string // Where it works: "face", "head", "toe", "water"; two remedies of one place do not make a pair.
+	Place      string // Where it works: "face", "head", "toe", "slip", "water"; two remedies of one place do not make a pair.
 	order      order
 	// New makes the remedy for a job and settings. Its errors are faults of the request, in words for the user.
 	New func(j *Job, r *Request) (Remedy, error)
 }
 
-// order is the place of a remedy when several are folded: cuts before fills, so that fill lies on the ground that it will lie on, and
-// drains last, since their effect depends on the water line that they find.
+// order is the place of a remedy when several are folded: cuts before fills, so that fill lies on the ground that it will lie on, exchanged
+// ground between them, and drains last, since their effect depends on the water line that they find.
 type order uint8
 
 const (
 	orderCut order = iota
+	orderExchange
 	orderFill
 	orderWater
 	orderDrains
@@ -85,10 +86,12 @@ type Proposal struct {
 	stageWater lem.Water       // Of the job's stages, after works.
 	mayCut     bool            // Some size of the works applied can cut.
 	mayFill    bool            // Some size of the works applied can place fill.
+	exchanges  bool            // Some size of the works applied digs ground out and replaces it.
 	fillFirst  bool            // Fill is among the works applied that has to come before any cut.
 	drained    *lem.Drawdown   // Of the drains applied, on the stage's water; nil if no drains are applied or they lower nothing there.
 	mayDrain   bool            // Drains are among the works applied.
 	plant      []lem.Surcharge // Where plant works: on the level parts of the works.
+	exchanged  []lem.Range     // Where ground is dug out and replaced up to the ground as it was.
 	loaded     []float64       // By soil: area of it that fill loads, m2.
 }
 

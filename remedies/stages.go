@@ -77,10 +77,10 @@ func (p *Proposal) addStages(j *Job) {
 		}
 		return
 	}
-	if j.Economics.StripDepth > 0 && (p.mayFill || p.mayCut) {
+	if j.Economics.StripDepth > 0 && (p.mayFill || p.mayCut || p.exchanges) {
 		p.stripStage(j)
 	}
-	if p.mayDrain && (p.mayFill || p.mayCut) {
+	if p.mayDrain && (p.mayFill || p.mayCut || p.exchanges) {
 		s, w := j.before(j.Section.Ground)
 		w.Drains = p.drained
 		p.setStage(j.stage(DrainsFirst, s, w))
@@ -102,6 +102,9 @@ func (p *Proposal) stripStage(j *Job) {
 	ground := before
 	for _, r := range slices.Concat(runsAbove(before, p.Section.Ground), runsAbove(p.Section.Ground, before)) {
 		ground = spliced(ground, bare, r.from, r.to, lower)
+	}
+	for _, r := range p.exchanged {
+		ground = spliced(ground, bare, r.From, r.To, lower)
 	}
 	s, w := j.before(ground)
 	p.setStage(j.stage(TopsoilStripped, s, w))
@@ -155,6 +158,7 @@ func (j *Job) plantLoads(from, to float64) []lem.Surcharge {
 // over open and intact lengths is what must stand, and the hole in plane strain is told beside it; without panels plane strain must stand.
 // Soils act drained, with the water of stages, and plant stands on both sides. A hole that does not exist leaves the ground as it is.
 func (p *Proposal) addHole(j *Job, name string, sh *shape, panels *Panels) {
+	p.exchanges = true
 	if !j.Stage.Given {
 		p.note("construction stages are not checked: the case has no stage settings")
 		return

@@ -7,6 +7,7 @@ import (
 	"testing"
 
 	"standfast/lem"
+	"standfast/optimize"
 )
 
 // benchJob returns the cutting as a bench with a level base of stiff clay and a water line along the ground, so that drains have one head.
@@ -192,7 +193,7 @@ func TestRequestFaults(t *testing.T) {
 		{"base is no stratum", request("trench_drains", map[string]int{"low_permeability": rockfill}, 3, 6, 0.6, nan, nan, nan), `"rockfill", which is no stratum`},
 		{"buttress of clay", request("buttress", fillOf(clay), 3, 4, 1.5), `fill "clay" is not free-draining`},
 		{"berm without fill", request("berm", nil, 2, 5, 2), "fill names no soil"},
-		{"no such soil", request("berm", fillOf(9), 2, 5, 2), "fill is soil 9 of 4"},
+		{"no such soil", request("berm", fillOf(9), 2, 5, 2), "fill is soil 9 of 5"},
 		{"out of range", bad, "height from 2 to 99 must lie within 0.1 to 50"},
 		{"misnamed", misnamed, `parameter 2 is "top_width", not "width"`},
 		{"unknown", Request{Kind: "moat"}, `no remedy "moat"`},
@@ -216,10 +217,21 @@ func TestDefaultRequests(t *testing.T) {
 			for _, c := range k.Choices {
 				r.Soils[c.Name] = map[string]int{"fill": rockfill, "low_permeability": stiffClay}[c.Name]
 			}
+			if k.Name == "lightweight_fill" {
+				r.Soils["fill"] = lightFill
+			}
+			for i, p := range k.Parameters { // Numbers that nobody but the user can know.
+				switch p.Name {
+				case "permeability":
+					r.Axes[i] = optimize.Axis{Name: p.Name, Min: 1e-6, Max: 1e-6}
+				case "recharge":
+					r.Axes[i] = optimize.Axis{Name: p.Name, Min: 1e-8, Max: 1e-8}
+				}
+			}
 			if _, err := NewRemedies(cutting(), []Request{r}); err != nil {
 				t.Error(err)
 			}
-			for i, a := range r.Axes {
+			for i, a := range DefaultRequest(&k).Axes {
 				if optional := k.Parameters[i].Optional; optional != (a.Name == "") || (!optional && a.Name != k.Parameters[i].Name) {
 					t.Errorf("axis %d of the default is named %q", i, a.Name)
 				}

@@ -29,7 +29,8 @@ func unloadKind() Kind {
 				Min: 0.1, Max: 20, Default: optimize.Axis{Name: "back_batter", Min: 2, Max: 2},
 			},
 		},
-		New: newUnload,
+		Place: "head",
+		New:   newUnload,
 	}
 }
 
