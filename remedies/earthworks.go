@@ -142,6 +142,11 @@ func (p *Proposal) violate(limit string, by float64, format string, args ...any)
 	p.Violations = append(p.Violations, Violation{Limit: limit, Detail: fmt.Sprintf(format, args...), By: by})
 }
 
+// geometry adds a violation that says why works cannot be drawn at all.
+func (p *Proposal) geometry(limit string, by float64, format string, args ...any) {
+	p.Violations = append(p.Violations, Violation{Limit: limit, Detail: fmt.Sprintf(format, args...), By: math.Max(by, 0), Geometry: true})
+}
+
 // note adds a note unless it is there already.
 func (p *Proposal) note(format string, args ...any) {
 	p.Notes = appendOnce(p.Notes, fmt.Sprintf(format, args...))

@@ -63,10 +63,21 @@ func NewRemedies(j *Job, requests []Request) ([]Remedy, error) {
 		}
 		out[i] = r
 	}
+	if n := slices.IndexFunc(requests, isDrains); n >= 0 {
+		if m := slices.IndexFunc(requests[n+1:], isDrains); m >= 0 {
+			faults = append(faults, fmt.Errorf("%w: %s and %s: one kind of drains at a time, since their effects do not add up", ErrRequest, requests[n].Kind, requests[n+1+m].Kind))
+		}
+	}
 	if err := errors.Join(faults...); err != nil {
 		return nil, err
 	}
 	return out, nil
+}
+
+// isDrains reports whether a request is for drains that set the pore pressure between them.
+func isDrains(r Request) bool {
+	k, _ := Find(r.Kind)
+	return k.order == orderDrains
 }
 
 // newRemedy checks a request against its kind and makes the remedy.
