@@ -36,36 +36,44 @@ func (d *trenchDrains) Apply(j *Job, on *Proposal, x []float64) *Proposal {
 	t, ok := d.trench(j, f, p, x)
 	if ok {
 		d.measure(j, p, f, t)
+	} else {
+		t = nil
 	}
+	p.drain(j, t, "trench drains", meanFall(x[drainEffectiveness]), midspanFall(x[drainEffectiveness]))
+	d.explain(p, x)
+	p.finish(j)
+	return p
+}
+
+// drain lowers the pore pressure of every situation by drains laid out as t, in the share that they work, and adds to each such situation the
+// state midway between drains; nil lowers nothing and adds the same states.
+func (p *Proposal) drain(j *Job, t *trench, noun string, mean, mid fall) {
 	p.mayDrain = true
-	if line := j.Stage.Water; ok && j.Stage.Given && line != dry && !j.Waters[line].Artesian {
-		p.drained = t.drawdown(j.Waters[line].Line, 1, meanFall(x[drainEffectiveness]))
-	}
 	for i, s := range j.Situations {
 		if s.Water == dry || s.DrainsWorking == 0 {
 			continue
 		}
 		if j.Waters[s.Water].Artesian {
-			p.note("water line %q is artesian: trench drains are not taken to lower it", j.Waters[s.Water].Name)
+			p.note("water line %q is artesian: %s are not taken to lower it", j.Waters[s.Water].Name, noun)
 			continue
 		}
-		mid := p.Waters[i]
-		if ok {
-			mid.Drains = t.drawdown(mid.Line, s.DrainsWorking, midspanFall(x[drainEffectiveness]))
-			p.Waters[i].Drains = t.drawdown(p.Waters[i].Line, s.DrainsWorking, meanFall(x[drainEffectiveness]))
+		between := p.Waters[i]
+		if t != nil {
+			between.Drains = t.drawdown(between.Line, s.DrainsWorking, mid)
+			p.Waters[i].Drains = t.drawdown(p.Waters[i].Line, s.DrainsWorking, mean)
 		}
-		p.variants = append(p.variants, variant{situation: i, note: midspanNote, water: mid})
+		p.variants = append(p.variants, variant{situation: i, note: midspanNote, water: between})
 	}
-	d.explain(j, p, x)
-	p.finish(j)
-	return p
+	if line := j.Stage.Water; t != nil && j.Stage.Given && line != dry && !j.Waters[line].Artesian {
+		p.drained = t.drawdown(j.Waters[line].Line, 1, mean)
+	}
+	if !slices.ContainsFunc(j.Situations, func(s Situation) bool { return s.DrainsWorking < 1 }) {
+		p.note("%s: no design situation takes the drains as partly blocked", noun)
+	}
 }
 
-// explain notes where the fall of the head comes from, and whether any situation counts blocked drains.
-func (d *trenchDrains) explain(j *Job, p *Proposal, x []float64) {
-	if !slices.ContainsFunc(j.Situations, func(s Situation) bool { return s.DrainsWorking < 1 }) {
-		p.note("trench drains: no design situation takes the drains as partly blocked")
-	}
+// explain notes where the fall of the head comes from.
+func (d *trenchDrains) explain(p *Proposal, x []float64) {
 	if math.IsNaN(x[drainEffectiveness]) {
 		p.note("trench drains: pore pressure from the series for drains down to soil of low permeability, the water line taken as fed from the surface")
 		return
