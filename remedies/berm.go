@@ -1,6 +1,7 @@
 package remedies
 
 import (
+	"fmt"
 	"math"
 
 	"standfast/lem"
@@ -29,16 +30,39 @@ func bermKind() Kind {
 				Name: "batter", Unit: "1V:nH", Meaning: "Batter of the outer face: n in 1 vertical to n horizontal.",
 				Min: 0.1, Max: 20, Default: optimize.Axis{Name: "batter", Min: 2, Max: 2},
 			},
+			{
+				// 0.3 m to 0.5 m is usual (common practice, no source).
+				Name: "blanket", Unit: "m", Optional: true, Meaning: "Thickness of a drainage blanket on the ground under the berm; none if not given.",
+				Min: 0.1, Max: 5,
+			},
 		},
-		Choices: []Choice{{Name: "fill", Soil: true, Meaning: "Soil of the fill."}},
-		Place:   "toe",
-		order:   orderFill,
-		New:     newBerm,
+		Choices: []Choice{
+			{Name: "fill", Soil: true, Meaning: "Soil of the fill."},
+			{Name: "blanket_fill", Soil: true, Optional: true, Meaning: "Soil of the drainage blanket; it must be free-draining."},
+		},
+		Place: "toe",
+		order: orderFill,
+		New:   newBerm,
 	}
 }
 
-func newBerm(_ *Job, r *Request) (Remedy, error) {
-	return &earthworks{noun: "berm", soil: r.soil("fill"), fills: true, shape: bermShape("berm")}, nil
+// bermBlanket is the place of the thickness of the blanket under a berm.
+const bermBlanket = 3
+
+// newBerm makes the remedy; a blanket must drain freely.
+func newBerm(j *Job, r *Request) (Remedy, error) {
+	works := &earthworks{noun: "berm", soil: r.soil("fill"), fills: true, shape: bermShape("berm")}
+	soil := r.soil("blanket_fill")
+	switch {
+	case r.has(bermBlanket) != (soil != noSoil):
+		return nil, fmt.Errorf("%w: berm: a blanket needs its thickness, blanket, and its soil, blanket_fill", ErrRequest)
+	case soil == noSoil:
+		return works, nil
+	case !j.Section.Soils[soil].FreeDraining:
+		return nil, fmt.Errorf("%w: berm: blanket_fill %q is not free-draining", ErrRequest, j.Section.Soils[soil].Name)
+	}
+	works.under = &blanket{soil: soil, thickness: bermBlanket}
+	return works, nil
 }
 
 // bermShape is a level top at height x[0] above the toe, of width x[1] from where it meets the face before works to its outer edge,

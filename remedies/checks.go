@@ -52,6 +52,7 @@ func (p *Proposal) clone() *Proposal {
 	q.Dimensions = slices.Clone(p.Dimensions)
 	q.NotChecked = slices.Clone(p.NotChecked)
 	q.Notes = slices.Clone(p.Notes)
+	q.HandChecks = slices.Clone(p.HandChecks)
 	return &q
 }
 
@@ -82,6 +83,7 @@ func situationCheck(p *Proposal, i int, s *Situation, note string, w lem.Water) 
 func (p *Proposal) finish(j *Job) {
 	p.Quantities.Strip = stripped(j.Section.Ground, p.Section.Ground, p.exchanged)
 	p.checkImport(j)
+	p.checkBearing(j)
 	p.addStages(j)
 }
 

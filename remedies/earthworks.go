@@ -14,6 +14,13 @@ type earthworks struct {
 	cuts  bool   // Some size may cut.
 	fills bool   // Some size is meant to fill, and not only a hollow of the ground.
 	shape func(s *slope, x []float64) shape
+	under *blanket // Between ground and fill; nil: none.
+}
+
+// blanket is a layer of a soil of its own that lies on the ground under a fill.
+type blanket struct {
+	soil      int
+	thickness int // Place of its parameter.
 }
 
 // Apply cuts and fills to the shape at x.
@@ -27,14 +34,14 @@ func (w *earthworks) Apply(j *Job, on *Proposal, x []float64) *Proposal {
 	p.Violations = append(p.Violations, sh.faults...)
 	if sh.line != nil {
 		p.Dimensions = append(p.Dimensions, sh.dims...)
-		w.build(j, p, &sh, f.mirrored)
+		w.build(j, p, &sh, f.mirrored, x)
 	}
 	p.finish(j)
 	return p
 }
 
 // build does the works of a shape, in the section's own coordinates: cut first, then fill.
-func (w *earthworks) build(j *Job, p *Proposal, sh *shape, mirrored bool) {
+func (w *earthworks) build(j *Job, p *Proposal, sh *shape, mirrored bool, x []float64) {
 	var done []run
 	if sh.cut {
 		done = p.cutTo(j, spliced(p.Section.Ground, sh.line, sh.from(), sh.to(), lower), w.noun)
@@ -42,10 +49,14 @@ func (w *earthworks) build(j *Job, p *Proposal, sh *shape, mirrored bool) {
 	if sh.fill {
 		after := spliced(p.Section.Ground, sh.line, sh.from(), sh.to(), upper)
 		if w.soil == noSoil {
-			if h, x := highest(after, p.Section.Ground, sh.from(), sh.to()); h > limitSlack {
-				p.violate("fill", h, "the %s runs %s m above the ground at x = %s m and no fill soil is named: name one under fill", w.noun, metres(h), metres(x))
+			if h, at := highest(after, p.Section.Ground, sh.from(), sh.to()); h > limitSlack {
+				p.violate("fill", h, "the %s runs %s m above the ground at x = %s m and no fill soil is named: name one under fill", w.noun, metres(h), metres(at))
 			}
 		} else {
+			if w.under != nil {
+				top := spliced(after, shifted(p.Section.Ground, x[w.under.thickness]), sh.from(), sh.to(), lower)
+				done = append(done, p.fillTo(j, top, w.under.soil, "drainage blanket")...)
+			}
 			done = append(done, p.fillTo(j, after, w.soil, w.noun)...)
 		}
 	}

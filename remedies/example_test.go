@@ -2,6 +2,7 @@ package remedies_test
 
 import (
 	"fmt"
+	"math"
 
 	"standfast/lem"
 	"standfast/optimize"
@@ -27,10 +28,11 @@ func ExampleApply() {
 			{Name: "height", Min: 2, Max: 2},
 			{Name: "top_width", Min: 5, Max: 5},
 			{Name: "batter", Min: 2, Max: 2},
+			{}, // no drainage blanket
 		},
 		Soils: map[string]int{"fill": 1},
 	}
-	p, err := remedies.Apply(job, []remedies.Request{berm}, [][]float64{{2, 5, 2}})
+	p, err := remedies.Apply(job, []remedies.Request{berm}, [][]float64{{2, 5, 2, math.NaN()}})
 	if err != nil {
 		fmt.Println(err)
 		return

@@ -80,6 +80,7 @@ type Proposal struct {
 	Violations []Violation
 	Dimensions []Dimension // What a drawing should dimension.
 	NotChecked []string    // Checks that could not be made, each with the reason; an option that has any cannot meet the target.
+	HandChecks []HandCheck // Closed forms told beside the checks.
 	Notes      []string    // What the works changed silently, such as a water line clipped to the new ground.
 
 	variants   []variant       // Further states of the water in which situations must be met.

@@ -197,7 +197,7 @@ func TestRequestFaults(t *testing.T) {
 		{"out of range", bad, "height from 2 to 99 must lie within 0.1 to 50"},
 		{"misnamed", misnamed, `parameter 2 is "top_width", not "width"`},
 		{"unknown", Request{Kind: "moat"}, `no remedy "moat"`},
-		{"too few", Request{Kind: "berm", Soils: fillOf(sandFill)}, "berm has 3 parameters, not 0"},
+		{"too few", Request{Kind: "berm", Soils: fillOf(sandFill)}, "berm has 4 parameters, not 0"},
 	}
 	for _, tt := range tests {
 		t.Run(tt.name, func(t *testing.T) {
@@ -215,7 +215,10 @@ func TestDefaultRequests(t *testing.T) {
 		t.Run(k.Name, func(t *testing.T) {
 			r := DefaultRequest(&k)
 			for _, c := range k.Choices {
-				r.Soils[c.Name] = map[string]int{"fill": rockfill, "low_permeability": stiffClay}[c.Name]
+				r.Soils[c.Name] = map[string]int{"fill": rockfill, "low_permeability": stiffClay, "blanket_fill": noSoil}[c.Name]
+				if r.Soils[c.Name] == noSoil {
+					delete(r.Soils, c.Name)
+				}
 			}
 			if k.Name == "lightweight_fill" {
 				r.Soils["fill"] = lightFill

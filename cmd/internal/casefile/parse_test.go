@@ -99,7 +99,7 @@ func TestCuttingIsFilled(t *testing.T) {
 		{"outfall", *j.Limits.Outfall, 99.4},
 		{"berm", j.Requests[2], remedies.Request{
 			Kind: "berm", Soils: map[string]int{"fill": 3}, Words: map[string]string{},
-			Axes: []optimize.Axis{{Name: "height", Min: 0.5, Max: 3, Step: 0.1}, {Name: "top_width", Min: 3, Max: 8, Step: 0.25}, {Name: "batter", Min: 2, Max: 2}},
+			Axes: []optimize.Axis{{Name: "height", Min: 0.5, Max: 3, Step: 0.1}, {Name: "top_width", Min: 3, Max: 8, Step: 0.25}, {Name: "batter", Min: 2, Max: 2}, {}},
 		}},
 	}
 	for _, c := range checks {
