@@ -51,9 +51,11 @@ func caseShape() *shape {
 		field{key: "soils", shape: named(soilShape(), 1, maxSoils), required: true, meaning: "Soils and fill materials by name.", example: "{stiff clay: {unit_weight: 19.8, drained: {cohesion: 4, friction: 23}}}"},
 		field{key: "strata", shape: list(stratumShape(), 1, maxStrata), required: true, meaning: "Strata from the surface down; where a lower top rises above an upper one, the upper stratum is absent.", example: "[{soil: stiff clay, top: ground}]"},
 		field{key: "placed", shape: list(placedShape(), 0, maxBodies), standard: "none", meaning: "Placed or exchanged material, later over earlier, over the strata; clipped to the ground.", example: "[{soil: granular fill, outline: [[48, 100], [50, 102], [54, 102], [58, 100]]}]"},
-		field{key: "water", shape: named(waterShape(), 0, maxWaters), standard: "none", meaning: "Piezometric lines by name. Pore pressure is 9.81 kN/m3 x vertical depth below the line; a line above ground is pressure only.", example: "{high: [[0, 107.6], [52.5, 100], [75, 99.3]]}"},
+		field{key: "water", shape: named(waterShape(), 0, maxWaters), standard: "none", meaning: "States of the pore water by name: a piezometric line, or a mapping. Pore pressure is 9.81 kN/m3 x vertical depth below the line; a line above ground is pressure only.", example: "{high: [[0, 107.6], [52.5, 100], [75, 99.3]]}"},
 		field{key: "firm_base", shape: lineShape(), standard: "none", meaning: "Line below which no slip passes.", example: "[[0, 92], [75, 91.5]]"},
+		field{key: "tension_crack", shape: crackShape(), standard: "none", meaning: "Vertical crack at the head of every slip: coming from its head, a slip ends where it first passes below the bottom of the crack, and slips that do not are left out.", example: "{depth: 2, filled: 50%}"},
 		field{key: "surcharges", shape: list(surchargeShape(), 0, maxSurcharges), standard: "none", meaning: "Pressures on the ground.", example: "[{name: farm track, from: 20, to: 29, pressure: 5}]"},
+		field{key: "line_loads", shape: list(lineLoadShape(), 0, maxSurcharges), standard: "none", meaning: "Permanent forces on the ground along lines at right angles to the section.", example: "[{name: wall, x: 24, vertical: 40}]"},
 		field{key: "situations", shape: list(situationShape(), 1, maxSituations), required: true, meaning: "Design situations; all bind at once.", example: "[{name: normal water, water: high, required_fs: 1.3}]"},
 		field{key: "stages", shape: stagesShape(), standard: "stages are not checked, which the output says", meaning: "Settings of construction stages.", example: "{water: summer, required_fs: 1.1}"},
 		field{key: "limits", shape: limitsShape(), standard: "no limits", meaning: "Limits of the works.", example: "{works_between: {left: 24, right: 58.5}}"},
@@ -75,7 +77,8 @@ func soilShape() *shape {
 	return object(
 		field{key: "unit_weight", shape: number("kN/m3", weight), required: true, meaning: "Bulk unit weight above the water line.", example: "19"},
 		field{key: "saturated_unit_weight", shape: number("kN/m3", weight), standard: "same as `unit_weight`", meaning: "Unit weight below the water line.", example: "19.8"},
-		field{key: "drained", shape: drainedShape(), standard: "required, unless every situation takes the undrained strength and there are no stages", meaning: "Effective strength.", example: "{cohesion: 3, friction: 23}"},
+		field{key: "drained", shape: drainedShape(), standard: "this or `power_law` is required, unless every situation takes the undrained strength and there are no stages", meaning: "Effective strength.", example: "{cohesion: 3, friction: 23}"},
+		field{key: "power_law", shape: powerLawShape(), standard: "`drained` holds", meaning: "Curved effective strength a x pa x (sigma'/pa)^b in place of `drained`, with pa = 101.325 kPa.", example: "{a: 0.9, b: 0.8}"},
 		field{key: "undrained", shape: undrainedShape(), standard: "none", meaning: "Undrained strength, fixed from the ground before works.", example: "{strength: 35}"},
 		field{key: "ru", shape: number("", within(0, 1)), standard: "pore pressure comes from the water line", meaning: "Pore pressure as a ratio to the weight of soil above, in place of any water line.", example: "0.25"},
 		field{key: "free_draining", shape: boolean(), standard: "false", meaning: "Pore pressure only below the drain outfall or free water, where one is given.", example: "true"},
@@ -90,13 +93,23 @@ func drainedShape() *shape {
 	)
 }
 
+func powerLawShape() *shape {
+	return object(
+		field{key: "a", shape: number("", above(0).upTo(10)), required: true, meaning: "Shear strength over effective normal stress at a normal stress of 101.325 kPa.", example: "0.9"},
+		field{key: "b", shape: number("", above(0).upTo(1)), required: true, meaning: "Exponent: 1 is a straight envelope, less is curved.", example: "0.8"},
+	)
+}
+
 func undrainedShape() *shape {
 	return object(
-		field{key: "strength", shape: number("kPa", atLeast(0)), standard: "this or `points` is required", meaning: "Undrained strength cu, at the line `below` if there is a gradient.", example: "35"},
+		field{key: "strength", shape: number("kPa", atLeast(0)), standard: "this, `points` or `ratio` is required", meaning: "Undrained strength cu, at the line `below` if there is a gradient.", example: "35"},
 		field{key: "gradient", shape: number("kPa/m", within(-1000, 1000)), standard: "0", meaning: "Increase of cu for every metre of depth below the line `below`.", example: "1.5"},
 		field{key: "below", shape: either(text("`ground`, the soil of a stratum, or a list of points"), lineShape()), standard: "required with a gradient", meaning: "Line that depth is measured from: `ground` (before works), the soil of a stratum for its top, or points.", example: "ground"},
-		field{key: "points", shape: list(tuple(coordinate("x"), coordinate("y"), field{key: "cu", shape: number("kPa", atLeast(0))}), 1, maxPoints), standard: "this or `strength` is required", meaning: "cu at points. Points of one x make a vertical: linear in level on it, and linear in x between verticals; held beyond their ends.", example: "[[23, 8, 28.5], [33, 8, 22.5]]"},
-	).exactlyOne("strength", "points")
+		field{key: "points", shape: list(tuple(coordinate("x"), coordinate("y"), field{key: "cu", shape: number("kPa", atLeast(0))}), 1, maxPoints), standard: "this, `strength` or `ratio` is required", meaning: "cu at points. Points of one x make a vertical: linear in level on it, and linear in x between verticals; held beyond their ends.", example: "[[23, 8, 28.5], [33, 8, 22.5]]"},
+		field{key: "ratio", shape: number("", above(0).upTo(2)), standard: "this, `strength` or `points` is required", meaning: "cu as a ratio to the effective vertical stress before works: of the strata under the ground before works and `water_before`, without surcharge.", example: "0.25"},
+		field{key: "minimum", shape: number("kPa", atLeast(0)), standard: "0", meaning: "Least cu of a strength by `ratio`, such as in a crust; it is the strength of fill of this soil.", example: "8"},
+		field{key: "water_before", shape: either(text("the name of a water line, `none`, or a list of points"), lineShape()), standard: "required with a ratio", meaning: "Water before works that the stress is of: the line of a name under `water`, `none`, or points.", example: "normal"},
+	).exactlyOne("strength", "points", "ratio")
 }
 
 func stratumShape() *shape {
@@ -115,16 +128,46 @@ func placedShape() *shape {
 
 func waterShape() *shape {
 	return either(lineShape(), object(
-		field{key: "line", shape: lineShape(), required: true, meaning: "Points of the line.", example: "[[0, 107.6], [75, 99.3]]"},
-		field{key: "artesian", shape: boolean(), standard: "false", meaning: "Keeps its head where works cut below it; any other line is clipped to the new ground.", example: "true"},
+		field{key: "line", shape: lineShape(), standard: "dry, but for `by_soil` and `points`", meaning: "Points of the line.", example: "[[0, 107.6], [75, 99.3]]"},
+		artesianField(),
+		field{key: "by_soil", shape: named(either(lineShape(), object(
+			field{key: "line", shape: lineShape(), required: true, meaning: "Points of the line.", example: "[[0, 104], [75, 102]]"},
+			artesianField(),
+		)), 1, maxSoils), standard: "none", meaning: "Lines that hold in one soil in place of `line`, by the name of the soil: perched or artesian water. Drains do not lower them.", example: "{gravel: {line: [[0, 104], [75, 102]], artesian: true}}"},
+		field{key: "points", shape: list(tuple(coordinate("x"), coordinate("y"), field{key: "u", shape: number("kPa", atLeast(0))}), 1, maxPoints), standard: "none", meaning: "Known pore pressures, in place of all lines in every soil but those with `ru` and free-draining ones with a known level. Points of one x make a vertical: linear in level on it, linear in x between verticals, held beyond their ends; give 0 at the water table. Neither drains nor cuts change them.", example: "[[20, 105, 0], [20, 95, 80]]"},
+		field{key: "inclined", shape: boolean(), standard: "false", meaning: "Pore pressure below every line is 9.81 kN/m3 x depth x cos^2 of the inclination of the line: seepage parallel to it.", example: "true"},
 	))
+}
+
+func artesianField() field {
+	return field{key: "artesian", shape: boolean(), standard: "false", meaning: "Keeps its head where works cut below it; any other line is clipped to the new ground.", example: "true"}
+}
+
+func crackShape() *shape {
+	return object(
+		field{key: "depth", shape: number("m", above(0).upTo(100)), standard: "this or `line` is required", meaning: "Depth below the ground, everywhere.", example: "2"},
+		field{key: "line", shape: lineShape(), standard: "this or `depth` is required", meaning: "Bottom of the crack; beyond its ends and where it lies above the ground there is no crack.", example: "[[0, 107], [30, 106.5]]"},
+		field{key: "filled", shape: share(), standard: "0%: dry", meaning: "Depth of water over the depth of the crack.", example: "50%"},
+		field{key: "water_level", shape: levelNumber(), standard: "`filled` holds", meaning: "Level of the water in the crack, in place of `filled`.", example: "108"},
+	).exactlyOne("depth", "line")
+}
+
+func lineLoadShape() *shape {
+	return object(
+		field{key: "name", shape: text("a name"), required: true, meaning: "Name for the outputs.", example: "retaining wall"},
+		field{key: "x", shape: levelNumber(), required: true, meaning: "Where it acts.", example: "24"},
+		field{key: "vertical", shape: number("kN/m", anyNumber()), standard: "0", meaning: "Vertical force, downwards.", example: "40"},
+		field{key: "horizontal", shape: number("kN/m", anyNumber()), standard: "0", meaning: "Horizontal force, to the right.", example: "10"},
+	)
 }
 
 func surchargeShape() *shape {
 	return object(append(append([]field{
 		{key: "name", shape: text("a name"), required: true, meaning: "Name for the outputs.", example: "farm track"},
 	}, fromTo("the loaded strip")...),
-		field{key: "pressure", shape: number("kPa", atLeast(0)), required: true, meaning: "Vertical pressure, downwards.", example: "5"},
+		field{key: "pressure", shape: number("kPa", atLeast(0)), required: true, meaning: "Vertical pressure, downwards; at `from` if there is a `pressure_to`.", example: "5"},
+		field{key: "pressure_to", shape: number("kPa", atLeast(0)), standard: "same as `pressure`", meaning: "Vertical pressure at `to`; straight between.", example: "20"},
+		field{key: "horizontal", shape: number("kPa", anyNumber()), standard: "0", meaning: "Horizontal pressure, to the right, over the whole strip.", example: "2"},
 		field{key: "variable", shape: boolean(), standard: "false", meaning: "Comes and goes: left out on slips whose FS it would raise, and takes no earthquake force.", example: "true"},
 	)...)
 }
@@ -136,6 +179,7 @@ func situationShape() *shape {
 		field{key: "water", shape: text("the name of a water line, or `none`"), required: true, meaning: "Name of a water line, or `none`.", example: "high"},
 		field{key: "strength", shape: either(word(wordDrained, wordUndrained), named(word(wordDrained, wordUndrained), 1, maxSoils)), standard: "drained", meaning: "`drained`; `undrained`: cu for every soil that is clay, the others drained; or one of the two by soil, the others drained.", example: "{soft alluvium: undrained}"},
 		field{key: "kh", shape: number("", within(0, 1)), standard: "0", meaning: "Horizontal pseudo-static coefficient, outward.", example: "0.08"},
+		field{key: "kv", shape: number("", within(-0.5, 0.5)), standard: "0", meaning: "Vertical pseudo-static coefficient, positive downwards, on ground and permanent loads.", example: "-0.04"},
 		field{key: "required_fs", shape: number("", fs), standard: "this or `required_ratio` is required", meaning: "Required factor of safety.", example: "1.3"},
 		field{key: "required_ratio", shape: number("", fs), standard: "this or `required_fs` is required", meaning: "Required factor of safety as a ratio to that of the slope as it is in this situation.", example: "1.25"},
 		field{key: "free_water", shape: list(freeWaterShape(), 0, maxZones), standard: "none", meaning: "Water standing on the ground; it alone loads the face.", example: "[{level: 101, from: 52, to: 75}]"},

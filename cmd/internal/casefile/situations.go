@@ -12,6 +12,10 @@ func (b *builder) readSurcharges(v value) {
 		s := lem.Surcharge{Variable: b.isTrue(b.get(item, "variable"), false)}
 		s.Name, _ = b.text(b.get(item, "name"))
 		s.Pressure, _ = b.number(b.get(item, "pressure"))
+		if to, ok := b.number(b.get(item, "pressure_to")); ok {
+			s.Rise = to - s.Pressure
+		}
+		s.Shear, _ = b.number(b.get(item, "horizontal"))
 		var ok bool
 		s.FromX, s.ToX, ok = b.fromTo(item)
 		if g := b.job.Section.Ground; ok && g != nil && (s.ToX <= g.Left() || s.FromX >= g.Right()) {
@@ -19,6 +23,58 @@ func (b *builder) readSurcharges(v value) {
 		}
 		b.job.Section.Loads = append(b.job.Section.Loads, s)
 	}
+}
+
+// readLineLoads fills the forces along lines.
+func (b *builder) readLineLoads(v value) {
+	b.uniqueNames(v)
+	for _, item := range b.items(v) {
+		var l lem.LineLoad
+		l.Name, _ = b.text(b.get(item, "name"))
+		x := b.get(item, "x")
+		l.X, _ = b.number(x)
+		l.Vertical, _ = b.number(b.get(item, "vertical"))
+		l.Horizontal, _ = b.number(b.get(item, "horizontal"))
+		if g := b.job.Section.Ground; b.usable(x) && g != nil && (l.X < g.Left() || l.X > g.Right()) {
+			b.addFault(x, "", "the load lies beyond the ground, which runs from x = %s to %s", figure(g.Left()), figure(g.Right()))
+		}
+		if b.usable(item) && l.Vertical == 0 && l.Horizontal == 0 {
+			b.addFault(b.get(item, "name"), "write its `vertical` or `horizontal` force", "the line load has no force")
+		}
+		b.job.Section.LineLoads = append(b.job.Section.LineLoads, l)
+	}
+}
+
+// readCrack fills the tension crack.
+func (b *builder) readCrack(v value) {
+	if !b.usable(v) {
+		return
+	}
+	k := &lem.TensionCrack{}
+	k.Depth, _ = b.number(b.get(v, "depth"))
+	line, filled, level := b.get(v, "line"), b.get(v, "filled"), b.get(v, "water_level")
+	k.Line, _ = b.line(line)
+	if b.usable(filled) {
+		k.WaterShare, _ = parseShare(filled.node)
+	}
+	k.WaterLevel, k.HasWaterLevel = b.number(level)
+	if filled.there() && level.there() {
+		b.addFault(level, "keep one of them", "the water in the crack has both `filled` and `water_level`")
+	}
+	if g := b.job.Section.Ground; k.Line != nil && g != nil && !belowSomewhere(k.Line, g) {
+		b.addFault(line, "write the level of the crack's bottom, not its depth", "the bottom of the crack lies nowhere below the ground")
+	}
+	b.job.Section.Crack = k
+}
+
+// belowSomewhere reports whether a line lies below the ground somewhere between its own ends.
+func belowSomewhere(line, ground lem.Profile) bool {
+	for _, x := range breaks(line, ground) {
+		if line.At(x) < ground.At(x) {
+			return true
+		}
+	}
+	return false
 }
 
 // readSituations fills the design situations.
@@ -30,6 +86,7 @@ func (b *builder) readSituations(v value) {
 		s.Free = b.freeWater(b.get(item, "free_water"))
 		s.Undrained = b.undrainedSoils(b.get(item, "strength"))
 		s.Kh, _ = b.number(b.get(item, "kh"))
+		s.Kv, _ = b.number(b.get(item, "kv"))
 		s.RequiredFS, _ = b.number(b.get(item, "required_fs"))
 		s.RatioToExisting, _ = b.number(b.get(item, "required_ratio"))
 		s.DrainsWorking = 1

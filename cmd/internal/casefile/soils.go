@@ -26,6 +26,7 @@ func (b *builder) readSoils(v value) {
 		degrees, _ := b.number(b.get(drained, "friction"))
 		s.Friction = degrees * math.Pi / 180
 		b.checkDrained(drained, s)
+		s.PowerLaw = b.powerLaw(b.get(e, "power_law"), drained)
 		s.Ru, s.HasRu = b.number(b.get(e, "ru"))
 		s.FreeDraining = b.isTrue(b.get(e, "free_draining"), false)
 		b.soils.add(s.Name)
@@ -34,6 +35,20 @@ func (b *builder) readSoils(v value) {
 		b.job.Clay = append(b.job.Clay, b.isTrue(b.get(e, "clay"), !s.FreeDraining))
 		b.checkDrainage(e, s)
 	}
+}
+
+// powerLaw returns the curved strength of a soil; nil without one. It stands in place of the drained strength.
+func (b *builder) powerLaw(v, drained value) *lem.PowerLaw {
+	if !b.usable(v) {
+		return nil
+	}
+	if drained.there() {
+		b.addFault(v, "keep one of them", "the soil has both `drained` and `power_law`")
+	}
+	p := &lem.PowerLaw{}
+	p.A, _ = b.number(b.get(v, "a"))
+	p.B, _ = b.number(b.get(v, "b"))
+	return p
 }
 
 // checkDrained refuses a drained strength of nothing, with which no slope stands.
@@ -71,6 +86,7 @@ func (b *builder) readUndrained() {
 		s.Points = b.strengthPoints(b.get(u, "points"))
 		s.Datum = b.datum(b.get(u, "below"))
 		b.checkGradient(u, s)
+		b.readRatio(u, s)
 		b.job.Section.Soils[i].Undrained = s
 	}
 }
@@ -78,8 +94,13 @@ func (b *builder) readUndrained() {
 // checkGradient holds the keys of an undrained strength against each other.
 func (b *builder) checkGradient(u value, s *lem.UndrainedStrength) {
 	gradient, below := b.get(u, "gradient"), b.get(u, "below")
-	points := b.get(u, "points").there()
+	points, ratio := b.get(u, "points").there(), b.get(u, "ratio").there()
 	switch {
+	case ratio && gradient.there():
+		b.addFault(gradient, "take it out", "a strength by `ratio` has no gradient")
+	case ratio && below.there():
+		b.addFault(below, "take it out", "a strength by `ratio` needs no line")
+	case ratio:
 	case points && gradient.there():
 		b.addFault(gradient, "take it out", "a strength at points has no gradient")
 	case points && below.there():
@@ -93,20 +114,46 @@ func (b *builder) checkGradient(u value, s *lem.UndrainedStrength) {
 	}
 }
 
+// readRatio fills a strength by ratio to the effective vertical stress before works.
+func (b *builder) readRatio(u value, s *lem.UndrainedStrength) {
+	ratio, minimum, water := b.get(u, "ratio"), b.get(u, "minimum"), b.get(u, "water_before")
+	s.Ratio, _ = b.number(ratio)
+	s.Minimum, _ = b.number(minimum)
+	switch {
+	case !ratio.there():
+		for _, v := range []value{minimum, water} {
+			if v.there() {
+				b.addFault(v, "take it out, or give the strength by `ratio`", "only a strength by `ratio` has a `%s`", v.key.Value)
+			}
+		}
+	case !water.there():
+		b.addFault(ratio, "write `water_before:` with the name of a water line, `none`, or points", "a ratio to effective stress needs the water before works")
+	default:
+		s.WaterBefore = b.waterBefore(water)
+	}
+}
+
+// waterBefore returns the line of the water before works; nil if that is none.
+func (b *builder) waterBefore(v value) lem.Profile {
+	if _, isName := b.text(v); !isName {
+		line, _ := b.line(v)
+		return line
+	}
+	i := b.waterRef(v)
+	if i < 0 || i >= len(b.job.Waters) {
+		return nil
+	}
+	w := &b.job.Waters[i]
+	if w.Line == nil || len(w.BySoil) > 0 || len(w.Points) > 0 || w.Inclined {
+		b.addFault(v, "write the line as points", "`%s` is more than a line", clip(w.Name))
+	}
+	return w.Line
+}
+
 // strengthPoints returns undrained strengths at points; nil without any.
 func (b *builder) strengthPoints(v value) []lem.StrengthPoint {
 	var points []lem.StrengthPoint
-	seen := map[lem.Point]bool{}
-	for _, item := range b.items(v) {
-		x, ok := b.numbers(item)
-		if !ok || len(x) != 3 {
-			continue
-		}
-		at := lem.Point{X: x[0], Y: x[1]}
-		if seen[at] {
-			b.addFault(item, "keep one of them", "a second strength at the same point")
-		}
-		seen[at] = true
+	for _, x := range b.valuesAtPoints(v, "strength") {
 		points = append(points, lem.StrengthPoint{X: x[0], Y: x[1], Strength: x[2]})
 	}
 	return points
@@ -155,7 +202,7 @@ func (b *builder) stratumNames() []string {
 // throughout can do without.
 func (b *builder) checkStrengths() {
 	for i, v := range b.soilValues {
-		if b.get(v, "drained").there() {
+		if b.get(v, "drained").there() || b.get(v, "power_law").there() {
 			continue
 		}
 		if user := b.drainedUser(i); user != "" {

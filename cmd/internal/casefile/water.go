@@ -1,6 +1,8 @@
 package casefile
 
 import (
+	"go.yaml.in/yaml/v4"
+
 	"standfast/lem"
 	"standfast/remedies"
 )
@@ -14,16 +16,97 @@ func (b *builder) readWaters(v value) {
 			b.faultAt(e.key, v.path, "give the line another name", "`none` stands for no water")
 			continue
 		}
-		w := remedies.WaterLine{Name: name}
-		at := e
-		if inner := b.get(e, "line"); inner.there() {
-			at = inner
-			w.Artesian = b.isTrue(b.get(e, "artesian"), false)
-		}
-		w.Line, _ = b.line(at)
 		b.waters.add(name)
-		b.job.Waters = append(b.job.Waters, w)
+		b.job.Waters = append(b.job.Waters, b.waterLine(e))
 	}
+}
+
+// waterLine returns one state of the water.
+func (b *builder) waterLine(e value) remedies.WaterLine {
+	w := remedies.WaterLine{Name: e.key.Value}
+	line, own, points := b.get(e, "line"), b.get(e, "by_soil"), b.get(e, "points")
+	w.Line, w.Artesian = b.lineOf(e)
+	w.BySoil = b.soilLines(own)
+	w.Points = b.pressurePoints(points)
+	w.Inclined = b.isTrue(b.get(e, "inclined"), false)
+	if !b.usable(e) || e.node.Kind != yaml.MappingNode {
+		return w
+	}
+	if !line.there() && !own.there() && !points.there() {
+		b.addFault(e, "write its `line`, lines `by_soil`, or `points`; without water a situation has `water: none`", "holds no water")
+	}
+	if artesian := b.get(e, "artesian"); artesian.there() && !line.there() {
+		b.addFault(artesian, "write it at the line of the soil", "there is no `line` that could be artesian")
+	}
+	if inclined := b.get(e, "inclined"); w.Inclined && !line.there() && !own.there() {
+		b.addFault(inclined, "take it out", "there is no line that could be inclined")
+	}
+	return w
+}
+
+// lineOf returns a line that is written as points or as a mapping, and whether it is artesian.
+func (b *builder) lineOf(v value) (line lem.Profile, artesian bool) {
+	if inner := b.get(v, "line"); inner.there() {
+		artesian = b.isTrue(b.get(v, "artesian"), false)
+		v = inner
+	}
+	line, _ = b.line(v)
+	return line, artesian
+}
+
+// soilLines returns the lines of single soils.
+func (b *builder) soilLines(v value) []remedies.SoilLine {
+	var all []remedies.SoilLine
+	for _, e := range b.entries(v) {
+		name := e.key.Value
+		i, ok := b.soils.index[name]
+		if !ok {
+			if b.soils.known {
+				b.faultAt(e.key, v.path, didYouMean(name, b.soils.all), "there is no soil named `%s`", clip(name))
+			}
+			continue
+		}
+		switch s := &b.job.Section.Soils[i]; {
+		case s.HasRu:
+			b.addFault(e, "keep the line or the `ru` of the soil", "the soil `%s` takes its pore pressure from `ru`", clip(name))
+		case s.FreeDraining:
+			b.addFault(e, "keep the line or `free_draining: true`", "the soil `%s` is free-draining", clip(name))
+		}
+		l := remedies.SoilLine{Soil: i}
+		l.Line, l.Artesian = b.lineOf(e)
+		if l.Line != nil {
+			all = append(all, l)
+		}
+	}
+	return all
+}
+
+// pressurePoints returns known pore pressures; nil without any.
+func (b *builder) pressurePoints(v value) []lem.PressurePoint {
+	var points []lem.PressurePoint
+	for _, x := range b.valuesAtPoints(v, "pressure") {
+		points = append(points, lem.PressurePoint{X: x[0], Y: x[1], Pressure: x[2]})
+	}
+	return points
+}
+
+// valuesAtPoints returns a list of [x, y, value]; it records a fault for a second value at one point.
+func (b *builder) valuesAtPoints(v value, what string) [][3]float64 {
+	var all [][3]float64
+	seen := map[lem.Point]bool{}
+	for _, item := range b.items(v) {
+		x, ok := b.numbers(item)
+		if !ok || len(x) != 3 {
+			continue
+		}
+		at := lem.Point{X: x[0], Y: x[1]}
+		if seen[at] {
+			b.addFault(item, "keep one of them", "a second %s at the same point", what)
+		}
+		seen[at] = true
+		all = append(all, [3]float64{x[0], x[1], x[2]})
+	}
+	return all
 }
 
 // waterRef returns the index of the water line that the value names, -1 for `none`.

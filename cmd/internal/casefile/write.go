@@ -43,7 +43,11 @@ func (c *Case) Proposed(o *remedies.Option) ([]byte, error) {
 	if w.section.FirmBase != nil {
 		m.put("firm_base", pointsNode(w.section.FirmBase))
 	}
+	if k := w.section.Crack; k != nil {
+		m.put("tension_crack", crackNode(k))
+	}
 	m.put("surcharges", w.surcharges())
+	m.put("line_loads", w.lineLoads())
 	m.put("situations", situations)
 	m.put("limits", w.limits())
 	m.put("slips", w.slips())
@@ -106,6 +110,12 @@ func soilNode(s lem.Soil, clay bool) *yaml.Node {
 	if s.SaturatedUnitWeight != 0 {
 		m.put("saturated_unit_weight", numberNode(s.SaturatedUnitWeight))
 	}
+	if s.PowerLaw != nil {
+		var p mapping
+		p.put("a", numberNode(s.PowerLaw.A))
+		p.put("b", numberNode(s.PowerLaw.B))
+		m.put("power_law", p.inline())
+	}
 	if s.Cohesion != 0 || s.Friction != 0 {
 		var d mapping
 		d.put("cohesion", numberNode(s.Cohesion))
@@ -135,6 +145,16 @@ func undrainedNode(u *lem.UndrainedStrength) *yaml.Node {
 			row.Content = append(row.Content, numbersNode(p.X, p.Y, p.Strength))
 		}
 		m.put("points", row)
+		return m.inline()
+	}
+	if u.Ratio != 0 {
+		m.put("ratio", numberNode(u.Ratio))
+		m.put("minimum", numberNode(u.Minimum))
+		if len(u.WaterBefore) > 0 {
+			m.put("water_before", pointsNode(u.WaterBefore))
+		} else {
+			m.put("water_before", textNode(wordNone))
+		}
 		return m.inline()
 	}
 	m.put("strength", numberNode(u.Strength))
@@ -179,10 +199,44 @@ func (w *writer) surcharges() *yaml.Node {
 		m.put("from", numberNode(s.FromX))
 		m.put("to", numberNode(s.ToX))
 		m.put("pressure", numberNode(s.Pressure))
+		if s.Rise != 0 {
+			m.put("pressure_to", numberNode(s.Pressure+s.Rise))
+		}
+		if s.Shear != 0 {
+			m.put("horizontal", numberNode(s.Shear))
+		}
 		if s.Variable {
 			m.put("variable", trueNode())
 		}
 		list.Content = append(list.Content, m.inline())
 	}
 	return list
+}
+
+func (w *writer) lineLoads() *yaml.Node {
+	list := listNode()
+	for _, l := range w.section.LineLoads {
+		var m mapping
+		m.put("name", textNode(l.Name))
+		m.put("x", numberNode(l.X))
+		m.put("vertical", numberNode(l.Vertical))
+		m.put("horizontal", numberNode(l.Horizontal))
+		list.Content = append(list.Content, m.inline())
+	}
+	return list
+}
+
+func crackNode(k *lem.TensionCrack) *yaml.Node {
+	var m mapping
+	if len(k.Line) > 0 {
+		m.put("line", pointsNode(k.Line))
+	} else {
+		m.put("depth", numberNode(k.Depth))
+	}
+	if k.HasWaterLevel {
+		m.put("water_level", numberNode(k.WaterLevel))
+	} else {
+		m.put("filled", numberNode(k.WaterShare))
+	}
+	return m.inline()
 }

@@ -12,7 +12,7 @@ import (
 // lineName returns what the water line of a situation after works is called: as the situation.
 func (w *writer) lineName(i int) string {
 	switch name := w.job.Situations[i].Name; {
-	case w.option.Proposal.Waters[i].Line == nil:
+	case !wet(&w.option.Proposal.Waters[i]):
 		return wordNone
 	case name == wordNone:
 		return wordNone + " (water line)"
@@ -25,19 +25,60 @@ func (w *writer) lineName(i int) string {
 func (w *writer) waters() *yaml.Node {
 	var m mapping
 	for i, s := range w.job.Situations {
-		line := w.option.Proposal.Waters[i].Line
-		switch {
-		case line == nil:
-		case s.Water >= 0 && w.job.Waters[s.Water].Artesian:
-			var a mapping
-			a.put("line", pointsNode(line))
-			a.put("artesian", trueNode())
-			m.put(w.lineName(i), a.inline())
-		default:
-			m.put(w.lineName(i), pointsNode(line))
+		var before remedies.WaterLine
+		if s.Water >= 0 {
+			before = w.job.Waters[s.Water]
+		}
+		if after := &w.option.Proposal.Waters[i]; wet(after) {
+			m.put(w.lineName(i), w.water(after, &before))
 		}
 	}
 	return m.block()
+}
+
+// wet reports whether there is any pore water but that under free water.
+func wet(w *lem.Water) bool { return w.Line != nil || len(w.BySoil) > 0 || len(w.Points) > 0 }
+
+// water returns a state of the water after works, which is artesian where that before works is.
+func (w *writer) water(after *lem.Water, before *remedies.WaterLine) *yaml.Node {
+	if len(after.BySoil) == 0 && len(after.Points) == 0 && !after.InclinedLine {
+		return waterLineNode(after.Line, before.Artesian)
+	}
+	var m mapping
+	if after.Line != nil {
+		m.put("line", pointsNode(after.Line))
+		if before.Artesian {
+			m.put("artesian", trueNode())
+		}
+	}
+	if len(after.BySoil) > 0 {
+		var own mapping
+		for i, l := range after.BySoil {
+			own.put(w.section.Soils[l.Soil].Name, waterLineNode(l.Line, before.BySoil[i].Artesian))
+		}
+		m.put("by_soil", own.block())
+	}
+	if len(after.Points) > 0 {
+		points := rowNode()
+		for _, p := range after.Points {
+			points.Content = append(points.Content, numbersNode(p.X, p.Y, p.Pressure))
+		}
+		m.put("points", points)
+	}
+	if after.InclinedLine {
+		m.put("inclined", trueNode())
+	}
+	return m.block()
+}
+
+func waterLineNode(line lem.Profile, artesian bool) *yaml.Node {
+	if !artesian {
+		return pointsNode(line)
+	}
+	var m mapping
+	m.put("line", pointsNode(line))
+	m.put("artesian", trueNode())
+	return m.inline()
 }
 
 func (w *writer) situations() (*yaml.Node, error) {
@@ -57,6 +98,9 @@ func (w *writer) situations() (*yaml.Node, error) {
 		}
 		if s.Kh != 0 {
 			m.put("kh", numberNode(s.Kh))
+		}
+		if s.Kv != 0 {
+			m.put("kv", numberNode(s.Kv))
 		}
 		water := &w.option.Proposal.Waters[i]
 		if len(water.Free) > 0 {
