@@ -50,6 +50,8 @@ func (r *reader) build(root value) *builder {
 	b.readSurcharges(r.get(root, "surcharges"))
 	b.readLineLoads(r.get(root, "line_loads"))
 	b.readLimits(r.get(root, "limits"))
+	b.readOnSite(r.get(root, "on_site_fill"))
+	b.readEconomics(r.get(root, "economics"))
 	b.readSituations(r.get(root, "situations"))
 	b.readStages(r.get(root, "stages"))
 	b.checkStrengths()

@@ -59,6 +59,8 @@ func caseShape() *shape {
 		field{key: "situations", shape: list(situationShape(), 1, maxSituations), required: true, meaning: "Design situations; all bind at once.", example: "[{name: normal water, water: high, required_fs: 1.3}]"},
 		field{key: "stages", shape: stagesShape(), standard: "stages are not checked, which the output says", meaning: "Settings of construction stages.", example: "{water: summer, required_fs: 1.1}"},
 		field{key: "limits", shape: limitsShape(), standard: "no limits", meaning: "Limits of the works.", example: "{works_between: {left: 24, right: 58.5}}"},
+		field{key: "on_site_fill", shape: list(onSiteShape(), 0, maxZones), standard: "none: all fill is brought, all cut is taken away", meaning: "Material of the site that may serve as fill.", example: "[{name: cut clay, cut_of: stiff clay, serves: [granular fill], share: 80%}]"},
+		field{key: "economics", shape: economicsShape(), standard: "blank: no costs, carbon or lorry loads", meaning: "Rates and factors of your own; whatever is blank is never guessed.", example: "{lorry_load: 10, rates: {cut: 1, import: 3, dispose: 4}}"},
 		field{key: "slips", shape: slipsShape(), standard: "everywhere, both directions", meaning: "Which slips are looked at.", example: "{head: [5, 30], direction: rightward}"},
 		field{key: "remedies", shape: remediesShape(), standard: "none: there is nothing to size", meaning: "Remedies to size. A number is fixed, `a to b by c` is sized, and what is left out has its default.", example: "{berm: {fill: granular fill, height: 0.5 to 3 by 0.1}}"},
 		field{key: "trials", shape: list(trialShape(), 0, maxTrials), standard: "none", meaning: "Works of your own that are only checked.", example: "[{name: first sketch, works: {berm: {fill: granular fill, height: 2, top_width: 5, batter: 2}}}]"},
@@ -206,16 +208,17 @@ func stagesShape() *shape {
 	return object(
 		field{key: "water", shape: text("the name of a water line, or `none`"), required: true, meaning: "Name of the water line during works, or `none`.", example: "summer"},
 		field{key: "required_fs", shape: number("", above(0).upTo(10)), required: true, meaning: "Required factor of safety in every stage.", example: "1.1"},
+		field{key: "plant", shape: number("kPa", within(0, 200)), standard: "0", meaning: "Pressure of construction plant on the levels of the works, and on both sides of an open hole; 10 to 20 kPa is usual. It is left out where it would help.", example: "15"},
 	)
 }
 
 func limitsShape() *shape {
-	return object(
-		field{key: "works_between", shape: worksBetweenShape(), standard: "no side limits", meaning: "Side limits of the works.", example: "{left: {x: 24, name: crest fence}, right: 58.5}"},
-		field{key: "keep_clear", shape: list(keepClearShape(), 0, maxZones), standard: "none", meaning: "Zones that no dig or no load may enter.", example: "[{name: cable, from: 58.5, to: 61.5, forbid: [dig]}]"},
-		field{key: "maximum_levels", shape: list(maximumLevelShape(), 0, maxZones), standard: "none", meaning: "Greatest levels of the ground after works.", example: "[{name: overhead line, from: 33, to: 45, level: 14}]"},
-		field{key: "drain_outfall", shape: levelNumber(), standard: "none given", meaning: "Lowest level at which a drain can discharge.", example: "99.4"},
-	)
+	return object(append([]field{
+		{key: "works_between", shape: worksBetweenShape(), standard: "no side limits", meaning: "Side limits of the works.", example: "{left: {x: 24, name: crest fence}, right: 58.5}"},
+		{key: "keep_clear", shape: list(keepClearShape(), 0, maxZones), standard: "none", meaning: "Zones that no dig or no load may enter.", example: "[{name: cable, from: 58.5, to: 61.5, forbid: [dig]}]"},
+		{key: "maximum_levels", shape: list(maximumLevelShape(), 0, maxZones), standard: "none", meaning: "Greatest levels of the ground after works.", example: "[{name: overhead line, from: 33, to: 45, level: 14}]"},
+		{key: "drain_outfall", shape: levelNumber(), standard: "none given", meaning: "Lowest level at which a drain can discharge.", example: "99.4"},
+	}, formLimits()...)...)
 }
 
 func worksBetweenShape() *shape {

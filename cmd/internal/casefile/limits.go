@@ -14,6 +14,7 @@ func (b *builder) readLimits(v value) {
 	if level, ok := b.number(b.get(v, "drain_outfall")); ok {
 		l.Outfall = &level
 	}
+	b.readFormLimits(v)
 	b.readKeepClear(b.get(v, "keep_clear"))
 	b.readMaximumLevels(b.get(v, "maximum_levels"))
 }

@@ -173,7 +173,8 @@ func (b *builder) readStages(v value) {
 		return
 	}
 	fs, _ := b.number(b.get(v, "required_fs"))
-	b.job.Stage = remedies.StageSettings{Given: true, Water: b.waterRef(b.get(v, "water")), RequiredFS: fs}
+	plant, _ := b.number(b.get(v, "plant"))
+	b.job.Stage = remedies.StageSettings{Given: true, Water: b.waterRef(b.get(v, "water")), RequiredFS: fs, Plant: plant}
 }
 
 // readSlips fills which slips are looked at.

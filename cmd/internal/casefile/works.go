@@ -104,19 +104,24 @@ func (b *builder) axis(p remedies.Parameter, v value) optimize.Axis {
 func (b *builder) tryWorks(toSize, trials value) {
 	entries := b.entries(toSize)
 	for i := range b.job.Requests {
-		b.tryRemedy(&b.job.Requests[i], entries[i])
+		b.tryRemedies(b.job.Requests[i:i+1], entries[i])
 	}
 	items := b.items(trials)
 	for i := range b.job.Trials {
 		entries := b.entries(b.get(items[i], "works"))
+		before := len(b.faults)
 		for k := range b.job.Trials[i].Requests {
-			b.tryRemedy(&b.job.Trials[i].Requests[k], entries[k])
+			b.tryRemedies(b.job.Trials[i].Requests[k:k+1], entries[k])
+		}
+		if len(b.faults) == before {
+			b.tryRemedies(b.job.Trials[i].Requests, b.get(items[i], "works"))
 		}
 	}
 }
 
-func (b *builder) tryRemedy(q *remedies.Request, v value) {
-	_, err := remedies.NewRemedies(&b.job, []remedies.Request{*q})
+// tryRemedies makes remedies that are built together.
+func (b *builder) tryRemedies(qs []remedies.Request, v value) {
+	_, err := remedies.NewRemedies(&b.job, qs)
 	if err == nil {
 		return
 	}

@@ -188,7 +188,39 @@ func (w *writer) limits() *yaml.Node {
 	if l.Outfall != nil {
 		m.put("drain_outfall", numberNode(*l.Outfall))
 	}
+	formLimitNodes(&m, l)
 	return m.block()
+}
+
+// formLimitNodes writes the limits on faces, widths and import.
+func formLimitNodes(m *mapping, l *remedies.Limits) {
+	over := listNode()
+	for _, o := range l.Overhead {
+		var z mapping
+		z.put("name", textNode(o.Name))
+		z.put("from", numberNode(o.FromX))
+		z.put("to", numberNode(o.ToX))
+		z.put("level", numberNode(o.Level))
+		z.put("clearance", numberNode(o.Clearance))
+		over.Content = append(over.Content, z.inline())
+	}
+	m.put("overhead", over)
+	var batters mapping
+	batters.putAbove0("permanent", l.Batters.Permanent)
+	batters.putAbove0("temporary", l.Batters.Temporary)
+	m.put("steepest_batters", batters.inline())
+	m.putAbove0("minimum_bench_width", l.MinBench)
+	m.putAbove0("minimum_haul_width", l.MinHaul)
+	if l.MaxImport != nil {
+		m.put("maximum_import", numberNode(*l.MaxImport))
+	}
+}
+
+// putAbove0 writes a number that stands for something only above 0.
+func (m *mapping) putAbove0(key string, x float64) {
+	if x > 0 {
+		m.put(key, numberNode(x))
+	}
 }
 
 func fenceNode(f *remedies.Fence) *yaml.Node {

@@ -135,6 +135,11 @@ limits:
   keep_clear: [{name: main, from: 2, to: 3, forbid: [load, dig], dig_allowed_to_depth: 0.4}]
   maximum_levels: [{name: wires, from: 2, to: 30, level: 14}]
   drain_outfall: 4.5
+  overhead: [{name: power line, from: 20, to: 30, level: 20, clearance: 6}]
+  steepest_batters: {permanent: 2.5, temporary: 0.5}
+  minimum_bench_width: 2
+  minimum_haul_width: 3.5
+  maximum_import: 0
 slips: {head: [0, 20], toe: [25, 50], direction: rightward}
 `
 	c, err := Parse("all.yaml", []byte(src))
