@@ -89,7 +89,7 @@ const day = 86400.0 // s
 func headMidway(spacing, radius, below, permeability, recharge float64) answer {
 	return func() (float64, error) {
 		j := trialJob(20)
-		p, err := applied(j, "drilled_drains", nil, 20, spacing, 2, 0.5, 2*radius, 3, permeability, recharge, below)
+		p, err := applied(j, "drilled_drains", nil, 20, spacing, 2, 0.5, 2*radius, 10, permeability, recharge, below)
 		if err != nil {
 			return 0, err
 		}
@@ -100,9 +100,6 @@ func headMidway(spacing, radius, below, permeability, recharge float64) answer {
 			}
 			lowest := math.Inf(1) // Where the ratio belongs to the head itself; elsewhere it is that of a lower head nearby, which is on the safe side.
 			for i, q := range d.Invert {
-				if d.Ratio[i] == 0 { // The water lies lower than the drains would leave it.
-					continue
-				}
 				lowest = min(lowest, (c.Situation.Water.Line.At(q.X)-q.Y)*(1-d.Ratio[i]))
 			}
 			return lowest, nil
