@@ -16,9 +16,10 @@ func newAssessCommand() *cobra.Command {
 the critical slips. It sizes nothing and writes no files.
 
 ` + exitCodes(exitOK, exitInput, exitInterrupted, exitOther),
-		Example: "  standfast assess case.yaml",
-		Args:    oneArgument("a case file"),
-		RunE:    func(c *cobra.Command, args []string) error { return runAssess(c, o, args[0]) },
+		Example:           "  standfast assess case.yaml",
+		Args:              oneArgument("a case file"),
+		ValidArgsFunction: completeCases,
+		RunE:              func(c *cobra.Command, args []string) error { return runAssess(c, o, args[0]) },
 	}
 	o.addFlags(c)
 	return c

@@ -25,13 +25,17 @@ func newCompareCommand() *cobra.Command {
 writes the results, drawings and proposed sections to a folder.
 
 ` + exitCodes(exitOK, exitInput, exitNothingMeets, exitInterrupted, exitOther),
-		Example: "  standfast compare case.yaml --only berm,regrade --target \"high water=1.25\"",
-		Args:    oneArgument("a case file"),
-		RunE:    func(c *cobra.Command, args []string) error { return runCompare(c, o, args[0]) },
+		Example:           "  standfast compare case.yaml --only berm,regrade --target \"high water=1.25\"",
+		Args:              oneArgument("a case file"),
+		ValidArgsFunction: completeCases,
+		RunE:              func(c *cobra.Command, args []string) error { return runCompare(c, o, args[0]) },
 	}
 	o.addFlags(c)
 	c.Flags().StringVar(&o.out, "out", "", "folder for the results (default ./<case>-works); one of an earlier run is replaced, any other refused")
 	c.Flags().StringSliceVar(&o.only, "only", nil, "size only these remedies, such as berm,regrade")
+	if err := c.RegisterFlagCompletionFunc("only", completeRemedies); err != nil {
+		panic("cli: " + err.Error()) // The flag is not defined: a programmer's error.
+	}
 	return c
 }
 

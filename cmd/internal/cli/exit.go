@@ -66,7 +66,7 @@ func exitCode(err error) int {
 	return exitOther
 }
 
-// printError prints an error for people. Faults of a case file stand one below the other, each with its line.
+// printError prints an error for people. Faults of a file stand one below the other, each with its line.
 func printError(w io.Writer, err error, code int) {
 	switch code {
 	case exitOK, exitNothingMeets:
@@ -84,8 +84,8 @@ func printError(w io.Writer, err error, code int) {
 		fmt.Fprintln(w, f)
 	}
 	if n := len(faults); n > 1 {
-		fmt.Fprintf(w, "standfast: %d faults in the case file; nothing was written\n", n)
+		fmt.Fprintf(w, "standfast: %d faults in %s; nothing was written\n", n, faults[0].File)
 		return
 	}
-	fmt.Fprintln(w, "standfast: a fault in the case file; nothing was written")
+	fmt.Fprintf(w, "standfast: a fault in %s; nothing was written\n", faults[0].File)
 }

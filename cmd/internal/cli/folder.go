@@ -93,15 +93,7 @@ func writeFolder(ctx context.Context, path string, outputs []output) (err error)
 	if err := os.Mkdir(fresh, 0o777); err != nil {
 		return err
 	}
-	for _, o := range outputs {
-		if err := ctx.Err(); err != nil {
-			return err
-		}
-		if err := writeFile(filepath.Join(fresh, o.name), o.write); err != nil {
-			return err
-		}
-	}
-	if err := ctx.Err(); err != nil {
+	if err := writeAll(ctx, fresh, outputs); err != nil {
 		return err
 	}
 	if err := checkFolder(path); err != nil { // Somebody may have put something there since.
@@ -124,6 +116,45 @@ func swap(path, fresh, old string) error {
 		return err
 	}
 	return nil
+}
+
+// writeAmong writes the outputs to an existing folder among what stands there: all are complete before the first is moved into place.
+func writeAmong(ctx context.Context, folder string, outputs []output) (err error) {
+	aside, err := os.MkdirTemp(folder, ".standfast-*")
+	if err != nil {
+		return err
+	}
+	defer func() { err = errors.Join(err, os.RemoveAll(aside)) }()
+	if err := writeAll(ctx, aside, outputs); err != nil {
+		return err
+	}
+	for _, o := range outputs {
+		if err := os.Rename(filepath.Join(aside, o.name), filepath.Join(folder, o.name)); err != nil {
+			return err
+		}
+	}
+	return nil
+}
+
+// writeAll writes the outputs to a folder, until the context ends.
+func writeAll(ctx context.Context, folder string, outputs []output) error {
+	for _, o := range outputs {
+		if err := ctx.Err(); err != nil {
+			return err
+		}
+		if err := writeFile(filepath.Join(folder, o.name), o.write); err != nil {
+			return err
+		}
+	}
+	return ctx.Err()
+}
+
+func outputNames(outputs []output) []string {
+	names := make([]string, len(outputs))
+	for i, o := range outputs {
+		names[i] = o.name
+	}
+	return names
 }
 
 // writeFile creates a file and writes it.

@@ -58,6 +58,6 @@ A preliminary sizing aid for use by a competent engineer: what it says must be c
 		CompletionOptions: cobra.CompletionOptions{DisableDefaultCmd: true},
 	}
 	root.SetVersionTemplate("standfast {{.Version}}\n")
-	root.AddCommand(newCompareCommand(), newAssessCommand(), newDrawCommand(), newNewCommand())
+	root.AddCommand(newCompareCommand(), newAssessCommand(), newDrawCommand(), newNewCommand(), newReportCommand(), newSchemaCommand(), newCompletionCommand())
 	return root, started
 }

@@ -2,23 +2,20 @@ package cli
 
 import (
 	"context"
-	"errors"
 	"fmt"
 	"io"
-	"os"
-	"path/filepath"
 	"strings"
 	"unicode"
 
 	"standfast/cmd/internal/casefile"
-	"standfast/cmd/internal/drawing"
 	"standfast/cmd/internal/report"
 	"standfast/remedies"
 )
 
 // writeWorks writes everything that a comparison gives to the folder out and returns what stands in its result.json.
 func writeWorks(ctx context.Context, out string, c *casefile.Case, r *remedies.Result, src report.Source) (*report.File, error) {
-	outputs, err := drawingsOf(r)
+	file := report.New(r, src)
+	outputs, err := deliverables(file)
 	if err != nil {
 		return nil, err
 	}
@@ -36,44 +33,9 @@ func writeWorks(ctx context.Context, out string, c *casefile.Case, r *remedies.R
 	}
 	witnesses := report.NewWitnesses(r, src)
 	outputs = append(outputs, output{"witnesses.json", witnesses.Encode})
-	src.Files = []string{resultName}
-	for _, o := range outputs {
-		src.Files = append(src.Files, o.name)
-	}
-	file := report.New(r, src)
+	file.Files = append([]string{resultName}, outputNames(outputs)...)
 	outputs = append(outputs, output{resultName, file.Encode})
 	return file, writeFolder(ctx, out, outputs)
-}
-
-// drawingsOf draws the section as it is, every option that has works, and the trade-off.
-func drawingsOf(r *remedies.Result) ([]output, error) {
-	var out []output
-	add := func(name string, f *drawing.Figure, err error) error {
-		switch {
-		case errors.Is(err, drawing.ErrNothingToDraw):
-			return nil
-		case err != nil:
-			return fmt.Errorf("drawing %s: %w", name, err)
-		}
-		out = append(out, output{name + ".svg", f.WriteSVG}, output{name + ".png", f.WritePNG})
-		return nil
-	}
-	f, err := drawing.Section(r.Job, &r.Existing, drawing.Options{})
-	if err := add("section-existing", f, err); err != nil {
-		return nil, err
-	}
-	names := fileNames(r.Options)
-	for i := range r.Options {
-		if r.Options[i].Proposal == nil {
-			continue
-		}
-		f, err := drawing.Section(r.Job, &r.Options[i], drawing.Options{})
-		if err := add("section-"+names[i], f, err); err != nil {
-			return nil, err
-		}
-	}
-	f, err = drawing.Tradeoff(r.Job.Title, r.Options, drawing.Options{})
-	return out, add("tradeoff", f, err)
 }
 
 // fileNames returns a name for the files of each option: the option's own with what no file system likes replaced, and told apart by
@@ -96,31 +58,4 @@ func fileNames(options []remedies.Option) []string {
 		names[i] = name
 	}
 	return names
-}
-
-// writePair writes a figure as base.svg and base.png, both or none. The folder is made if need be.
-func writePair(ctx context.Context, base string, f *drawing.Figure) (err error) {
-	if err := os.MkdirAll(filepath.Dir(base), 0o777); err != nil {
-		return err
-	}
-	aside, err := os.MkdirTemp(filepath.Dir(base), ".standfast-*")
-	if err != nil {
-		return err
-	}
-	defer func() { err = errors.Join(err, os.RemoveAll(aside)) }()
-	pair := []output{{".svg", f.WriteSVG}, {".png", f.WritePNG}}
-	for _, o := range pair {
-		if err := writeFile(filepath.Join(aside, o.name), o.write); err != nil {
-			return err
-		}
-	}
-	if err := ctx.Err(); err != nil {
-		return err
-	}
-	for _, o := range pair {
-		if err := os.Rename(filepath.Join(aside, o.name), base+o.name); err != nil {
-			return err
-		}
-	}
-	return nil
 }

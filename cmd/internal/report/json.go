@@ -7,6 +7,7 @@ import (
 	"fmt"
 	"io"
 	"os"
+	"slices"
 )
 
 // ErrFormat says that a file is not a result file of this layout.
@@ -51,6 +52,30 @@ func encode(w io.Writer, v any) error {
 	}
 	var out bytes.Buffer
 	layOut(&out, raw, 0, 0)
+	out.WriteByte('\n')
+	_, err = out.WriteTo(w)
+	return err
+}
+
+// EncodeWithFiles writes a result file, given as its bytes, with another list of files; every other field stays as it is, those of later
+// versions included. It returns an error that wraps [ErrFormat] if the bytes are something else.
+func EncodeWithFiles(w io.Writer, raw []byte, files []string) error {
+	var compact, out bytes.Buffer
+	if err := json.Compact(&compact, raw); err != nil || compact.Len() < 2 || compact.Bytes()[0] != '{' {
+		return ErrFormat
+	}
+	list, err := json.Marshal(files)
+	if err != nil {
+		return fmt.Errorf("report: %w", err)
+	}
+	key := []byte(`"files":`)
+	fields := items(compact.Bytes())
+	for i, f := range fields {
+		if bytes.HasPrefix(f, key) {
+			fields[i] = append(key, list...)
+		}
+	}
+	layOut(&out, slices.Concat([]byte("{"), bytes.Join(fields, []byte(",")), []byte("}")), 0, 0)
 	out.WriteByte('\n')
 	_, err = out.WriteTo(w)
 	return err

@@ -232,3 +232,25 @@ func TestWitnesses(t *testing.T) {
 		t.Errorf("second design is %+v", d)
 	}
 }
+
+// Another list of files changes nothing else, not even a field that only a later version knows.
+func TestEncodeWithFiles(t *testing.T) {
+	good := encoded(t, New(sample()))
+	newer := strings.Replace(good, `"program": {`, `"later": {"files": ["x"], "n": 1.50}, "program": {`, 1)
+	var b bytes.Buffer
+	if err := EncodeWithFiles(&b, []byte(newer), []string{"result.json", "a b.pdf"}); err != nil {
+		t.Fatal(err)
+	}
+	for _, want := range []string{`"files": ["result.json", "a b.pdf"]`, `"later": {"files": ["x"], "n": 1.50}`} {
+		if !strings.Contains(b.String(), want) {
+			t.Errorf("there is no %s in what was written", want)
+		}
+	}
+	b.Reset()
+	if err := EncodeWithFiles(&b, []byte(good), []string{"result.json", "witnesses.json"}); err != nil || b.String() != good {
+		t.Errorf("the same list of files changes the file: %v", err)
+	}
+	if err := EncodeWithFiles(&b, []byte("[]"), nil); !errors.Is(err, ErrFormat) {
+		t.Errorf("a file that is no result gives %v", err)
+	}
+}

@@ -1,0 +1,63 @@
+package cli
+
+import (
+	"errors"
+	"fmt"
+	"io"
+
+	"standfast/cmd/internal/drawing"
+	"standfast/cmd/internal/exchange"
+	"standfast/cmd/internal/report"
+	"standfast/remedies"
+)
+
+// deliverables returns the files that are made from a result file alone: drawings, setting-out tables and quantities. compare and report
+// write the same.
+func deliverables(f *report.File) ([]output, error) {
+	r, err := report.Rebuild(f)
+	if err != nil {
+		return nil, err
+	}
+	out, err := drawSection("section-existing", r.Job, &r.Existing)
+	if err != nil {
+		return nil, err
+	}
+	names := fileNames(r.Options)
+	for i := range r.Options {
+		files, err := drawSection("section-"+names[i], r.Job, &r.Options[i])
+		if err != nil {
+			return nil, err
+		}
+		out = append(out, files...)
+		if o := &f.Options[i]; exchange.HasSettingOut(o) {
+			out = append(out, output{"setting-out-" + names[i] + ".csv", func(w io.Writer) error { return exchange.WriteSettingOut(w, o) }})
+		}
+	}
+	switch figure, err := drawing.Tradeoff(r.Job.Title, r.Options, drawing.Options{}); {
+	case err == nil:
+		out = append(out, asFiles("tradeoff", figure)...)
+	case !errors.Is(err, drawing.ErrNothingToDraw):
+		return nil, fmt.Errorf("drawing tradeoff: %w", err)
+	}
+	if len(f.Options) > 0 {
+		out = append(out, output{"quantities.xlsx", func(w io.Writer) error { return exchange.WriteQuantities(w, f) }})
+	}
+	return out, nil
+}
+
+// drawSection returns the drawings of a section in every format; none if there is nothing to draw.
+func drawSection(name string, j *remedies.Job, o *remedies.Option) ([]output, error) {
+	figure, err := drawing.Section(j, o, drawing.Options{})
+	if errors.Is(err, drawing.ErrNothingToDraw) {
+		return nil, nil
+	}
+	if err != nil {
+		return nil, fmt.Errorf("drawing %s: %w", name, err)
+	}
+	return append(asFiles(name, figure), output{name + ".dxf", func(w io.Writer) error { return drawing.SectionDXF(w, j, o) }}), nil
+}
+
+// asFiles returns a figure in every format of pictures.
+func asFiles(name string, f *drawing.Figure) []output {
+	return []output{{name + ".svg", f.WriteSVG}, {name + ".png", f.WritePNG}, {name + ".pdf", f.WritePDF}}
+}
