@@ -82,14 +82,26 @@ const limitFloat = "flotation of the light fill"
 func (p *Proposal) checkFloating(j *Job, sh *shape, soil int) {
 	weight := j.Section.Soils[soil].UnitWeight
 	most, name, at := 0.0, "", 0.0
-	p.eachWater(j, func(line int, w *lem.Water) {
-		for _, q := range pieces(spliced(w.Line, p.Section.Ground, sh.from(), sh.to(), lower), sh.line, sh.from(), sh.to()) {
+	lifted := func(line int, head lem.Profile, counts func(x, under float64) bool) {
+		if head == nil {
+			return
+		}
+		for _, q := range pieces(spliced(head, p.Section.Ground, sh.from(), sh.to(), lower), sh.line, sh.from(), sh.to()) {
+			if !counts((q.x0+q.x1)/2, (q.b0+q.b1)/2) {
+				continue
+			}
 			for _, end := range []struct{ x, head, under float64 }{{q.x0, q.a0, q.b0}, {q.x1, q.a1, q.b1}} {
 				lift := end.head - end.under - weight/lem.GammaW*(p.Section.Ground.At(end.x)-end.under)
 				if lift > most {
 					most, name, at = lift, j.Waters[line].Name, end.x
 				}
 			}
+		}
+	}
+	p.eachWater(j, func(line int, w *lem.Water) {
+		lifted(line, w.Line, func(float64, float64) bool { return true })
+		for _, own := range w.BySoil { // Water of the soil that the fill lies on.
+			lifted(line, own.Line, func(x, under float64) bool { return j.Section.SoilAt(x, under-sameLevel) == own.Soil })
 		}
 	})
 	if most > limitSlack {

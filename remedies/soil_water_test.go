@@ -64,6 +64,22 @@ func TestCutsClipLinesOfSoils(t *testing.T) {
 	}
 }
 
+// TestDrainsLeaveSoilLines: drains lower neither lines of single soils nor pressures at points, and say so.
+func TestDrainsLeaveSoilLines(t *testing.T) {
+	j := perched()
+	p := apply(t, j, request("trench_drains", nil, 2.75, 9, 0.6, 0.5))
+	for i := range p.Waters {
+		if p.Waters[i].Drains != nil {
+			t.Errorf("situation %d is drained", i)
+		}
+	}
+	for _, part := range []string{`"perched" has no line but`, `"piezometers" has pore pressures at points`} {
+		if !noted(p, part) {
+			t.Errorf("nothing is said of %s: %q", part, p.Notes)
+		}
+	}
+}
+
 // TestLoweringOfSoilLines: the what-if lowers lines of single soils, but no artesian ones and no pressures at points, and says so.
 func TestLoweringOfSoilLines(t *testing.T) {
 	j := perched()

@@ -53,9 +53,13 @@ func (p *Proposal) drain(j *Job, t *trench, noun string, mean, mid fall) {
 		if s.Water == dry || s.DrainsWorking == 0 {
 			continue
 		}
-		if j.Waters[s.Water].Artesian {
-			p.note("water line %q is artesian: %s are not taken to lower it", j.Waters[s.Water].Name, noun)
+		l := &j.Waters[s.Water]
+		if why := l.undrainable(); why != "" {
+			p.note("water line %q %s: %s are not taken to lower it", l.Name, why, noun)
 			continue
+		}
+		if len(l.BySoil) > 0 {
+			p.note("water line %q: %s are not taken to lower the lines of single soils", l.Name, noun)
 		}
 		between := p.Waters[i]
 		if t != nil {
@@ -64,12 +68,25 @@ func (p *Proposal) drain(j *Job, t *trench, noun string, mean, mid fall) {
 		}
 		p.variants = append(p.variants, variant{situation: i, note: midspanNote, water: between})
 	}
-	if line := j.Stage.Water; t != nil && j.Stage.Given && line != dry && !j.Waters[line].Artesian {
+	if line := j.Stage.Water; t != nil && j.Stage.Given && line != dry && j.Waters[line].undrainable() == "" {
 		p.drained = t.drawdown(j.Waters[line].Line, 1, mean)
 	}
 	if !slices.ContainsFunc(j.Situations, func(s Situation) bool { return s.DrainsWorking < 1 }) {
 		p.note("%s: no design situation takes the drains as partly blocked", noun)
 	}
+}
+
+// undrainable says why drains are not taken to lower a line; "" if they are.
+func (l *WaterLine) undrainable() string {
+	switch {
+	case l.Artesian:
+		return "is artesian"
+	case len(l.Points) > 0:
+		return "has pore pressures at points"
+	case l.Line == nil:
+		return "has no line but those of single soils"
+	}
+	return ""
 }
 
 // explain notes where the fall of the head comes from.
