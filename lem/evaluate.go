@@ -126,6 +126,9 @@ func (m *Model) begin(ws *Workspace, o *Setting, r *Result) bool {
 	if m.sheared || r.Crack > 0 {
 		m.pushes(ws, r)
 	}
+	if len(m.rows) > 0 && !m.restrain(ws, r.Leftward) {
+		return false
+	}
 	if o.Method == MorgensternPrice {
 		ws.sideForce = o.SideForce
 	}

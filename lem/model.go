@@ -23,6 +23,7 @@ type Model struct {
 	sheared bool        // Some load has a horizontal part.
 	curved  bool        // Some soil has a curved envelope.
 	crack   *crackWater // Water in the tension crack; nil: there is none.
+	rows    []Restraint // Restraints of the section.
 	points  []vertical  // Pore pressures at points.
 
 	left, right float64   // Ends of the ground as given; the columns go on beyond them, level.
@@ -125,6 +126,7 @@ func (m *Model) Compile(s *Section, sit *Situation) error {
 	m.pooled, m.firm = len(sit.Water.Free) > 0, s.FirmBase != nil
 	m.sheared, m.curved = false, false
 	m.crack = crackWaterOf(s.Crack)
+	m.rows = append(m.rows[:0], s.Restraints...)
 	m.points = pressureVerticals(sit.Water.Points)
 	for i := range s.Soils {
 		m.soils = append(m.soils, strength{verticals: strengthVerticals(s.Soils[i].Undrained)})
@@ -214,7 +216,7 @@ func check(s *Section, sit *Situation) error {
 	if variable > 64 {
 		errs = append(errs, ErrTooManyVariable)
 	}
-	errs = append(errs, checkWater(s, &sit.Water), checkStrength(s), checkLoads(s, sit), s.Crack.check())
+	errs = append(errs, checkWater(s, &sit.Water), checkStrength(s), checkLoads(s, sit), s.Crack.check(), checkRestraints(s.Restraints))
 	return errors.Join(errs...)
 }
 

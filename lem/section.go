@@ -10,6 +10,8 @@ type Section struct {
 	Loads  []Surcharge // Pressures on the ground.
 	// LineLoads are forces along lines on the ground.
 	LineLoads []LineLoad
+	// Restraints hold slips back that pass across them.
+	Restraints []Restraint
 	// Crack, when not nil, is the tension crack in which a slip ends at its head.
 	Crack *TensionCrack
 	// FirmBase, when not nil, is a line below which no slip passes.
