@@ -61,7 +61,7 @@ func (r *run[C]) rankBest() error {
 				return err
 			}
 			heap.Fix(&queue, 0)
-		case len(searched) == r.s.FullSearches:
+		case len(searched) == r.s.BestSearches:
 			queue = searched
 			heap.Init(&queue)
 		default:

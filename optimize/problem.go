@@ -72,6 +72,8 @@ type Settings[C any] struct {
 	// FullSearches is the aim for how many designs are searched in full. The exchange takes at most two thirds of it (none
 	// when it is 1); the walk goes on past it until it has an answer. 0 means DefaultFullSearches.
 	FullSearches int
+	// BestSearches bounds how many designs are searched to find Result.Best when none passes. 0 means FullSearches.
+	BestSearches int
 	// Start is the initial pool.
 	Start []C
 	// Progress, when set, is called from the goroutine of Minimize after each piece of work.
@@ -114,6 +116,9 @@ func (s Settings[C]) resolved() Settings[C] {
 	if s.FullSearches == 0 {
 		s.FullSearches = DefaultFullSearches
 	}
+	if s.BestSearches == 0 {
+		s.BestSearches = s.FullSearches
+	}
 	return s
 }
 
@@ -134,7 +139,7 @@ func validate[C any](p *Problem[C], s *Settings[C]) error {
 	for _, n := range []struct {
 		name  string
 		value int
-	}{{"Workers", s.Workers}, {"MaxDesigns", s.MaxDesigns}, {"FullSearches", s.FullSearches}} {
+	}{{"Workers", s.Workers}, {"MaxDesigns", s.MaxDesigns}, {"FullSearches", s.FullSearches}, {"BestSearches", s.BestSearches}} {
 		if n.value < 0 {
 			faults = append(faults, fmt.Errorf("%s %d is negative", n.name, n.value))
 		}

@@ -74,7 +74,7 @@ type Result[C any] struct {
 	Lowest []Found[C]
 	// Best is the design with the greatest margin when the status is Infeasible or Unresolved; X is nil when there is none.
 	// Candidates are taken by their lowest margin on the pool, which bounds their margin from above, and searched and audited
-	// until the best of them is at least as good as every bound left, or until Settings.FullSearches of them have been
+	// until the best of them is at least as good as every bound left, or until Settings.BestSearches of them have been
 	// taken: then it is the best of those. Unresolved designs are no candidates.
 	Best Attempt[C]
 	Pool []C // every cut known, Settings.Start first

@@ -187,7 +187,7 @@ func (st *study) size(group []Request) error {
 		o.StepLess = z.stepsLess(&res)
 	}
 	o.Certificate = z.certificate(&res)
-	if st.s.Relaxations && o.Status == MeetsTarget {
+	if st.s.Relaxations && o.Status == MeetsTarget && len(group) == 1 {
 		if o.Relaxations, err = z.relaxations(ctx, &res); err != nil {
 			return err
 		}
@@ -206,6 +206,9 @@ func (st *study) size(group []Request) error {
 	st.add(o)
 	return nil
 }
+
+// bestSearches bounds the designs that are searched to find the best of a remedy that cannot meet the target.
+const bestSearches = 3
 
 // costFunc is the Cost of an optimize.Problem.
 type costFunc func(x []float64) (cost, tie float64, ok bool)
@@ -228,7 +231,7 @@ func (z *sizing) price(p *Proposal, x []float64) (cost, tie float64) {
 
 // minimize runs the optimiser over the lattice of the works.
 func (z *sizing) minimize(ctx context.Context, cost costFunc, start []Cut, tell func(string, float64)) (optimize.Result[Cut], error) {
-	settings := optimize.Settings[Cut]{Workers: z.s.Workers, Seed: z.s.Seed, Allowance: z.s.Allowance, Start: start}
+	settings := optimize.Settings[Cut]{Workers: z.s.Workers, Seed: z.s.Seed, Allowance: z.s.Allowance, Start: start, BestSearches: bestSearches}
 	if tell != nil {
 		settings.Progress = func(p optimize.Progress) {
 			tell(z.w.name, float64(p.Done)/math.Max(1, float64(p.Designs)))

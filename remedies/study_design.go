@@ -110,6 +110,7 @@ func (d *design) Search(ctx context.Context, e optimize.Effort) ([]optimize.Foun
 func (d *design) searchAll(ctx context.Context, e optimize.Effort) ([][]optimize.Found[Cut], error) {
 	found := make([][]optimize.Found[Cut], len(d.checks))
 	errs := make([]error, len(d.checks))
+	same := d.sameAs()
 	for i := range d.checks {
 		d.model(i) // Compiled here, one after another: the models are then only read.
 	}
@@ -122,7 +123,9 @@ func (d *design) searchAll(ctx context.Context, e optimize.Effort) ([][]optimize
 				if i >= len(d.checks) {
 					return
 				}
-				found[i], errs[i] = d.searchOne(ctx, i, e)
+				if same[i] == i {
+					found[i], errs[i] = d.searchOne(ctx, i, e)
+				}
 			}
 		})
 	}
@@ -130,6 +133,11 @@ func (d *design) searchAll(ctx context.Context, e optimize.Effort) ([][]optimize
 	for _, err := range errs {
 		if err != nil {
 			return nil, err
+		}
+	}
+	for i, k := range same {
+		if k != i {
+			found[i] = d.asFoundIn(i, k, found[k])
 		}
 	}
 	return found, nil

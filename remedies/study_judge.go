@@ -46,11 +46,13 @@ func (z *sizing) explain(ctx context.Context, o *Option, res *optimize.Result[Cu
 	}
 	var start []Cut
 	start = append(start, res.Pool...)
-	free, err := z.minimize(ctx, z.costWithoutLimits, start, tell)
+	unaudited := newSizing(z.j, z.w, z.s)
+	unaudited.noAudit = true // What the target would take is told as about that.
+	free, err := unaudited.minimize(ctx, unaudited.costWithoutLimits, start, tell)
 	if err != nil {
 		return err
 	}
-	x, verdict := free.X, "the target would take %s, which breaks %s: %s"
+	x, verdict := free.X, "the target would take about %s, which breaks %s: %s"
 	if x == nil {
 		x, verdict = free.Best.X, "even %s, which breaks %s, would not reach the target: %s"
 	}
