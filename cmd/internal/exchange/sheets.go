@@ -10,9 +10,9 @@ import (
 
 // styles are the styles of cells.
 type styles struct {
-	title, head, strong, wrapped           int
-	number, whole, blank, money            int
-	strongNumber, strongWhole, strongMoney int
+	title, head, headRight, strong, wrapped int
+	number, whole, blank, money             int
+	strongNumber, strongWhole, strongMoney  int
 }
 
 // Number formats: amounts with three decimals, whole lengths with none, money with two.
@@ -23,7 +23,8 @@ var (
 )
 
 func (b *book) addStyles() {
-	bold := &excelize.Font{Bold: true}
+	const family = "Calibri" // The face of plain cells; one that is not there is replaced by a like one.
+	bold := &excelize.Font{Bold: true, Family: family, Size: 11}
 	line := []excelize.Border{{Type: "top", Style: 1, Color: "161616"}}
 	under := []excelize.Border{{Type: "bottom", Style: 1, Color: "161616"}}
 	wrap := &excelize.Alignment{WrapText: true, Vertical: "top"}
@@ -32,8 +33,9 @@ func (b *book) addStyles() {
 		id    *int
 		style excelize.Style
 	}{
-		{&b.styles.title, excelize.Style{Font: &excelize.Font{Bold: true, Size: 14}}},
+		{&b.styles.title, excelize.Style{Font: &excelize.Font{Bold: true, Family: family, Size: 14}}},
 		{&b.styles.head, excelize.Style{Font: bold, Border: under, Alignment: wrap}},
+		{&b.styles.headRight, excelize.Style{Font: bold, Border: under, Alignment: &excelize.Alignment{WrapText: true, Vertical: "top", Horizontal: "right"}}},
 		{&b.styles.strong, excelize.Style{Font: bold, Border: line}},
 		{&b.styles.wrapped, excelize.Style{Alignment: wrap}},
 		{&b.styles.number, excelize.Style{CustomNumFmt: &formatNumber}},
@@ -85,6 +87,18 @@ func (b *book) layOut(sheet, orientation string, widths []float64) {
 	b.keep(b.file.SetSheetProps(sheet, &excelize.SheetPropsOptions{FitToPage: &fit}))
 }
 
+// headRow writes the head of a table: words over columns of text, then over columns of numbers.
+func (b *book) headRow(sheet string, texts, numbers []string) {
+	const twoLines = 31.0 // points
+	for i, h := range texts {
+		b.write(sheet, 1+i, rowHead, b.styles.head, h)
+	}
+	for i, h := range numbers {
+		b.write(sheet, 1+len(texts)+i, rowHead, b.styles.headRight, h)
+	}
+	b.keep(b.file.SetRowHeight(sheet, rowHead, twoLines))
+}
+
 func (p *page) text(column, style int, s string) { p.write(p.sheet, column, p.row, style, s) }
 
 func (p *page) words(name, unit string) {
@@ -111,9 +125,7 @@ func (p *page) head() {
 	p.write(p.sheet, colItem, rowLength, 0, "Length of the works")
 	p.write(p.sheet, colUnit, rowLength, 0, "m")
 	p.keep(p.file.SetCellValue(p.sheet, p.at(colPerMetre, rowLength), p.result.Case.Length))
-	for i, h := range []string{"item", "unit", "per metre run", "whole length", "whole length, rounded up", "rate (yours)", "amount"} {
-		p.write(p.sheet, colItem+i, rowHead, p.styles.head, h)
-	}
+	p.headRow(p.sheet, []string{"item", "unit"}, []string{"per metre run", "whole length", "whole length, rounded up", "rate (yours)", "amount"})
 	p.layOut(p.sheet, "portrait", []float64{34, 7, 14, 14, 14, 13, 14})
 }
 
@@ -157,13 +169,12 @@ func (b *book) summary(pages []*page) {
 		{"cut, m³", totalCut}, {"fill, m³", totalFill}, {"earthworks, m³", totalEarthworks}, {"brought in, m³", totalImport},
 		{"taken away, m³", totalDispose}, {"drains, m", totalDrain}, {"stripped, m²", totalStrip},
 	}
-	b.write(summaryName, 1, rowHead, b.styles.head, "option")
-	b.write(summaryName, 2, rowHead, b.styles.head, "status")
-	for i, c := range columns {
-		b.write(summaryName, 3+i, rowHead, b.styles.head, c.head)
+	var heads []string
+	for _, c := range columns {
+		heads = append(heads, c.head)
 	}
+	b.headRow(summaryName, []string{"option", "status"}, append(heads, "amount at your rates"))
 	last := 3 + len(columns)
-	b.write(summaryName, last, rowHead, b.styles.head, "amount at your rates")
 	for k, p := range pages {
 		row := rowFirst + k
 		b.write(summaryName, 1, row, b.styles.wrapped, p.option.Title+sizes(p.option))
