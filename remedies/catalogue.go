@@ -12,6 +12,7 @@ func Catalogue() []Kind {
 		shearKeyKind(),
 		trenchDrainsKind(),
 		drilledDrainsKind(),
+		elementsKind(),
 		waterLoweringKind(),
 	}
 }

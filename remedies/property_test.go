@@ -51,7 +51,7 @@ func anyRequest(t *rapid.T) Request {
 	size := func(name string, from, to float64) float64 {
 		return math.Round(10*rapid.Float64Range(from, to).Draw(t, name)) / 10
 	}
-	switch rapid.SampledFrom([]string{"regrade", "unload", "berm", "buttress", "trench_drains", "drilled_drains", "lightweight_fill", "shear_key"}).Draw(t, "kind") {
+	switch rapid.SampledFrom([]string{"regrade", "unload", "berm", "buttress", "trench_drains", "drilled_drains", "lightweight_fill", "shear_key", "piles_or_nails"}).Draw(t, "kind") {
 	case "regrade":
 		x := []float64{size("batter", 1, 5), size("pivot", 0, 1)}
 		if rapid.Bool().Draw(t, "benched") {
@@ -79,6 +79,8 @@ func anyRequest(t *rapid.T) Request {
 			x = append(x, size("panel", 1, 4), size("spacing", 5, 20))
 		}
 		return request("shear_key", fillOf(rockfill), x...)
+	case "piles_or_nails":
+		return request("piles_or_nails", nil, size("capacity", 10, 400), size("spacing", 0.5, 4), size("position", -5, 30), size("length", 2, 15))
 	case "drilled_drains":
 		return request("drilled_drains", nil, size("length", 8, 40), size("spacing", 3, 15), size("rise", 0, 10), size("outlet", 0, 3), 0.1, size("solid", 0, 4), 1e-6, 1e-8, size("below", 0, 5))
 	default:

@@ -48,6 +48,7 @@ const (
 	orderFill
 	orderWater
 	orderDrains
+	orderElements
 )
 
 // Request is a remedy that the user wants sized.

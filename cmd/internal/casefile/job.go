@@ -49,6 +49,7 @@ func (r *reader) build(root value) *builder {
 	b.readCrack(r.get(root, "tension_crack"))
 	b.readSurcharges(r.get(root, "surcharges"))
 	b.readLineLoads(r.get(root, "line_loads"))
+	b.readRestraints(r.get(root, "restraints"))
 	b.readLimits(r.get(root, "limits"))
 	b.readOnSite(r.get(root, "on_site_fill"))
 	b.readEconomics(r.get(root, "economics"))

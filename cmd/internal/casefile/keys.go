@@ -56,6 +56,7 @@ func caseShape() *shape {
 		field{key: "tension_crack", shape: crackShape(), standard: "none", meaning: "Vertical crack at the head of every slip: coming from its head, a slip ends where it first passes below the bottom of the crack, and slips that do not are left out.", example: "{depth: 2, filled: 50%}"},
 		field{key: "surcharges", shape: list(surchargeShape(), 0, maxSurcharges), standard: "none", meaning: "Pressures on the ground.", example: "[{name: farm track, from: 20, to: 29, pressure: 5}]"},
 		field{key: "line_loads", shape: list(lineLoadShape(), 0, maxSurcharges), standard: "none", meaning: "Permanent forces on the ground along lines at right angles to the section.", example: "[{name: wall, x: 24, vertical: 40}]"},
+		field{key: "restraints", shape: list(restraintShape(), 0, maxSurcharges), standard: "none", meaning: "Rows of structural elements, such as piles, that hold slips back.", example: "[{name: sheet piles, x: 40, top: 104, bottom: 95, force: 48}]"},
 		field{key: "situations", shape: list(situationShape(), 1, maxSituations), required: true, meaning: "Design situations; all bind at once.", example: "[{name: normal water, water: high, required_fs: 1.3}]"},
 		field{key: "stages", shape: stagesShape(), standard: "stages are not checked, which the output says", meaning: "Settings of construction stages.", example: "{water: summer, required_fs: 1.1}"},
 		field{key: "limits", shape: limitsShape(), standard: "no limits", meaning: "Limits of the works.", example: "{works_between: {left: 24, right: 58.5}}"},

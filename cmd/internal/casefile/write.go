@@ -48,6 +48,7 @@ func (c *Case) Proposed(o *remedies.Option) ([]byte, error) {
 	}
 	m.put("surcharges", w.surcharges())
 	m.put("line_loads", w.lineLoads())
+	m.put("restraints", w.restraints())
 	m.put("situations", situations)
 	m.put("limits", w.limits())
 	m.put("slips", w.slips())

@@ -122,6 +122,7 @@ water:
   high: [[0, 9], [50, 4.5]]
   deep: {line: [[0, 8], [50, 6]], artesian: true}
 firm_base: [[0, -3], [50, -4]]
+restraints: [{name: piles, x: 25, top: 8, bottom: -1.5, force: 48.25}]
 surcharges:
   - {name: track, from: 1, to: 4, pressure: 5}
   - {name: crane, from: 5, to: 7, pressure: 20, variable: true}
