@@ -8,6 +8,7 @@ import (
 	"standfast/cmd/internal/drawing"
 	"standfast/cmd/internal/exchange"
 	"standfast/cmd/internal/report"
+	"standfast/cmd/internal/sheet"
 	"standfast/remedies"
 )
 
@@ -39,6 +40,7 @@ func deliverables(f *report.File) ([]output, error) {
 	case !errors.Is(err, drawing.ErrNothingToDraw):
 		return nil, fmt.Errorf("drawing tradeoff: %w", err)
 	}
+	out = append(out, output{sheet.Name, func(w io.Writer) error { return sheet.Write(w, f) }})
 	if len(f.Options) > 0 {
 		out = append(out, output{"quantities.xlsx", func(w io.Writer) error { return exchange.WriteQuantities(w, f) }})
 	}

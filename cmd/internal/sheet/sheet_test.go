@@ -1,0 +1,182 @@
+package sheet
+
+import (
+	"bytes"
+	"encoding/json"
+	"os"
+	"path/filepath"
+	"regexp"
+	"strings"
+	"testing"
+
+	"github.com/santhosh-tekuri/jsonschema/v6"
+
+	"standfast/cmd/internal/report"
+	"standfast/remedies"
+)
+
+// demo reads a result of a demo case. The files are what compare writes for testdata/demo; they need to be made anew only when the layout of
+// result.json changes.
+func demo(t testing.TB, name string) *report.File {
+	t.Helper()
+	f, err := report.Read(filepath.Join("testdata", name+".json"))
+	if err != nil {
+		t.Fatal(err)
+	}
+	return f
+}
+
+var demos = []string{"cutting", "embankment"}
+
+func written(t testing.TB, f *report.File) []byte {
+	t.Helper()
+	var b bytes.Buffer
+	if err := Write(&b, f); err != nil {
+		t.Fatal(err)
+	}
+	return b.Bytes()
+}
+
+func TestResultsOfDemosAreOfThisLayout(t *testing.T) {
+	doc, err := jsonschema.UnmarshalJSON(bytes.NewReader(report.Schema()))
+	if err != nil {
+		t.Fatal(err)
+	}
+	c := jsonschema.NewCompiler()
+	if err := c.AddResource("result.schema.json", doc); err != nil {
+		t.Fatal(err)
+	}
+	schema, err := c.Compile("result.schema.json")
+	if err != nil {
+		t.Fatal(err)
+	}
+	for _, name := range demos {
+		in, err := os.Open(filepath.Join("testdata", name+".json"))
+		if err != nil {
+			t.Fatal(err)
+		}
+		v, err := jsonschema.UnmarshalJSON(in)
+		if err != nil {
+			t.Fatal(err)
+		}
+		_ = in.Close()
+		if err := schema.Validate(v); err != nil {
+			t.Errorf("%s.json: %v\nMake it anew: standfast compare testdata/demo/%[1]s.yaml, and copy result.json here.", name, err)
+		}
+	}
+}
+
+// The same result gives the same bytes, also when it was written and read in between.
+func TestSameBytes(t *testing.T) {
+	for _, name := range demos {
+		f := demo(t, name)
+		first := written(t, f)
+		var b bytes.Buffer
+		if err := f.Encode(&b); err != nil {
+			t.Fatal(err)
+		}
+		again, err := report.Decode(&b)
+		if err != nil {
+			t.Fatal(err)
+		}
+		if !bytes.Equal(first, written(t, f)) || !bytes.Equal(first, written(t, again)) {
+			t.Errorf("%s: not the same bytes", name)
+		}
+		if most := 1 << 20; len(first) > most {
+			t.Errorf("%s: %d bytes, more than %d", name, len(first), most)
+		}
+	}
+}
+
+// No text of a case can end its element or be run.
+func TestHostileTexts(t *testing.T) {
+	const evil = `</script><script>alert(1)</script><b>"'&`
+	f := demo(t, "cutting")
+	f.Case.Title = evil
+	f.Options[0].Title = evil
+	f.Options[0].Reason = evil
+	f.Situations[0].Name = evil
+	f.Existing.Section.Surcharges[0].Name = evil
+	page := written(t, f)
+	if n := bytes.Count(page, []byte("<script")); n != 2 {
+		t.Errorf("%d script elements, want 2", n)
+	}
+	if bytes.Contains(page, []byte("<b>")) {
+		t.Error("a text of the case was written as markup")
+	}
+}
+
+// The page names nothing that lies outside it, and its content policy allows its own style and script alone.
+func TestSelfContained(t *testing.T) {
+	page := string(written(t, demo(t, "cutting")))
+	if m := regexp.MustCompile(`(?i)(src|href)="[^#d]|@import|url\(["']?(https?:|//)`).FindString(page); m != "" {
+		t.Errorf("the page refers to something outside it: %q", m)
+	}
+	for _, want := range []string{"default-src &#39;none&#39;", "script-src &#39;sha256-", "style-src &#39;sha256-"} {
+		if !strings.Contains(page, want) {
+			t.Errorf("the content policy lacks %s", want)
+		}
+	}
+	if strings.Contains(page, "unsafe") || strings.Contains(page, `style="`) {
+		t.Error("the page needs more than its policy should allow")
+	}
+}
+
+// Whatever compare can come to gives a page: nothing needed, nothing that meets, an option without an FS.
+func TestEveryOutcome(t *testing.T) {
+	for _, c := range []struct {
+		name   string
+		change func(f *report.File)
+		want   string
+	}{
+		{"nothing needed", func(f *report.File) {
+			least := "existing"
+			f.Options, f.LeastEarthworks = nil, &least
+		}, "Nothing is needed"},
+		{"nothing meets", func(f *report.File) { f.Options, f.LeastEarthworks = f.Options[2:], nil }, "Nothing meets the target"},
+		{"no option sized", func(f *report.File) { f.Options, f.LeastEarthworks = nil, nil }, "No options were sized"},
+		{"an option without an FS", func(f *report.File) {
+			o := &f.Options[0]
+			o.Status = "unresolved"
+			for i := range o.Situations {
+				o.Situations[i].Found = report.Found{FS: unknownFS(t)}
+			}
+		}, "unresolved"},
+	} {
+		t.Run(c.name, func(t *testing.T) {
+			f := demo(t, "cutting")
+			c.change(f)
+			if page := string(written(t, f)); !strings.Contains(page, c.want) {
+				t.Errorf("the page does not say %q", c.want)
+			}
+		})
+	}
+}
+
+func unknownFS(t *testing.T) report.Number {
+	var n report.Number
+	if err := json.Unmarshal([]byte("null"), &n); err != nil {
+		t.Fatal(err)
+	}
+	return n
+}
+
+// Every remedy that can be asked for has its key risk.
+func TestEveryRemedyHasItsRisk(t *testing.T) {
+	for _, k := range remedies.Catalogue() {
+		if risks[k.Name] == "" {
+			t.Errorf("%s has no key risk in risks.go", k.Name)
+		}
+	}
+	if got, want := riskOf([]string{"berm", "regrade"}), risks["berm"]+" "+risks["regrade"]; got != want {
+		t.Errorf("risk of a pair: %q", got)
+	}
+}
+
+func BenchmarkWrite(b *testing.B) {
+	f := demo(b, "cutting")
+	b.ReportAllocs()
+	for b.Loop() {
+		written(b, f)
+	}
+}
