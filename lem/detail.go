@@ -103,11 +103,7 @@ func (m *Model) Detail(s *Slip, o Setting) (Detail, error) {
 	for i := range bare {
 		bare[i] = ws.slice[i].q
 	}
-	if again := r; !m.solve(&ws, &o, &again) { // Variable surcharges, if any, do not count: without them.
-		m.slicePart(&ws, p, s, &o)
-		m.begin(&ws, &o, &again)
-		m.answer(&ws, o.Method, &again)
-	}
+	m.resolve(&ws, p, s, &o, r)
 	d.F, d.Correction = ws.answer, 1
 	if o.Method == Janbu {
 		d.Correction = ws.janbuCorrection(r.Leftward)
@@ -115,6 +111,16 @@ func (m *Model) Detail(s *Slip, o Setting) (Detail, error) {
 	d.judge(&ws)
 	d.list(m, &ws, bare)
 	return d, nil
+}
+
+// resolve solves a part of a slip, whose slices are in the workspace, and leaves the slices there as they count in the answer r.
+func (m *Model) resolve(ws *Workspace, p part, s *Slip, o *Setting, r Result) {
+	if m.solve(ws, o, &r) {
+		return
+	}
+	m.slicePart(ws, p, s, o) // Variable surcharges, if any, do not count: without them.
+	m.begin(ws, o, &r)
+	m.answer(ws, o.Method, &r)
 }
 
 // judge fills in the verdict, and leaves the forces of the answer in the workspace.

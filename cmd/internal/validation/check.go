@@ -76,6 +76,7 @@ func Groups() []Group {
 		{"Planes: infinite slopes, wedges and thrusts", planeChecks()},
 		{"Rock slide in probabilities", rockChecks()},
 		{"Loads", loadChecks()},
+		{"Neutral points", neutralChecks()},
 		{"Water", waterChecks()},
 		{"Quantities", volumeChecks()},
 	}

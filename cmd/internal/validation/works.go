@@ -17,6 +17,7 @@ var (
 	griff    = &Work{"Griffiths and Lane (1999)", "Slope stability analysis by finite elements, Geotechnique 49(3), 387-403", true}
 	haefeli  = &Work{"Haefeli (1948)", "The stability of slopes acted upon by parallel seepage, Proc. 2nd ICSMFE 1, 57-62", true}
 	hoek     = &Work{"Hoek", "Practical Rock Engineering, the Sau Mau Ping slope in Hong Kong", true}
+	hutch    = &Work{"Hutchinson (1977)", "Assessment of the effectiveness of corrective measures in relation to geological conditions and types of slope movement, Bull. IAEG 16, 131-155", true}
 	morg     = &Work{"Morgenstern (1963)", "Stability charts for earth slopes during rapid drawdown, Geotechnique 13(2), 121-131", true}
 	okabe    = &Work{"Okabe (1926); Mononobe and Matsuo (1929)", "active thrust in an earthquake", true}
 	rankine  = &Work{"Rankine (1857)", "On the stability of loose earth, Phil. Trans. R. Soc. 147", true}
