@@ -10,13 +10,13 @@ import (
 const (
 	blockTrials   = 160  // Wedge-shaped trials along each rail,
 	cutTrials     = 80   // and circles cut off by it.
-	trialsPerRail = 3    // Seeds taken from each rail,
+	trialsPerRail = 6    // Seeds taken from each rail,
 	railSeedsUpTo = 1.6  // with F up to this multiple of the lowest.
 	circleSeeds   = 8    // Seeds taken from the circles,
 	circlesUpTo   = 1.5  // with F up to this multiple of the lowest.
-	coarseSeeds   = 8    // Seeds that are descended from,
+	coarseSeeds   = 14    // Seeds that are descended from,
 	coarseUpTo    = 1.25 // with F up to this multiple of the lowest.
-	fineSeeds     = 3    // Basins that get more nodes,
+	fineSeeds     = 6    // Basins that get more nodes,
 	fineUpTo      = 1.06 // with F up to this multiple of the lowest.
 	coarseTrials  = 320
 	fineTrials    = 1000
