@@ -167,107 +167,129 @@ func (g *stranger) shear(soil string, x, y float64) (c, tan float64) {
 	return u.Strength, 0
 }
 
-// theirSlice is a slice: its base and forces. Signs of sin and push are those of a slip to the right.
-type theirSlice struct{ x, b, sin, q, u, c, tan, push, shake float64 }
+// theirSlice is a slice: its base and forces. Signs of sin, push and shake are those of a slip to the right; pushX and shakeY are levels.
+type theirSlice struct{ x, y, b, sin, q, u, c, tan, push, pushY, shake, shakeY float64 }
 
-// cut cuts the arc between x = from and to into n slices. It reports false if the arc is not wholly in the ground, too shallow or through
-// the firm base.
-func (g *stranger) cut(c theirPoint, r, from, to float64, n int) (ss []theirSlice, ok bool) {
+// cut cuts a slip between x = from and to into n slices; base gives its level and the sine of its inclination. It reports false if the slip
+// is not wholly in the ground, too shallow or through the firm base.
+func (g *stranger) cut(base func(x float64) (y, sin float64), from, to float64, n int) (ss []theirSlice, ok bool) {
 	depth, b := 0.0, (to-from)/float64(n)
 	for i := range n {
 		s := theirSlice{x: from + b*(float64(i)+0.5), b: b}
-		y := c[1] - math.Sqrt(r*r-(s.x-c[0])*(s.x-c[0]))
+		s.y, s.sin = base(s.x)
 		ground := g.section.Ground.at(s.x)
-		if !(ground > y) || g.section.FirmBase != nil && y < g.section.FirmBase.at(s.x) {
+		if !(ground > s.y) || g.section.FirmBase != nil && s.y < g.section.FirmBase.at(s.x) {
 			return nil, false
 		}
-		depth = max(depth, ground-y)
-		s.sin = (c[0] - s.x) / r
-		soil := g.soil(s.x, y)
-		weight, centroid := g.column(s.x, y)
-		s.c, s.tan = g.shear(soil, s.x, y)
+		depth = max(depth, ground-s.y)
+		soil := g.soil(s.x, s.y)
+		weight, centroid := g.column(s.x, s.y)
+		s.c, s.tan = g.shear(soil, s.x, s.y)
 		if by := g.water.BySoil[soil]; by.Ru != nil {
 			s.u = *by.Ru * weight
 		} else {
-			head, _ := g.head(soil, s.x, y)
-			s.u = g.file.Settings.GammaW * max(0, head-y)
+			head, _ := g.head(soil, s.x, s.y)
+			s.u = g.file.Settings.GammaW * max(0, head-s.y)
 		}
 		if g.strength.undrained(soil) {
 			s.u = 0
 		}
-		s.q = weight * b
-		s.shake = g.kh * s.q * (c[1] - centroid)
+		s.q, s.shakeY = weight*b, weight*b*centroid
 		for _, l := range g.section.Surcharges {
 			if l.Kind == "permanent" && l.From < s.x && s.x < l.To {
 				s.q += l.KPa * b
-				s.shake += g.kh * l.KPa * b * (c[1] - ground)
+				s.shakeY += l.KPa * b * ground
 			}
 		}
+		s.shake, s.shakeY = g.kh*s.q, s.shakeY/s.q
 		if p := g.file.Settings.GammaW * (g.pool(s.x) - ground); p > 0 {
 			s.q += p * b
-			s.push = p * (g.section.Ground.at(s.x+b/2) - g.section.Ground.at(s.x-b/2)) * (c[1] - ground)
+			s.push, s.pushY = p*(g.section.Ground.at(s.x+b/2)-g.section.Ground.at(s.x-b/2)), ground
 		}
 		ss = append(ss, s)
 	}
 	return ss, depth > g.file.Settings.Depth*shallower
 }
 
+// arc returns the base of a circle.
+func arc(c theirPoint, r float64) func(x float64) (y, sin float64) {
+	return func(x float64) (y, sin float64) { return c[1] - math.Sqrt(r*r-(x-c[0])*(x-c[0])), (c[0] - x) / r }
+}
+
+// chain returns the base of a polyline.
+func chain(l theirLine) func(x float64) (y, sin float64) {
+	return func(x float64) (y, sin float64) {
+		i := sort.Search(len(l)-2, func(k int) bool { return l[k+1][0] >= x })
+		a, b := l[i], l[i+1]
+		return l.at(x), (a[1] - b[1]) / math.Hypot(b[0]-a[0], b[1]-a[1])
+	}
+}
+
 // shallower forgives the deepest point of a slip falling between two slices.
 const shallower = 0.995
 
-// bishop returns F of slices of an arc of radius r, NaN if the slip is not admissible, and whether it moves to the left. Variable
-// surcharges are left out, one by one, where they raise F.
-func (g *stranger) bishop(ss []theirSlice, r float64) (f float64, leftward bool) {
+// solution finds F of slices that are turned to the direction of movement.
+type solution func(ss []theirSlice) float64
+
+// solve returns F of slices, NaN if there is none that is admissible, and whether the slip moves to the left. Variable surcharges are left
+// out, one by one, where they raise F.
+func (g *stranger) solve(ss []theirSlice, by solution) (f float64, leftward bool) {
 	var weigh float64
 	for _, s := range ss {
 		weigh += s.q * s.sin
 	}
-	sense := 1.0
-	if leftward = weigh < 0; leftward {
-		sense = -1
+	if leftward = weigh < 0; leftward { // Reflect the slip, so that it moves to the right.
+		ss = slices.Clone(ss)
+		slices.Reverse(ss)
+		for i := range ss {
+			s := &ss[i]
+			s.x, s.sin, s.push = -s.x, -s.sin, -s.push
+		}
 	}
-	f = solveBishop(ss, r, sense)
+	f = by(ss)
 	for _, l := range g.section.Surcharges {
 		if l.Kind != "variable" {
 			continue
 		}
 		loaded := slices.Clone(ss)
 		for i := range loaded {
-			if s := &loaded[i]; l.From < s.x && s.x < l.To {
+			s := &loaded[i]
+			if x := s.x; l.From < x && x < l.To && !leftward || l.From < -x && -x < l.To && leftward {
 				s.q += l.KPa * s.b
 			}
 		}
-		if with := solveBishop(loaded, r, sense); with < f {
+		if with := by(loaded); with < f {
 			ss, f = loaded, with
 		}
 	}
 	return f, leftward
 }
 
-// solveBishop finds F by repeated substitution; sense is 1 for a slip to the right, -1 to the left.
-func solveBishop(ss []theirSlice, r, sense float64) float64 {
-	f := 1.0
-	for range 200 {
-		var resisting, driving float64
-		admissible := true
-		for _, s := range ss {
-			sin := s.sin * sense
-			m := math.Sqrt(1-sin*sin) + sin*s.tan/f
-			admissible = admissible && (m >= leastMAlpha || sin >= 0)
-			resisting += (s.c*s.b + (s.q-s.u*s.b)*s.tan) / m
-			driving += s.q*sin + (s.push*sense+s.shake)/r
-		}
-		next := resisting / driving
-		if !(next > 0) {
-			return math.NaN()
-		}
-		if math.Abs(next-f) < 1e-8 {
-			if !admissible {
+// bishop is the simplified method on a circle, by repeated substitution.
+func bishop(centreY, r float64) solution {
+	return func(ss []theirSlice) float64 {
+		f := 1.0
+		for range 200 {
+			var resisting, driving float64
+			admissible := true
+			for _, s := range ss {
+				m := math.Sqrt(1-s.sin*s.sin) + s.sin*s.tan/f
+				admissible = admissible && (m >= leastMAlpha || s.sin >= 0)
+				resisting += (s.c*s.b + (s.q-s.u*s.b)*s.tan) / m
+				driving += s.q*s.sin + (s.push*(centreY-s.pushY)+s.shake*(centreY-s.shakeY))/r
+			}
+			next := resisting / driving
+			if !(next > 0) {
 				return math.NaN()
 			}
-			return next
+			if math.Abs(next-f) < 1e-8 {
+				if !admissible {
+					return math.NaN()
+				}
+				return next
+			}
+			f = next
 		}
-		f = next
+		return math.NaN()
 	}
-	return math.NaN()
 }

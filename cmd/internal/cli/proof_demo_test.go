@@ -73,7 +73,8 @@ func strangers(f *theirFile, o *theirOption) (gs []*stranger, answers []*theirAn
 }
 
 const (
-	manySlices = 600   // A stranger's slices of a slip that is reported or matters,
+	manySlices = 1000  // A stranger's slices of a slip that is reported,
+	someSlices = 300   // of one that may be the lowest,
 	fewSlices  = 40    // and of one that is looked at in passing.
 	agreement  = 0.005 // Share of F within which two analyses of one slip agree.
 	belowOK    = 0.002 // F by which a stranger may find a slip below the required F.
@@ -82,8 +83,8 @@ const (
 
 // shortRun are the remedies of each demo that the short run sizes: all that meet the target, and some that do not.
 var shortRun = map[string][]string{
-	"cutting":    {"regrade", "unload", "berm", "buttress", "water_lowering"},
-	"embankment": {"berm", "buttress"},
+	"cutting":    {"regrade", "unload", "berm", "water_lowering"},
+	"embankment": {"berm"},
 }
 
 // known keeps what demo has worked out.
@@ -144,20 +145,19 @@ func TestStoryOfTheCutting(t *testing.T) {
 	}
 }
 
-// TestStrangerOfEverything does the same for an invented case that has everything a section can hold. In the short run each trial faces
-// one way only.
+// TestStrangerOfEverything does the same for an invented case that has everything a section can hold. In the short run it
+// faces right only.
 func TestStrangerOfEverything(t *testing.T) {
-	for facing, trial := range map[string]string{"right": "berm and drains", "left": "face and buttress"} {
+	for _, facing := range []string{"right", "left"} {
 		t.Run(facing, func(t *testing.T) {
+			if facing == "left" && !longRun {
+				t.Skip("in the long run only: STANDFAST_LONG=1")
+			}
 			path := filepath.Join(t.TempDir(), "everything.yaml")
 			if err := os.WriteFile(path, []byte(everything(facing == "left")), 0o644); err != nil {
 				t.Fatal(err)
 			}
-			only := []string{trial}
-			if longRun {
-				only = nil
-			}
-			strangersCheck(t, resultOf(t, path, only...))
+			strangersCheck(t, resultOf(t, path))
 		})
 	}
 }
@@ -173,10 +173,7 @@ func strangersCheck(t *testing.T, f *theirFile) (met int) {
 		for k, g := range gs {
 			a := answers[k]
 			name := o.Name + ", " + a.Name
-			if a.Slip != nil && a.Slip.Kind == "circle" {
-				compared++
-				g.compare(t, name, a, meets)
-			}
+			compared += g.compare(t, name, a, meets)
 			if !meets {
 				continue
 			}
@@ -196,22 +193,43 @@ func strangersCheck(t *testing.T, f *theirFile) (met int) {
 	return met
 }
 
-// compare compares F by Bishop on the slip that the file reports for a check.
-func (g *stranger) compare(t *testing.T, name string, a *theirAnswer, meets bool) {
+// compare compares F by Bishop, Spencer and Morgenstern and Price on the slip that the file reports for a check, and returns how many of
+// them the file has.
+func (g *stranger) compare(t *testing.T, name string, a *theirAnswer, meets bool) (compared int) {
 	t.Helper()
-	want, ok := a.ByMethod["bishop"]
-	if a.FS == nil || !ok {
+	if a.FS == nil || a.Slip == nil {
 		t.Errorf("%s: no FS", name)
-		return
+		return 0
 	}
-	ss, _ := g.cut(a.Slip.Centre, a.Slip.Radius, a.Slip.From[0], a.Slip.To[0], manySlices)
-	f, _ := g.bishop(ss, a.Slip.Radius)
-	if !(math.Abs(f-want) <= agreement*want) {
-		t.Errorf("%s: F by Bishop on the reported slip is %.4f, the file says %.4f", name, f, want)
+	base := chain(a.Slip.Points)
+	if a.Slip.Kind == "circle" {
+		base = arc(a.Slip.Centre, a.Slip.Radius)
 	}
-	if meets && !(f >= a.Required-belowOK) {
-		t.Errorf("%s: F by Bishop on the reported slip is %.4f, required %.3f", name, f, a.Required)
+	ss, _ := g.cut(base, a.Slip.From[0], a.Slip.To[0], manySlices)
+	lowest := math.Inf(1)
+	for method, want := range a.ByMethod {
+		var by solution
+		switch method {
+		case "bishop":
+			by = bishop(a.Slip.Centre[1], a.Slip.Radius)
+		case "spencer":
+			by = rigorous(func(float64) float64 { return 1 }, want)
+		case "morgenstern-price":
+			by = rigorous(func(s float64) float64 { return math.Sin(math.Pi * s) }, want)
+		default:
+			continue
+		}
+		compared++
+		f, _ := g.solve(ss, by)
+		lowest = min(lowest, f)
+		if !(math.Abs(f-want) <= agreement*want) {
+			t.Errorf("%s: F by %s on the reported %s is %.4f, the file says %.4f", name, method, a.Slip.Kind, f, want)
+		}
 	}
+	if meets && !(lowest >= a.Required-belowOK) {
+		t.Errorf("%s: F on the reported slip is %.4f, required %.3f", name, lowest, a.Required)
+	}
+	return compared
 }
 
 // lookAround tries random circles through two points of the ground, then small random changes of the lowest, and returns the lowest F,
@@ -233,7 +251,7 @@ func (g *stranger) lookAround(rng *rand.Rand, circles int) (lowest float64, at [
 		if c[1] < max(y0, y1) || g.counted(c, r, x0, x1, fewSlices) > lowest*1.01 {
 			return
 		}
-		if f := g.counted(c, r, x0, x1, manySlices); f < lowest {
+		if f := g.counted(c, r, x0, x1, someSlices); f < lowest {
 			lowest, best, at = f, v, [4]float64{x0, x1, c[0], c[1]}
 		}
 	}
@@ -250,11 +268,11 @@ func (g *stranger) lookAround(rng *rand.Rand, circles int) (lowest float64, at [
 
 // counted returns F of an arc, +Inf if it is none that the file's settings count.
 func (g *stranger) counted(c theirPoint, r, from, to float64, n int) float64 {
-	ss, ok := g.cut(c, r, from, to, n)
+	ss, ok := g.cut(arc(c, r), from, to, n)
 	if !ok {
 		return math.Inf(1)
 	}
-	f, leftward := g.bishop(ss, r)
+	f, leftward := g.solve(ss, bishop(c[1], r))
 	head, exit := from, to
 	if leftward {
 		head, exit = to, from

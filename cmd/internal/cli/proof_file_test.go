@@ -62,6 +62,7 @@ type (
 			Kind     string
 			Centre   theirPoint
 			Radius   float64
+			Points   theirLine
 			From, To theirPoint
 		}
 		Depth    float64       `json:"slip_depth_m"`

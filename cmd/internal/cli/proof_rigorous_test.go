@@ -1,0 +1,73 @@
+package cli
+
+import "math"
+
+// rigorous is the method of Morgenstern and Price (1965, Geotechnique 15) on any slip, with X = lambda shape(s) E between slices, s from 0 at
+// the head to 1 at the exit; a constant shape is Spencer's method (1967, Geotechnique 17). For each of many lambdas, F is halved until the
+// horizontal forces close; between lambdas where the moment of all forces about the origin changes its sign, lambda is halved until it
+// vanishes. Of several answers it returns the one nearest to want.
+func rigorous(shape func(s float64) float64, want float64) solution {
+	return func(ss []theirSlice) float64 {
+		best := math.NaN()
+		const least, most, steps = -0.4, 1.6, 40
+		previous, atPrevious := math.NaN(), math.NaN()
+		for i := range steps + 1 {
+			lambda := least + (most-least)*float64(i)/steps
+			moment, _ := closed(ss, shape, lambda)
+			if moment*atPrevious < 0 {
+				a, b := previous, lambda
+				for range 25 {
+					mid := (a + b) / 2
+					if m, _ := closed(ss, shape, mid); m*atPrevious > 0 {
+						a = mid
+					} else {
+						b = mid
+					}
+				}
+				if m, f := closed(ss, shape, a); math.Abs(m) < 1e-3*math.Abs(atPrevious) && !(math.Abs(best-want) <= math.Abs(f-want)) {
+					best = f
+				}
+			}
+			previous, atPrevious = lambda, moment
+		}
+		return best
+	}
+}
+
+// closed returns the F at which horizontal forces close at this lambda, and the moment about the origin that is left.
+func closed(ss []theirSlice, shape func(s float64) float64, lambda float64) (moment, f float64) {
+	low, high := 0.2, 8.0
+	for range 36 {
+		f = (low + high) / 2
+		left, m := forces(ss, shape, lambda, f)
+		moment = m
+		if left > 0 { // Too little resistance: the last slice still pushes.
+			high = f
+		} else {
+			low = f
+		}
+	}
+	return moment, f
+}
+
+// forces goes through the slices from the head, each in equilibrium of horizontal and vertical forces, and returns the force that is left
+// at the exit and the moment, clockwise, of all outer forces about the origin: loads, and normal and shear forces at the middles of bases.
+func forces(ss []theirSlice, shape func(s float64) float64, lambda, f float64) (left, moment float64) {
+	var e float64 // Thrust on the uphill side.
+	for i, s := range ss {
+		up, down := lambda*shape(float64(i)/float64(len(ss))), lambda*shape(float64(i+1)/float64(len(ss)))
+		cos := math.Sqrt(1 - s.sin*s.sin)
+		t := s.tan / f
+		grip := (s.c - s.u*s.tan) * s.b / cos / f // Shear force is grip + normal force x t.
+		load := s.push + s.shake
+		// Normal force n = (q + up e - down e2 - grip sin)/(cos + sin t); thrust e2 = e + load + n sin - (grip + n t) cos.
+		g := (s.sin - t*cos) / (cos + s.sin*t)
+		e2 := (e*(1+g*up) + load + g*(s.q-grip*s.sin) - grip*cos) / (1 + g*down)
+		n := (s.q + up*e - down*e2 - grip*s.sin) / (cos + s.sin*t)
+		shear := grip + n*t
+		moment += s.q*s.x + s.push*s.pushY + s.shake*s.shakeY
+		moment += n*(s.sin*s.y-cos*s.x) - shear*(cos*s.y+s.sin*s.x)
+		e = e2
+	}
+	return e, moment
+}
