@@ -12,6 +12,8 @@ func Catalogue() []Kind {
 		shearKeyKind(),
 		trenchDrainsKind(),
 		drilledDrainsKind(),
+		toeDrainKind(),
+		interceptorKind(),
 		elementsKind(),
 		waterLoweringKind(),
 	}

@@ -51,7 +51,7 @@ func anyRequest(t *rapid.T) Request {
 	size := func(name string, from, to float64) float64 {
 		return math.Round(10*rapid.Float64Range(from, to).Draw(t, name)) / 10
 	}
-	switch rapid.SampledFrom([]string{"regrade", "unload", "berm", "buttress", "trench_drains", "drilled_drains", "lightweight_fill", "shear_key", "piles_or_nails"}).Draw(t, "kind") {
+	switch rapid.SampledFrom([]string{"regrade", "unload", "berm", "buttress", "trench_drains", "drilled_drains", "lightweight_fill", "shear_key", "piles_or_nails", "toe_drain", "interceptor"}).Draw(t, "kind") {
 	case "regrade":
 		x := []float64{size("batter", 1, 5), size("pivot", 0, 1)}
 		if rapid.Bool().Draw(t, "benched") {
@@ -81,6 +81,10 @@ func anyRequest(t *rapid.T) Request {
 		return request("shear_key", fillOf(rockfill), x...)
 	case "piles_or_nails":
 		return request("piles_or_nails", nil, size("capacity", 10, 400), size("spacing", 0.5, 4), size("position", -5, 30), size("length", 2, 15))
+	case "toe_drain":
+		return request("toe_drain", map[string]int{"low_permeability": stiffClay}, size("depth", 0.5, 3), size("offset", -3, 3), 0.6, 1e-6, 1e-8)
+	case "interceptor":
+		return request("interceptor", map[string]int{"low_permeability": stiffClay}, size("depth", 1, 6), size("setback", 0, 10), 0.6, 1e-6, 1e-8)
 	case "drilled_drains":
 		return request("drilled_drains", nil, size("length", 8, 40), size("spacing", 3, 15), size("rise", 0, 10), size("outlet", 0, 3), 0.1, size("solid", 0, 4), 1e-6, 1e-8, size("below", 0, 5))
 	default:
@@ -254,7 +258,7 @@ func TestScaling(t *testing.T) {
 func TestAgainstColumns(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {
 		j, r := anyJob(t), anyRequest(t)
-		if k, _ := Find(r.Kind); k.order == orderDrains || k.order == orderExchange || len(r.Axes) > keyDepth && r.Kind == "buttress" && r.has(keyDepth) {
+		if k, _ := Find(r.Kind); k.order >= orderWater || k.order == orderExchange || len(r.Axes) > keyDepth && r.Kind == "buttress" && r.has(keyDepth) {
 			t.Skip("drains and exchanged ground leave the ground as it is")
 		}
 		p := must(t, j, r)
