@@ -192,9 +192,13 @@ func (d *piped) lower(j *Job, p *Proposal, f *slope, r reach, x []float64) {
 		if s.Water == dry || s.DrainsWorking == 0 {
 			continue
 		}
-		if j.Waters[s.Water].Artesian {
-			p.note("water line %q is artesian: %s is not taken to lower it", j.Waters[s.Water].Name, d.noun)
+		l := &j.Waters[s.Water]
+		if why := l.undrainable(); why != "" {
+			p.note("water line %q %s: %s is not taken to lower it", l.Name, why, d.noun)
 			continue
+		}
+		if len(l.BySoil) > 0 {
+			p.note("water line %q: %s is not taken to lower the lines of single soils", l.Name, d.noun)
 		}
 		bring(s, &p.Waters[i])
 		for k := range p.variants {

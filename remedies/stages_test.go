@@ -189,3 +189,33 @@ func TestKeyFaults(t *testing.T) {
 		}
 	}
 }
+
+// TestHolesInWaterOfSoils digs a key, strips the ground and drains the crest where the water is that of single soils, or known at points.
+func TestHolesInWaterOfSoils(t *testing.T) {
+	for line := range 2 {
+		j := perched()
+		j.Stage.Water, j.Economics.StripDepth = line, 0.3
+		j.Section.Strata[1].Top = lem.Profile{{X: 0, Y: 96}, {X: 80, Y: 96}}
+		p := apply(t, j, request("buttress", fillOf(rockfill), 2, 4, 1.5, 2, 3, 2, 0.5, 3, 9), request("interceptor", onStiffClay(), 6, 4, 0.6, 1e-6, 0))
+		for _, c := range Checks(j, p) {
+			var m lem.Model
+			if err := m.Compile(c.Section, &c.Situation); err != nil {
+				t.Errorf("%s: %v", c.Label(), err)
+			}
+		}
+		open, panels := find(t, p, KeyOpen+", "+PlaneStrain), find(t, p, KeyOpen+", "+InPanels)
+		if line == 0 {
+			near(t, "perched water in the hole", open.Situation.Water.BySoil[0].Line.At(54.5), 98, 1e-9)
+			near(t, "artesian water", open.Situation.Water.BySoil[1].Line.At(54.5), 108-2*54.5/80, 1e-9)
+			if n := len(panels.Situation.Water.BySoil); n != 3 {
+				t.Errorf("%d lines of soils in panels: the clay between them has lost its own", n)
+			}
+			if n := len(j.Waters[0].BySoil); n != 2 {
+				t.Errorf("the case has got %d lines", n)
+			}
+		}
+		if !noted(p, "interceptor is not taken to lower it") {
+			t.Errorf("notes %q", p.Notes)
+		}
+	}
+}
