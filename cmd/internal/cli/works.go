@@ -44,12 +44,7 @@ func fileNames(options []remedies.Option) []string {
 	names := make([]string, len(options))
 	taken := map[string]bool{"existing": true}
 	for i := range options {
-		base := strings.Map(func(r rune) rune {
-			if unicode.IsLetter(r) || unicode.IsDigit(r) || strings.ContainsRune("+_-", r) {
-				return r
-			}
-			return '-'
-		}, options[i].Name)
+		base := fileName(options[i].Name)
 		name := base
 		for n := 2; taken[strings.ToLower(name)]; n++ {
 			name = fmt.Sprintf("%s-%d", base, n)
@@ -58,4 +53,14 @@ func fileNames(options []remedies.Option) []string {
 		names[i] = name
 	}
 	return names
+}
+
+// fileName returns a name with what no file system likes replaced.
+func fileName(name string) string {
+	return strings.Map(func(r rune) rune {
+		if unicode.IsLetter(r) || unicode.IsDigit(r) || strings.ContainsRune("+_-", r) {
+			return r
+		}
+		return '-'
+	}, name)
 }

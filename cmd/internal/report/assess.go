@@ -16,6 +16,7 @@ func WriteAssessment(w io.Writer, f *File, look Look) error {
 	p.title(f)
 	p.factors(&f.Existing)
 	p.slips(&f.Existing)
+	p.neutral(&f.Existing)
 	for _, n := range f.Existing.Notes {
 		p.para("Note: ", n)
 	}

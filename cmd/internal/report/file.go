@@ -179,6 +179,7 @@ type Answer struct {
 	Variant    string  `json:"variant,omitempty"`    // Of a variant: what is different.
 	RequiredFS float64 `json:"required_fs"`          // FS required.
 	Found
+	Influence *Influence `json:"influence,omitempty"` // Of assess: what loads on the ground do to the FS of the governing slip.
 }
 
 // Found is what the search of one check found.
