@@ -25,6 +25,15 @@ func newNewCommand() *cobra.Command {
 }
 
 func runNew(c *cobra.Command, path string) error {
+	if err := writeNew(path, casefile.Starter()); err != nil {
+		return err
+	}
+	_, err := fmt.Fprintf(c.OutOrStdout(), "Wrote %s. Change it into your case, then: standfast compare %[1]s\n", path)
+	return err
+}
+
+// writeNew writes a file that does not exist yet.
+func writeNew(path string, text []byte) error {
 	f, err := os.OpenFile(path, os.O_WRONLY|os.O_CREATE|os.O_EXCL, 0o666)
 	switch {
 	case errors.Is(err, fs.ErrExist):
@@ -34,10 +43,9 @@ func runNew(c *cobra.Command, path string) error {
 	case err != nil:
 		return err
 	}
-	_, err = f.Write(casefile.Starter())
+	_, err = f.Write(text)
 	if err = errors.Join(err, f.Close()); err != nil {
 		return errors.Join(err, os.Remove(path))
 	}
-	_, err = fmt.Fprintf(c.OutOrStdout(), "Wrote %s. Change it into your case, then: standfast compare %[1]s\n", path)
-	return err
+	return nil
 }

@@ -28,7 +28,7 @@ func run(ctx context.Context, args []string, stdin io.Reader, stdout, stderr io.
 	root.SetErr(stderr)
 	err := root.ExecuteContext(ctx)
 	if err != nil && !*started { // Refused by cobra before a command of ours ran.
-		err = &usageError{err}
+		err = &usageError{explainCommand(root, err)}
 	}
 	if err == nil && ctx.Err() != nil {
 		err = ctx.Err()
@@ -58,6 +58,7 @@ A preliminary sizing aid for use by a competent engineer: what it says must be c
 		CompletionOptions: cobra.CompletionOptions{DisableDefaultCmd: true},
 	}
 	root.SetVersionTemplate("standfast {{.Version}}\n")
-	root.AddCommand(newCompareCommand(), newAssessCommand(), newDrawCommand(), newNewCommand(), newReportCommand(), newSchemaCommand(), newCompletionCommand())
+	root.SetFlagErrorFunc(explainFlag)
+	root.AddCommand(newCompareCommand(), newAssessCommand(), newDrawCommand(), newNewCommand(), newImportCommand(), newReportCommand(), newSchemaCommand(), newCompletionCommand())
 	return root, started
 }

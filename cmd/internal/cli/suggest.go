@@ -4,6 +4,9 @@ import (
 	"fmt"
 	"slices"
 	"strings"
+
+	"github.com/spf13/cobra"
+	"github.com/spf13/pflag"
 )
 
 // unknownName returns the error for a name that is none of those there are, with the one that was probably meant.
@@ -14,6 +17,40 @@ func unknownName(what, name string, there []string) error {
 		}
 	}
 	return usagef("unknown %s %q; there are: %s", what, name, quoted(there))
+}
+
+// explainCommand puts the complaint about an unknown command into our words, with the one that was probably meant; any other error is
+// returned as it is.
+func explainCommand(root *cobra.Command, err error) error {
+	var name string
+	if _, e := fmt.Sscanf(err.Error(), "unknown command %q", &name); e != nil {
+		return err
+	}
+	var there []string
+	for _, c := range root.Commands() {
+		if c.IsAvailableCommand() && c.Name() != "help" {
+			there = append(there, c.Name())
+		}
+	}
+	return unknownName("command", name, there)
+}
+
+// explainFlag adds to the complaint about an unknown flag the one that was probably meant.
+func explainFlag(c *cobra.Command, err error) error {
+	name, ok := strings.CutPrefix(err.Error(), "unknown flag: --")
+	if !ok {
+		return fmt.Errorf("%w; see %s --help", err, c.CommandPath())
+	}
+	meant := ""
+	c.Flags().VisitAll(func(f *pflag.Flag) {
+		if meant == "" && near(name, f.Name) {
+			meant = f.Name
+		}
+	})
+	if meant != "" {
+		return fmt.Errorf("%w; did you mean --%s?", err, meant)
+	}
+	return fmt.Errorf("%w; see %s --help", err, c.CommandPath())
 }
 
 func quoted(names []string) string {
