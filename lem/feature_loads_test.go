@@ -1,6 +1,7 @@
 package lem
 
 import (
+	"context"
 	"math"
 	"testing"
 )
@@ -179,6 +180,48 @@ func TestVariableInclinedLoad(t *testing.T) {
 			if a, b := f(-5, true), f(-5, false); !within(a, bare, 1e-9) || !(b > bare) {
 				t.Errorf("%v: held by a variable load F = %.5f, permanent %.5f, without %.5f", method, a, b, bare)
 			}
+		}
+	}
+}
+
+// TestSearchStepsBehindLineLoads: F jumps where the head of a slip passes a line load, so that a slip that ends just behind it is a minimum of its
+// own, even beside a lower one. The search finds both.
+func TestSearchStepsBehindLineLoads(t *testing.T) {
+	const x = 19.0
+	g := Profile{{0, 30}, {20, 30}, {33, 23}, {55, 23}}
+	s := uniform(g, Soil{UnitWeight: 19, Cohesion: 6, Friction: 24 * degree})
+	s.Loads = []Surcharge{{FromX: 16, ToX: 18, Pressure: 40, Shear: 6}}
+	s.LineLoads = []LineLoad{{X: x, Vertical: 25}}
+	m := compiled(t, s, &Situation{})
+	found, err := m.Search(context.Background(), SearchOptions{MinDepth: 1.5, Methods: []Method{Bishop}})
+	if err != nil {
+		t.Fatal(err)
+	}
+	var ws Workspace
+	grid := func(from, to float64) float64 { // The lowest F of slips with the head in a range.
+		least := math.Inf(1)
+		for head := from; head < to; head += (to - from) / 16 {
+			for exit := 25.0; exit < 40; exit += 0.5 {
+				for half := 0.05; half < 1.5; half += 0.05 {
+					c, r := arcThrough(Point{head, g.At(head)}, Point{exit, g.At(exit)}, half)
+					slip := Slip{Centre: c, Radius: r}
+					if f := m.FS(&ws, &slip, Setting{Method: Bishop, MinDepth: 1.5}); f.Status == Converged {
+						least = min(least, f.F)
+					}
+				}
+			}
+		}
+		return least
+	}
+	for _, heads := range []Range{{10, x}, {x - 0.5, x}} {
+		least := math.Inf(1)
+		for _, b := range found.Basins {
+			if head, _ := b.Result.ends(); heads.From < head && head < heads.To {
+				least = min(least, b.Result.F)
+			}
+		}
+		if want := grid(heads.From+0.001, heads.To); least > want*1.003 {
+			t.Errorf("heads from %g to %g: search F = %.4f, grid %.4f", heads.From, heads.To, least, want)
 		}
 	}
 }

@@ -29,6 +29,7 @@ type Model struct {
 	left, right float64   // Ends of the ground as given; the columns go on beyond them, level.
 	low, high   float64   // Lowest and highest ground, m.
 	known       [][]Point // Known slip surfaces, vertical steps drawn out.
+	jumps       []float64 // Line loads: F of slips jumps where an end passes them.
 }
 
 // column is a vertical strip of the section; the lines are y = a + b x.
@@ -135,6 +136,10 @@ func (m *Model) Compile(s *Section, sit *Situation) error {
 		if l.Variable {
 			m.varied = append(m.varied, l)
 		}
+	}
+	m.jumps = m.jumps[:0]
+	for _, l := range s.LineLoads {
+		m.jumps = append(m.jumps, l.X)
 	}
 	d := draughtOf(s, sit)
 	m.known = d.known

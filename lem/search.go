@@ -194,6 +194,9 @@ func (s *searcher) starts() []candidate {
 func (s *searcher) lowestAround(k cell, f float64) bool {
 	for _, d := range [...][3]int{{1, 0, 0}, {-1, 0, 0}, {0, 1, 0}, {0, -1, 0}, {0, 0, 1}, {0, 0, -1}} {
 		n := cell{k.head + d[0], k.exit + d[1], k.depth + d[2], k.leftward}
+		if s.apart(k.head, n.head) || s.apart(k.exit, n.exit) {
+			continue
+		}
 		if o, ok := s.cells[n]; ok && o.r.F < f {
 			return false
 		}

@@ -2,6 +2,7 @@ package lem
 
 import (
 	"math"
+	"slices"
 	"sort"
 )
 
@@ -42,7 +43,27 @@ func (m *Model) zones() []Range {
 	if m.right-from > 0 {
 		add(from, m.right)
 	}
+	return splitAt(zs, m.jumps)
+}
+
+// splitAt splits zones at the given x, ascending.
+func splitAt(zs []Range, xs []float64) []Range {
+	for _, x := range xs {
+		for i, z := range zs {
+			if z.From < x && x < z.To {
+				zs = slices.Insert(zs, i+1, Range{x, z.To})
+				zs[i].To = x
+				break
+			}
+		}
+	}
 	return zs
+}
+
+// apart reports whether F jumps between two neighbouring zones, so that neither tells anything about the other.
+func (s *searcher) apart(a, b int) bool {
+	i := max(a, b)
+	return a != b && i < len(s.zones) && slices.Contains(s.m.jumps, s.zones[i].From)
 }
 
 // zoneOf returns the zone that holds x, the outermost ones beyond the ends.

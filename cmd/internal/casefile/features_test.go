@@ -49,14 +49,14 @@ func TestFeaturesAreRead(t *testing.T) {
 	}
 	loads := readFeature(t, "loads.yaml").Job.Section
 	wantLoads := []lem.Surcharge{
-		{Name: "heap", FromX: 8, ToX: 14, Rise: 30},
-		{Name: "abutment", FromX: 16, ToX: 18, Pressure: 40, Shear: 6},
+		{Name: "heap", FromX: 8, ToX: 12, Rise: 30},
+		{Name: "abutment", FromX: 16.5, ToX: 19, Pressure: 30, Shear: 6},
 		{Name: "lorries", FromX: 4, ToX: 8, Pressure: 10, Rise: 5, Shear: 1, Variable: true},
 	}
 	if diff := cmp.Diff(wantLoads, loads.Loads); diff != "" {
 		t.Errorf("surcharges (-want +read):\n%s", diff)
 	}
-	wantLines := []lem.LineLoad{{Name: "wall", X: 19, Vertical: 25}, {Name: "pipe anchor", X: 15, Vertical: 5, Horizontal: -4}}
+	wantLines := []lem.LineLoad{{Name: "wall", X: 15, Vertical: 12}, {Name: "pipe anchor", X: 12, Vertical: 5, Horizontal: -4}}
 	if diff := cmp.Diff(wantLines, loads.LineLoads); diff != "" {
 		t.Errorf("line loads (-want +read):\n%s", diff)
 	}

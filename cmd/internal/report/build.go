@@ -101,6 +101,10 @@ func (b *builder) soilTable() map[string]Soil {
 			FreeDraining: s.FreeDraining,
 			SlowDraining: i < len(b.job.Clay) && b.job.Clay[i],
 		}
+		if p := s.PowerLaw; p != nil {
+			out.Drained = Drained{}
+			out.PowerLaw = &PowerLaw{A: p.A, B: p.B, Atmospheric: lem.AtmosphericPressure, LeastStress: lem.LeastEnvelopeStress}
+		}
 		if out.SaturatedUnitWeight == 0 {
 			out.SaturatedUnitWeight = s.UnitWeight
 		}
@@ -125,6 +129,9 @@ func undrainedOf(u *lem.UndrainedStrength) *Undrained {
 	for _, p := range u.Points {
 		out.Points = append(out.Points, [3]float64{p.X, p.Y, p.Strength})
 	}
+	if u.Ratio != 0 && len(u.Points) == 0 {
+		out.Ratio, out.Minimum, out.WaterBefore = &u.Ratio, &u.Minimum, points(u.WaterBefore)
+	}
 	return out
 }
 
@@ -148,7 +155,7 @@ func (b *builder) situations(r *remedies.Result) []Situation {
 		s := &b.job.Situations[i]
 		working := Number(s.DrainsWorking)
 		base := Situation{
-			Name: s.Name, RequiredFS: s.RequiredFS, Strength: strengthOf(b.soils, s.Undrained), Kh: s.Kh, DrainsWorking: &working,
+			Name: s.Name, RequiredFS: s.RequiredFS, Strength: strengthOf(b.soils, s.Undrained), Kh: s.Kh, Kv: s.Kv, DrainsWorking: &working,
 			WaterLine: b.waterName(s.Water),
 		}
 		if o := answerTo(&r.Existing, i); o != nil && s.RatioToExisting != 0 {
@@ -186,7 +193,7 @@ func (b *builder) variants(r *remedies.Result, i int) []Situation {
 				n = len(out)
 				at[name] = n
 				out = append(out, Situation{
-					Name: name, RequiredFS: c.Required, Strength: strengthOf(b.soils, c.Situation.Undrained), Kh: c.Situation.Kh,
+					Name: name, RequiredFS: c.Required, Strength: strengthOf(b.soils, c.Situation.Undrained), Kh: c.Situation.Kh, Kv: c.Situation.Kv,
 					WaterLine: b.waterName(b.job.Situations[i].Water), VariantOf: b.job.Situations[i].Name, Variant: c.Note,
 				})
 			}

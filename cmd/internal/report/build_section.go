@@ -19,17 +19,44 @@ func (b *builder) section(s *lem.Section) *Section {
 		out.Placed[i] = Body{Soil: s.Soils[p.Soil].Name, Outline: points(p.Outline)}
 	}
 	for i, l := range s.Loads {
-		out.Surcharges[i] = Surcharge{Name: l.Name, FromX: l.FromX, ToX: l.ToX, Pressure: l.Pressure, Kind: "permanent"}
+		out.Surcharges[i] = Surcharge{Name: l.Name, FromX: l.FromX, ToX: l.ToX, Pressure: l.Pressure, Horizontal: l.Shear, Kind: "permanent"}
 		if l.Variable {
 			out.Surcharges[i].Kind = "variable"
 		}
+		if to := l.Pressure + l.Rise; l.Rise != 0 {
+			out.Surcharges[i].PressureTo = &to
+		}
+	}
+	for _, l := range s.LineLoads {
+		out.LineLoads = append(out.LineLoads, LineLoad(l))
+	}
+	out.Crack = crackOf(s.Crack)
+	return out
+}
+
+func crackOf(k *lem.TensionCrack) *TensionCrack {
+	if k == nil {
+		return nil
+	}
+	out := &TensionCrack{Line: points(k.Line), WaterShare: k.WaterShare}
+	if len(k.Line) == 0 {
+		out.Depth = k.Depth
+	}
+	if k.HasWaterLevel {
+		out.WaterShare, out.WaterLevel = 0, &k.WaterLevel
 	}
 	return out
 }
 
 // water lays out the water of a situation in a section with these soils.
 func water(w *lem.Water, soils []lem.Soil) Water {
-	out := Water{Line: points(w.Line), FreeWater: make([]FreeWater, len(w.Free)), BySoil: map[string]BySoil{}}
+	out := Water{Line: points(w.Line), Inclined: w.InclinedLine, FreeWater: make([]FreeWater, len(w.Free)), BySoil: map[string]BySoil{}}
+	for _, p := range w.Points {
+		out.Points = append(out.Points, [3]float64{p.X, p.Y, p.Pressure})
+	}
+	for _, own := range w.BySoil {
+		out.BySoil[soils[own.Soil].Name] = BySoil{Line: points(own.Line)}
+	}
 	for i, f := range w.Free {
 		out.FreeWater[i] = FreeWater(f)
 	}
@@ -66,6 +93,7 @@ func found(o *remedies.Outcome) Found {
 	if out.FS.Known() {
 		out.Method = o.Method.String()
 		out.Slip = slipOf(&o.Slip, o.From, o.To)
+		out.Slip.Crack = o.Crack
 		out.Depth = Number(o.Depth)
 	}
 	return out

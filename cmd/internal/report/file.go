@@ -63,7 +63,8 @@ type SearchRanges struct {
 type Soil struct {
 	UnitWeight          float64    `json:"unit_weight_kN_m3"`               // Above the water line, kN/m3.
 	SaturatedUnitWeight float64    `json:"saturated_unit_weight_kN_m3"`     // Below the water line, kN/m3.
-	Drained             Drained    `json:"drained"`                         // Effective strength.
+	Drained             Drained    `json:"drained"`                         // Effective strength; zeros where power_law holds instead.
+	PowerLaw            *PowerLaw  `json:"power_law,omitempty"`             // Curved effective strength, in place of drained.
 	Undrained           *Undrained `json:"undrained" jsonschema:"nullable"` // Undrained strength; null: none given.
 	// Pore pressure as a ratio to the weight of ground and fill above (no surcharge), used instead of any water line; null: none given.
 	Ru           *float64 `json:"ru" jsonschema:"nullable"`
@@ -77,7 +78,16 @@ type Drained struct {
 	Friction float64 `json:"friction_angle_deg"` // Effective angle of friction phi', degrees.
 }
 
-// Undrained is a strength cu that is fixed from the ground before works: cu = strength + gradient x max(0, datum - y), or from points.
+// PowerLaw is an effective strength a pa (sigma'/pa)^b on a normal stress sigma', straight to the origin below least_stress.
+type PowerLaw struct {
+	A           float64 `json:"a"`                        // Shear strength over normal stress at a stress of pa.
+	B           float64 `json:"b"`                        // Exponent.
+	Atmospheric float64 `json:"atmospheric_pressure_kPa"` // Pressure pa, kPa.
+	LeastStress float64 `json:"least_stress_kPa"`         // Normal stress below which the chord to the origin holds, kPa.
+}
+
+// Undrained is a strength cu that is fixed from the ground before works: cu = strength + gradient x max(0, datum - y), or from points, or by
+// ratio.
 type Undrained struct {
 	Strength float64 `json:"strength_kPa"`       // cu at and above the datum, kPa.
 	Gradient float64 `json:"gradient_kPa_per_m"` // Increase of cu per metre below the datum, kPa/m.
@@ -86,6 +96,11 @@ type Undrained struct {
 	// Points [x, y, cu] in m and kPa; when present nothing else here is used. Points of one x make a vertical: cu is linear in level on
 	// it and held beyond its ends; between verticals it is linear in x and held beyond the outermost.
 	Points [][3]float64 `json:"points,omitempty"`
+	// Ratio: when present, cu = max(minimum, ratio x effective vertical stress), of the strata under the ground before works and the water
+	// below water_before, without surcharge; saturated unit weights below that line.
+	Ratio       *float64 `json:"ratio,omitempty"`
+	Minimum     *float64 `json:"minimum_kPa,omitempty"`  // Least cu of a strength by ratio, kPa.
+	WaterBefore []Point  `json:"water_before,omitempty"` // Water line before works of a strength by ratio; absent: dry.
 }
 
 // Situation is a state of the ground with the FS required in it.
@@ -95,7 +110,7 @@ type Situation struct {
 	Strength      Strength `json:"strength"`                         // "drained", "undrained", or one of these words for every soil.
 	WaterLine     string   `json:"water_line"`                       // Name of its water line before works; empty: dry.
 	Kh            float64  `json:"kh"`                               // Horizontal pseudo-static coefficient, outward.
-	Kv            float64  `json:"kv"`                               // Vertical pseudo-static coefficient; always 0.
+	Kv            float64  `json:"kv"`                               // Vertical pseudo-static coefficient, positive downwards, on ground and permanent loads.
 	DrainsWorking *Number  `json:"drains_working"`                   // Share of the drains' effect that counts, 0 to 1; null in a variant.
 	AppliesTo     []string `json:"applies_to" jsonschema:"nullable"` // Names of the options that it is checked for; null: all.
 	VariantOf     string   `json:"variant_of,omitempty"`             // Of a variant: the design situation that it belongs to.

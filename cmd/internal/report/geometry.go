@@ -4,13 +4,15 @@ package report
 // clips them. Placed bodies are painted over the strata in order, and Ground already includes them. Every line is held level beyond its
 // ends.
 type Section struct {
-	GroundBefore []Point          `json:"ground_before"`       // Ground before works, from left to right.
-	Ground       []Point          `json:"ground"`              // Ground in force, from left to right.
-	Strata       []Stratum        `json:"strata"`              // From the surface down; the first top is the ground before works.
-	Placed       []Body           `json:"placed"`              // Fill and exchanged ground, later over earlier.
-	Surcharges   []Surcharge      `json:"surcharges"`          // Vertical pressures on the ground.
-	FirmBase     []Point          `json:"firm_base,omitempty"` // Line below which no slip passes.
-	Water        map[string]Water `json:"water"`               // By name of the situation or stage.
+	GroundBefore []Point          `json:"ground_before"`           // Ground before works, from left to right.
+	Ground       []Point          `json:"ground"`                  // Ground in force, from left to right.
+	Strata       []Stratum        `json:"strata"`                  // From the surface down; the first top is the ground before works.
+	Placed       []Body           `json:"placed"`                  // Fill and exchanged ground, later over earlier.
+	Surcharges   []Surcharge      `json:"surcharges"`              // Pressures on the ground.
+	LineLoads    []LineLoad       `json:"line_loads,omitempty"`    // Permanent forces along lines on the ground.
+	Crack        *TensionCrack    `json:"tension_crack,omitempty"` // Tension crack at the head of every slip.
+	FirmBase     []Point          `json:"firm_base,omitempty"`     // Line below which no slip passes.
+	Water        map[string]Water `json:"water"`                   // By name of the situation or stage.
 }
 
 // Stratum is a layer from its top down to the next top below; where a later top lies above, the layer is absent.
@@ -27,24 +29,47 @@ type Body struct {
 
 // Surcharge is a vertical pressure on the ground.
 type Surcharge struct {
-	Name     string  `json:"name"`                                           // Name.
-	FromX    float64 `json:"from_x"`                                         // Left end, m.
-	ToX      float64 `json:"to_x"`                                           // Right end, m.
-	Pressure float64 `json:"kPa"`                                            // Downward pressure, kPa.
-	Kind     string  `json:"kind" jsonschema:"enum=permanent,enum=variable"` // "permanent", or "variable": left out on slips whose FS it would raise.
+	Name       string   `json:"name"`                                           // Name.
+	FromX      float64  `json:"from_x"`                                         // Left end, m.
+	ToX        float64  `json:"to_x"`                                           // Right end, m.
+	Pressure   float64  `json:"kPa"`                                            // Downward pressure at from_x, kPa.
+	PressureTo *float64 `json:"kPa_to,omitempty"`                               // Downward pressure at to_x, kPa, straight between; absent: the same.
+	Horizontal float64  `json:"horizontal_kPa,omitempty"`                       // Horizontal pressure to the right, kPa.
+	Kind       string   `json:"kind" jsonschema:"enum=permanent,enum=variable"` // "permanent", or "variable": left out on slips whose FS it would raise.
 }
 
 // Water is the pore pressure and free water of a situation: u = gamma_w x vertical depth below the line, unless by_soil or drains say
 // otherwise. Where free water stands higher than the line, its level takes the line's place. Undrained soil has no pore pressure of
 // its own.
 type Water struct {
-	Line      []Point           `json:"line" jsonschema:"nullable"` // Piezometric line, lowered by drains where there are any; null: dry.
-	FreeWater []FreeWater       `json:"free_water"`                 // Water that stands on the ground and loads it.
-	BySoil    map[string]BySoil `json:"by_soil"`                    // Soils whose pore pressure does not follow the line.
-	Drains    *Drains           `json:"drains,omitempty"`           // Drains: the pore pressure that the engine used.
+	Line     []Point `json:"line" jsonschema:"nullable"` // Piezometric line, lowered by drains where there are any; null: dry.
+	Inclined bool    `json:"inclined_line,omitempty"`    // True: pressure below every line is reduced by cos^2 of the line's inclination.
+	// Points [x, y, u] in m and kPa; when present they hold in place of every line, in all soils but those with ru or a level_y. Points of one x make
+	// a vertical: u is linear in level on it and held beyond its ends; between verticals it is linear in x and held beyond the outermost.
+	Points    [][3]float64      `json:"points,omitempty"`
+	FreeWater []FreeWater       `json:"free_water"`       // Water that stands on the ground and loads it.
+	BySoil    map[string]BySoil `json:"by_soil"`          // Soils whose pore pressure does not follow the line.
+	Drains    *Drains           `json:"drains,omitempty"` // Drains: the pore pressure that the engine used.
 }
 
 // FreeWater stands on the ground up to a level.
+// LineLoad is a force along a line on the ground, for a metre run.
+type LineLoad struct {
+	Name       string  `json:"name"`                // Name.
+	X          float64 `json:"x"`                   // Where it acts, m.
+	Vertical   float64 `json:"vertical_kN_per_m"`   // Downward force, kN/m.
+	Horizontal float64 `json:"horizontal_kN_per_m"` // Force to the right, kN/m.
+}
+
+// TensionCrack is a vertical crack: coming from its head, a slip ends where it first passes below the bottom of the crack, and a slip that never
+// does is none. Water in it pushes in the direction of movement with half its unit weight x depth squared, at a third of its depth.
+type TensionCrack struct {
+	Depth      float64  `json:"depth_m,omitempty"`       // Depth below the ground, m; absent if line is given.
+	Line       []Point  `json:"line,omitempty"`          // Bottom of the crack; beyond its ends and above the ground there is none.
+	WaterShare float64  `json:"water_share"`             // Depth of water over depth of the crack, unless water_level_y is given.
+	WaterLevel *float64 `json:"water_level_y,omitempty"` // Level of the water, m.
+}
+
 type FreeWater struct {
 	Level float64 `json:"level"`  // Water level, m.
 	FromX float64 `json:"from_x"` // Left end, m.
@@ -57,6 +82,7 @@ type FreeWater struct {
 type BySoil struct {
 	Ru     *float64 `json:"ru" jsonschema:"nullable"`      // Pore pressure ratio; null: none.
 	LevelY *float64 `json:"level_y" jsonschema:"nullable"` // Of a free-draining soil: level of the outfall, m; null: none is named.
+	Line   []Point  `json:"line,omitempty"`                // Piezometric line of the soil: perched or artesian water. Drains do not lower it.
 }
 
 // Drains lower the pore pressure between the ends of their invert. With L the line before and I the invert at x, H = L - I and R the
@@ -77,4 +103,5 @@ type Slip struct {
 	Points []Point `json:"points,omitempty"`                            // Of a polyline, from left to right.
 	From   Point   `json:"from"`                                        // Left end on the ground.
 	To     Point   `json:"to"`                                          // Right end on the ground.
+	Crack  float64 `json:"tension_crack_m,omitempty"`                   // Depth of the tension crack at the head, m: from or to is then its mouth, and the slip ends at its bottom.
 }

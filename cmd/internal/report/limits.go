@@ -37,9 +37,19 @@ type MaxLevel struct {
 
 // WaterLine is a piezometric line before works.
 type WaterLine struct {
-	Name     string  `json:"name"`     // Name.
+	Name     string       `json:"name"`                       // Name.
+	Line     []Point      `json:"line" jsonschema:"nullable"` // From left to right; null: only what follows holds.
+	Artesian bool         `json:"artesian"`                   // True: it keeps its head where works cut below it.
+	Inclined bool         `json:"inclined_line,omitempty"`    // True: pressure below every line is reduced by cos^2 of the line's inclination.
+	BySoil   []SoilLine   `json:"by_soil,omitempty"`          // Lines that hold in one soil in place of the line.
+	Points   [][3]float64 `json:"points,omitempty"`           // Known pore pressures [x, y, u] in m and kPa, in place of all lines.
+}
+
+// SoilLine is the piezometric line of one soil before works.
+type SoilLine struct {
+	Soil     string  `json:"soil"`     // Name of the soil.
 	Line     []Point `json:"line"`     // From left to right.
-	Artesian bool    `json:"artesian"` // True: it keeps its head where works cut below it.
+	Artesian bool    `json:"artesian"` // Keeps its head where works cut below it.
 }
 
 // StageSettings are what every construction stage must stand.
@@ -81,7 +91,13 @@ func fenceOf(f *remedies.Fence) *Fence {
 func (b *builder) waterLines() []WaterLine {
 	out := make([]WaterLine, len(b.job.Waters))
 	for i, w := range b.job.Waters {
-		out[i] = WaterLine{Name: w.Name, Line: points(w.Line), Artesian: w.Artesian}
+		out[i] = WaterLine{Name: w.Name, Line: points(w.Line), Artesian: w.Artesian, Inclined: w.Inclined}
+		for _, own := range w.BySoil {
+			out[i].BySoil = append(out[i].BySoil, SoilLine{Soil: b.soils[own.Soil], Line: points(own.Line), Artesian: own.Artesian})
+		}
+		for _, p := range w.Points {
+			out[i].Points = append(out[i].Points, [3]float64{p.X, p.Y, p.Pressure})
+		}
 	}
 	return out
 }

@@ -73,7 +73,7 @@ func (b *rebuilder) job() *remedies.Job {
 		j.Clay = append(j.Clay, f.Soils[name].SlowDraining)
 	}
 	for _, w := range f.WaterLines {
-		j.Waters = append(j.Waters, remedies.WaterLine{Name: w.Name, Line: b.line(w.Line), Artesian: w.Artesian})
+		j.Waters = append(j.Waters, b.waterLine(w))
 	}
 	for i := range f.Situations {
 		s := &f.Situations[i]
@@ -82,13 +82,30 @@ func (b *rebuilder) job() *remedies.Job {
 		}
 		free := b.water(f.Existing.Section.Water[s.Name]).Free
 		j.Situations = append(j.Situations, remedies.Situation{
-			Name: s.Name, RequiredFS: s.RequiredFS, Water: b.waterIndex(s.WaterLine), Free: free, Kh: s.Kh, Undrained: b.undrained(s.Strength),
+			Name: s.Name, RequiredFS: s.RequiredFS, Water: b.waterIndex(s.WaterLine), Free: free, Kh: s.Kh, Kv: s.Kv, Undrained: b.undrained(s.Strength),
 		})
 	}
 	if s := f.StageSettings; s != nil {
 		j.Stage = remedies.StageSettings{Given: true, Water: b.waterIndex(s.WaterLine), RequiredFS: s.RequiredFS}
 	}
 	return j
+}
+
+func (b *rebuilder) waterLine(w WaterLine) remedies.WaterLine {
+	out := remedies.WaterLine{Name: w.Name, Line: b.line(w.Line), Artesian: w.Artesian, Inclined: w.Inclined, Points: b.pressures(w.Points)}
+	for _, own := range w.BySoil {
+		out.BySoil = append(out.BySoil, remedies.SoilLine{Soil: b.soilIndex(own.Soil), Line: b.line(own.Line), Artesian: own.Artesian})
+	}
+	return out
+}
+
+func (b *rebuilder) pressures(ps [][3]float64) []lem.PressurePoint {
+	var out []lem.PressurePoint
+	for _, p := range ps {
+		at := b.point(Point{p[0], p[1]})
+		out = append(out, lem.PressurePoint{X: at.X, Y: at.Y, Pressure: p[2]})
+	}
+	return out
 }
 
 // waterIndex returns the index of a water line by its name; -1 for dry ground.

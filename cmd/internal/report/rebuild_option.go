@@ -117,7 +117,7 @@ func (b *rebuilder) outcome(c remedies.Check, f *Found) remedies.Outcome {
 		out.FS = math.NaN()
 		return out
 	}
-	out.From, out.To = b.point(f.Slip.From), b.point(f.Slip.To)
+	out.From, out.To, out.Crack = b.point(f.Slip.From), b.point(f.Slip.To), f.Slip.Crack
 	switch {
 	case f.Slip.Kind == "polyline":
 		out.Slip = lem.Slip{Kind: lem.Polyline, Nodes: b.line(f.Slip.Points)}

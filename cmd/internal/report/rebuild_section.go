@@ -22,7 +22,20 @@ func (b *rebuilder) section(s *Section) lem.Section {
 		out.Placed = append(out.Placed, lem.Body{Soil: b.soilIndex(p.Soil), Outline: b.points(p.Outline)})
 	}
 	for _, l := range s.Surcharges {
-		out.Loads = append(out.Loads, lem.Surcharge{Name: l.Name, FromX: l.FromX, ToX: l.ToX, Pressure: l.Pressure, Variable: l.Kind == "variable"})
+		load := lem.Surcharge{Name: l.Name, FromX: l.FromX, ToX: l.ToX, Pressure: l.Pressure, Shear: l.Horizontal, Variable: l.Kind == "variable"}
+		if l.PressureTo != nil {
+			load.Rise = *l.PressureTo - l.Pressure
+		}
+		out.Loads = append(out.Loads, load)
+	}
+	for _, l := range s.LineLoads {
+		out.LineLoads = append(out.LineLoads, lem.LineLoad(l))
+	}
+	if k := s.Crack; k != nil {
+		out.Crack = &lem.TensionCrack{Depth: k.Depth, Line: b.line(k.Line), WaterShare: k.WaterShare}
+		if k.WaterLevel != nil {
+			out.Crack.WaterLevel, out.Crack.HasWaterLevel = *k.WaterLevel, true
+		}
 	}
 	return out
 }
@@ -44,10 +57,19 @@ func (b *rebuilder) soil(name string) lem.Soil {
 	if s.Ru != nil {
 		out.Ru, out.HasRu = *s.Ru, true
 	}
+	if p := s.PowerLaw; p != nil {
+		out.PowerLaw = &lem.PowerLaw{A: p.A, B: p.B}
+	}
 	if u := s.Undrained; u != nil {
 		out.Undrained = &lem.UndrainedStrength{Strength: u.Strength, Gradient: u.Gradient, Datum: b.line(u.Datum)}
 		for _, p := range u.Points {
 			out.Undrained.Points = append(out.Undrained.Points, lem.StrengthPoint{X: p[0], Y: p[1], Strength: p[2]})
+		}
+		if u.Ratio != nil {
+			out.Undrained.Ratio, out.Undrained.WaterBefore = *u.Ratio, b.line(u.WaterBefore)
+		}
+		if u.Minimum != nil {
+			out.Undrained.Minimum = *u.Minimum
 		}
 	}
 	return out
@@ -55,7 +77,12 @@ func (b *rebuilder) soil(name string) lem.Soil {
 
 // water turns the water of a check back: its line is that before drains.
 func (b *rebuilder) water(w Water) lem.Water {
-	out := lem.Water{Line: b.line(w.Line)}
+	out := lem.Water{Line: b.line(w.Line), InclinedLine: w.Inclined, Points: b.pressures(w.Points)}
+	for i, name := range b.file.SoilOrder {
+		if own := w.BySoil[name].Line; own != nil {
+			out.BySoil = append(out.BySoil, lem.SoilWater{Soil: i, Line: b.line(own)})
+		}
+	}
 	for _, f := range w.FreeWater {
 		out.Free = append(out.Free, lem.FreeWater{Level: f.Level, FromX: f.FromX, ToX: f.ToX})
 	}
