@@ -142,7 +142,7 @@ func TestFileNames(t *testing.T) {
 // Progress writes over its own line, whose end it blanks, and leaves it empty.
 func TestProgress(t *testing.T) {
 	var b bytes.Buffer
-	p := &progress{w: &b}
+	p := &progress{w: &b, start: time.Now()}
 	p.show(remedies.Progress{Option: "berm", Done: 1, Total: 3, Share: 0.5})
 	p.last = time.Time{}
 	p.show(remedies.Progress{Option: "b", Done: 1, Total: 3})
@@ -154,5 +154,27 @@ func TestProgress(t *testing.T) {
 	}
 	if newProgress(&b, false).w != nil {
 		t.Error("progress goes into a stream that is no terminal")
+	}
+}
+
+// Time left is told once the pace is known.
+func TestTimeLeft(t *testing.T) {
+	for _, c := range []struct {
+		name    string
+		p       remedies.Progress
+		elapsed time.Duration
+		want    string
+	}{
+		{"too soon", remedies.Progress{Option: "berm", Done: 1, Total: 2}, time.Second, "sizing berm, 2 of 2, 0 %"},
+		{"too little done", remedies.Progress{Option: "berm", Total: 10, Share: 0.1}, time.Minute, "sizing berm, 1 of 10, 10 %"},
+		{"half done", remedies.Progress{Option: "berm", Done: 1, Total: 2}, 31 * time.Second, "sizing berm, 2 of 2, 0 %, about 35 s left"},
+		{"minutes", remedies.Progress{Option: "berm", Done: 1, Total: 4, Share: 0}, 100 * time.Second, "sizing berm, 2 of 4, 0 %, about 5 min left"},
+		{"done", remedies.Progress{Option: "berm", Done: 2, Total: 2}, time.Minute, "sizing berm, 3 of 2, 0 %"},
+	} {
+		t.Run(c.name, func(t *testing.T) {
+			if got := progressText(c.p, c.elapsed); got != c.want {
+				t.Errorf("got %q, want %q", got, c.want)
+			}
+		})
 	}
 }

@@ -49,6 +49,7 @@ func printWarnings(c *cobra.Command, warnings []string) {
 type progress struct {
 	w       io.Writer // nil: shows nothing.
 	mu      sync.Mutex
+	start   time.Time
 	last    time.Time
 	written int
 }
@@ -60,7 +61,7 @@ func newProgress(stderr io.Writer, quiet bool) *progress {
 	if _, ok := terminal(stderr); !ok || quiet {
 		return &progress{}
 	}
-	return &progress{w: stderr}
+	return &progress{w: stderr, start: time.Now()}
 }
 
 // show may be called by many goroutines.
@@ -74,11 +75,33 @@ func (p *progress) show(s remedies.Progress) {
 		return
 	}
 	p.last = time.Now()
-	p.write(progressText(s))
+	p.write(progressText(s, p.last.Sub(p.start)))
 }
 
-func progressText(s remedies.Progress) string {
-	return fmt.Sprintf("sizing %s, %d of %d, %.0f %%", s.Option, s.Done+1, s.Total, 100*s.Share)
+// progressText tells how far a study has come after a time, and how long it will go on if it keeps its pace.
+func progressText(s remedies.Progress, elapsed time.Duration) string {
+	out := fmt.Sprintf("sizing %s, %d of %d, %.0f %%", s.Option, s.Done+1, s.Total, 100*s.Share)
+	const (
+		tooSoon   = 2 * time.Second // Before this, and before this share of the work, the pace is not known.
+		tooLittle = 0.04
+	)
+	share := (float64(s.Done) + s.Share) / float64(max(s.Total, 1))
+	if elapsed < tooSoon || share < tooLittle || share >= 1 {
+		return out
+	}
+	return out + ", about " + roughly(time.Duration(float64(elapsed)*(1-share)/share)) + " left"
+}
+
+// roughly returns a time as people say it: seconds by fives up to a minute and a half, then minutes.
+func roughly(d time.Duration) string {
+	const (
+		step = 5 * time.Second
+		most = 90 * time.Second
+	)
+	if d = (d + step - 1) / step * step; d <= most {
+		return fmt.Sprintf("%d s", int(d.Seconds()))
+	}
+	return fmt.Sprintf("%d min", int((d+time.Minute-1)/time.Minute))
 }
 
 // write replaces what stands on the line.
