@@ -131,11 +131,16 @@ class Sheet {
       box.remove();
       e.style.minHeight = `${Math.ceil(high)}px`;
     };
-    const stops = this.data.stops;
+    const data = this.data;
+    const stops = data.stops;
     room(find<HTMLElement>("#answer"), stops.map((s) => s.answer));
     room(find<HTMLElement>("#long"), stops.map((s) => s.long));
     for (const c of this.cards) {
       for (const key of ["dims", "change", "land", "cost", "carbon", "loads"]) room(c.texts.get(key), c.option.designs.map((d) => d.texts[key]));
+      const where = find<HTMLElement>(".where", c.element);
+      const whereText = where?.textContent ?? "";
+      const check = c.texts.get("check")?.textContent ?? "";
+      room(where, [data.existing, ...c.option.designs].map((d) => whereText.replace(check, d.texts.check)));
       room(c.slots.get("note"), c.option.stops.map((s) => s.note));
     }
   }
