@@ -239,13 +239,29 @@ func (p *picture) gatherStrata() {
 	}
 }
 
-// slipLine returns the governing slip between its ends on the ground.
-func slipLine(o *remedies.Outcome) []lem.Point {
-	a, b := o.From, o.To
+// slipFeet returns the ends of the governing slip on the slip itself, from left to right: at its head that may be the bottom of a tension crack.
+func slipFeet(o *remedies.Outcome) (a, b lem.Point) {
+	a, b = o.From, o.To
 	if a.X > b.X {
 		a, b = b, a
 	}
+	if o.Crack > 0 {
+		if a.Y < b.Y {
+			b.Y -= o.Crack
+		} else {
+			a.Y -= o.Crack
+		}
+	}
+	return a, b
+}
+
+// slipLine returns the governing slip between its ends on the ground, with the tension crack at its head.
+func slipLine(o *remedies.Outcome) []lem.Point {
+	a, b := slipFeet(o)
 	out := []lem.Point{a}
+	if left := leftEnd(o); left != a {
+		out = []lem.Point{left, a}
+	}
 	switch o.Slip.Kind {
 	case lem.Polyline:
 		for _, q := range o.Slip.Nodes {
@@ -265,7 +281,25 @@ func slipLine(o *remedies.Outcome) []lem.Point {
 			out = append(out, lem.Point{X: c.X + o.Slip.Radius*co, Y: c.Y + o.Slip.Radius*s})
 		}
 	}
-	return append(out, b)
+	out = append(out, b)
+	if right := rightEnd(o); right != b {
+		out = append(out, right)
+	}
+	return out
+}
+
+func leftEnd(o *remedies.Outcome) lem.Point {
+	if o.From.X > o.To.X {
+		return o.To
+	}
+	return o.From
+}
+
+func rightEnd(o *remedies.Outcome) lem.Point {
+	if o.From.X > o.To.X {
+		return o.From
+	}
+	return o.To
 }
 
 // clipX cuts an outline to a range of x.

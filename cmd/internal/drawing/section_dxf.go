@@ -210,9 +210,12 @@ func (d *board) drawSlips() {
 			continue
 		}
 		c := o.Slip.Centre
-		a, b := o.From, o.To
-		if a.X > b.X {
-			a, b = b, a
+		a, b := slipFeet(o)
+		if left := leftEnd(o); left != a {
+			d.line(layerSlips, []lem.Point{left, a}, false)
+		}
+		if right := rightEnd(o); right != b {
+			d.line(layerSlips, []lem.Point{right, b}, false)
 		}
 		d.out.Arc(layerSlips, dxf.Point(c), o.Slip.Radius, math.Atan2(a.Y-c.Y, a.X-c.X), math.Atan2(b.Y-c.Y, b.X-c.X))
 	}
