@@ -94,7 +94,8 @@ func (p *printer) neutral(o *Option) {
 	p.heading("Neutral points of load on the critical slips (x, m)")
 	right := func(head string) column { return column{head: head, right: true, most: 18} }
 	p.table([]column{
-		{head: "situation", most: 32}, right("drained, formula"), right("drained, method"), right("undrained, formula"), right("undrained, method"),
+		{head: "situation", most: 32},
+		right("drained, formula"), right("drained, method"), right("undrained, formula"), right("undrained, method"),
 		right("worst place for fill"), right("best place for fill"),
 	}, rows)
 	p.para("", fmt.Sprintf("A fill downslope of both neutral points raises the FS of that slip, a cut there lowers it; upslope of both it is the other way round. Between them "+
