@@ -150,35 +150,61 @@ func number(t *testing.T, v any, path ...any) float64 {
 	return n
 }
 
-// TestInterruptedRunKeepsTheOldResults interrupts a second run at several moments: it ends promptly with its exit code, and the folder holds
-// what the first one wrote, to the byte, with nothing beside it.
+// TestInterruptedRunKeepsTheOldResults interrupts a second run while it sizes, and another as soon as it has begun to write: it ends promptly
+// with its exit code, and the folder holds what the first run wrote, to the byte, with nothing beside it.
 func TestInterruptedRunKeepsTheOldResults(t *testing.T) {
-	const prompt = 3 * time.Second // A search of one check takes far less, on a busy machine too.
 	folder := t.TempDir()
 	out := filepath.Join(folder, "works")
 	compareTo(t.Context(), t, "testdata/bank.yaml", out, "--quiet")
 	before := filesOf(t, out)
-	for _, after := range []time.Duration{time.Millisecond, 50 * time.Millisecond, 400 * time.Millisecond, 1200 * time.Millisecond} {
-		ctx, cancel := context.WithTimeout(t.Context(), time.Hour)
-		var stopped time.Time
-		timer := time.AfterFunc(after, func() { stopped = time.Now(); cancel() })
-		code := compareTo(ctx, t, filepath.Join(demoFolder, "cutting.yaml"), out, "--quiet")
-		took := time.Since(stopped)
-		timer.Stop()
-		cancel()
-		if code != exitInterrupted || took > prompt {
-			t.Errorf("interrupted after %v: exit code %d, %v later", after, code, took)
-		}
-		if beside, err := os.ReadDir(folder); err != nil || len(beside) != 1 {
-			t.Errorf("interrupted after %v: left beside the results: %v, %v", after, beside, err)
-		}
-		for name, got := range filesOf(t, out) {
-			if !bytes.Equal(got, before[name]) {
-				t.Errorf("interrupted after %v: %s has changed", after, name)
+	demo := filepath.Join(demoFolder, "cutting.yaml")
+	for _, c := range []struct {
+		name, path string
+		when       func(ctx context.Context)
+	}{
+		{"at once", demo, func(context.Context) { time.Sleep(time.Millisecond) }},
+		{"while searching", demo, func(context.Context) { time.Sleep(400 * time.Millisecond) }},
+		{"while writing", "testdata/bank.yaml", func(ctx context.Context) {
+			for ctx.Err() == nil {
+				if beside, err := os.ReadDir(folder); err != nil || len(beside) > 1 {
+					return
+				}
+				time.Sleep(100 * time.Microsecond)
 			}
-		}
-		if n := len(filesOf(t, out)); n != len(before) {
-			t.Errorf("interrupted after %v: %d files, %d before", after, n, len(before))
-		}
+		}},
+	} {
+		t.Run(c.name, func(t *testing.T) {
+			interrupt(t, c.path, out, c.when)
+			if beside, err := os.ReadDir(folder); err != nil || len(beside) != 1 {
+				t.Errorf("left beside the results: %v, %v", beside, err)
+			}
+			after := filesOf(t, out)
+			if len(after) != len(before) {
+				t.Errorf("%d files, %d before", len(after), len(before))
+			}
+			for name, want := range before {
+				if !bytes.Equal(after[name], want) {
+					t.Errorf("%s has changed", name)
+				}
+			}
+		})
+	}
+}
+
+// interrupt runs compare with another seed and interrupts it when told; the run must end promptly and say so.
+func interrupt(t *testing.T, path, out string, when func(ctx context.Context)) {
+	t.Helper()
+	const prompt = 3 * time.Second // A search of one check takes far less, on a busy machine too.
+	ctx, cancel := context.WithCancel(t.Context())
+	defer cancel()
+	stopped := make(chan time.Time, 1)
+	go func() {
+		when(ctx)
+		stopped <- time.Now()
+		cancel()
+	}()
+	code := compareTo(ctx, t, path, out, "--quiet", "--seed", "5")
+	if took := time.Since(<-stopped); code != exitInterrupted || took > prompt {
+		t.Errorf("exit code %d, %v later", code, took)
 	}
 }
