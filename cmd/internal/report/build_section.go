@@ -1,6 +1,8 @@
 package report
 
 import (
+	"fmt"
+
 	"standfast/lem"
 	"standfast/remedies"
 )
@@ -30,7 +32,14 @@ func (b *builder) section(s *lem.Section) *Section {
 	for _, l := range s.LineLoads {
 		out.LineLoads = append(out.LineLoads, LineLoad(l))
 	}
+	for _, r := range s.Restraints {
+		out.Restraints = append(out.Restraints, Restraint(r))
+	}
 	out.Crack = crackOf(s.Crack)
+	if n := len(b.soils); len(s.Soils) > n {
+		own := builder{job: &remedies.Job{Section: lem.Section{Soils: s.Soils[n:]}}, soils: soilNames(s.Soils[n:])}
+		out.Soils = own.soilTable()
+	}
 	return out
 }
 
@@ -97,6 +106,18 @@ func found(o *remedies.Outcome) Found {
 		out.Depth = Number(o.Depth)
 	}
 	return out
+}
+
+// SlipOf returns the governing slip of an outcome.
+func SlipOf(o *remedies.Outcome) *Slip { return slipOf(&o.Slip, o.From, o.To) }
+
+// String describes the slip for people, in m.
+func (s *Slip) String() string {
+	ends := fmt.Sprintf("from (%.2f, %.2f) to (%.2f, %.2f)", s.From[0], s.From[1], s.To[0], s.To[1])
+	if s.Centre != nil {
+		return fmt.Sprintf("circle about (%.2f, %.2f), radius %.2f, %s", s.Centre[0], s.Centre[1], s.Radius, ends)
+	}
+	return fmt.Sprintf("polyline of %d points %s", len(s.Points), ends)
 }
 
 func slipOf(s *lem.Slip, from, to lem.Point) *Slip {

@@ -10,9 +10,22 @@ type Section struct {
 	Placed       []Body           `json:"placed"`                  // Fill and exchanged ground, later over earlier.
 	Surcharges   []Surcharge      `json:"surcharges"`              // Pressures on the ground.
 	LineLoads    []LineLoad       `json:"line_loads,omitempty"`    // Permanent forces along lines on the ground.
+	Restraints   []Restraint      `json:"restraints,omitempty"`    // Rows of structural elements that hold slips back.
 	Crack        *TensionCrack    `json:"tension_crack,omitempty"` // Tension crack at the head of every slip.
 	FirmBase     []Point          `json:"firm_base,omitempty"`     // Line below which no slip passes.
 	Water        map[string]Water `json:"water"`                   // By name of the situation or stage.
+	// Soils of this section alone, by name: what is left, as a mean over the length, of ground that a hole in panels takes away.
+	Soils map[string]Soil `json:"soils,omitempty"`
+}
+
+// Restraint is a row of structural elements: a horizontal force against the movement of a slip that crosses x between the two levels. It is part
+// of the driving side: it is taken off what drives.
+type Restraint struct {
+	Name   string  `json:"name"`           // Name.
+	X      float64 `json:"x"`              // Where the row stands, m.
+	Top    float64 `json:"top_y"`          // Level of its top, m.
+	Bottom float64 `json:"bottom_y"`       // Level of its bottom, m.
+	Force  float64 `json:"force_kN_per_m"` // Force for a metre run, kN/m.
 }
 
 // Stratum is a layer from its top down to the next top below; where a later top lies above, the layer is absent.

@@ -44,7 +44,7 @@ func (b *rebuilder) option(j *remedies.Job, o *Option) remedies.Option {
 		}
 		if s.Section != nil {
 			section := b.section(s.Section)
-			c.Section, c.Situation.Water = &section, b.water(s.Section.Water[s.Name])
+			c.Section, c.Situation.Water = &section, b.water(s.Section.Water[s.Name], ownSoils(s.Section)...)
 		}
 		out.Stages = append(out.Stages, b.outcome(c, &s.Found))
 	}

@@ -1,7 +1,9 @@
 package report
 
 import (
+	"maps"
 	"math"
+	"slices"
 
 	"standfast/lem"
 )
@@ -10,7 +12,12 @@ import (
 func (b *rebuilder) section(s *Section) lem.Section {
 	out := lem.Section{Ground: b.line(s.Ground), FirmBase: b.line(s.FirmBase)}
 	for _, name := range b.file.SoilOrder {
-		out.Soils = append(out.Soils, b.soil(name))
+		out.Soils = append(out.Soils, b.soil(name, b.file.Soils[name]))
+	}
+	for _, name := range ownSoils(s) {
+		b.soils[name] = len(out.Soils)
+		defer delete(b.soils, name)
+		out.Soils = append(out.Soils, b.soil(name, s.Soils[name]))
 	}
 	for _, t := range s.Strata {
 		out.Strata = append(out.Strata, lem.Stratum{Soil: b.soilIndex(t.Soil), Top: b.line(t.Top)})
@@ -31,6 +38,9 @@ func (b *rebuilder) section(s *Section) lem.Section {
 	for _, l := range s.LineLoads {
 		out.LineLoads = append(out.LineLoads, lem.LineLoad(l))
 	}
+	for _, r := range s.Restraints {
+		out.Restraints = append(out.Restraints, lem.Restraint(r))
+	}
 	if k := s.Crack; k != nil {
 		out.Crack = &lem.TensionCrack{Depth: k.Depth, Line: b.line(k.Line), WaterShare: k.WaterShare}
 		if k.WaterLevel != nil {
@@ -48,8 +58,12 @@ func (b *rebuilder) soilIndex(name string) int {
 	return i
 }
 
-func (b *rebuilder) soil(name string) lem.Soil {
-	s := b.file.Soils[name]
+// ownSoils returns the names of the soils of a section alone, in a fixed order behind those of the case.
+func ownSoils(s *Section) []string {
+	return slices.Sorted(maps.Keys(s.Soils))
+}
+
+func (b *rebuilder) soil(name string, s Soil) lem.Soil {
 	out := lem.Soil{
 		Name: name, UnitWeight: s.UnitWeight, SaturatedUnitWeight: s.SaturatedUnitWeight, Cohesion: s.Drained.Cohesion,
 		Friction: s.Drained.Friction * math.Pi / 180, FreeDraining: s.FreeDraining,
@@ -62,6 +76,9 @@ func (b *rebuilder) soil(name string) lem.Soil {
 	}
 	if u := s.Undrained; u != nil {
 		out.Undrained = &lem.UndrainedStrength{Strength: u.Strength, Gradient: u.Gradient, Datum: b.line(u.Datum)}
+		if u.DatumY != nil { // A level line, written as its level.
+			out.Undrained.Datum = lem.Profile{{Y: float64(*u.DatumY)}}
+		}
 		for _, p := range u.Points {
 			out.Undrained.Points = append(out.Undrained.Points, lem.StrengthPoint{X: p[0], Y: p[1], Strength: p[2]})
 		}
@@ -75,12 +92,12 @@ func (b *rebuilder) soil(name string) lem.Soil {
 	return out
 }
 
-// water turns the water of a check back: its line is that before drains.
-func (b *rebuilder) water(w Water) lem.Water {
+// water turns the water of a check back: its line is that before drains. own names the soils of the section alone.
+func (b *rebuilder) water(w Water, own ...string) lem.Water {
 	out := lem.Water{Line: b.line(w.Line), InclinedLine: w.Inclined, Points: b.pressures(w.Points)}
-	for i, name := range b.file.SoilOrder {
-		if own := w.BySoil[name].Line; own != nil {
-			out.BySoil = append(out.BySoil, lem.SoilWater{Soil: i, Line: b.line(own)})
+	for i, name := range slices.Concat(b.file.SoilOrder, own) {
+		if line := w.BySoil[name].Line; line != nil {
+			out.BySoil = append(out.BySoil, lem.SoilWater{Soil: i, Line: b.line(line)})
 		}
 	}
 	for _, f := range w.FreeWater {
