@@ -12,6 +12,8 @@ var risks = map[string]string{
 	"lightweight_fill": "Light fill floats when the ground floods, and may burn or settle. While the head is dug out, its back face must stand.",
 	"shear_key":        "The open trench takes support from the slope until it is filled, so it is dug in short panels, the least critical end first.",
 	"drilled_drains":   "Drains silt up and must be flushed; they help only where they meet the water. Their outlets must stay open and be looked after for good.",
+	"toe_drain":        "A trench along the toe takes support from the slope while it is open. It reaches only the water near the toe, and its outfall must stay free.",
+	"interceptor":      "Cuts off only water that comes from behind the crest; pressure from below stays. Its ditch must be kept clear and watertight on the slope's side.",
 	"piles_or_nails":   "Shows only what a row of that capacity would bring: the elements, their heads and the ground between them need their own design.",
 	"water_lowering":   "Shows only what lower water would bring: how to lower it, and keep it lowered, is not designed here.",
 }
