@@ -37,6 +37,16 @@ func Methods() []Method {
 	return out
 }
 
+// MethodNamed returns the method of that name and reports whether there is one.
+func MethodNamed(name string) (Method, bool) {
+	for i, n := range methodNames {
+		if n == name {
+			return Method(i), true
+		}
+	}
+	return 0, false
+}
+
 // GoverningMethods returns the methods whose lowest FS governs slips of a kind: they close moments, and all forces but for Bishop, whose
 // error on circles is small (Whitman and Bailey 1967). Ordinary and Janbu are for comparison.
 func GoverningMethods(kind SlipKind) []Method {

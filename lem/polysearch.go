@@ -14,7 +14,7 @@ const (
 	railSeedsUpTo = 1.6  // with F up to this multiple of the lowest.
 	circleSeeds   = 8    // Seeds taken from the circles,
 	circlesUpTo   = 1.5  // with F up to this multiple of the lowest.
-	coarseSeeds   = 14    // Seeds that are descended from,
+	coarseSeeds   = 14   // Seeds that are descended from,
 	coarseUpTo    = 1.25 // with F up to this multiple of the lowest.
 	fineSeeds     = 6    // Basins that get more nodes,
 	fineUpTo      = 1.06 // with F up to this multiple of the lowest.

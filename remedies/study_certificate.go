@@ -22,12 +22,20 @@ func (z *sizing) certificate(res *optimize.Result[Cut]) *Certificate {
 		}
 		c.Witnessed++
 		c.Witnesses = append(c.Witnesses, Witness{
-			X: optimize.Point(res.Axes, w.Index), Earthworks: w.Cost, Cut: w.Cut,
+			X: optimize.Point(res.Axes, w.Index), Earthworks: z.earthworks(res, w), Cut: w.Cut,
 			FS: w.Margin + checks[res.Pool[w.Cut].Check].Required,
 		})
 	}
 	c.AuditLowest = auditLowest(res, checks)
 	return c
+}
+
+// earthworks returns the earthworks of a cheaper design, which are its cost where they are what is made least.
+func (z *sizing) earthworks(res *optimize.Result[Cut], w optimize.Witness) float64 {
+	if z.j.Objective == LeastEarthworks {
+		return w.Cost
+	}
+	return z.w.apply(z.j, optimize.Point(res.Axes, w.Index)).Quantities.Earthworks()
 }
 
 // auditLowest returns the lowest FS found at the answer in each check.

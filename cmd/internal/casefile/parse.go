@@ -25,6 +25,7 @@ type Case struct {
 	Job      *remedies.Job
 	File     string   // Name of the file, as given.
 	SHA256   string   // Of the file's bytes, in hexadecimal.
+	Source   string   // The file's text.
 	Finished bool     // A proposed section, which names the ground before works: it is assessed, and nothing is sized on it.
 	Notes    []string // What was deduced or holds without being written, to be printed.
 	Warnings []string // What is legal but probably not meant, each with file and line.
@@ -59,7 +60,7 @@ func Parse(name string, src []byte) (*Case, error) {
 	}
 	sum := sha256.Sum256(src)
 	return &Case{
-		Job: &b.job, File: name, SHA256: hex.EncodeToString(sum[:]),
+		Job: &b.job, File: name, SHA256: hex.EncodeToString(sum[:]), Source: string(src),
 		Finished: b.finished, Notes: r.notes, Warnings: r.warned,
 	}, nil
 }

@@ -25,7 +25,7 @@ var exitMeaning = map[int]string{
 	exitOK:           "done",
 	exitOther:        "anything else, such as a full disk",
 	exitInput:        "bad input or flags",
-	exitNothingMeets: "nothing meets the target; the results say how near it came and what binds",
+	exitNothingMeets: "the answer is no: nothing meets the target, or verify refutes an option; the output says why",
 	exitInterrupted:  "interrupted; nothing is half written",
 }
 
@@ -50,6 +50,9 @@ func usagef(format string, args ...any) error { return &usageError{fmt.Errorf(fo
 // errNothingMeets says that no option meets the target; the output has said so already.
 var errNothingMeets = errors.New("nothing meets the target")
 
+// errRefuted says that verify refuted an option; the output has said so already.
+var errRefuted = errors.New("an option is refuted")
+
 // exitCode returns the exit code that an error stands for.
 func exitCode(err error) int {
 	var usage *usageError
@@ -58,7 +61,7 @@ func exitCode(err error) int {
 		return exitOK
 	case errors.Is(err, context.Canceled):
 		return exitInterrupted
-	case errors.Is(err, errNothingMeets):
+	case errors.Is(err, errNothingMeets), errors.Is(err, errRefuted):
 		return exitNothingMeets
 	case errors.As(err, &usage), len(casefile.Faults(err)) > 0, errors.Is(err, remedies.ErrRequest):
 		return exitInput

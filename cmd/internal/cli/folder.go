@@ -17,6 +17,9 @@ import (
 // resultName is the file by which a folder of ours is known.
 const resultName = "result.json"
 
+// witnessesName is the file of the certificates.
+const witnessesName = "witnesses.json"
+
 // output is a file to be written.
 type output struct {
 	name  string

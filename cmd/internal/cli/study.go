@@ -80,7 +80,7 @@ func caseName(path string) string {
 
 func sourceOf(c *casefile.Case, overrides []string) report.Source {
 	return report.Source{
-		File: filepath.Base(c.File), SHA256: c.SHA256, Version: version(), Notes: c.Notes, Overrides: overrides,
+		File: filepath.Base(c.File), SHA256: c.SHA256, Text: c.Source, Version: version(), Notes: c.Notes, Overrides: overrides,
 	}
 }
 

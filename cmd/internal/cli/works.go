@@ -32,7 +32,7 @@ func writeWorks(ctx context.Context, out string, c *casefile.Case, r *remedies.R
 		outputs = append(outputs, output{names[i] + ".yaml", func(w io.Writer) error { _, err := w.Write(text); return err }})
 	}
 	witnesses := report.NewWitnesses(r, src)
-	outputs = append(outputs, output{"witnesses.json", witnesses.Encode})
+	outputs = append(outputs, output{witnessesName, witnesses.Encode})
 	file.Files = append([]string{resultName}, outputNames(outputs)...)
 	outputs = append(outputs, output{resultName, file.Encode})
 	return file, writeFolder(ctx, out, outputs)

@@ -9,6 +9,7 @@ import (
 type Source struct {
 	File      string   // Name of the case file, without its folder.
 	SHA256    string   // Of the case file's bytes.
+	Text      string   // The case file itself.
 	Version   string   // Of the program.
 	Notes     []string // What was deduced when the case was read.
 	Overrides []string // Command-line flags that changed what the case file asks.
@@ -22,7 +23,7 @@ func New(r *remedies.Result, src Source) *File {
 		Format: Format,
 		Case: Case{
 			Title: r.Job.Title, File: src.File, SHA256: src.SHA256, Length: r.Job.Length,
-			Crest: point(r.Job.Crest), Toe: point(r.Job.Toe), Notes: list(src.Notes),
+			Crest: point(r.Job.Crest), Toe: point(r.Job.Toe), Notes: list(src.Notes), Source: src.Text,
 		},
 		Program:       Program{Version: src.Version},
 		Settings:      settingsOf(r, src.Overrides),

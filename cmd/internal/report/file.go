@@ -34,6 +34,7 @@ type Case struct {
 	Crest  Point    `json:"crest"`    // Crest of the slope before works.
 	Toe    Point    `json:"toe"`      // Toe of the slope before works.
 	Notes  []string `json:"notes"`    // What was deduced or assumed when the case was read.
+	Source string   `json:"source"`   // The case file itself, so that the result can be checked from this file alone.
 }
 
 // Program names the program that wrote the file.

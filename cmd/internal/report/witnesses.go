@@ -1,8 +1,11 @@
 package report
 
 import (
+	"encoding/json"
+	"fmt"
 	"io"
 
+	"standfast/lem"
 	"standfast/remedies"
 )
 
@@ -69,6 +72,47 @@ func NewWitnesses(r *remedies.Result, src Source) *Witnesses {
 
 // Encode writes the witnesses as JSON, a design a line.
 func (w *Witnesses) Encode(to io.Writer) error { return encode(to, w) }
+
+// DecodeWitnesses reads witnesses.json. Its error is ErrFormat for another layout, or that of the JSON.
+func DecodeWitnesses(from io.Reader) (*Witnesses, error) {
+	w := &Witnesses{}
+	if err := json.NewDecoder(from).Decode(w); err != nil {
+		return nil, fmt.Errorf("report: witnesses: %w", err)
+	}
+	if w.Format != WitnessFormat {
+		return nil, fmt.Errorf("%w: %q, not %q", ErrFormat, w.Format, WitnessFormat)
+	}
+	return w, nil
+}
+
+// Certificate returns the pool and the witnesses of an option as package remedies replays them. Its error names a method that there is not.
+func (o *WitnessOption) Certificate(window lem.Window) (pool []remedies.CutOf, witnesses []remedies.Witness, err error) {
+	for i := range o.Pool {
+		c := &o.Pool[i]
+		method, ok := lem.MethodNamed(c.Method)
+		if !ok {
+			return nil, nil, fmt.Errorf("%w: there is no method %q", ErrFormat, c.Method)
+		}
+		slip := lem.Slip{Kind: lem.Polyline, Radius: c.Slip.Radius}
+		if c.Slip.Centre != nil {
+			slip.Kind, slip.Centre = lem.Circle, lem.Point{X: c.Slip.Centre[0], Y: c.Slip.Centre[1]}
+		}
+		for _, p := range c.Slip.Points {
+			slip.Nodes = append(slip.Nodes, lem.Point{X: p[0], Y: p[1]})
+		}
+		pool = append(pool, remedies.CutOf{
+			Check: c.Check, Setting: lem.Setting{Method: method, Slices: c.Slices, MinDepth: c.MinDepth, Window: window}, Slip: slip,
+		})
+	}
+	for _, d := range o.Designs {
+		x := make([]float64, len(d.X))
+		for k, v := range d.X {
+			x[k] = float64(v)
+		}
+		witnesses = append(witnesses, remedies.Witness{X: x, Earthworks: d.Earthworks, Cut: d.Cut, FS: float64(d.FS)})
+	}
+	return pool, witnesses, nil
+}
 
 func witnessOption(o *remedies.Option, checks []remedies.Check) WitnessOption {
 	c := o.Certificate
