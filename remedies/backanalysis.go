@@ -235,8 +235,9 @@ func rootOf(f func(float64) float64, most float64) (v float64, ok bool) {
 	if flo > 1+rootTol {
 		return math.NaN(), false
 	}
-	hi, fhi := most*first, math.NaN()
-	for fhi = f(hi); !(fhi >= 1) && hi < most; fhi = f(hi) {
+	hi := most * first
+	fhi := f(hi)
+	for ; !(fhi >= 1) && hi < most; fhi = f(hi) {
 		if !math.IsNaN(fhi) {
 			lo, flo = hi, fhi
 		}

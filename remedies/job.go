@@ -25,6 +25,8 @@ type Job struct {
 	Exit      lem.Range     // Daylight range of slips at the toe; zero: everywhere.
 	Direction lem.Direction // Movement that searches look at.
 
+	Observed *Observed // A slip that has happened; nil: none.
+
 	Requests []Request // Remedies to size.
 	Trials   []Trial   // The user's own works, only checked.
 	// Combinations are sized together beyond the pairs: each lists names of kinds in Requests.

@@ -54,6 +54,7 @@ func (r *reader) build(root value) *builder {
 	b.readOnSite(r.get(root, "on_site_fill"))
 	b.readEconomics(r.get(root, "economics"))
 	b.readSituations(r.get(root, "situations"))
+	b.readObserved(r.get(root, "observed_slip"))
 	b.readStages(r.get(root, "stages"))
 	b.checkStrengths()
 	b.readSlips(r.get(root, "slips"))

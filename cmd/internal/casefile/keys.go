@@ -63,6 +63,7 @@ func caseShape() *shape {
 		field{key: "on_site_fill", shape: list(onSiteShape(), 0, maxZones), standard: "none: all fill is brought, all cut is taken away", meaning: "Material of the site that may serve as fill.", example: "[{name: cut clay, cut_of: stiff clay, serves: [granular fill], share: 80%}]"},
 		field{key: "economics", shape: economicsShape(), standard: "blank: no costs, carbon or lorry loads", meaning: "Rates and factors of your own; whatever is blank is never guessed.", example: "{lorry_load: 10, rates: {cut: 1, import: 3, dispose: 4}}"},
 		field{key: "slips", shape: slipsShape(), standard: "everywhere, both directions", meaning: "Which slips are looked at.", example: "{head: [5, 30], direction: rightward}"},
+		field{key: "observed_slip", shape: observedShape(), standard: "none", meaning: "A slip that has happened, for `standfast backanalyse`.", example: "{line: [[28, 109], [36, 101], [46, 98.5], [54, 100]], situation: high water}"},
 		field{key: "remedies", shape: remediesShape(), standard: "none: there is nothing to size", meaning: "Remedies to size. A number is fixed, `a to b by c` is sized, and what is left out has its default.", example: "{berm: {fill: granular fill, height: 0.5 to 3 by 0.1}}"},
 		field{key: "trials", shape: list(trialShape(), 0, maxTrials), standard: "none", meaning: "Works of your own that are only checked.", example: "[{name: first sketch, works: {berm: {fill: granular fill, height: 2, top_width: 5, batter: 2}}}]"},
 	)
