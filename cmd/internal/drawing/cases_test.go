@@ -299,7 +299,7 @@ func steep() drawn {
 		Name: "existing", Status: remedies.Existing, Proposal: &remedies.Proposal{Section: j.Section},
 		Situations: []remedies.Outcome{{
 			Check: remedies.Check{Name: "winter water", Required: 1.25, Situation: lem.Situation{Water: d.water(0)}},
-			FS:    0.9649, Method: lem.Spencer, Resolved: true,
+			FS:    0.9649, Method: lem.MorgensternPrice, Resolved: true,
 			Slip: lem.Slip{Kind: lem.Polyline, Nodes: []lem.Point{{X: 11, Y: 140}, {X: 15, Y: 126}, {X: 24, Y: 106}, {X: 32, Y: 100}}},
 			From: lem.Point{X: 11, Y: 140}, To: lem.Point{X: 32, Y: 100},
 		}},

@@ -5,6 +5,7 @@ import (
 	"strconv"
 	"strings"
 
+	"standfast/lem"
 	"standfast/remedies"
 )
 
@@ -49,6 +50,14 @@ func value(v remedies.Value) string {
 	default:
 		return name + " " + number(v.Value, 2) + " " + v.Unit
 	}
+}
+
+// methodName writes a method of slices as people spell it.
+func methodName(m lem.Method) string {
+	if m == lem.MorgensternPrice {
+		return "Morgenstern-Price"
+	}
+	return title(m.String())
 }
 
 // title writes a word with a capital.

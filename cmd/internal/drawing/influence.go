@@ -49,7 +49,7 @@ func layOutInfluence(name string, o *remedies.Outcome, v *lem.Influence, opts Op
 	s := &sheet{}
 	inner := pageWidth - 2*margin
 	h := heading{title: name, name: []string{fmt.Sprintf("Influence of load on the critical slip: change of FS by %s kN per metre run placed on the ground", number(v.Load, 0))}, lines: []string{
-		fmt.Sprintf("%s: FS %s (%s). A load removed changes FS by as much the other way, nearly. Where a line is above zero fill helps and a cut harms.", title(clean(o.Check.Label())), fsDown(o.FS), title(o.Method.String())),
+		fmt.Sprintf("%s: FS %s (%s). A load removed changes FS by as much the other way, nearly. Where a line is above zero fill helps and a cut harms.", title(clean(o.Check.Label())), fsDown(o.FS), methodName(o.Method)),
 		"Drained: in the long term. Undrained: at once, the ground taking the load up in pore pressure. The slip is held fixed: with works in place another may govern.",
 	}}
 	foot := footLines(inner, opts, listed)

@@ -224,7 +224,7 @@ func (p *picture) labelSlip(s *sheet) {
 	}
 	g := p.gov
 	n := note{
-		lines:  []string{"FS " + fsDown(g.FS) + " (" + title(g.Method.String()) + ")"},
+		lines:  []string{"FS " + fsDown(g.FS) + " (" + methodName(g.Method) + ")"},
 		font:   bodyFace,
 		colour: slipInk,
 		bold:   true,

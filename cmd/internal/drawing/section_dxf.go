@@ -337,7 +337,7 @@ func (d *board) notes() {
 		if o.Check.Stage {
 			name = "stage: " + name
 		}
-		lines = append(lines, fmt.Sprintf("Slip %d, %s: FS %s (%s), required %s", i+1, name, fsDown(o.FS), title(o.Method.String()), number(o.Check.Required, 2)))
+		lines = append(lines, fmt.Sprintf("Slip %d, %s: FS %s (%s), required %s", i+1, name, fsDown(o.FS), methodName(o.Method), number(o.Check.Required, 2)))
 	}
 	if len(d.sheet.unplaced) > 0 {
 		lines = append(lines, "Also drawn, without room for a label: "+strings.Join(d.sheet.unplaced, "; ")+".")

@@ -22,7 +22,7 @@ const (
 	skyAbove    = 62.0  // kept free above the ground for labels
 	besideFrame = 8.0   // between the ends of the section and the frame
 	blockGap    = 9.0   // between title, frame, key and foot
-	tableWidth  = 262.0
+	tableWidth  = 294.0
 )
 
 // layOut draws the picture on a sheet. Labels that found no room the last time are listed at the foot.
@@ -159,7 +159,7 @@ func quantities(q *remedies.Quantities) string {
 // slipWords describes the governing slip.
 func (p *picture) slipWords() string {
 	g := p.gov
-	out := "Governing slip: FS " + fsDown(g.FS) + " (" + title(g.Method.String()) + "), " + clean(checkName(&g.Check)) + ", required " +
+	out := "Governing slip: FS " + fsDown(g.FS) + " (" + methodName(g.Method) + "), " + clean(checkName(&g.Check)) + ", required " +
 		number(g.Check.Required, 2)
 	if g.Slip.Kind == lem.Circle {
 		return out + "; circle about (" + rounded(g.Slip.Centre.X) + ", " + rounded(g.Slip.Centre.Y) + "), radius " +
@@ -220,7 +220,7 @@ func (p *picture) fsRows() []fsRow {
 			r.name = "stage: " + r.name
 		}
 		if !math.IsNaN(o.FS) {
-			r.fs, r.method = fsDown(o.FS), title(o.Method.String())
+			r.fs, r.method = fsDown(o.FS), methodName(o.Method)
 			switch {
 			case !(o.FS >= o.Check.Required):
 				r.verdict = "below"
@@ -241,7 +241,7 @@ const (
 	columnRequired = 152.0
 	columnFS       = 182.0
 	columnMethod   = 188.0 // left edge
-	columnVerdict  = 226.0 // left edge
+	columnVerdict  = 256.0 // left edge
 )
 
 func (s *sheet) drawTable(rows []fsRow, left, top float64) {
@@ -261,7 +261,7 @@ func (s *sheet) drawTable(rows []fsRow, left, top float64) {
 		put(0, f.fit(clean(r.name), columnRequired-f.width("required")-4))
 		put(columnRequired-f.width(r.required), r.required)
 		put(columnFS-f.width(r.fs), r.fs)
-		put(columnMethod, r.method)
+		put(columnMethod, f.fit(r.method, columnVerdict-columnMethod-4))
 		put(columnVerdict, r.verdict)
 	}
 	headFace := smallFace

@@ -25,7 +25,7 @@ var kept = flag.String("kept", "", "folder to write the files of the tests to")
 // sample is an invented result: a berm, drains with a trench, a what-if without earthworks, and names that no sheet likes.
 func sample() *report.File {
 	before := []report.Point{{0, 58.4}, {26, 58}, {46, 50}, {72, 49.7}}
-	invert := []report.Point{{30, 54}, {46, 48.5}}
+	invert := []report.Point{{30, 54}, {32, 53.2}, {35, 52}, {40, 50}, {43, 49.25}, {46, 48.5}} // Straight but for the point at 40.
 	section := func(ground []report.Point) *report.Section {
 		return &report.Section{GroundBefore: before, Ground: ground, Water: map[string]report.Water{}}
 	}
@@ -44,7 +44,7 @@ func sample() *report.File {
 		Quantities: report.Quantities{Cut: 1.1, Fill: 1.1, Earthworks: 2.2, Import: 1.1, Dispose: 1.1, TrenchDig: 1.1, Stone: 1.1, Drain: 0.25},
 		Section:    section(before),
 	}
-	drains.Section.Water["winter"] = report.Water{Drains: &report.Drains{Invert: invert, Ratio: []float64{0.6, 0.6}}}
+	drains.Section.Water["winter"] = report.Water{Drains: &report.Drains{Invert: invert, Ratio: []float64{0.6, 0.6, 0.6, 0.6, 0.6, 0.6}}}
 	lower := report.Option{Name: "BERM", Title: "lower water", Status: "unresolved", WhatIf: true, Section: section(before)}
 	f.Options = []report.Option{berm, drains, lower}
 	for i := range f.Options {
@@ -53,8 +53,13 @@ func sample() *report.File {
 			total    *float64
 			perMetre float64
 		}{
-			{&t.Cut, q.Cut}, {&t.Fill, q.Fill}, {&t.Earthworks, q.Earthworks}, {&t.Import, q.Import}, {&t.Dispose, q.Dispose},
-			{&t.Drain, q.Drain}, {&t.Strip, q.Strip},
+			{&t.Cut, q.Cut},
+			{&t.Fill, q.Fill},
+			{&t.Earthworks, q.Earthworks},
+			{&t.Import, q.Import},
+			{&t.Dispose, q.Dispose},
+			{&t.Drain, q.Drain},
+			{&t.Strip, q.Strip},
 		} {
 			*c.total = c.perMetre * f.Case.Length
 		}
@@ -268,8 +273,9 @@ func TestSettingOut(t *testing.T) {
 			"offset_m|level_m|existing_level_m|change_m|drain_invert_m|description",
 			"0.000|58.400|58.400|0.000||ground unchanged",
 			"26.000|58.000|58.000|0.000||ground unchanged",
-			"30.000|56.400|56.400|0.000|54.000|ground unchanged",
-			"46.000|50.000|50.000|0.000|48.500|ground unchanged",
+			"30.000|56.400|56.400|0.000|54.000|ground unchanged; drain from here",
+			"40.000|52.400|52.400|0.000|50.000|ground unchanged; change of slope of the drain",
+			"46.000|50.000|50.000|0.000|48.500|ground unchanged; drain to here",
 			"72.000|49.700|49.700|0.000||ground unchanged",
 		}},
 		{"steps", &step, []string{

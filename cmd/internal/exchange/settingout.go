@@ -76,10 +76,25 @@ func millimetres(v float64) string {
 func drainInvert(s *report.Section) []report.Point {
 	for _, name := range slices.Sorted(maps.Keys(s.Water)) {
 		if d := s.Water[name].Drains; d != nil {
-			return d.Invert
+			return straightened(d.Invert)
 		}
 	}
 	return nil
+}
+
+// straightened returns a line without the points that lie on the straight between their neighbours.
+func straightened(line []report.Point) []report.Point {
+	var out []report.Point
+	for i, p := range line {
+		if i > 0 && i+1 < len(line) {
+			a, b := out[len(out)-1], line[i+1]
+			if b[0] > a[0] && math.Abs(a[1]+(b[1]-a[1])*(p[0]-a[0])/(b[0]-a[0])-p[1]) < apart {
+				continue
+			}
+		}
+		out = append(out, p)
+	}
+	return out
 }
 
 // settingOutPoints returns the points of the profile after works, with those of the invert of drains between them.
@@ -102,7 +117,25 @@ func settingOutPoints(s *report.Section, invert []report.Point) []settingOutPoin
 		out = append(out, p)
 	}
 	describe(out, s.Ground)
+	describeDrains(out, invert)
 	return out
+}
+
+// describeDrains adds to the points of the invert of drains what they are.
+func describeDrains(points []settingOutPoint, invert []report.Point) {
+	for i := range points {
+		for k, q := range invert {
+			switch {
+			case q[0] != points[i].x:
+			case k == 0:
+				points[i].what += "; drain from here"
+			case k == len(invert)-1:
+				points[i].what += "; drain to here"
+			default:
+				points[i].what += "; change of slope of the drain"
+			}
+		}
+	}
 }
 
 // withPoint returns the line with a point at x, between those that it has.

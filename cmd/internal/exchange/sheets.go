@@ -166,8 +166,13 @@ func (b *book) summary(pages []*page) {
 		head string
 		row  total
 	}{
-		{"cut, m³", totalCut}, {"fill, m³", totalFill}, {"earthworks, m³", totalEarthworks}, {"brought in, m³", totalImport},
-		{"taken away, m³", totalDispose}, {"drains, m", totalDrain}, {"stripped, m²", totalStrip},
+		{"cut, m³", totalCut},
+		{"fill, m³", totalFill},
+		{"earthworks, m³", totalEarthworks},
+		{"brought in, m³", totalImport},
+		{"taken away, m³", totalDispose},
+		{"drains, m", totalDrain},
+		{"stripped, m²", totalStrip},
 	}
 	var heads []string
 	for _, c := range columns {
