@@ -65,7 +65,6 @@ type Water struct {
 	Drains    *Drains           `json:"drains,omitempty"` // Drains: the pore pressure that the engine used.
 }
 
-// FreeWater stands on the ground up to a level.
 // LineLoad is a force along a line on the ground, for a metre run.
 type LineLoad struct {
 	Name       string  `json:"name"`                // Name.
@@ -83,6 +82,7 @@ type TensionCrack struct {
 	WaterLevel *float64 `json:"water_level_y,omitempty"` // Level of the water, m.
 }
 
+// FreeWater stands on the ground up to a level.
 type FreeWater struct {
 	Level float64 `json:"level"`  // Water level, m.
 	FromX float64 `json:"from_x"` // Left end, m.
