@@ -163,6 +163,19 @@ func TestOutside(t *testing.T) {
 	}
 }
 
+// The reference of outputs names every layer.
+func TestDXFLayersAreDocumented(t *testing.T) {
+	doc, err := os.ReadFile("../../../docs/outputs.md")
+	if err != nil {
+		t.Fatal(err)
+	}
+	for _, l := range dxfLayers {
+		if !bytes.Contains(doc, []byte("`"+l.Name+"`")) {
+			t.Errorf("docs/outputs.md does not name the layer %s", l.Name)
+		}
+	}
+}
+
 func TestDXFIsTheSameEachTime(t *testing.T) {
 	if !bytes.Equal(asDXF(t, cuttingWithBerm()), asDXF(t, cuttingWithBerm())) {
 		t.Error("the bytes differ from run to run")
