@@ -143,7 +143,7 @@ func (d *piped) reach(j *Job, f *slope, p *Proposal, x []float64) (reach, bool) 
 	for _, q := range clipped(firm, from, to) {
 		low, high = math.Min(low, q.Y), math.Max(high, q.Y)
 	}
-	if fall := (high - low) / (to - from); fall > steepestBase {
+	if fall := (high - low) / (to - from); fall > steepestBase+sameLevel {
 		p.geometry(limit, high-low, "the top of %s falls by %.0f %% of its length between the drain and the other end of the slope: flow on it is not level flow, for which %.0f %% is the most", name, 100*fall, 100*steepestBase)
 		return r, false
 	}

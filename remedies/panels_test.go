@@ -108,13 +108,10 @@ func TestThinSoil(t *testing.T) {
 	near(t, "points of the soil itself", s.Undrained.Points[0].Strength, 40, 0)
 }
 
-// TestOpenKeyStory digs the toe of an invented cutting in summer: 3 m wide, 1 m below the toe, with a nearly vertical back. The hole takes
-// the passive ground away and is far from safe in plane strain; in short panels far apart it is nearly as safe as the slope. The numbers
-// are those of one coarse computation by Bishop's method and are indicative only.
-func TestOpenKeyStory(t *testing.T) {
+// storyJob returns an invented cutting in summer, 9 m deep in clay.
+func storyJob() *Job {
 	j := cutting()
-	phi := math.Tan(23 * math.Pi / 180)
-	phi = math.Atan(phi)
+	const phi = 23 * math.Pi / 180
 	j.Section.Ground = lem.Profile{{X: 0, Y: 109.6}, {X: 30, Y: 109}, {X: 52.5, Y: 100}, {X: 75, Y: 99.8}}
 	j.Section.Soils[clay] = lem.Soil{Name: "weathered clay", UnitWeight: 19, Cohesion: 3, Friction: phi}
 	j.Section.Soils[stiffClay] = lem.Soil{Name: "stiff clay", UnitWeight: 19.8, Cohesion: 4, Friction: phi}
@@ -128,6 +125,14 @@ func TestOpenKeyStory(t *testing.T) {
 	j.Section.Loads = []lem.Surcharge{{FromX: 20, ToX: 29, Pressure: 5}}
 	j.Waters = []WaterLine{{Name: "summer", Line: lem.Profile{{X: 0, Y: 105.6}, {X: 22, Y: 105}, {X: 30, Y: 104.2}, {X: 40, Y: 102}, {X: 52.5, Y: 99.2}, {X: 75, Y: 98.6}}}}
 	j.Situations = []Situation{{Name: "summer", Water: 0, RequiredFS: 1.1}}
+	return j
+}
+
+// TestOpenKeyStory digs the toe of an invented cutting in summer: 3 m wide, 1 m below the toe, with a nearly vertical back. The hole takes
+// the passive ground away and is far from safe in plane strain; in short panels far apart it is nearly as safe as the slope. The numbers
+// are those of one coarse computation by Bishop's method and are indicative only.
+func TestOpenKeyStory(t *testing.T) {
+	j := storyJob()
 	p := apply(t, j, request("buttress", fillOf(rockfill), 2, 3, 1.5, 1, 3, 1.5, 0.05, 3, 15))
 	least := map[string]float64{}
 	for _, c := range Checks(j, p) {
