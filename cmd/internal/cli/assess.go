@@ -6,8 +6,6 @@ import (
 	"fmt"
 	"io"
 	"math"
-	"os"
-	"path/filepath"
 	"strings"
 
 	"github.com/spf13/cobra"
@@ -154,14 +152,7 @@ func (o *assessOptions) write(ctx context.Context, path, title string, existing 
 	if folder == "" {
 		folder = "."
 	}
-	if err := os.MkdirAll(folder, 0o777); err != nil {
-		return nil, err
-	}
-	names := outputNames(outputs)
-	for i, name := range names {
-		names[i] = filepath.ToSlash(filepath.Join(folder, name))
-	}
-	return names, writeAmong(ctx, folder, outputs)
+	return writeInto(ctx, folder, outputs)
 }
 
 func (o *assessOptions) print(w io.Writer, file *report.File, found *insight, names []string) error {

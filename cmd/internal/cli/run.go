@@ -59,6 +59,6 @@ A preliminary sizing aid for use by a competent engineer: what it says must be c
 	}
 	root.SetVersionTemplate("standfast {{.Version}}\n")
 	root.SetFlagErrorFunc(explainFlag)
-	root.AddCommand(newCompareCommand(), newAssessCommand(), newDrawCommand(), newNewCommand(), newImportCommand(), newReportCommand(), newVerifyCommand(), newSchemaCommand(), newCompletionCommand())
+	root.AddCommand(newCompareCommand(), newAssessCommand(), newBackanalyseCommand(), newDrawCommand(), newNewCommand(), newImportCommand(), newReportCommand(), newVerifyCommand(), newSchemaCommand(), newCompletionCommand())
 	return root, started
 }

@@ -35,7 +35,7 @@ func plotOf(u remedies.Unknown) backPlot {
 		}}
 	case remedies.PressureRatio:
 		return backPlot{"pore pressure ratio ru", yTitle, func(p *remedies.BackPoint) float64 { return p.Ru }, fs, func(p *remedies.BackPoint) string {
-			return "ru " + number(p.Ru, 3)
+			return fmt.Sprintf("ru %.3f", p.Ru)
 		}}
 	case remedies.StrengthPair:
 	}
@@ -66,8 +66,8 @@ func layOutBack(name, soil string, b *remedies.BackAnalysis, opts Options, liste
 		subject = "Back-analysis of the observed slip: what gives it FS = 1 in " + soil
 	}
 	h := heading{title: name, name: []string{clean(subject)}, lines: []string{
-		fmt.Sprintf("%s method; slip from offset %s to %s, %s deep; %.0f %% of it in this soil. One failure gives one equation: what the water is wrong by, the strength takes up.",
-			title(b.Method.String()), metres(b.From.X), metres(b.To.X), metres(b.Depth), 100*b.Share),
+		fmt.Sprintf("%s method; slip from offset %s m to %s m, %s m deep; %.0f %% of it in this soil. One failure gives one equation: what the water is wrong by, the strength takes up.",
+			methodName(b.Method), rounded(b.From.X), rounded(b.To.X), rounded(b.Depth), 100*b.Share),
 	}}
 	foot := footLines(inner, opts, listed)
 	footHeight := float64(len(foot)) * cautionFace.lineHeight()
