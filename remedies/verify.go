@@ -15,6 +15,34 @@ const (
 	verifySeed   = 0x5eed
 )
 
+// reportedTol is the share by which the FS of a reported slip may differ when it is evaluated again with the default number of slices.
+const reportedTol = 0.003
+
+// Contradict evaluates the reported slip of every check of an option again, by the reported method, and returns the outcomes whose FS is not
+// what the option says, with the FS found now.
+func Contradict(j *Job, o *Option) []Outcome {
+	var out []Outcome
+	var ws lem.Workspace
+	for _, list := range [][]Outcome{o.Situations, o.Stages} {
+		for i := range list {
+			c := list[i]
+			if math.IsNaN(c.FS) {
+				continue
+			}
+			var m lem.Model
+			got := math.NaN()
+			if err := m.Compile(c.Check.Section, &c.Check.Situation); err == nil {
+				got = m.FS(&ws, &c.Slip, lem.Setting{Method: c.Method, Window: j.window()}).F
+			}
+			if !(math.Abs(got-c.FS) <= reportedTol*c.FS) {
+				c.FS = got
+				out = append(out, c)
+			}
+		}
+	}
+	return out
+}
+
 // Refute searches an option anew, from its checks alone: by both parametrisations of slips, with other seeds, four times the trials of a
 // study and finer slices. It returns the outcomes whose FS is below the required FS, and how many searches were made. The option is not
 // changed.

@@ -50,7 +50,7 @@ type verdict struct {
 	Mismatches []mismatch    `json:"mismatches"`
 	Searches   int           `json:"searches"`
 	Refuting   []report.Slip `json:"refuting_slips"`
-	Lines      []string      `json:"-"`
+	Lines      []string      `json:"remarks"`
 }
 
 // mismatch is a witness that does not hold.
@@ -132,7 +132,7 @@ func askedJob(file *report.File, rebuilt *remedies.Job) (*remedies.Job, error) {
 }
 
 func verifyOption(ctx context.Context, asked, rebuilt *remedies.Job, o *remedies.Option, w *report.Witnesses, s remedies.Settings) (verdict, error) {
-	v := verdict{Option: o.Name, Mismatches: []mismatch{}, Refuting: []report.Slip{}}
+	v := verdict{Option: o.Name, Mismatches: []mismatch{}, Refuting: []report.Slip{}, Lines: []string{}}
 	if held, ok := w.Options[o.Name]; ok {
 		window := lem.Window{Direction: asked.Direction, Head: asked.Head, Toe: asked.Exit}
 		pool, designs, err := held.Certificate(window)
@@ -148,6 +148,10 @@ func verifyOption(ctx context.Context, asked, rebuilt *remedies.Job, o *remedies
 			v.Mismatches = append(v.Mismatches, mismatch{m.X, report.Number(m.Said), report.Number(m.Got), m.Why})
 			v.Lines = append(v.Lines, fmt.Sprintf("the witness against x = %v does not hold: %s", m.X, m.Why))
 		}
+	}
+	for _, c := range remedies.Contradict(rebuilt, o) {
+		v.Lines = append(v.Lines, fmt.Sprintf("in %s the reported slip has FS %s (%s) on the reported section, which is not what is reported",
+			c.Check.Label(), report.FactorText(report.Number(c.FS)), c.Method))
 	}
 	if o.Status != remedies.MeetsTarget {
 		return v, nil

@@ -33,7 +33,10 @@ func (b *rebuilder) option(j *remedies.Job, o *Option) remedies.Option {
 		if a.VariantOf != "" {
 			c.Name = a.VariantOf
 		}
-		c.SituationI = situationIndex(j, c.Name)
+		if c.SituationI = situationIndex(j, c.Name); c.SituationI >= 0 {
+			s := &j.Situations[c.SituationI]
+			c.Situation.Undrained, c.Situation.Kh, c.Situation.Kv = s.Undrained, s.Kh, s.Kv
+		}
 		out.Situations = append(out.Situations, b.outcome(c, &a.Found))
 	}
 	for i := range o.Stages {
