@@ -1,6 +1,9 @@
 package lem
 
-import "errors"
+import (
+	"errors"
+	"math"
+)
 
 // Restraint is a row of structural elements, such as piles or nails, that holds back whatever slips across it: a horizontal force against the
 // movement where the slip passes it at X between Bottom and Top. The force acts as it is given, whatever F is, and is not that of the soil: it
@@ -29,24 +32,34 @@ func checkRestraints(rs []Restraint) error {
 
 // restrain adds the forces of the restraints that the slip crosses, and reports whether anything is left that drives it.
 func (m *Model) restrain(ws *Workspace, leftward bool) bool {
-	ss := ws.slice[:ws.n]
 	held := false
 	for _, r := range m.rows {
-		for i := range ss {
-			s := &ss[i]
-			if r.X < s.x-s.b/2 || r.X >= s.x+s.b/2 {
-				continue
-			}
-			fall := s.sin / s.cos
-			if leftward {
-				fall = -fall
-			}
-			if y := s.y - (r.X-s.x)*fall; y >= r.Bottom && y <= r.Top {
-				s.push(-r.Force, y)
-				held = true
-			}
-			break
+		s := m.sliceAt(ws, r.X, leftward)
+		if s == nil {
+			continue
+		}
+		fall := s.sin / s.cos
+		if leftward {
+			fall = -fall
+		}
+		if y := s.y - (r.X-s.x)*fall; y >= r.Bottom && y <= r.Top {
+			s.push(-r.Force, y)
+			held = true
 		}
 	}
 	return !held || ws.driving(leftward) > 0
+}
+
+// sliceAt returns the slice at x; where several meet, as at a vertical step of the ground, which is drawn out, it is the widest, and of equals the
+// uphill one, so that a mirror image has the same. It is nil beyond the slip.
+func (m *Model) sliceAt(ws *Workspace, x float64, leftward bool) *slice {
+	var best *slice
+	near := stepWidth * (m.right - m.left)
+	for i := range ws.n {
+		s := &ws.slice[ws.fromHead(i, leftward)]
+		if math.Abs(x-s.x) <= s.b/2+near && (best == nil || s.b > best.b) {
+			best = s
+		}
+	}
+	return best
 }
