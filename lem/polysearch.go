@@ -125,6 +125,10 @@ func (p *polySearch) try(t *polyTrial) {
 		}
 		p.s.barred++
 	case NotConverged:
+		if !p.s.m.sound(t.nodes, &t.r) { // Its shape alone bars it: it needs no answer.
+			p.s.barred++
+			break
+		}
 		p.s.failed++
 		p.keepLost(t)
 	case Inadmissible:

@@ -27,7 +27,8 @@ func (j *Job) groups(pairs bool) [][]Request {
 				}
 			}
 		}
-		if len(group) > 1 && !(pairs && len(group) == 2 && compatible(group[0], group[1])) {
+		sized := pairs && len(group) == 2 && compatible(group[0], group[1])
+		if len(group) > 1 && !sized {
 			out = append(out, group)
 		}
 	}
