@@ -53,7 +53,7 @@ func (r *run[C]) rankBest() error {
 			if err := r.tightenTop(&queue); err != nil {
 				return err
 			}
-		case top.audited:
+		case top.audited || top.searched && r.s.BestUnaudited:
 			r.acceptBest(top)
 			return nil
 		case top.searched:

@@ -464,3 +464,20 @@ func TestValidation(t *testing.T) {
 		}
 	}
 }
+
+// TestBestMayBeLeftUnaudited checks that the best attempt of an infeasible problem costs no audit when the caller makes it, and that
+// BestSearches bounds its searches apart from FullSearches.
+func TestBestMayBeLeftUnaudited(t *testing.T) {
+	rows := make([][]float64, 20)
+	for i := range rows {
+		rows[i] = []float64{-float64(20 - i), -1}
+	}
+	audited := line(rows...).minimize(t, Settings[int]{BestSearches: 2})
+	left := line(rows...).minimize(t, Settings[int]{BestSearches: 2, BestUnaudited: true})
+	if audited.Status != Infeasible || left.Status != Infeasible || audited.Spent.Audits == 0 {
+		t.Fatalf("%v with %d audits, %v: the case does not show what it should", audited.Status, audited.Spent.Audits, left.Status)
+	}
+	if left.Spent.Audits != 0 || left.Best.Margin != audited.Best.Margin {
+		t.Errorf("%d audits and margin %g left to the caller, want none and %g", left.Spent.Audits, left.Best.Margin, audited.Best.Margin)
+	}
+}

@@ -74,6 +74,8 @@ type Settings[C any] struct {
 	FullSearches int
 	// BestSearches bounds how many designs are searched to find Result.Best when none passes. 0 means FullSearches.
 	BestSearches int
+	// BestUnaudited leaves the audit of Result.Best to the caller: its margin is then that of a search and the whole pool.
+	BestUnaudited bool
 	// Start is the initial pool.
 	Start []C
 	// Progress, when set, is called from the goroutine of Minimize after each piece of work.

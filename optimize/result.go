@@ -47,7 +47,7 @@ type Witness struct {
 	Margin float64 // of the design at the cut; NaN when the design is unresolved
 }
 
-// An Attempt is a design that falls short, searched in full and audited.
+// An Attempt is a design that falls short, searched in full and, unless Settings.BestUnaudited, audited.
 type Attempt[C any] struct {
 	X          []float64
 	Cost       float64

@@ -89,6 +89,9 @@ func (st *study) check(t *Trial) error {
 
 // add files an option and hands it on.
 func (st *study) add(o *Option) {
+	for _, r := range st.j.remarks(o) {
+		o.Proposal.Notes = appendOnce(o.Proposal.Notes, r)
+	}
 	st.options = append(st.options, *o)
 	if st.s.Finished != nil {
 		st.s.Finished(o)
@@ -231,7 +234,12 @@ func (z *sizing) price(p *Proposal, x []float64) (cost, tie float64) {
 
 // minimize runs the optimiser over the lattice of the works.
 func (z *sizing) minimize(ctx context.Context, cost costFunc, start []Cut, tell func(string, float64)) (optimize.Result[Cut], error) {
-	settings := optimize.Settings[Cut]{Workers: z.s.Workers, Seed: z.s.Seed, Allowance: z.s.Allowance, Start: start, BestSearches: bestSearches}
+	settings := optimize.Settings[Cut]{Workers: z.s.Workers, Seed: z.s.Seed, Allowance: z.s.Allowance, Start: start, BestSearches: bestSearches,
+		BestUnaudited: true, // searchBoth audits it.
+	}
+	if z.circlesOnly { // The pool is full already: no exchange.
+		settings.FullSearches, settings.BestSearches = 1, 1
+	}
 	if tell != nil {
 		settings.Progress = func(p optimize.Progress) {
 			tell(z.w.name, float64(p.Done)/math.Max(1, float64(p.Designs)))

@@ -48,6 +48,7 @@ func assess(ctx context.Context, job *Job, s *Settings) (*Job, *Option, error) {
 	}
 	o.Situations, o.Stages = split(all)
 	o.Reason = existingReason(o, s)
+	o.Proposal.Notes = append(o.Proposal.Notes, j.remarks(o)...)
 	return &j, o, nil
 }
 

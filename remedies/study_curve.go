@@ -1,8 +1,10 @@
 package remedies
 
 import (
+	"cmp"
 	"context"
 	"math"
+	"slices"
 
 	"standfast/optimize"
 )
@@ -14,65 +16,104 @@ const (
 	curveMost   = 14 // Points at the most.
 )
 
-// curve sizes an option for a range of required FS. Its points are searched like a sizing but not audited.
+// curve sizes an option for a range of required FS. Its points are searched, circles and non-circular slips, but not audited.
 func (z *sizing) curve(ctx context.Context, o *Option, res *optimize.Result[Cut]) ([]TradeoffPoint, error) {
 	g := o.Governing()
 	if g == nil {
 		return nil, nil
 	}
 	c := newSizing(z.j, z.w, z.s)
-	c.noAudit = true
+	c.noAudit, c.circlesOnly = true, true
 	var out []TradeoffPoint
 	pool := res.Pool
 	for _, shift := range z.shifts() {
 		c.shift = shift
-		r, err := c.minimize(ctx, c.cost, pool, nil)
-		if err != nil {
-			return nil, err
-		}
-		pool = r.Pool
-		point, err := c.point(ctx, &r)
-		if err != nil || point == nil {
+		x, found, err := c.settle(ctx, &pool)
+		if err != nil || x == nil {
 			return out, err
 		}
+		point := c.point(x, found)
 		point.Shift, point.RequiredFS = shift, g.Check.Required+shift
 		point.Reached += point.RequiredFS
 		out = append(out, *point)
-		if r.X == nil { // The most that the remedy can do.
+		if found[0].Margin < z.s.Allowance { // The most that the remedy can do.
 			break
 		}
 	}
 	return out, nil
 }
 
-// point lays out the answer to one shift: the least works that meet it, or the most that the remedy can do; nil if it can do nothing. Its
-// Reached is the least margin over every check.
-func (z *sizing) point(ctx context.Context, r *optimize.Result[Cut]) (*TradeoffPoint, error) {
-	x := r.X
-	if x == nil {
-		x = r.Best.X
+// curveRounds bounds how often a point of a curve is sized again with the non-circular slips found at its answer.
+const curveRounds = 6
+
+// settle sizes the works for the shift in force: against the pool and circles, then against the non-circular slips found at that answer, until
+// the answer stands or the rounds are spent. It returns the answer, or the best there is, with all that was found there in ascending margin; the
+// pool grows.
+func (z *sizing) settle(ctx context.Context, pool *[]Cut) (x []float64, found []optimize.Found[Cut], err error) {
+	for range curveRounds {
+		r, err := z.minimize(ctx, z.cost, *pool, nil)
+		if err != nil {
+			return nil, nil, err
+		}
+		*pool = r.Pool
+		stands := r.X != nil
+		if x = r.X; !stands {
+			if x = r.Best.X; x == nil {
+				return nil, nil, nil
+			}
+		}
+		if found, err = z.searchedFully(ctx, x, *pool); err != nil {
+			return nil, nil, err
+		}
+		if !stands || found[0].Margin >= z.s.Allowance {
+			return x, found, nil
+		}
+		for _, f := range found {
+			if f.Margin < z.s.Allowance {
+				*pool = append(*pool, f.Cut)
+			}
+		}
 	}
-	if x == nil {
-		return nil, nil
+	return x, found, nil
+}
+
+// searchedFully searches a design for slips of every kind, and evaluates those of the pool on it too.
+func (z *sizing) searchedFully(ctx context.Context, x []float64, pool []Cut) ([]optimize.Found[Cut], error) {
+	full := newSizing(z.j, z.w, z.s)
+	full.shift = z.shift
+	d := full.openProposal(z.w.apply(z.j, x))
+	defer d.Close()
+	found, err := d.Search(ctx, optimize.Effort{Seed: 1})
+	if err != nil {
+		return nil, err
 	}
+	for i := range pool {
+		if m := d.Margin(&pool[i]); !math.IsNaN(m) && !math.IsInf(m, 1) {
+			found = append(found, optimize.Found[Cut]{Cut: pool[i], Margin: m})
+		}
+	}
+	slices.SortStableFunc(found, func(a, b optimize.Found[Cut]) int { return cmp.Compare(keyOf(a), keyOf(b)) })
+	return found, nil
+}
+
+// keyOf orders what was found by margin; what has none comes last.
+func keyOf(f optimize.Found[Cut]) float64 {
+	if f.Unresolved || math.IsNaN(f.Margin) {
+		return math.Inf(1)
+	}
+	return f.Margin
+}
+
+// point lays out a design as a point of a curve. Its Reached is the least margin over every check.
+func (z *sizing) point(x []float64, found []optimize.Found[Cut]) *TradeoffPoint {
 	p := z.w.apply(z.j, x)
 	d := z.openProposal(p)
 	defer d.Close()
-	found, low := r.Lowest, r.Best.Margin
-	if r.X != nil {
-		low = found[0].Margin
-	} else {
-		var err error
-		if found, err = d.Search(ctx, optimize.Effort{Seed: 1}); err != nil {
-			return nil, err
-		}
-		found = append(found, r.Best.Binding)
-	}
 	t := &TradeoffPoint{
-		Reached: low, Earthworks: p.Quantities.Earthworks(), Drain: p.Quantities.Drain, Parameters: z.w.values(x), Proposal: p,
+		Reached: found[0].Margin, Earthworks: p.Quantities.Earthworks(), Drain: p.Quantities.Drain, Parameters: z.w.values(x), Proposal: p,
 	}
 	t.Situations, t.Stages = split(d.outcomes(found))
-	return t, nil
+	return t
 }
 
 // shifts returns the shifts of the required FS at which a curve has points, ascending, 0 among them.

@@ -25,6 +25,7 @@ type sizing struct {
 	workers        int
 	shift          float64 // Added to every required FS; 0 but for trade-off curves.
 	noAudit        bool    // Trade-off curves are searched, not audited.
+	circlesOnly    bool    // Searches look at circles only; see settle.
 	existingMargin float64 // Least margin of the slope as it is.
 	models         sync.Pool
 	searches       atomic.Int64 // One search is one check of one design.
@@ -146,7 +147,7 @@ func (d *design) searchAll(ctx context.Context, e optimize.Effort) ([][]optimize
 func (d *design) searchOne(ctx context.Context, i int, e optimize.Effort) ([]optimize.Found[Cut], error) {
 	o := lem.SearchOptions{
 		Slices: d.z.s.Slices, MinDepth: d.z.j.MinDepth, Seed: e.Seed + d.z.s.Seed, Window: d.z.j.window(),
-		Below: d.required(i) + d.z.s.Allowance, Polylines: true,
+		Below: d.required(i) + d.z.s.Allowance, Polylines: !d.z.circlesOnly,
 	}
 	if e.Audit {
 		o.Sampler, o.Effort, o.Slices = lem.ByCentre, auditEffort, auditSlices*d.z.s.Slices

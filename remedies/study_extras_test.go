@@ -3,8 +3,10 @@ package remedies
 import (
 	"context"
 	"math"
+	"strings"
 	"testing"
 
+	"standfast/lem"
 	"standfast/optimize"
 )
 
@@ -97,6 +99,28 @@ func TestObjectiveNeedsRates(t *testing.T) {
 	for _, name := range Objectives() {
 		if o, ok := ParseObjective(name); !ok || o.String() != name {
 			t.Errorf("objective %q does not come back", name)
+		}
+	}
+}
+
+// TestRemarks checks the closed form for a cohesionless face, tan(phi')/tan(beta) (infinite slope), and the warning of a slip that ends at
+// the edge of the section.
+func TestRemarks(t *testing.T) {
+	j := fencedBerm(70)
+	p, err := Apply(j, j.Requests, [][]float64{j.Requests[0].Fixed()})
+	if err != nil {
+		t.Fatal(err)
+	}
+	o := &Option{Proposal: p, Situations: []Outcome{{Check: Check{Name: "high water"}, FS: 1.2, From: lem.Point{X: 1}, To: lem.Point{X: 60}}}}
+	// tan 0.61 rad at 1V:2H: 0.69892 x 2 = 1.39784.
+	want := []string{"section too short: the slip that governs high water ends within 1.60 m", "at 1V:2.0H: FS 1.397 for shallow slips"}
+	got := j.remarks(o)
+	if len(got) != len(want) {
+		t.Fatalf("remarks %q", got)
+	}
+	for i := range want {
+		if !strings.Contains(got[i], want[i]) {
+			t.Errorf("remark %q, want %q in it", got[i], want[i])
 		}
 	}
 }
