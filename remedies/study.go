@@ -234,8 +234,9 @@ func (z *sizing) price(p *Proposal, x []float64) (cost, tie float64) {
 
 // minimize runs the optimiser over the lattice of the works.
 func (z *sizing) minimize(ctx context.Context, cost costFunc, start []Cut, tell func(string, float64)) (optimize.Result[Cut], error) {
-	settings := optimize.Settings[Cut]{Workers: z.s.Workers, Seed: z.s.Seed, Allowance: z.s.Allowance, Start: start, BestSearches: bestSearches,
-		BestUnaudited: true, // searchBoth audits it.
+	settings := optimize.Settings[Cut]{
+		Workers: z.s.Workers, Seed: z.s.Seed, Allowance: z.s.Allowance, Start: start,
+		BestSearches: bestSearches, BestUnaudited: true, // searchBoth audits it.
 	}
 	if z.circlesOnly { // The pool is full already: no exchange.
 		settings.FullSearches, settings.BestSearches = 1, 1
