@@ -7,6 +7,7 @@ import (
 
 	"standfast/cmd/internal/drawing"
 	"standfast/cmd/internal/exchange"
+	"standfast/cmd/internal/pdfreport"
 	"standfast/cmd/internal/report"
 	"standfast/cmd/internal/sheet"
 	"standfast/remedies"
@@ -41,6 +42,7 @@ func deliverables(f *report.File) ([]output, error) {
 		return nil, fmt.Errorf("drawing tradeoff: %w", err)
 	}
 	out = append(out, output{sheet.Name, func(w io.Writer) error { return sheet.Write(w, f) }})
+	out = append(out, output{pdfreport.Name, func(w io.Writer) error { return pdfreport.Write(w, f) }})
 	if len(f.Options) > 0 {
 		out = append(out, output{"quantities.xlsx", func(w io.Writer) error { return exchange.WriteQuantities(w, f) }})
 	}

@@ -66,6 +66,9 @@ func (f face) lineHeight() float64 { return leading * f.size }
 // noBreak is a blank at which no line is broken.
 const noBreak = '\u00a0'
 
+// Printable returns a text with what cannot be set in Liberation Sans replaced, as drawings show it.
+func Printable(s string) string { return clean(s) }
+
 // clean replaces what cannot be set in the font or written to XML, so that a text drawn has the width that was measured.
 func clean(s string) string {
 	var buf sfnt.Buffer

@@ -17,22 +17,35 @@ import (
 	pfont "gonum.org/v1/plot/font"
 )
 
-// pdfFamily is the name under which Liberation Sans is embedded.
-const pdfFamily = "sans"
+// PDFFamily is the name under which Liberation Sans is embedded in a document, upright and bold.
+const PDFFamily = "sans"
 
 // pdfDate stands in every document: a file holds no time, so that the same drawing gives the same bytes.
 var pdfDate = time.Date(2000, 1, 1, 0, 0, 0, 0, time.UTC)
 
-// WritePDF writes the figure as a PDF document of one page, in vectors with its fonts embedded, so that it can be searched in any
-// script that Liberation Sans has; the same figure gives the same bytes. It returns the error of w.
-func (f *Figure) WritePDF(w io.Writer) error {
-	doc := fpdf.NewCustom(&fpdf.InitType{UnitStr: "pt", Size: fpdf.SizeType{Wd: f.Width, Ht: f.Height}})
+// NewPDF returns a document without pages, in points with y down the page, whose pages have a size, points, unless they are given another. It
+// has Liberation Sans as [PDFFamily], no margins, and no time, so that the same contents give the same bytes.
+func NewPDF(width, height float64) *fpdf.Fpdf {
+	doc := fpdf.NewCustom(&fpdf.InitType{UnitStr: "pt", Size: fpdf.SizeType{Wd: width, Ht: height}})
 	doc.SetCreationDate(pdfDate)
 	doc.SetModificationDate(pdfDate)
 	doc.SetCatalogSort(true)
 	doc.SetProducer("standfast", false)
 	doc.SetMargins(0, 0, 0)
 	doc.SetAutoPageBreak(false, 0)
+	addFonts(doc)
+	return doc
+}
+
+func addFonts(doc *fpdf.Fpdf) {
+	doc.AddUTF8FontFromBytes(PDFFamily, "", liberationsansregular.TTF)
+	doc.AddUTF8FontFromBytes(PDFFamily, "B", liberationsansbold.TTF)
+}
+
+// WritePDF writes the figure as a PDF document of one page, in vectors with its fonts embedded, so that it can be searched in any
+// script that Liberation Sans has; the same figure gives the same bytes. It returns the error of w.
+func (f *Figure) WritePDF(w io.Writer) error {
+	doc := NewPDF(f.Width, f.Height)
 	doc.AddPage()
 	f.DrawPDF(doc, 0, 0, 1)
 	if err := doc.Output(w); err != nil {
@@ -42,11 +55,9 @@ func (f *Figure) WritePDF(w io.Writer) error {
 }
 
 // DrawPDF draws the figure on the page in hand, with its upper left corner at (left, top) in the document's unit, scaled. It embeds
-// Liberation Sans in the document as the family "sans" and leaves font, colours and line width as the last mark had them. Errors are kept
-// by the document.
+// Liberation Sans in the document as [PDFFamily] and leaves font, colours and line width to be set anew. Errors are kept by the document.
 func (f *Figure) DrawPDF(doc *fpdf.Fpdf, left, top, scale float64) {
-	doc.AddUTF8FontFromBytes(pdfFamily, "", liberationsansregular.TTF)
-	doc.AddUTF8FontFromBytes(pdfFamily, "B", liberationsansbold.TTF)
+	addFonts(doc)
 	_, height := doc.GetPageSize()
 	k := doc.GetConversionRatio()
 	c := &pdfCanvas{doc: doc, height: height, k: k}
@@ -117,6 +128,9 @@ func (c *pdfCanvas) Pop() {
 	last := len(c.stack) - 1
 	c.state, c.stack = c.stack[last], c.stack[:last]
 	c.doc.TransformEnd()
+	// PDF takes the font back with the rest of the state. fpdf does not know it and would leave out to set the same font again, so it gets another.
+	const noSize = 1.0
+	c.doc.SetFont(PDFFamily, "", noSize)
 }
 
 func (c *pdfCanvas) Stroke(p vg.Path) {
@@ -189,7 +203,7 @@ func (c *pdfCanvas) FillString(f pfont.Face, p vg.Point, s string) {
 	if f.Font.Weight == font.WeightBold {
 		style = "B"
 	}
-	c.doc.SetFont(pdfFamily, style, float64(f.Font.Size))
+	c.doc.SetFont(PDFFamily, style, float64(f.Font.Size))
 	c.doc.SetTextColor(int(c.state.colour.R), int(c.state.colour.G), int(c.state.colour.B))
 	x, y := c.at(p)
 	c.withOpacity(func() { c.doc.Text(x, y, s) })

@@ -65,7 +65,7 @@ func TestDrawPDF(t *testing.T) {
 	doc := fpdf.New("P", "mm", "A4", "")
 	doc.AddPage()
 	f.DrawPDF(doc, 20, 30, 0.5)
-	doc.SetFont(pdfFamily, "", 9)
+	doc.SetFont(PDFFamily, "", 9)
 	doc.Text(20, 20, "before and φ′ after")
 	var b bytes.Buffer
 	if err := doc.Output(&b); err != nil {

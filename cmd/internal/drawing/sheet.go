@@ -9,11 +9,14 @@ import (
 	"standfast/lem"
 )
 
+// Margin is kept free about a drawing, points.
+const Margin = 24.0
+
 // Page measures, points.
 const (
 	pageWidth  = 842.0 // A4 across.
 	pageHeight = 595.0 // A4 across; a sheet grows beyond it only when its texts need more.
-	margin     = 24.0
+	margin     = Margin
 	axisLeft   = 38.0 // Room for the numbers and the title of the level axis.
 	axisBelow  = 30.0
 	tickLength = 3.5

@@ -159,6 +159,15 @@ func layOutTradeoff(name string, curves []curve, target float64, share bool, opt
 	s.drawHeading(h, margin, top, inner)
 	frameTop := top - h.height() - blockGap
 	frame := Box{margin + axisLeft, frameTop - tradeoffFrame, margin + inner, frameTop}
+	s.tradeoff(frame, curves, target, share)
+	for i, l := range foot {
+		s.line(cautionFace, inkGrey, margin, margin+footHeight-float64(i)*cautionFace.lineHeight(), l)
+	}
+	return s
+}
+
+// tradeoff draws the curves with their axes in a frame.
+func (s *sheet) tradeoff(frame Box, curves []curve, target float64, share bool) {
 	s.view = tradeoffView(frame, curves, target)
 	s.place.area = frame.grown(-3)
 	s.drawCurves(curves, target, share)
@@ -167,8 +176,29 @@ func layOutTradeoff(name string, curves []curve, target float64, share bool, opt
 		yTitle = "FS reached / FS required"
 	}
 	s.axes("earthworks, m³ per metre run", yTitle, 0, s.view.x0+frame.width()/s.view.sx)
+}
+
+// TradeoffPlot draws the curves of [Tradeoff] alone, for the page of a report, in a size of points; names of curves that find no room stand below
+// them. It returns ErrNothingToDraw if no option has a curve.
+func TradeoffPlot(options []remedies.Option, width, height float64) (*Figure, error) {
+	curves, target, share := gatherCurves(options)
+	if len(curves) == 0 {
+		return nil, fmt.Errorf("trade-off: %w", ErrNothingToDraw)
+	}
+	s := layOutPlot(curves, target, share, width, height, nil)
+	if len(s.unplaced) > 0 {
+		s = layOutPlot(curves, target, share, width, height, smallFace.wrap(clean("Without room for a label: "+strings.Join(s.unplaced, "; ")+"."), width, 4))
+	}
+	return &s.fig, nil
+}
+
+func layOutPlot(curves []curve, target float64, share bool, width, height float64, foot []string) *sheet {
+	s := &sheet{fig: Figure{Width: width, Height: height}}
+	line := smallFace.lineHeight()
+	below := float64(len(foot)) * line
+	s.tradeoff(Box{axisLeft, axisBelow + below, width - 1, height - 1}, curves, target, share)
 	for i, l := range foot {
-		s.line(cautionFace, inkGrey, margin, margin+footHeight-float64(i)*cautionFace.lineHeight(), l)
+		s.line(smallFace, inkGrey, 0, below-float64(i)*line, l)
 	}
 	return s
 }

@@ -111,35 +111,70 @@ var sliceLegend = []string{
 func (p *printer) slices(t *SliceTable) {
 	d := &t.Detail
 	p.heading(fmt.Sprintf("Slices of the critical slip: %s, %s, %d slices", t.Situation, d.Setting.Method, len(d.Slices)))
-	columns := []column{{head: "no.", right: true}}
-	shown := t.shown()
-	for _, c := range shown {
-		columns = append(columns, column{head: c.title(), right: true})
+	head, rows := t.Rows()
+	p.numbers(head, rows, 1)
+	for _, l := range t.Closing() {
+		p.line(l)
 	}
-	var rows []table.Row
-	for i := range d.Slices {
-		s := &d.Slices[i]
-		row := table.Row{i + 1}
-		for _, c := range shown {
-			row = append(row, strconv.FormatFloat(c.of(s), 'f', c.decimals, 64))
+	if head, rows := t.Sides(); len(rows) > 0 {
+		p.line("")
+		p.line("Between slices, from left to right:")
+		p.numbers(head, rows, 0)
+	}
+}
+
+// numbers prints a table of numbers whose last columns are words.
+func (p *printer) numbers(head []string, cells [][]string, words int) {
+	columns := make([]column, len(head))
+	for i, h := range head {
+		columns[i] = column{head: h, right: i < len(head)-words}
+	}
+	rows := make([]table.Row, len(cells))
+	for i, c := range cells {
+		for _, s := range c {
+			rows[i] = append(rows[i], s)
 		}
-		rows = append(rows, append(row, t.Soils[s.Soil]))
 	}
-	sums := table.Row{"sum"}
+	p.table(columns, rows)
+}
+
+// Rows returns the slice table as text: heads with the unit on a second line, a row a slice with its soil last, then the sums. Columns that
+// are zero throughout are left out.
+func (t *SliceTable) Rows() (head []string, rows [][]string) {
+	d := &t.Detail
+	shown := t.shown()
+	head = []string{"no."}
+	sums := []string{"sum"}
 	for _, c := range shown {
+		head = append(head, c.title())
 		cell := ""
 		if c.summed {
 			cell = strconv.FormatFloat(c.sum(d.Slices), 'f', c.decimals, 64)
 		}
 		sums = append(sums, cell)
 	}
-	p.table(append(columns, column{head: "soil at the base"}), append(rows, append(sums, "")))
-	p.line(t.closing())
-	if s := slipText(d); s != "" {
-		p.line(s)
+	for i := range d.Slices {
+		s := &d.Slices[i]
+		row := []string{strconv.Itoa(i + 1)}
+		for _, c := range shown {
+			row = append(row, strconv.FormatFloat(c.of(s), 'f', c.decimals, 64))
+		}
+		rows = append(rows, append(row, t.Soils[s.Soil]))
 	}
-	p.interfaces(d)
+	return append(head, "soil at the base"), append(rows, append(sums, ""))
 }
+
+// Closing returns F from the sums, and what else a checker needs: the centre of a circle is printed with the critical slips.
+func (t *SliceTable) Closing() []string {
+	out := []string{t.closing()}
+	if s := slipText(&t.Detail); s != "" {
+		out = append(out, s)
+	}
+	return out
+}
+
+// SliceLegend explains the symbols and the equations of slice tables.
+func SliceLegend() []string { return append([]string{}, sliceLegend...) }
 
 // closing is F from the sums.
 func (t *SliceTable) closing() string {
@@ -154,7 +189,7 @@ func (t *SliceTable) closing() string {
 	return fmt.Sprintf("F = %s%.3f/%.3f = %s; from the method: %s", factor, d.Resisting, d.Driving, FactorText(Number(f)), FactorText(Number(d.Result.F)))
 }
 
-// slipText says what else a checker needs: the centre of a circle is printed with the critical slips.
+// slipText tells lambda, the least m-alpha and the verdict, as far as the method has them.
 func slipText(d *lem.Detail) string {
 	switch d.Setting.Method {
 	case lem.Spencer, lem.MorgensternPrice:
@@ -166,30 +201,20 @@ func slipText(d *lem.Detail) string {
 	return ""
 }
 
-// interfaces prints the forces between slices, where the method has any.
-func (p *printer) interfaces(d *lem.Detail) {
-	if len(d.Interfaces) == 0 {
-		return
-	}
-	p.line("")
-	p.line("Between slices, from left to right:")
-	var rows []table.Row
-	for i := range d.Interfaces {
-		k := &d.Interfaces[i]
+// Sides returns the forces between slices as text, from left to right; no rows where the method has none.
+func (t *SliceTable) Sides() (head []string, rows [][]string) {
+	for i := range t.Detail.Interfaces {
+		k := &t.Detail.Interfaces[i]
 		thrust := unknown
 		if !math.IsNaN(k.Thrust) {
 			thrust = fmt.Sprintf("%.2f", k.Thrust)
 		}
-		rows = append(rows, table.Row{
-			i, fmt.Sprintf("%.2f", k.X), fmt.Sprintf("%.2f", k.Base), fmt.Sprintf("%.2f", k.Ground), fmt.Sprintf("%.4f", k.Side),
+		rows = append(rows, []string{
+			strconv.Itoa(i), fmt.Sprintf("%.2f", k.X), fmt.Sprintf("%.2f", k.Base), fmt.Sprintf("%.2f", k.Ground), fmt.Sprintf("%.4f", k.Side),
 			fmt.Sprintf("%.2f", k.E), fmt.Sprintf("%.2f", k.Shear), thrust,
 		})
 	}
-	var columns []column
-	for _, h := range []string{"right of", "x\nm", "base\nm", "ground\nm", "f", "E\nkN", "X\nkN", "thrust\nm"} {
-		columns = append(columns, column{head: h, right: true})
-	}
-	p.table(columns, rows)
+	return []string{"right of", "x\nm", "base\nm", "ground\nm", "f", "E\nkN", "X\nkN", "thrust\nm"}, rows
 }
 
 // csvDigits are the significant digits of numbers in the CSV file.

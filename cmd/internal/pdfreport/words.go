@@ -1,0 +1,132 @@
+package pdfreport
+
+import (
+	"fmt"
+	"slices"
+	"strings"
+
+	"standfast/cmd/internal/report"
+	"standfast/lem"
+)
+
+// meetsTarget is the status of an option that meets the target.
+const meetsTarget = "meets target"
+
+// none stands where there is nothing to say.
+const none = "–"
+
+// at writes a point as offset and level.
+func at(p report.Point) string { return fmt.Sprintf("(%.2f, %.2f)", p[0], p[1]) }
+
+// line writes the points of a line.
+func line(ps []report.Point) string {
+	out := make([]string, len(ps))
+	for i, p := range ps {
+		out[i] = "(" + report.SizeText(p[0]) + ", " + report.SizeText(p[1]) + ")"
+	}
+	return strings.Join(out, " ")
+}
+
+// cubic writes cubic metres as printers do.
+func cubic(s string) string { return strings.ReplaceAll(s, " m3", " m³") }
+
+// sentence gives a text a capital and a full stop.
+func sentence(s string) string {
+	if s == "" {
+		return ""
+	}
+	s = strings.ToUpper(s[:1]) + s[1:]
+	if !strings.HasSuffix(s, ".") {
+		s += "."
+	}
+	return cubic(s)
+}
+
+// title gives a text a capital.
+func title(s string) string {
+	if s == "" {
+		return s
+	}
+	return strings.ToUpper(s[:1]) + s[1:]
+}
+
+// method spells a method of slices as people do.
+func method(name string) string {
+	switch name {
+	case "":
+		return none
+	case lem.MorgensternPrice.String():
+		return "Morgenstern-Price"
+	case lem.Janbu.String():
+		return "Janbu with f0"
+	case lem.JanbuPlain.String():
+		return "Janbu"
+	}
+	return title(name)
+}
+
+// required writes a required FS; a check of which nothing is asked has none.
+func required(fs float64) string {
+	if fs == 0 {
+		return none
+	}
+	s := report.RequiredText(report.Number(fs))
+	return strings.TrimSuffix(s, "0")
+}
+
+// factor writes an FS, or that there is none.
+func factor(fs report.Number) string {
+	if !fs.Known() {
+		return "none"
+	}
+	return report.FactorText(fs)
+}
+
+// verdict says what an answer comes to, and in which ink.
+func verdict(a *report.Found, required float64) (string, colour) {
+	switch {
+	case !a.FS.Known():
+		return "no slip converged", inkBad
+	case required == 0:
+		return "told only", ink
+	case float64(a.FS) < required:
+		return "below", inkBad
+	case !a.Resolved:
+		return "unresolved", inkBad
+	}
+	return "meets", inkGood
+}
+
+// methodsOf returns the methods that answered in any of the checks, in the engine's order.
+func methodsOf(found []*report.Found) []string {
+	var out []string
+	for _, m := range lem.Methods() {
+		if slices.ContainsFunc(found, func(a *report.Found) bool { _, ok := a.FSByMethod[m.String()]; return ok }) {
+			out = append(out, m.String())
+		}
+	}
+	return out
+}
+
+// strength says which soils act undrained.
+func strength(s report.Strength, order []string) string {
+	var undrained []string
+	for _, name := range order {
+		if s.Of(name) == "undrained" {
+			undrained = append(undrained, name)
+		}
+	}
+	switch {
+	case len(undrained) == 0:
+		return "drained"
+	case len(undrained) == len(order):
+		return "undrained"
+	}
+	return "undrained in " + strings.Join(undrained, ", ") + "; drained elsewhere"
+}
+
+// unbroken keeps a text on one line.
+func unbroken(s string) string { return strings.ReplaceAll(s, " ", noBreak) }
+
+// dimension is the name of a parameter in words.
+func dimension(name string) string { return strings.ReplaceAll(name, "_", " ") }
