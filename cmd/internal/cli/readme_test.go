@@ -7,6 +7,10 @@ import (
 	"path/filepath"
 	"strings"
 	"testing"
+
+	"standfast/cmd/internal/drawing"
+	"standfast/cmd/internal/report"
+	"standfast/remedies"
 )
 
 // elision stands in the README's session for lines left out.
@@ -42,6 +46,7 @@ func TestReadmeSession(t *testing.T) {
 	if code := run(context.Background(), args, nil, &stdout, &stderr); code != exitOK {
 		t.Fatalf("exit code %d: %s", code, &stderr)
 	}
+	labelsHaveRoom(t, filepath.Join(dir, caseName(args[1])+"-works"))
 	at := 0
 	got := strings.Split(strings.TrimRight(stdout.String(), "\n"), "\n")
 	skipping := false
@@ -61,4 +66,59 @@ func TestReadmeSession(t *testing.T) {
 	if at < len(got) && !skipping {
 		t.Fatalf("the session ends before the program does, which goes on:\n%s", strings.Join(got[at:], "\n"))
 	}
+}
+
+// labelsHaveRoom checks that no two labels of any drawing of a finished comparison overlap, and that none leaves its page.
+func labelsHaveRoom(t *testing.T, folder string) {
+	t.Helper()
+	file, err := report.Read(filepath.Join(folder, resultName))
+	if err != nil {
+		t.Fatal(err)
+	}
+	result, err := report.Rebuild(file)
+	if err != nil {
+		t.Fatal(err)
+	}
+	options := append([]remedies.Option{result.Existing}, result.Options...)
+	for i := range options {
+		f, err := drawing.Section(result.Job, &options[i], drawing.Options{})
+		if err != nil {
+			t.Fatal(err)
+		}
+		figureHasRoom(t, options[i].Name, f)
+	}
+	f, err := drawing.Tradeoff(result.Job.Title, result.Options, drawing.Options{})
+	if err != nil {
+		t.Fatal(err)
+	}
+	figureHasRoom(t, "trade-off", f)
+}
+
+func figureHasRoom(t *testing.T, name string, f *drawing.Figure) {
+	t.Helper()
+	if len(f.Labels) < 10 {
+		t.Errorf("%s: %d labels only", name, len(f.Labels))
+	}
+	for i, a := range f.Labels {
+		if !a.Box.Within(f.Page()) {
+			t.Errorf("%s: %q leaves the page", name, a.Text)
+		}
+		for _, b := range f.Labels[:i] {
+			if a.Box.Overlaps(b.Box) {
+				t.Errorf("%s: %q and %q overlap", name, a.Text, b.Text)
+			}
+		}
+	}
+}
+
+// TestDrawingsOfTheEmbankment looks at the labels of the other demo's drawings.
+func TestDrawingsOfTheEmbankment(t *testing.T) {
+	if os.Getenv("STANDFAST_LONG") == "" {
+		t.Skip("STANDFAST_LONG=1 sizes the embankment demo for it")
+	}
+	out := filepath.Join(t.TempDir(), "works")
+	if code := compareTo(t.Context(), t, filepath.Join(demoFolder, "embankment.yaml"), out); code != exitOK {
+		t.Fatalf("exit code %d", code)
+	}
+	labelsHaveRoom(t, out)
 }
