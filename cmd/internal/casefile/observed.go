@@ -65,10 +65,8 @@ func (b *builder) slipLine(v value) (lem.Profile, bool) {
 		b.addFault(v, "", "the slip lies beyond the ground, which runs from x = %s to %s", figure(g.Left()), figure(g.Right()))
 		return line, false
 	}
-	for _, p := range line {
-		if p.Y < g.At(p.X) {
-			return line, true
-		}
+	if passesBelow(line, g) {
+		return line, true
 	}
 	b.addFault(v, "", "no point of the slip lies below the ground")
 	return line, false

@@ -124,6 +124,7 @@ func writeWaters(say func(string, ...any), waters []NamedLine) {
 	}
 	say("# What the slope must stand. All of them bind at once.")
 	say("situations:")
+	titles := map[string]bool{}
 	for _, name := range names {
 		title := name + " water"
 		if strings.Contains(strings.ToLower(name), "water") {
@@ -132,7 +133,7 @@ func writeWaters(say func(string, ...any), waters []NamedLine) {
 		if len(waters) == 0 {
 			title = "dry"
 		}
-		say("  - name: %s", scalar(plainName(title, "situation")))
+		say("  - name: %s", scalar(free(plainName(title, "situation"), titles)))
 		say("    water: %s", scalar(name))
 		say("    required_fs:")
 	}

@@ -7,11 +7,11 @@ import (
 	"standfast/remedies"
 )
 
-// readWorks fills the remedies to size and the trials.
+// readWorks fills the remedies to size, alone and together, and the trials.
 func (b *builder) readWorks(root value) {
-	toSize, trials := b.get(root, "remedies"), b.get(root, "trials")
+	toSize, trials, together := b.get(root, "remedies"), b.get(root, "trials"), b.get(root, "combinations")
 	if b.finished {
-		for _, v := range []value{toSize, trials} {
+		for _, v := range []value{toSize, trials, together} {
 			if v.there() {
 				b.addFault(v, "take it out, or `ground_before` and `placed` if this is the slope as it is", "a proposed section, with `ground_before`, is only assessed")
 			}
@@ -24,8 +24,12 @@ func (b *builder) readWorks(root value) {
 		}
 	}
 	b.readTrials(trials)
+	b.readCombinations(together)
 	if len(b.faults) == 0 {
 		b.tryWorks(toSize, trials)
+	}
+	if len(b.faults) == 0 {
+		b.tryCombinations(together)
 	}
 }
 

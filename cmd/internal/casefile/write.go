@@ -49,6 +49,7 @@ func (c *Case) Proposed(o *remedies.Option) ([]byte, error) {
 	m.put("surcharges", w.surcharges())
 	m.put("line_loads", w.lineLoads())
 	m.put("restraints", w.restraints())
+	m.put("known_slips", w.knownSlips())
 	m.put("situations", situations)
 	m.put("limits", w.limits())
 	m.put("slips", w.slips())

@@ -136,3 +136,16 @@ func TestFeatureLoadsAndCrack(t *testing.T) {
 		t.Errorf("the slip ends in a crack %.3f m deep", slip.Crack)
 	}
 }
+
+// TestFeatureKnownSlip: a surface with residual strength lowers FS, is in the file, and with the strength of the soil changes next to nothing.
+func TestFeatureKnownSlip(t *testing.T) {
+	const known = "cohesion: 0, friction: 13"
+	weak, f := assessed(t, "known.yaml")
+	strong, _ := assessed(t, "known.yaml", known, "cohesion: 5, friction: 24")
+	if !(weak["dry ground"] < strong["dry ground"]-0.05) {
+		t.Errorf("FS %.4f with the known slip, %.4f with the soil's strength on it", weak["dry ground"], strong["dry ground"])
+	}
+	if k := f.Existing.Section.Known; len(k) != 1 || len(k[0].Line) != 5 || k[0].Cohesion != 0 || k[0].Friction != 13 {
+		t.Errorf("known slips in the file: %+v", k)
+	}
+}

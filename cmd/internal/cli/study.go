@@ -154,6 +154,9 @@ func applyOnly(j *remedies.Job, only []string) error {
 	}
 	j.Requests = slices.DeleteFunc(j.Requests, func(r remedies.Request) bool { return !slices.Contains(only, r.Kind) })
 	j.Trials = slices.DeleteFunc(j.Trials, func(t remedies.Trial) bool { return !slices.Contains(only, t.Name) })
+	j.Combinations = slices.DeleteFunc(j.Combinations, func(names []string) bool {
+		return slices.ContainsFunc(names, func(n string) bool { return !slices.Contains(only, n) })
+	})
 	return nil
 }
 

@@ -35,6 +35,9 @@ func (b *builder) section(s *lem.Section) *Section {
 	for _, r := range s.Restraints {
 		out.Restraints = append(out.Restraints, Restraint(r))
 	}
+	for _, k := range s.Known {
+		out.Known = append(out.Known, KnownSlip{Line: points(k.Line), Cohesion: k.Cohesion, Friction: degrees(k.Friction)})
+	}
 	out.Crack = crackOf(s.Crack)
 	if n := len(b.soils); len(s.Soils) > n {
 		own := builder{job: &remedies.Job{Section: lem.Section{Soils: s.Soils[n:]}}, soils: soilNames(s.Soils[n:])}

@@ -12,6 +12,7 @@ type Section struct {
 	LineLoads    []LineLoad       `json:"line_loads,omitempty"`    // Permanent forces along lines on the ground.
 	Restraints   []Restraint      `json:"restraints,omitempty"`    // Rows of structural elements that hold slips back.
 	Crack        *TensionCrack    `json:"tension_crack,omitempty"` // Tension crack at the head of every slip.
+	Known        []KnownSlip      `json:"known_slips,omitempty"`   // Slip surfaces that exist already.
 	FirmBase     []Point          `json:"firm_base,omitempty"`     // Line below which no slip passes.
 	Water        map[string]Water `json:"water"`                   // By name of the situation or stage.
 	// Soils of this section alone, by name: what is left, as a mean over the length, of ground that a hole in panels takes away.
@@ -71,6 +72,14 @@ type LineLoad struct {
 	X          float64 `json:"x"`                   // Where it acts, m.
 	Vertical   float64 `json:"vertical_kN_per_m"`   // Downward force, kN/m.
 	Horizontal float64 `json:"horizontal_kN_per_m"` // Force to the right, kN/m.
+}
+
+// KnownSlip is a slip surface that exists already: a slip that runs along it finds there this strength in place of the soil's, with the pore
+// pressure of the soil, and that of the water line where the soil acts undrained.
+type KnownSlip struct {
+	Line     []Point `json:"line"`               // From left to right; it ends where its points end.
+	Cohesion float64 `json:"cohesion_kPa"`       // Residual cohesion, kPa.
+	Friction float64 `json:"friction_angle_deg"` // Residual angle of friction, degrees.
 }
 
 // TensionCrack is a vertical crack: coming from its head, a slip ends where it first passes below the bottom of the crack, and a slip that never

@@ -41,6 +41,9 @@ func (b *rebuilder) section(s *Section) lem.Section {
 	for _, r := range s.Restraints {
 		out.Restraints = append(out.Restraints, lem.Restraint(r))
 	}
+	for _, k := range s.Known {
+		out.Known = append(out.Known, lem.KnownSlip{Line: b.line(k.Line), Cohesion: k.Cohesion, Friction: k.Friction * math.Pi / 180})
+	}
 	if k := s.Crack; k != nil {
 		out.Crack = &lem.TensionCrack{Depth: k.Depth, Line: b.line(k.Line), WaterShare: k.WaterShare}
 		if k.WaterLevel != nil {
