@@ -31,6 +31,8 @@ func New(r *remedies.Result, src Source) *File {
 		SoilOrder:     list(b.soils),
 		WaterLines:    b.waterLines(),
 		Limits:        limitsOf(&r.Job.Limits),
+		OnSite:        b.onSite(),
+		Economics:     b.economics(),
 		StageSettings: b.stageSettings(),
 		Options:       make([]Option, 0, len(r.Options)),
 		Cautions:      Cautions(),
@@ -67,7 +69,7 @@ func list(s []string) []string { return append(make([]string, 0, len(s)), s...) 
 
 func settingsOf(r *remedies.Result, overrides []string) Settings {
 	s := Settings{
-		Seed: r.Settings.Seed, DepthOfInterest: r.Job.MinDepth, Allowance: r.Settings.Allowance, Slices: r.Settings.Slices,
+		Objective: r.Job.Objective.String(), Seed: r.Settings.Seed, DepthOfInterest: r.Job.MinDepth, Allowance: r.Settings.Allowance, Slices: r.Settings.Slices,
 		GammaW: lem.GammaW, Direction: directionName(r.Job.Direction),
 		SearchRanges: SearchRanges{Head: rangeOf(r.Job.Head), Exit: rangeOf(r.Job.Exit)}, Overrides: list(overrides),
 	}

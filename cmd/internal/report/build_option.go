@@ -28,6 +28,7 @@ func (b *builder) option(o *remedies.Option) Option {
 	for _, t := range o.Tradeoff {
 		out.Tradeoff = append(out.Tradeoff, b.tradePoint(&t))
 	}
+	out.Relaxations, out.Sensitivity = relaxationsOf(o.Relaxations), barsOf(o.Sensitivity)
 	out.Certificate = certificateOf(o)
 	b.addProposal(&out, o)
 	b.addAnswers(&out, o)
@@ -60,8 +61,11 @@ func (b *builder) addProposal(out *Option, o *remedies.Option) {
 		out.Broken = append(out.Broken, Limit{Name: v.Limit, Detail: v.Detail, By: v.By})
 	}
 	out.NotChecked, out.Notes = list(p.NotChecked), list(p.Notes)
-	out.Quantities = b.quantities(&p.Quantities)
-	out.Totals = totalsOf(&out.Quantities, b.job.Length)
+	bill := remedies.BillOf(b.job, &p.Quantities)
+	out.Quantities = b.quantities(&p.Quantities, &bill)
+	out.Totals = totalsOf(&out.Quantities, &bill)
+	out.Bill = b.bill(&bill)
+	out.HandChecks = handChecksOf(p.HandChecks)
 	out.Section = b.section(&p.Section)
 	out.Measured = dimensionsOf(p.Dimensions)
 	for _, c := range remedies.Checks(b.job, p) {
@@ -71,11 +75,21 @@ func (b *builder) addProposal(out *Option, o *remedies.Option) {
 	}
 }
 
-func (b *builder) quantities(q *remedies.Quantities) Quantities {
+func (b *builder) quantities(q *remedies.Quantities, bill *remedies.Bill) Quantities {
 	return Quantities{
-		Cut: q.TotalCut(), Fill: q.TotalFill(), Earthworks: q.Earthworks(), Import: q.TotalFill(), Dispose: q.TotalCut(),
-		Drain: q.Drain, Strip: q.Strip, TrenchDig: q.TrenchDig, Stone: q.Stone, CutBySoil: b.bySoil(q.Cut), FillBySoil: b.bySoil(q.Fill),
+		Cut: q.TotalCut(), Fill: q.TotalFill(), Earthworks: q.Earthworks(), Import: total(bill.Balance.Import) + q.Stone,
+		Dispose: total(bill.Balance.Dispose), Drain: q.Drain, Strip: q.Strip, TrenchDig: q.TrenchDig, Stone: q.Stone,
+		CutBySoil: b.bySoil(q.Cut), FillBySoil: b.bySoil(q.Fill), DigBySoil: b.bySoil(q.Dig), Topsoil: b.bySoil(q.Topsoil),
+		FillBase: b.bySoil(q.FillBase), FaceRun: q.FaceRun, Drilled: q.Drilled, Piped: q.Piped, Elements: q.Elements, ElementsM: q.ElementsM,
 	}
+}
+
+func total(volumes []float64) float64 {
+	sum := 0.0
+	for _, v := range volumes {
+		sum += v
+	}
+	return sum
 }
 
 // bySoil names the volumes that are not 0.
@@ -89,19 +103,26 @@ func (b *builder) bySoil(volumes []float64) map[string]float64 {
 	return out
 }
 
-func totalsOf(q *Quantities, length float64) Totals {
+// tonne is the mass of a tonne, kg.
+const tonne = 1000
+
+func totalsOf(q *Quantities, bill *remedies.Bill) Totals {
+	length := bill.Length
 	return Totals{
 		Cut: q.Cut * length, Fill: q.Fill * length, Earthworks: q.Earthworks * length, Import: q.Import * length,
 		Dispose: q.Dispose * length, Drain: q.Drain * length, Strip: q.Strip * length,
+		Loads: ifKnown(bill.Loads), Cost: ifKnown(bill.Cost), Carbon: ifKnown(bill.Carbon / tonne),
 	}
 }
 
 // tradePoint lays out one point of a curve.
 func (b *builder) tradePoint(t *remedies.TradeoffPoint) TradePoint {
 	s := b.section(&t.Proposal.Section)
+	bill := remedies.BillOf(b.job, &t.Proposal.Quantities)
 	out := TradePoint{
+		Cost: ifKnown(bill.Cost), Carbon: ifKnown(bill.Carbon / tonne), Loads: ifKnown(bill.Loads),
 		RequiredFS: Number(t.RequiredFS), Shift: t.Shift, ReachedFS: Number(t.Reached), Earthworks: Number(t.Earthworks),
-		Parameters: parametersOf(t.Parameters), Quantities: b.quantities(&t.Proposal.Quantities), Ground: s.Ground, Placed: s.Placed,
+		Parameters: parametersOf(t.Parameters), Quantities: b.quantities(&t.Proposal.Quantities, &bill), Ground: s.Ground, Placed: s.Placed,
 		Water: map[string]Water{}, Checks: make([]Answer, 0, len(t.Situations)+len(t.Stages)),
 	}
 	for _, list := range [][]remedies.Outcome{t.Situations, t.Stages} {
@@ -136,6 +157,9 @@ func (b *builder) addAnswers(out *Option, o *remedies.Option) {
 		st := Stage{
 			Name: c.Label(), Order: i + 1, RequiredFS: c.Required, Strength: strengthOf(b.soils, c.Situation.Undrained),
 			Kh: c.Situation.Kh, Found: found(s), Section: b.section(c.Section),
+		}
+		if c.Advisory {
+			st.Advisory, st.Says = true, remedies.HoleText(s.FS)
 		}
 		st.Section.Water[st.Name] = water(&c.Situation.Water, c.Section.Soils)
 		out.Stages = append(out.Stages, st)

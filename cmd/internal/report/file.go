@@ -13,6 +13,8 @@ type File struct {
 	SoilOrder  []string        `json:"soil_order"`                                  // Names of the soils in the order of the case.
 	WaterLines []WaterLine     `json:"water_lines"`                                 // Piezometric lines before works.
 	Limits     SiteLimits      `json:"limits"`                                      // Limits of the works.
+	OnSite     []OnSiteFill    `json:"on_site_fill"`                                // Material of the site that may serve as fill.
+	Economics  Economics       `json:"economics"`                                   // Rates and factors of the user's own.
 	// What every construction stage must stand; null: the case has no stage settings and stages were not checked.
 	StageSettings *StageSettings `json:"stage_settings" jsonschema:"nullable"`
 	Situations    []Situation    `json:"situations"` // Design situations, with the variants that single options add.
@@ -44,6 +46,8 @@ type Program struct {
 
 // Settings are the settings in force.
 type Settings struct {
+	// What sizings make least: "earthworks", m3 per metre run, or "cost" or "carbon" (kg) for the whole length.
+	Objective       string       `json:"objective" jsonschema:"enum=earthworks,enum=cost,enum=carbon"`
 	Seed            uint64       `json:"seed"`                                                    // Of the searches.
 	DepthOfInterest float64      `json:"depth_of_interest_m"`                                     // Slips nowhere deeper below ground than this are left out, m.
 	Allowance       float64      `json:"search_allowance"`                                        // FS by which an answer exceeds the requirement, for the search being finite.
@@ -135,10 +139,14 @@ type Option struct {
 	Measured   []Dimension          `json:"dimensions"`      // What a drawing of the works dimensions.
 	Quantities Quantities           `json:"quantities"`      // Per metre run of the works.
 	Totals     Totals               `json:"totals"`          // For the whole length of the works.
+	Bill       []BillItem           `json:"bill"`            // The works by kind and soil, measured, and priced where there are rates.
 
 	Situations  []Answer     `json:"situations"`                        // Answers to the design situations; a variant follows its situation.
 	Stages      []Stage      `json:"stages"`                            // Answers to the construction stages.
 	StepLess    []StepLess   `json:"step_less"`                         // Why one step less of each parameter fails.
+	Relaxations []Relaxation `json:"relaxations"`                       // What moving a limit that forbids a cheaper design would save.
+	Sensitivity []Bar        `json:"sensitivity"`                       // How the least FS swings with the inputs.
+	HandChecks  []HandCheck  `json:"hand_checks"`                       // Closed forms told beside the checks.
 	NotChecked  []string     `json:"not_checked"`                       // Checks that could not be made, with the reason.
 	Notes       []string     `json:"notes"`                             // What the works changed besides, such as a water line cut down to the new ground.
 	Certificate *Certificate `json:"certificate" jsonschema:"nullable"` // What the answer rests on; null if nothing was sized.
@@ -161,17 +169,25 @@ type Parameter struct {
 
 // Quantities are amounts per metre run: cut is bank volume, fill compacted volume, never netted.
 type Quantities struct {
-	Cut        float64            `json:"cut_m3_per_m"`          // Bank cut with the dig of trenches, m3/m.
-	Fill       float64            `json:"fill_m3_per_m"`         // Compacted fill with the stone of trenches, m3/m.
-	Earthworks float64            `json:"earthworks_m3_per_m"`   // Cut plus fill, m3/m: what a sizing makes least.
-	Import     float64            `json:"import_m3_per_m"`       // Material brought in, m3/m compacted: all fill, since no reuse is assumed.
-	Dispose    float64            `json:"dispose_m3_per_m"`      // Material taken away, m3/m bank: all cut, since no reuse is assumed.
-	Drain      float64            `json:"drain_m_per_m"`         // Length of drain, m/m.
-	Strip      float64            `json:"strip_m2_per_m"`        // Existing ground stripped, m2/m; not in the earthworks.
-	TrenchDig  float64            `json:"trench_dig_m3_per_m"`   // Dig of trenches, in the cut, m3/m.
-	Stone      float64            `json:"stone_m3_per_m"`        // Stone in trenches, in the fill, m3/m.
-	CutBySoil  map[string]float64 `json:"cut_by_soil_m3_per_m"`  // Bank cut by soil without trenches, m3/m.
-	FillBySoil map[string]float64 `json:"fill_by_soil_m3_per_m"` // Compacted fill by soil without trenches, m3/m.
+	Cut        float64            `json:"cut_m3_per_m"`                // Bank cut with the dig of trenches, m3/m.
+	Fill       float64            `json:"fill_m3_per_m"`               // Compacted fill with the stone of trenches, m3/m.
+	Earthworks float64            `json:"earthworks_m3_per_m"`         // Cut plus fill, m3/m: what a sizing makes least.
+	Import     float64            `json:"import_m3_per_m"`             // Fill and stone brought to the site, m3/m compacted; see on_site_fill.
+	Dispose    float64            `json:"dispose_m3_per_m"`            // Cut that is not used again, m3/m bank.
+	Drain      float64            `json:"drain_m_per_m"`               // Length of drain, m/m.
+	Strip      float64            `json:"strip_m2_per_m"`              // Existing ground stripped, m2/m; not in the earthworks.
+	TrenchDig  float64            `json:"trench_dig_m3_per_m"`         // Dig of trenches, in the cut, m3/m.
+	Stone      float64            `json:"stone_m3_per_m"`              // Stone in trenches, in the fill, m3/m.
+	CutBySoil  map[string]float64 `json:"cut_by_soil_m3_per_m"`        // Bank cut by soil without trenches, m3/m.
+	FillBySoil map[string]float64 `json:"fill_by_soil_m3_per_m"`       // Compacted fill by soil without trenches, m3/m.
+	DigBySoil  map[string]float64 `json:"trench_dig_by_soil_m3_per_m"` // Dig of trenches by soil, m3/m.
+	Topsoil    map[string]float64 `json:"topsoil_by_soil_m3_per_m"`    // Part of the cut within the strip depth, which is no fill, m3/m.
+	FillBase   map[string]float64 `json:"fill_base_by_soil_m"`         // Horizontal width of ground under fill, by soil placed, m.
+	FaceRun    float64            `json:"face_run_m"`                  // Horizontal width of ground steeper than 1V:5H under fill, m.
+	Drilled    float64            `json:"drilled_m_per_m"`             // Part of the drains that is drilled from the face, m/m.
+	Piped      float64            `json:"piped_m_per_m"`               // Part of the drains that is a toe drain or an interceptor, m/m.
+	Elements   float64            `json:"elements_per_m"`              // Structural elements, number for a metre run.
+	ElementsM  float64            `json:"elements_m_per_m"`            // Their length, m/m.
 }
 
 // Totals are the quantities over the whole length of the works.
@@ -183,9 +199,9 @@ type Totals struct {
 	Dispose    float64 `json:"dispose_m3"`    // Material taken away, m3 bank.
 	Drain      float64 `json:"drain_m"`       // Length of drain, m.
 	Strip      float64 `json:"strip_m2"`      // Existing ground stripped, m2.
-	Loads      *Number `json:"lorry_loads"`   // Lorry loads to bring and to take away; null without the load of a lorry.
-	Cost       *Number `json:"cost"`          // Cost; null without rates.
-	Carbon     *Number `json:"carbon_t"`      // Carbon, t; null without factors.
+	Loads      *Number `json:"lorry_loads"`   // Whole lorry loads to bring and to take away; null if the load of a lorry or a factor that it needs is blank.
+	Cost       *Number `json:"cost"`          // Cost, in the currency of the rates; null without rates or if one that it needs is blank.
+	Carbon     *Number `json:"carbon_t"`      // Carbon, t CO2 equivalent; null without factors or if one that it needs is blank.
 }
 
 // Answer is the lowest converged, admissible FS found in a design situation.
@@ -210,11 +226,14 @@ type Found struct {
 
 // Stage is the answer to a construction stage, with the section it was checked on.
 type Stage struct {
-	Name       string   `json:"name"`        // Name of the stage, as in the water of its section.
-	Order      int      `json:"order"`       // Place in the order of construction, from 1.
-	RequiredFS float64  `json:"required_fs"` // FS required.
-	Strength   Strength `json:"strength"`    // "drained", "undrained", or one of these words for every soil.
-	Kh         float64  `json:"kh"`          // Horizontal pseudo-static coefficient, outward.
+	Name       string  `json:"name"`        // Name of the stage, as in the water of its section.
+	Order      int     `json:"order"`       // Place in the order of construction, from 1.
+	RequiredFS float64 `json:"required_fs"` // FS required; 0 if the check is advisory.
+	// True: nothing is asked of it. Its FS is told beside the check that governs, such as that of an open hole in plane strain.
+	Advisory bool     `json:"advisory,omitempty"`
+	Says     string   `json:"says,omitempty"` // Of an advisory check: what its FS means.
+	Strength Strength `json:"strength"`       // "drained", "undrained", or one of these words for every soil.
+	Kh       float64  `json:"kh"`             // Horizontal pseudo-static coefficient, outward.
 	Found
 	Section *Section `json:"section"` // Section of the stage.
 }
@@ -276,7 +295,9 @@ type TradePoint struct {
 	Shift      float64              `json:"shift"`               // Added to the required FS of every check.
 	ReachedFS  Number               `json:"reached_fs"`          // Required FS and the least margin of every check at this design.
 	Earthworks Number               `json:"earthworks_m3_per_m"` // Least earthworks, m3/m.
-	Cost       *Number              `json:"cost"`                // Cost; null without rates.
+	Cost       *Number              `json:"cost"`                // Cost of the design for the whole length; null without rates or if one that it needs is blank.
+	Carbon     *Number              `json:"carbon_t"`            // Carbon of it, t CO2 equivalent; null likewise.
+	Loads      *Number              `json:"lorry_loads"`         // Whole lorry loads of it; null if not known.
 	Parameters map[string]Parameter `json:"parameters"`          // Dimensions of the design.
 	Quantities Quantities           `json:"quantities"`          // Per metre run of the works.
 	Ground     []Point              `json:"ground"`              // Ground after these works, from left to right.

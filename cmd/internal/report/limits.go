@@ -4,11 +4,26 @@ import "standfast/remedies"
 
 // SiteLimits are the limits of the works.
 type SiteLimits struct {
-	Left      *Fence      `json:"left" jsonschema:"nullable"`            // Left end of the works; null: no limit.
-	Right     *Fence      `json:"right" jsonschema:"nullable"`           // Right end of the works; null: no limit.
-	KeepClear []KeepClear `json:"keep_clear"`                            // Zones that no dig or no load may enter.
-	MaxLevels []MaxLevel  `json:"maximum_levels"`                        // Greatest levels of the ground after works.
-	Outfall   *float64    `json:"drain_outfall_y" jsonschema:"nullable"` // Lowest level at which a drain can discharge, m; null: none given.
+	Left      *Fence      `json:"left" jsonschema:"nullable"`                      // Left end of the works; null: no limit.
+	Right     *Fence      `json:"right" jsonschema:"nullable"`                     // Right end of the works; null: no limit.
+	KeepClear []KeepClear `json:"keep_clear"`                                      // Zones that no dig or no load may enter.
+	MaxLevels []MaxLevel  `json:"maximum_levels"`                                  // Greatest levels of the ground after works.
+	Outfall   *float64    `json:"drain_outfall_y" jsonschema:"nullable"`           // Lowest level at which a drain can discharge, m; null: none given.
+	Overhead  []Overhead  `json:"overhead"`                                        // Lines and structures above the ground that works stay clear of.
+	Permanent *float64    `json:"steepest_permanent_batter" jsonschema:"nullable"` // Steepest face that stays: n of 1V:nH; null: no limit.
+	Temporary *float64    `json:"steepest_temporary_batter" jsonschema:"nullable"` // Steepest face that stands open during construction: n of 1V:nH; null: no limit.
+	MinBench  *float64    `json:"minimum_bench_m" jsonschema:"nullable"`           // Least width of a bench, m; null: no limit.
+	MinHaul   *float64    `json:"minimum_haul_m" jsonschema:"nullable"`            // Least width that plant travels on, m; null: no limit.
+	MaxImport *float64    `json:"maximum_import_m3" jsonschema:"nullable"`         // Most fill and stone brought, compacted m3 for the whole length; null: no limit.
+}
+
+// Overhead is a line or a structure above the ground.
+type Overhead struct {
+	Name      string  `json:"name"`        // Name.
+	FromX     float64 `json:"from_x"`      // Left end, m.
+	ToX       float64 `json:"to_x"`        // Right end, m.
+	Level     float64 `json:"level"`       // Of its lowest part, m.
+	Clearance float64 `json:"clearance_m"` // Between it and the ground after works, m.
 }
 
 // Fence is a side limit of the works.
@@ -56,6 +71,7 @@ type SoilLine struct {
 type StageSettings struct {
 	WaterLine  string  `json:"water_line"`  // Name of the water line during works; empty: dry.
 	RequiredFS float64 `json:"required_fs"` // FS required.
+	Plant      float64 `json:"plant_kPa"`   // Pressure of construction plant, kPa; 0: none is counted.
 }
 
 // Dimension is a dimension of the works.
@@ -70,6 +86,11 @@ func limitsOf(l *remedies.Limits) SiteLimits {
 	out := SiteLimits{
 		Left: fenceOf(l.Left), Right: fenceOf(l.Right), KeepClear: make([]KeepClear, len(l.KeepClear)),
 		MaxLevels: make([]MaxLevel, len(l.MaxLevels)), Outfall: l.Outfall,
+		Overhead: make([]Overhead, len(l.Overhead)), Permanent: given(l.Batters.Permanent), Temporary: given(l.Batters.Temporary),
+		MinBench: given(l.MinBench), MinHaul: given(l.MinHaul), MaxImport: l.MaxImport,
+	}
+	for i, o := range l.Overhead {
+		out.Overhead[i] = Overhead(o)
 	}
 	for i, k := range l.KeepClear {
 		out.KeepClear[i] = KeepClear{Name: k.Name, FromX: k.FromX, ToX: k.ToX, NoDig: k.NoDig, NoLoad: k.NoLoad, DigBelow: k.DigBelow}
@@ -115,7 +136,7 @@ func (b *builder) stageSettings() *StageSettings {
 	if !s.Given {
 		return nil
 	}
-	return &StageSettings{WaterLine: b.waterName(s.Water), RequiredFS: s.RequiredFS}
+	return &StageSettings{WaterLine: b.waterName(s.Water), RequiredFS: s.RequiredFS, Plant: s.Plant}
 }
 
 func dimensionsOf(list []remedies.Dimension) []Dimension {

@@ -61,8 +61,9 @@ func (b *rebuilder) job() *remedies.Job {
 	f := b.file
 	j := &remedies.Job{
 		Title: f.Case.Title, Length: f.Case.Length, Crest: b.point(f.Case.Crest), Toe: b.point(f.Case.Toe),
-		Limits: b.limits(), MinDepth: f.Settings.DepthOfInterest,
+		Limits: b.limits(), OnSite: b.onSite(), Economics: b.economics(), MinDepth: f.Settings.DepthOfInterest,
 	}
+	j.Objective, _ = remedies.ParseObjective(f.Settings.Objective)
 	if r := f.Settings.SearchRanges.Head; r != nil {
 		j.Head = lem.Range{From: r[0], To: r[1]}
 	}
@@ -86,7 +87,7 @@ func (b *rebuilder) job() *remedies.Job {
 		})
 	}
 	if s := f.StageSettings; s != nil {
-		j.Stage = remedies.StageSettings{Given: true, Water: b.waterIndex(s.WaterLine), RequiredFS: s.RequiredFS}
+		j.Stage = remedies.StageSettings{Given: true, Water: b.waterIndex(s.WaterLine), RequiredFS: s.RequiredFS, Plant: s.Plant}
 	}
 	return j
 }
@@ -127,7 +128,13 @@ func (b *rebuilder) undrained(s Strength) []bool {
 
 func (b *rebuilder) limits() remedies.Limits {
 	l := &b.file.Limits
-	out := remedies.Limits{Outfall: l.Outfall}
+	out := remedies.Limits{
+		Outfall: l.Outfall, Batters: remedies.Batters{Permanent: orZero(l.Permanent), Temporary: orZero(l.Temporary)},
+		MinBench: orZero(l.MinBench), MinHaul: orZero(l.MinHaul), MaxImport: l.MaxImport,
+	}
+	for _, o := range l.Overhead {
+		out.Overhead = append(out.Overhead, remedies.Overhead(o))
+	}
 	if l.Left != nil {
 		out.Left = &remedies.Fence{Name: l.Left.Name, X: l.Left.X}
 	}

@@ -24,6 +24,7 @@ func (b *rebuilder) option(j *remedies.Job, o *Option) remedies.Option {
 		b.wrong("%s has no section", o.Name)
 		return out
 	}
+	addRobustness(&out, o)
 	for i := range o.Situations {
 		a := &o.Situations[i]
 		c := remedies.Check{
@@ -42,7 +43,7 @@ func (b *rebuilder) option(j *remedies.Job, o *Option) remedies.Option {
 	for i := range o.Stages {
 		s := &o.Stages[i]
 		c := remedies.Check{
-			Name: s.Name, Stage: true, Required: s.RequiredFS, SituationI: -1, Section: &out.Proposal.Section,
+			Name: s.Name, Stage: true, Required: s.RequiredFS, Advisory: s.Advisory, SituationI: -1, Section: &out.Proposal.Section,
 			Situation: lem.Situation{Name: s.Name, Undrained: b.undrained(s.Strength), Kh: s.Kh},
 		}
 		if s.Section != nil {
@@ -97,13 +98,18 @@ func (b *rebuilder) proposal(j *remedies.Job, o *Option) *remedies.Proposal {
 }
 
 func (b *rebuilder) amounts(q *Quantities) remedies.Quantities {
-	out := remedies.Quantities{
-		Cut: make([]float64, len(b.soils)), Fill: make([]float64, len(b.soils)), TrenchDig: q.TrenchDig, Stone: q.Stone, Drain: q.Drain, Strip: q.Strip,
+	by := func(volumes map[string]float64) []float64 {
+		out := make([]float64, len(b.soils))
+		for name, i := range b.soils {
+			out[i] = volumes[name]
+		}
+		return out
 	}
-	for name, i := range b.soils {
-		out.Cut[i], out.Fill[i] = q.CutBySoil[name], q.FillBySoil[name]
+	return remedies.Quantities{
+		Cut: by(q.CutBySoil), Fill: by(q.FillBySoil), Dig: by(q.DigBySoil), Topsoil: by(q.Topsoil), FillBase: by(q.FillBase), FaceRun: q.FaceRun,
+		TrenchDig: q.TrenchDig, Stone: q.Stone, Drain: q.Drain, Drilled: q.Drilled, Piped: q.Piped, Strip: q.Strip,
+		Elements: q.Elements, ElementsM: q.ElementsM,
 	}
-	return out
 }
 
 func (b *rebuilder) outcome(c remedies.Check, f *Found) remedies.Outcome {

@@ -7,7 +7,11 @@ import (
 	"strings"
 	"testing"
 
+	"github.com/google/go-cmp/cmp"
+	"github.com/google/go-cmp/cmp/cmpopts"
+
 	"standfast/cmd/internal/drawing"
+	"standfast/remedies"
 )
 
 // drawings returns every drawing of a result as SVG and DXF, by name.
@@ -110,6 +114,46 @@ func FuzzRebuild(f *testing.F) {
 			t.Fatal(err)
 		}
 	})
+}
+
+// Whatever prices and limits works, and whatever is told of them besides, is turned back as it was.
+func TestRebuildKeepsEconomics(t *testing.T) {
+	result, src := sample()
+	j := result.Job
+	priceSample(j)
+	berm := &result.Options[0]
+	berm.Relaxations = []remedies.Relaxation{{Limit: "toe fence", Change: "moved 1.00 m outwards", Saves: 2.1, Objective: 3.2, Parameters: berm.Parameters}}
+	berm.Sensitivity = []remedies.Bar{{
+		Input: "water level", Low: 1.36, High: math.NaN(), CheckL: "wet spring", RequiredL: 1.2, Base: 1.306, BaseCheck: "normal water", BaseRequired: 1.3,
+	}}
+	berm.Proposal.HandChecks = []remedies.HandCheck{{Name: "bearing", FS: 2.4, Working: "5.14 x 35/75", Source: "Prandtl 1921"}}
+	berm.Stages[0].Check.Advisory, berm.Stages[0].Check.Required, berm.Stages[0].FS = true, 0, 0.93
+	f, err := Decode(strings.NewReader(encoded(t, New(result, src))))
+	if err != nil {
+		t.Fatal(err)
+	}
+	if s := f.Options[0].Stages[0]; !s.Advisory || !strings.Contains(s.Says, "0.930") {
+		t.Errorf("an advisory check says %q", s.Says)
+	}
+	if g, _ := f.Options[0].Governing(); g.Check != "normal water" {
+		t.Errorf("%s governs", g.Check)
+	}
+	r, err := Rebuild(f)
+	if err != nil {
+		t.Fatal(err)
+	}
+	got := &r.Options[0]
+	for name, pair := range map[string][2]any{
+		"limits": {j.Limits, r.Job.Limits}, "stages": {j.Stage.Plant, r.Job.Stage.Plant}, "objective": {j.Objective, r.Job.Objective},
+		"economics": {j.Economics, r.Job.Economics}, "on site": {j.OnSite, r.Job.OnSite},
+		"relaxations": {berm.Relaxations, got.Relaxations}, "sensitivity": {berm.Sensitivity, got.Sensitivity},
+		"hand checks": {berm.Proposal.HandChecks, got.Proposal.HandChecks}, "quantities": {berm.Proposal.Quantities, got.Proposal.Quantities},
+		"bill": {remedies.BillOf(j, &berm.Proposal.Quantities), remedies.BillOf(r.Job, &got.Proposal.Quantities)},
+	} {
+		if diff := cmp.Diff(pair[0], pair[1], cmpopts.EquateNaNs(), cmpopts.EquateEmpty()); diff != "" {
+			t.Errorf("%s (-was +turned back):\n%s", name, diff)
+		}
+	}
 }
 
 // An FS that is not known stays so.

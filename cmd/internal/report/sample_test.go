@@ -2,6 +2,8 @@ package report
 
 import (
 	"math"
+	"strings"
+	"testing"
 
 	"standfast/lem"
 	"standfast/optimize"
@@ -141,5 +143,61 @@ func sampleDrains(job *remedies.Job) remedies.Option {
 		Name: "trench_drains", Title: "trench drains", Remedies: []string{"trench_drains"}, Status: remedies.MeetsTarget,
 		Parameters: []remedies.Value{{Name: "depth", Unit: "m", Value: 4}, {Name: "effectiveness", Unit: "1", Value: math.NaN()}},
 		Proposal:   p, Situations: situations, Stages: stages,
+	}
+}
+
+// priceSample gives the sample invented rates and limits: clay and a stockpile may serve as fill.
+func priceSample(job *remedies.Job) {
+	most, bring := 40.0, 500.0
+	job.Objective, job.Stage.Plant = remedies.LeastCost, 15
+	job.OnSite = []remedies.OnSiteFill{{Name: "cut", Cut: 0, Serves: []int{1}, Share: 0.8}, {Name: "stockpile", Cut: -1, Serves: []int{1}, Share: 1, Volume: &most}}
+	job.Economics = remedies.Economics{
+		Currency: "EUR", BenchStep: 0.5, LorryLoad: 10, Soils: []remedies.SoilFactors{{Bulking: 1.3, Shrinkage: 0.9}, {Bulking: 1.2, Shrinkage: 0.95}},
+		Cost: remedies.Factors{
+			Work:   map[remedies.Work]float64{remedies.Strip: 0, remedies.Excavate: 2, remedies.Benching: 0, remedies.Place: 3, remedies.Import: 7, remedies.Dispose: 5},
+			Import: map[int]float64{1: 8},
+		},
+		Carbon: remedies.Factors{Work: map[remedies.Work]float64{remedies.Import: 12}},
+	}
+	job.Limits.Overhead = []remedies.Overhead{{Name: "line", FromX: 20, ToX: 30, Level: 130, Clearance: 6}}
+	job.Limits.Batters = remedies.Batters{Permanent: 1.5, Temporary: 0.5}
+	job.Limits.MinBench, job.Limits.MinHaul, job.Limits.MaxImport = 2, 3, &bring
+}
+
+// TestTotalsAreTheBill: what is brought, what it costs and how it is carried follow from the fill of the berm, the stockpile and the rates.
+func TestTotalsAreTheBill(t *testing.T) {
+	result, src := sample()
+	priceSample(result.Job)
+	berm := New(result, src).Options[0]
+	fill, length := result.Options[0].Proposal.Quantities.Fill[1], 80.0
+	brought := fill*length - 40 // All but what the stockpile holds; nothing is cut.
+	loads := math.Ceil(brought / 0.95 * 1.2 / 10)
+	for _, c := range []struct {
+		name      string
+		got, want float64
+	}{
+		{"fill", berm.Totals.Fill, fill * length},
+		{"import", berm.Totals.Import, brought},
+		{"import per metre", berm.Quantities.Import, brought / length},
+		{"disposal", berm.Totals.Dispose, 0},
+		{"cost", float64(*berm.Totals.Cost), 40*3 + brought*8},
+		{"lorry loads", float64(*berm.Totals.Loads), loads},
+	} {
+		if math.Abs(c.got-c.want) > 1e-9*(1+c.want) {
+			t.Errorf("%s: %v, want %v", c.name, c.got, c.want)
+		}
+	}
+	if berm.Totals.Carbon != nil { // The factors of placing and stripping are blank.
+		t.Errorf("carbon %v though factors that it needs are blank", *berm.Totals.Carbon)
+	}
+	if p := berm.Tradeoff[0]; p.Cost == nil || *p.Cost != *berm.Totals.Cost {
+		t.Errorf("the point of the trade-off with the same works costs %v", p.Cost)
+	}
+	var works []string
+	for _, it := range berm.Bill {
+		works = append(works, it.Work+" "+it.Soil)
+	}
+	if got := strings.Join(works, ", "); got != "strip , benching , place fill, import fill" {
+		t.Errorf("the bill has: %s", got)
 	}
 }

@@ -55,6 +55,9 @@ func (o *Option) Governing() (Governing, bool) {
 		consider(o.Situations[i].Name, o.Situations[i].FS, o.Situations[i].RequiredFS)
 	}
 	for i := range o.Stages {
+		if o.Stages[i].Advisory { // Nothing is asked of it.
+			continue
+		}
 		consider(o.Stages[i].Name, o.Stages[i].FS, o.Stages[i].RequiredFS)
 	}
 	return g, any
