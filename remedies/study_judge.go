@@ -92,7 +92,7 @@ func (z *sizing) endsOfRange(x []float64) string {
 	var ends []string
 	for i, a := range z.w.axes {
 		if x != nil && a.Len() > 1 && (x[i] == a.At(0) || x[i] == a.At(a.Len()-1)) {
-			ends = append(ends, a.Name)
+			ends = append(ends, ParameterWords(a.Name))
 		}
 	}
 	if len(ends) == 0 {
@@ -118,9 +118,12 @@ func dimensions(w *works, x []float64) string {
 	return strings.Join(parts, ", ")
 }
 
+// ParameterWords puts the name of a parameter into words: "top width", and "trench drains depth" for one of several remedies sized together.
+func ParameterWords(name string) string { return strings.NewReplacer("_", " ", ".", " ").Replace(name) }
+
 // String prints a parameter for people: "top width 5.50 m", "batter 1V:2.5H".
 func (v Value) String() string {
-	name := strings.ReplaceAll(v.Name, "_", " ")
+	name := ParameterWords(v.Name)
 	number := strconv.FormatFloat(v.Value, 'f', -1, 64)
 	switch v.Unit {
 	case "1V:nH":

@@ -14,6 +14,8 @@ type compareOptions struct {
 	studyOptions
 	out  string
 	only []string
+
+	pairs bool
 }
 
 func newCompareCommand() *cobra.Command {
@@ -24,6 +26,9 @@ func newCompareCommand() *cobra.Command {
 		Long: `compare analyses the slope of a case file as it is, sizes every remedy that the case asks for, compares them, and
 writes the results, drawings and proposed sections to a folder.
 
+Remedies are sized one by one, and the ` + "`combinations`" + ` of the case together. With --pairs every pair that can be built together is
+sized too. A pair has as many designs as its two remedies multiplied, so that this takes minutes where their ranges are fine.
+
 ` + exitCodes(exitOK, exitInput, exitNothingMeets, exitInterrupted, exitOther),
 		Example:           "  standfast compare case.yaml --only berm,regrade --target \"high water=1.25\"",
 		Args:              oneArgument("a case file"),
@@ -33,6 +38,7 @@ writes the results, drawings and proposed sections to a folder.
 	o.addFlags(c)
 	c.Flags().StringVar(&o.out, "out", "", "folder for the results (default ./<case>-works); one of an earlier run is replaced, any other refused")
 	c.Flags().StringSliceVar(&o.only, "only", nil, "size only these remedies, such as berm,regrade")
+	c.Flags().BoolVar(&o.pairs, "pairs", false, "also size every pair of remedies that can be built together; takes minutes on fine ranges")
 	if err := c.RegisterFlagCompletionFunc("only", completeRemedies); err != nil {
 		panic("cli: " + err.Error()) // The flag is not defined: a programmer's error.
 	}
@@ -68,7 +74,7 @@ func runCompare(c *cobra.Command, o *compareOptions, path string) error {
 	if !o.quiet {
 		printWarnings(c, read.Warnings)
 	}
-	settings.Curves = true
+	settings.Curves, settings.Relaxations, settings.Sensitivity, settings.Pairs = true, true, true, o.pairs
 	progress := newProgress(c.ErrOrStderr(), o.quiet)
 	settings.Progress = progress.show
 	result, err := remedies.Study(ctx, read.Job, settings)
@@ -93,6 +99,9 @@ func (o *compareOptions) overrides() []string {
 	out := o.studyOptions.overrides()
 	for _, name := range o.only {
 		out = append(out, "--only "+name)
+	}
+	if o.pairs {
+		out = append(out, "--pairs")
 	}
 	return out
 }

@@ -44,7 +44,7 @@ func (p *printer) factors(o *Option) {
 	columns := []column{{head: "situation", most: 32}, {head: "FS", right: true}, {head: "required", right: true}, {head: "governs"}}
 	methods := methodsOf(o)
 	for _, m := range methods {
-		columns = append(columns, column{head: m, right: true})
+		columns = append(columns, column{head: MethodText(m), right: true})
 	}
 	var rows []table.Row
 	for _, s := range o.Situations {

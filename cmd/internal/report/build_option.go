@@ -1,6 +1,8 @@
 package report
 
 import (
+	"math"
+
 	"standfast/lem"
 	"standfast/remedies"
 )
@@ -26,7 +28,7 @@ func (b *builder) option(o *remedies.Option) Option {
 		})
 	}
 	for _, t := range o.Tradeoff {
-		out.Tradeoff = append(out.Tradeoff, b.tradePoint(&t))
+		out.Tradeoff = append(out.Tradeoff, b.tradePoint(o, &t))
 	}
 	out.Relaxations, out.Sensitivity = relaxationsOf(o.Relaxations), barsOf(o.Sensitivity)
 	out.Certificate = certificateOf(o)
@@ -61,7 +63,7 @@ func (b *builder) addProposal(out *Option, o *remedies.Option) {
 		out.Broken = append(out.Broken, Limit{Name: v.Limit, Detail: v.Detail, By: v.By})
 	}
 	out.NotChecked, out.Notes = list(p.NotChecked), list(p.Notes)
-	bill := remedies.BillOf(b.job, &p.Quantities)
+	bill := b.billOf(o, p)
 	out.Quantities = b.quantities(&p.Quantities, &bill)
 	out.Totals = totalsOf(&out.Quantities, &bill)
 	out.Bill = b.bill(&bill)
@@ -103,6 +105,15 @@ func (b *builder) bySoil(volumes []float64) map[string]float64 {
 	return out
 }
 
+// billOf measures and prices a proposal. What a what-if would take is not designed, so that it has no price: least of all nothing.
+func (b *builder) billOf(o *remedies.Option, p *remedies.Proposal) remedies.Bill {
+	bill := remedies.BillOf(b.job, &p.Quantities)
+	if o.WhatIf {
+		bill.Cost, bill.Carbon, bill.Loads = math.NaN(), math.NaN(), math.NaN()
+	}
+	return bill
+}
+
 // tonne is the mass of a tonne, kg.
 const tonne = 1000
 
@@ -116,9 +127,9 @@ func totalsOf(q *Quantities, bill *remedies.Bill) Totals {
 }
 
 // tradePoint lays out one point of a curve.
-func (b *builder) tradePoint(t *remedies.TradeoffPoint) TradePoint {
+func (b *builder) tradePoint(o *remedies.Option, t *remedies.TradeoffPoint) TradePoint {
 	s := b.section(&t.Proposal.Section)
-	bill := remedies.BillOf(b.job, &t.Proposal.Quantities)
+	bill := b.billOf(o, t.Proposal)
 	out := TradePoint{
 		Cost: ifKnown(bill.Cost), Carbon: ifKnown(bill.Carbon / tonne), Loads: ifKnown(bill.Loads),
 		RequiredFS: Number(t.RequiredFS), Shift: t.Shift, ReachedFS: Number(t.Reached), Earthworks: Number(t.Earthworks),

@@ -16,7 +16,9 @@ func WriteComparison(w io.Writer, f *File, look Look) error {
 	p.existing(f)
 	if len(f.Options) > 0 {
 		p.options(f)
+		p.materials(f)
 		p.reasons(f)
+		p.relaxations(f)
 	}
 	p.answer(f)
 	p.cautions(f.Cautions)
@@ -48,7 +50,7 @@ func method(f Found) string {
 	if f.Method == "" {
 		return unknown
 	}
-	return f.Method
+	return MethodText(f.Method)
 }
 
 func verdict(f Found, required float64) string {
@@ -65,7 +67,7 @@ func verdict(f Found, required float64) string {
 
 // options prints a row an option.
 func (p *printer) options(f *File) {
-	p.heading("Works per metre run, in ascending earthworks, those that fail last (FS rounded down, quantities up)")
+	p.heading(fmt.Sprintf("Works per metre run, in ascending %s, those that fail last (FS rounded down, quantities up)", f.objective()))
 	var rows []table.Row
 	for i := range f.Options {
 		o := &f.Options[i]
@@ -109,6 +111,11 @@ func (p *printer) reasons(f *File) {
 		if o.Reason != "" && o.Status != meetsTarget {
 			remarks = append(remarks, remark{o.Title + ", " + o.Status + ": ", o.Reason})
 		}
+		for _, s := range o.Stages {
+			if s.Says != "" {
+				remarks = append(remarks, remark{o.Title + ": ", s.Name + ": " + s.Says})
+			}
+		}
 		for _, n := range o.NotChecked {
 			remarks = append(remarks, remark{o.Title + ": ", n})
 		}
@@ -137,4 +144,5 @@ func (p *printer) answer(f *File) {
 			p.para("", s)
 		}
 	}
+	p.sensitivity(f, o)
 }

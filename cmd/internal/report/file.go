@@ -200,8 +200,8 @@ type Totals struct {
 	Drain      float64 `json:"drain_m"`       // Length of drain, m.
 	Strip      float64 `json:"strip_m2"`      // Existing ground stripped, m2.
 	Loads      *Number `json:"lorry_loads"`   // Whole lorry loads to bring and to take away; null if the load of a lorry or a factor that it needs is blank.
-	Cost       *Number `json:"cost"`          // Cost, in the currency of the rates; null without rates or if one that it needs is blank.
-	Carbon     *Number `json:"carbon_t"`      // Carbon, t CO2 equivalent; null without factors or if one that it needs is blank.
+	Cost       *Number `json:"cost"`          // Cost, in the currency of the rates; null without rates, if one that it needs is blank, or of a what-if.
+	Carbon     *Number `json:"carbon_t"`      // Carbon, t CO2 equivalent; null without factors, if one that it needs is blank, or of a what-if.
 }
 
 // Answer is the lowest converged, admissible FS found in a design situation.
@@ -295,7 +295,7 @@ type TradePoint struct {
 	Shift      float64              `json:"shift"`               // Added to the required FS of every check.
 	ReachedFS  Number               `json:"reached_fs"`          // Required FS and the least margin of every check at this design.
 	Earthworks Number               `json:"earthworks_m3_per_m"` // Least earthworks, m3/m.
-	Cost       *Number              `json:"cost"`                // Cost of the design for the whole length; null without rates or if one that it needs is blank.
+	Cost       *Number              `json:"cost"`                // Cost of the design for the whole length; null without rates, if one that it needs is blank, or of a what-if.
 	Carbon     *Number              `json:"carbon_t"`            // Carbon of it, t CO2 equivalent; null likewise.
 	Loads      *Number              `json:"lorry_loads"`         // Whole lorry loads of it; null if not known.
 	Parameters map[string]Parameter `json:"parameters"`          // Dimensions of the design.

@@ -4,11 +4,14 @@ import (
 	"fmt"
 	"slices"
 	"strings"
+
+	"standfast/lem"
+	"standfast/remedies"
 )
 
 // sizeOf returns a dimension in words, such as "top width 4 m" or "batter 1V:2H".
 func sizeOf(name string, value float64, unit string) string {
-	words := strings.ReplaceAll(name, "_", " ")
+	words := remedies.ParameterWords(name)
 	switch unit {
 	case "", "1":
 		return words + " " + SizeText(value)
@@ -103,8 +106,8 @@ func (f *File) Recommendation() string {
 	if o := f.Least(); o == &f.Existing {
 		return "Nothing is needed: the slope as it is meets the required factor of safety in every situation."
 	} else if o != nil {
-		return fmt.Sprintf("Least earthworks: %s, %s m3 per metre run (%s m3 over %s m): %s.",
-			o.Title, QuantityText(o.Quantities.Earthworks), TotalText(o.Totals.Earthworks), SizeText(f.Case.Length), o.Dimensions(o.Parameters))
+		return fmt.Sprintf("Least %s: %s, %s m3 per metre run (%s m3 over %s m): %s.",
+			f.objective(), f.named(o), QuantityText(o.Quantities.Earthworks), TotalText(o.Totals.Earthworks), SizeText(f.Case.Length), o.Dimensions(o.Parameters))
 	}
 	o := f.Nearest()
 	if o == nil {
@@ -146,16 +149,89 @@ func (o *Option) CertificateText() string {
 	if c == nil {
 		return ""
 	}
-	s := fmt.Sprintf("Certificate: least on this lattice, for this remedy and these methods (%s); no slip below target found in %s searches, "+
-		"%s cheaper designs rejected by a slip each", strings.Join(c.Audit.Methods, ", "), TotalText(float64(c.Searches+c.Audit.Searches)),
+	least := "least"
+	if c.Unresolved > 0 {
+		least = "least of the designs that could be judged"
+	}
+	s := fmt.Sprintf("Certificate: %s on this lattice, for this remedy and these methods (%s); no slip below target found in %s searches, "+
+		"%s cheaper designs rejected by a slip each", least, GoverningText(), TotalText(float64(c.Searches+c.Audit.Searches)),
 		TotalText(float64(c.Witnessed)))
 	if c.Unresolved > 0 {
-		s += fmt.Sprintf(", %d cheaper designs unresolved", c.Unresolved)
+		s += fmt.Sprintf("; %s cheaper designs are unresolved, neither rejected nor accepted, and one of them may do", TotalText(float64(c.Unresolved)))
 	}
 	if c.Coarsened {
 		s += "; the lattice was coarser than asked for"
 	}
 	return s + "."
+}
+
+// objective names what sizings make least; earthworks in a file that does not say.
+func (f *File) objective() string {
+	if f.Settings.Objective == "" {
+		return remedies.LeastEarthworks.String()
+	}
+	return f.Settings.Objective
+}
+
+// named returns the title of an option, with its cost or carbon where that is what was made least.
+func (f *File) named(o *Option) string {
+	switch o2, _ := remedies.ParseObjective(f.Settings.Objective); {
+	case o2 == remedies.LeastCost && o.Totals.Cost != nil:
+		return o.Title + ", " + f.money(TotalText(float64(*o.Totals.Cost)))
+	case o2 == remedies.LeastCarbon && o.Totals.Carbon != nil:
+		return o.Title + ", " + QuantityText(float64(*o.Totals.Carbon)) + " t CO2 equivalent"
+	}
+	return o.Title
+}
+
+// money puts the currency of the rates behind an amount.
+func (f *File) money(amount string) string {
+	return strings.TrimSpace(amount + " " + f.Economics.Currency)
+}
+
+// MethodText returns the name of a method of slices as people spell it.
+func MethodText(name string) string {
+	words := strings.Split(name, "-")
+	for i, w := range words {
+		if w != "" {
+			words[i] = strings.ToUpper(w[:1]) + w[1:]
+		}
+	}
+	return strings.Join(words, "-")
+}
+
+// GoverningText names the methods that govern.
+func GoverningText() string {
+	of := func(k lem.SlipKind) string {
+		var names []string
+		for _, m := range lem.GoverningMethods(k) {
+			names = append(names, MethodText(m.String()))
+		}
+		return strings.Join(names, " and ")
+	}
+	return of(lem.Circle) + " on circles, " + of(lem.Polyline) + " on non-circular slips"
+}
+
+// RelaxationTexts tell in a sentence each what moving a limit would save, rounded down; those that show as nothing are left out.
+func (f *File) RelaxationTexts(o *Option) []string {
+	var out []string
+	for _, r := range o.Relaxations {
+		saves := floorText(r.Saves, 2)
+		if saves == "0.00" {
+			continue
+		}
+		switch objective, _ := remedies.ParseObjective(f.Settings.Objective); objective {
+		case remedies.LeastCost:
+			saves = f.money(floorText(r.Saves, 0))
+		case remedies.LeastCarbon:
+			saves += " kg CO2 equivalent"
+		default:
+			saves += " m3 per metre run"
+		}
+		out = append(out, fmt.Sprintf("Moving the %s %s saves %s (%s; searched, not audited).", strings.TrimPrefix(r.Limit, "the "),
+			strings.TrimPrefix(r.Change, "moved "), saves, o.Dimensions(r.Parameters)))
+	}
+	return out
 }
 
 func pointText(p Point) string { return fmt.Sprintf("(%.2f, %.2f)", p[0], p[1]) }
