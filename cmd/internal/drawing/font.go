@@ -71,6 +71,9 @@ func Printable(s string) string { return clean(s) }
 
 // clean replaces what cannot be set in the font or written to XML, so that a text drawn has the width that was measured.
 func clean(s string) string {
+	if !strings.ContainsFunc(s, func(r rune) bool { return r < ' ' || r > '~' }) { // The font has all of ASCII.
+		return s
+	}
 	var buf sfnt.Buffer
 	f := faces()[0]
 	return strings.Map(func(r rune) rune {

@@ -36,7 +36,11 @@ func Sequence(existing, o *remedies.Option, j *remedies.Job, width float64) (*Fi
 	panels := []panel{{"as it is", &existing.Proposal.Section, existing.Governing()}}
 	for i := range o.Stages {
 		c := &o.Stages[i].Check
-		panels = append(panels, panel{checkName(c), c.Section, &o.Stages[i]})
+		section := c.Section
+		if section == nil || !drawable(section) { // Then it is that of the finished works.
+			section = &o.Proposal.Section
+		}
+		panels = append(panels, panel{checkName(c), section, &o.Stages[i]})
 	}
 	finished := remedies.Option{Situations: o.Situations}
 	panels = append(panels, panel{"works complete", &o.Proposal.Section, finished.Governing()})
@@ -98,7 +102,7 @@ func (s *sheet) panel(p *picture, q *panel, number int, f Box) {
 	bold := smallFace
 	bold.bold = true
 	line := smallFace.lineHeight()
-	name := bold.wrap(clean(fmt.Sprintf("%d  %s", number, q.name)), f.width(), int(panelHead))
+	name := bold.wrap(clean(fmt.Sprintf("%d %s", number, q.name)), f.width(), int(panelHead))
 	for i, l := range name {
 		s.line(bold, inkBlack, f.MinX, f.MaxY+2+float64(len(name)-i)*line, l)
 	}

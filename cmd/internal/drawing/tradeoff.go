@@ -196,7 +196,8 @@ func layOutPlot(curves []curve, target float64, share bool, width, height float6
 	s := &sheet{fig: Figure{Width: width, Height: height}}
 	line := smallFace.lineHeight()
 	below := float64(len(foot)) * line
-	s.tradeoff(Box{axisLeft, axisBelow + below, width - 1, height - 1}, curves, target, share)
+	const beside = 9.0 // Room for half of the last number on the axis.
+	s.tradeoff(Box{axisLeft, axisBelow + below, width - beside, height - 1}, curves, target, share)
 	for i, l := range foot {
 		s.line(smallFace, inkGrey, 0, below-float64(i)*line, l)
 	}

@@ -22,7 +22,7 @@ func (a *author) assumptions() {
 	a.heading("Assumptions")
 	list := []string{
 		"The ground between and below the points given is as drawn; strengths and unit weights are those of the case, not factored, and the same along the works.",
-		"The water lines given are the worst credible ones of their situations, and those under works stay as drawn.",
+		"The water lines given are taken as the worst credible ones of their situations, and those under works stay as drawn.",
 		"All fill is brought and all cut is taken away, unless the case says what is used again. No bulking is counted in the earthworks.",
 		"Fill has its full strength as soon as it is placed and compacted, on stripped and benched ground.",
 	}
@@ -111,7 +111,7 @@ func (a *author) shifted(o *report.Option) {
 		if t.Shift == 0 || !t.Earthworks.Known() {
 			continue
 		}
-		parts = append(parts, fmt.Sprintf("%s: %s m³/m", asked(t), report.QuantityText(float64(t.Earthworks))))
+		parts = append(parts, fmt.Sprintf("FS %s: %s m³/m", asked(t), report.QuantityText(float64(t.Earthworks))))
 	}
 	if g, ok := o.Governing(); ok && len(parts) > 0 {
 		a.item(fmt.Sprintf("Another required factor in %s, the others moved alike. %s", g.Check, strings.Join(parts, "; ")+"."))

@@ -34,7 +34,10 @@ func (a *author) existing() error {
 	if err := a.slices(g); err != nil {
 		return err
 	}
-	return a.influence(g)
+	if err := a.influence(g); err != nil {
+		return err
+	}
+	return a.back()
 }
 
 // influence draws what loads on the ground do to the critical slip of a check.

@@ -80,7 +80,7 @@ func optionCount(f *report.File) string {
 			meets++
 		}
 	}
-	return fmt.Sprintf("%d, of which %d meet the target", len(f.Options), meets)
+	return fmt.Sprintf("%d; meeting the target: %d", len(f.Options), meets)
 }
 
 // revisions leaves room for the record of revisions.

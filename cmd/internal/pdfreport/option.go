@@ -178,9 +178,10 @@ func asked(t *report.TradePoint) string {
 	return required(math.Round(float64(t.RequiredFS)*digits) / digits)
 }
 
-// reached is the FS of a point of a trade-off: of the design that was sized, not more than its audit left.
+// reached is the FS of a point of a trade-off: where it is the design that was sized, not more than its audit left.
 func reached(o *report.Option, t *report.TradePoint) report.Number {
-	if g, ok := o.Governing(); ok && t.Shift == 0 && o.Status == meetsTarget {
+	sized := t.Shift == 0 && o.Dimensions(t.Parameters) == o.Dimensions(o.Parameters)
+	if g, ok := o.Governing(); ok && sized && g.FS.Known() {
 		return min(t.ReachedFS, t.RequiredFS+g.Margin())
 	}
 	return t.ReachedFS

@@ -30,8 +30,9 @@ func line(ps []report.Point) string {
 // cubic writes cubic metres as printers do.
 func cubic(s string) string { return strings.ReplaceAll(s, " m3", " m³") }
 
-// sentence gives a text a capital and a full stop.
+// sentence gives a text a capital and a full stop; quotation marks of the case file are left out.
 func sentence(s string) string {
+	s = strings.ReplaceAll(s, "`", "")
 	if s == "" {
 		return ""
 	}

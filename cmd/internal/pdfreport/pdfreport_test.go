@@ -1,0 +1,320 @@
+package pdfreport
+
+import (
+	"bytes"
+	"encoding/json"
+	"math"
+	"os"
+	"os/exec"
+	"path/filepath"
+	"regexp"
+	"strings"
+	"testing"
+
+	"standfast/cmd/internal/drawing"
+	"standfast/cmd/internal/report"
+)
+
+// demo reads the result of a demo case, as compare wrote it.
+func demo(t testing.TB, name string) *report.File {
+	t.Helper()
+	f, err := report.Read(filepath.Join("..", "sheet", "testdata", name+".json"))
+	if err != nil {
+		t.Fatal(err)
+	}
+	return f
+}
+
+var demos = []string{"cutting", "embankment"}
+
+func written(t testing.TB, f *report.File) []byte {
+	t.Helper()
+	var b bytes.Buffer
+	if err := Write(&b, f); err != nil {
+		t.Fatal(err)
+	}
+	return b.Bytes()
+}
+
+func laidOut(t testing.TB, f *report.File) *book {
+	t.Helper()
+	b, err := layOut(drawing.NewPDF(pageWidth, pageHeight), f)
+	if err != nil {
+		t.Fatal(err)
+	}
+	return b
+}
+
+// said is all the text of a report, in reading order.
+func said(b *book) string {
+	var out []string
+	for _, p := range b.pages {
+		for _, s := range p.texts {
+			out = append(out, s.text)
+		}
+	}
+	return strings.ReplaceAll(strings.Join(out, " "), noBreak, " ")
+}
+
+// standing fails if a text leaves its page or stands in another.
+func standing(t *testing.T, b *book) {
+	t.Helper()
+	for i, p := range b.pages {
+		paper := drawing.Box{MinX: margin - 1, MinY: 30, MaxX: p.width() - margin + 1, MaxY: pageHeight - 20}
+		for k, s := range p.texts {
+			if !s.box.Within(paper) {
+				t.Errorf("page %d: %q leaves the page: %+v", i+1, s.text, s.box)
+			}
+			for _, o := range p.texts[:k] {
+				if s.box.Overlaps(o.box) {
+					t.Errorf("page %d: %q %+v stands in %q %+v", i+1, s.text, s.box, o.text, o.box)
+				}
+			}
+		}
+	}
+}
+
+func TestTextsOfDemosStandFree(t *testing.T) {
+	for _, name := range demos {
+		t.Run(name, func(t *testing.T) { standing(t, laidOut(t, demo(t, name))) })
+	}
+}
+
+// Whatever stands in a case, no text leaves its page or stands in another: long names without blanks, runes that the font lacks, many options.
+func TestTextsOfAnyCaseStandFree(t *testing.T) {
+	long := strings.Repeat("Wmeasured", 14)
+	for _, c := range []struct {
+		name   string
+		change func(f *report.File)
+	}{
+		{"long names", func(f *report.File) {
+			f.Case.Title, f.Case.File, f.Program.Version = long+" "+long, long, long
+			f.Options[0].Title, f.Options[0].Reason = long, long
+			f.Case.Notes = []string{long + long}
+			f.Existing.Section.Surcharges[0].Name = long
+			f.Limits.KeepClear[0].Name = long
+		}},
+		{"other scripts", func(f *report.File) {
+			f.Case.Title = "Łódź φ′ ≥ 1.25 \U0001f600\x01 滑坡"
+			f.Options[0].Title = "\U0001f600"
+		}},
+		{"many options", func(f *report.File) {
+			for len(f.Options) < 20 {
+				f.Options = append(f.Options, f.Options[1])
+			}
+		}},
+		{"wide numbers", func(f *report.File) {
+			f.Options[0].Quantities.Earthworks, f.Options[0].Totals.Earthworks = 123456789.123, 9876543210.5
+		}},
+	} {
+		t.Run(c.name, func(t *testing.T) {
+			f := demo(t, "cutting")
+			c.change(f)
+			b := laidOut(t, f)
+			standing(t, b)
+			written(t, f)
+		})
+	}
+}
+
+// The same result gives the same bytes, also when it was written and read in between, and they are few.
+func TestSameBytes(t *testing.T) {
+	for _, name := range demos {
+		f := demo(t, name)
+		first := written(t, f)
+		var b bytes.Buffer
+		if err := f.Encode(&b); err != nil {
+			t.Fatal(err)
+		}
+		again, err := report.Decode(&b)
+		if err != nil {
+			t.Fatal(err)
+		}
+		if !bytes.Equal(first, written(t, f)) || !bytes.Equal(first, written(t, again)) {
+			t.Errorf("%s: not the same bytes", name)
+		}
+		if most := 2 << 20; len(first) > most {
+			t.Errorf("%s: %d bytes, more than %d", name, len(first), most)
+		}
+	}
+}
+
+// pdfText returns the text of a document as a general-purpose reader finds it. Without one the test is skipped, or fails if STANDFAST_PDF is
+// "required".
+func pdfText(t *testing.T, doc []byte) string {
+	t.Helper()
+	if _, err := exec.LookPath("pdftotext"); err != nil {
+		if os.Getenv("STANDFAST_PDF") == "required" {
+			t.Fatal("pdftotext is required and not installed")
+		}
+		t.Skip("pdftotext is not installed")
+	}
+	c := exec.Command("pdftotext", "-raw", "-enc", "UTF-8", "-", "-")
+	c.Stdin = bytes.NewReader(doc)
+	out, err := c.Output()
+	if err != nil {
+		t.Fatal(err)
+	}
+	return strings.Join(strings.Fields(string(out)), " ")
+}
+
+// The numbers of the result are found in the document by a program that reads such documents.
+func TestDocumentSaysWhatTheResultSays(t *testing.T) {
+	for _, name := range demos {
+		t.Run(name, func(t *testing.T) {
+			f := demo(t, name)
+			got := pdfText(t, written(t, f))
+			want := []string{
+				f.Case.Title, f.Case.SHA256, "standfast " + f.Program.Version, "Inputs as understood", "Methods and limits of validity",
+				"The slope as it is", "Options compared", "What would change the answer", "φ′", "kN/m³",
+			}
+			for _, c := range f.Cautions {
+				want = append(want, strings.Fields(c)[0])
+			}
+			for name := range f.Soils {
+				want = append(want, name)
+			}
+			for i := range f.Options {
+				o := &f.Options[i]
+				want = append(want, "Option: "+title(o.Title), report.QuantityText(o.Quantities.Earthworks), o.Status)
+				for k := range o.Situations {
+					want = append(want, report.FactorText(o.Situations[k].FS))
+				}
+				for k := range o.Stages {
+					want = append(want, o.Stages[k].Name, report.FactorText(o.Stages[k].FS))
+				}
+			}
+			for i := range f.Existing.Situations {
+				want = append(want, report.FactorText(f.Existing.Situations[i].FS))
+			}
+			for _, w := range want {
+				if !strings.Contains(got, w) {
+					t.Errorf("the document does not say %q", w)
+				}
+			}
+		})
+	}
+}
+
+// Every slice table closes at the FS of the check that it is for.
+func TestSliceTablesCloseAtTheAnswer(t *testing.T) {
+	for _, name := range demos {
+		f := demo(t, name)
+		text := said(laidOut(t, f))
+		tables := regexp.MustCompile(`Slice table of the governing slip: .*? = ([0-9.]+); from the method: ([0-9.]+)`).FindAllStringSubmatch(text, -1)
+		var want []string
+		for _, o := range append([]report.Option{f.Existing}, f.Options...) {
+			g, ok := o.Governing()
+			if !ok || !g.FS.Known() {
+				t.Fatalf("%s: no FS", o.Name)
+			}
+			want = append(want, report.FactorText(g.FS))
+		}
+		if len(tables) != len(want) {
+			t.Fatalf("%s: %d slice tables, want %d", name, len(tables), len(want))
+		}
+		for i, m := range tables {
+			if m[1] != want[i] || m[2] != want[i] {
+				t.Errorf("%s: slice table %d closes at %s (%s), want %s", name, i, m[1], m[2], want[i])
+			}
+		}
+	}
+}
+
+// Whatever compare can come to gives a report, and an FS that there is not is not shown.
+func TestEveryOutcome(t *testing.T) {
+	for _, c := range []struct {
+		name      string
+		change    func(f *report.File)
+		want, not string
+	}{
+		{"nothing needed", func(f *report.File) {
+			least := "existing"
+			f.Options, f.LeastEarthworks = nil, &least
+		}, "Nothing is needed", "Options compared"},
+		{"nothing meets", func(f *report.File) { f.Options, f.LeastEarthworks = f.Options[2:], nil }, "Nothing meets the target", "Least earthworks:"},
+		{"an option without an FS", func(f *report.File) {
+			o := &f.Options[0]
+			o.Status = "unresolved"
+			for i := range o.Situations {
+				o.Situations[i].Found = report.Found{FS: report.Number(math.NaN())}
+			}
+		}, "no slip converged", "NaN"},
+		{"a situation told only", func(f *report.File) { f.Options[0].Situations[1].RequiredFS = 0 }, "told only", "NaN"},
+		{"no stage settings", func(f *report.File) { f.StageSettings = nil }, "construction stages were not checked", "NaN"},
+		{"case of another version", func(f *report.File) { f.Case.Source = "" }, "Thornbeck", "Back-analysis"},
+		{"an observed slip", func(f *report.File) {
+			f.Case.Source += "\nobserved_slip:\n  line: [[28, 109.04], [36, 101], [46, 98.5], [54, 99.98]]\n  situation: high water\n"
+		}, "Back-analysis of the observed slip", "No answer"},
+	} {
+		t.Run(c.name, func(t *testing.T) {
+			f := demo(t, "cutting")
+			c.change(f)
+			b := laidOut(t, f)
+			standing(t, b)
+			text := said(b)
+			if !strings.Contains(text, c.want) {
+				t.Errorf("the report does not say %q", c.want)
+			}
+			if strings.Contains(text, c.not) {
+				t.Errorf("the report says %q", c.not)
+			}
+		})
+	}
+}
+
+// A result that lacks what drawings need is refused.
+func TestIncomplete(t *testing.T) {
+	f := demo(t, "cutting")
+	f.Existing.Section = nil
+	if err := Write(&bytes.Buffer{}, f); err == nil || !strings.Contains(err.Error(), "run compare again") {
+		t.Errorf("an incomplete result gives %v", err)
+	}
+}
+
+func TestRounding(t *testing.T) {
+	for _, c := range []struct{ name, got, want string }{
+		{"required up", required(1.2341), "1.235"},
+		{"required without a last zero", required(1.30), "1.30"},
+		{"nothing required", required(0), none},
+		{"asked without the noise of a sum", asked(&report.TradePoint{RequiredFS: 1.3 + 0.05 + 0.05 + 1e-15}), "1.40"},
+		{"factor down", factor(1.2999), "1.299"},
+		{"no factor", factor(report.Number(math.NaN())), "none"},
+	} {
+		if c.got != c.want {
+			t.Errorf("%s: %s, want %s", c.name, c.got, c.want)
+		}
+	}
+}
+
+// A rebuilt file gives the same report as one that holds more than it needs: the report reads nothing else than result.json.
+func TestUnknownFieldsDoNoHarm(t *testing.T) {
+	raw, err := os.ReadFile(filepath.Join("..", "sheet", "testdata", "cutting.json"))
+	if err != nil {
+		t.Fatal(err)
+	}
+	var m map[string]any
+	if err := json.Unmarshal(raw, &m); err != nil {
+		t.Fatal(err)
+	}
+	m["later"] = "field"
+	more, err := json.Marshal(m)
+	if err != nil {
+		t.Fatal(err)
+	}
+	f, err := report.Decode(bytes.NewReader(more))
+	if err != nil {
+		t.Fatal(err)
+	}
+	if !bytes.Equal(written(t, f), written(t, demo(t, "cutting"))) {
+		t.Error("a later field changes the report")
+	}
+}
+
+func BenchmarkWrite(b *testing.B) {
+	f := demo(b, "cutting")
+	b.ReportAllocs()
+	for b.Loop() {
+		written(b, f)
+	}
+}
