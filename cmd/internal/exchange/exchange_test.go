@@ -316,3 +316,30 @@ func BenchmarkWriteQuantities(b *testing.B) {
 		}
 	}
 }
+
+// Where the site serves some of the fill, what is brought and taken away is an amount of its own.
+func TestHaulOfReuse(t *testing.T) {
+	f := sample()
+	o := &f.Options[0]
+	o.Quantities.Import, o.Quantities.Dispose = 10.5, 0.25
+	_, x := book1(t, f)
+	rows, err := x.GetRows(sheetNames(f.Options)[0])
+	if err != nil {
+		t.Fatal(err)
+	}
+	want := map[string]float64{"Brought in, with what the site serves": 10.5 * 60, "Taken away, with what the site serves": 0.25 * 60}
+	for r, row := range rows {
+		if len(row) == 0 {
+			continue
+		}
+		if total, ok := want[row[0]]; ok {
+			delete(want, row[0])
+			if got := calc(t, x, sheetNames(f.Options)[0], fmt.Sprintf("D%d", r+1)); math.Abs(got-total) > 1e-9 {
+				t.Errorf("%s: %v, want %v", row[0], got, total)
+			}
+		}
+	}
+	if len(want) > 0 {
+		t.Errorf("no row for %v", want)
+	}
+}

@@ -4,6 +4,7 @@ import (
 	"fmt"
 	"io"
 	"maps"
+	"math"
 	"slices"
 	"strings"
 	"unicode/utf8"
@@ -162,8 +163,8 @@ func (b *book) optionSheet(name string, o *report.Option) *page {
 	fills := p.items("Fill", q.FillBySoil, "m³", item{"stone in trenches", q.Stone})
 	p.sum(totalFill, "Fill, compacted", "m³", fills)
 	p.plus(totalEarthworks, "Earthworks: cut and fill", p.totals[totalCut], p.totals[totalFill])
-	p.equal(totalImport, "Brought in: all fill", p.totals[totalFill])
-	p.equal(totalDispose, "Taken away: all cut", p.totals[totalCut])
+	p.haul(totalImport, "Brought in", "all fill", q.Import, q.Fill, p.totals[totalFill])
+	p.haul(totalDispose, "Taken away", "all cut", q.Dispose, q.Cut, p.totals[totalCut])
 	p.single(totalDrain, "Drains", "m", q.Drain)
 	p.single(totalStrip, "Ground stripped", "m²", q.Strip)
 	p.amount()
@@ -236,14 +237,19 @@ func (p *page) plus(t total, name string, a, b int) {
 	p.total(t, name, "m³", p.option.Quantities.Earthworks, p.at(colPerMetre, a)+"+"+p.at(colPerMetre, b))
 }
 
-// equal writes a row that repeats a total and can be priced on its own.
-func (p *page) equal(t total, name string, row int) {
-	value := p.option.Quantities.Import
-	if t == totalDispose {
-		value = p.option.Quantities.Dispose
+// sameVolume is the relative difference below which two volumes are one.
+const sameVolume = 1e-9
+
+// haul writes a row of what is brought or taken away, which can be priced on its own: a formula that repeats the total in a row where it is all
+// of that, and an amount where the site serves some of it.
+func (p *page) haul(t total, name, all string, value, whole float64, row int) {
+	if math.Abs(value-whole) <= sameVolume*whole {
+		p.words(name+": "+all, "m³")
+		p.formula(colPerMetre, p.styles.number, value, "%s", p.at(colPerMetre, row))
+	} else {
+		p.words(name+", with what the site serves", "m³")
+		p.number(colPerMetre, value)
 	}
-	p.words(name, "m³")
-	p.formula(colPerMetre, p.styles.number, value, "%s", p.at(colPerMetre, row))
 	p.extend(value)
 	p.rate()
 	p.totals[t] = p.row

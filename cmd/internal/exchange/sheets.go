@@ -148,8 +148,8 @@ func statusText(o *report.Option) string {
 func (p *page) foot() {
 	p.row++
 	for _, s := range []string{
-		"Cut is bank volume, fill compacted volume; they are never netted and no reuse is assumed.",
-		"Import and disposal repeat fill and cut for a haulage rate of their own: price each only once.",
+		"Cut is bank volume, fill compacted volume; they are never netted. Cut is used as fill only where the case says so.",
+		"Import and disposal are part of fill and cut, again, for a haulage rate of their own: price each only once.",
 		"Existing ground stripped is not in the earthworks.",
 		report.Cautions()[0],
 	} {

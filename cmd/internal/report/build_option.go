@@ -139,7 +139,9 @@ func (b *builder) tradePoint(o *remedies.Option, t *remedies.TradeoffPoint) Trad
 	for _, list := range [][]remedies.Outcome{t.Situations, t.Stages} {
 		for i := range list {
 			a := answer(&list[i])
-			a.RequiredFS += t.Shift
+			if !a.Advisory {
+				a.RequiredFS += t.Shift
+			}
 			out.Checks = append(out.Checks, a)
 			out.Water[a.Name] = water(&list[i].Check.Situation.Water, t.Proposal.Section.Soils)
 		}
@@ -150,7 +152,7 @@ func (b *builder) tradePoint(o *remedies.Option, t *remedies.TradeoffPoint) Trad
 // answer lays out the answer to one check.
 func answer(o *remedies.Outcome) Answer {
 	c := &o.Check
-	a := Answer{Name: c.Label(), RequiredFS: c.Required, Found: found(o)}
+	a := Answer{Name: c.Label(), RequiredFS: c.Required, Advisory: c.Advisory, Found: found(o)}
 	if c.Note != "" {
 		a.VariantOf, a.Variant = c.Name, c.Note
 	}

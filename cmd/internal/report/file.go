@@ -209,7 +209,8 @@ type Answer struct {
 	Name       string  `json:"name"`                 // Name of the situation.
 	VariantOf  string  `json:"variant_of,omitempty"` // Of a variant: the design situation that it belongs to.
 	Variant    string  `json:"variant,omitempty"`    // Of a variant: what is different.
-	RequiredFS float64 `json:"required_fs"`          // FS required.
+	RequiredFS float64 `json:"required_fs"`          // FS required; 0 if the check is advisory.
+	Advisory   bool    `json:"advisory,omitempty"`   // True: nothing is asked of it; see the stages.
 	Found
 	Influence *Influence `json:"influence,omitempty"` // Of assess: what loads on the ground do to the FS of the governing slip.
 }

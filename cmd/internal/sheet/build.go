@@ -137,7 +137,9 @@ func (b *builder) addRows() {
 	}
 	for i := range b.f.Options {
 		for _, s := range b.f.Options[i].Stages {
-			add(row{Name: s.Name, Parent: -1, Stage: true, required: s.RequiredFS})
+			if !s.Advisory { // What nothing is asked of neither passes nor fails.
+				add(row{Name: s.Name, Parent: -1, Stage: true, required: s.RequiredFS})
+			}
 		}
 	}
 }

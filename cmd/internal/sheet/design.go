@@ -38,12 +38,20 @@ func (b *builder) sized(o *report.Option) design {
 	b.govern(&d)
 	t := &o.Totals
 	b.addTexts(&d, o, o.Parameters, &o.Quantities)
-	d.Texts["cost"], d.Texts["carbon"], d.Texts["loads"] = given(t.Cost, ""), given(t.Carbon, " t"), given(t.Loads, "")
+	d.Texts["cost"], d.Texts["carbon"], d.Texts["loads"] = given(t.Cost, b.currency()), given(t.Carbon, " t"), given(t.Loads, "")
 	if o.Status == meetsTarget {
 		d.Texts["change"] = "as much as for the specified target"
 	}
 	d.Texts["land"] = b.landText(o.Section.Ground, o.Section.Placed, o.Section.Water, o.Quantities.Drain > 0)
 	return d
+}
+
+// currency returns what stands behind a cost.
+func (b *builder) currency() string {
+	if c := b.f.Economics.Currency; c != "" {
+		return " " + c
+	}
+	return ""
 }
 
 // traded lays out a point of a trade-off.
@@ -57,9 +65,9 @@ func (b *builder) traded(o *report.Option, p *report.TradePoint, specified *desi
 	b.govern(&d)
 	d.margin = min(d.margin, p.ReachedFS-p.RequiredFS+report.Number(p.Shift))
 	b.addTexts(&d, o, p.Parameters, &p.Quantities)
-	d.Texts["cost"] = forTarget(p.Cost, specified.Texts["cost"])
-	d.Texts["carbon"] = forTarget(nil, specified.Texts["carbon"])
-	d.Texts["loads"] = forTarget(nil, specified.Texts["loads"])
+	d.Texts["cost"] = forTarget(p.Cost, b.currency(), specified.Texts["cost"])
+	d.Texts["carbon"] = forTarget(p.Carbon, " t", specified.Texts["carbon"])
+	d.Texts["loads"] = forTarget(p.Loads, "", specified.Texts["loads"])
 	d.Texts["land"] = b.landText(p.Ground, p.Placed, p.Water, p.Quantities.Drain > 0)
 	if o.Status == meetsTarget {
 		d.Texts["change"] = change(p.Quantities.Earthworks, o.Quantities.Earthworks, b.f.Case.Length)

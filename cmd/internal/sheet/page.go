@@ -137,7 +137,7 @@ func (b *builder) addRests() {
 			}
 		}
 	}
-	m.Assumed = append(m.Assumed, "Volumes: cut is bank volume, fill compacted volume, never netted; no reuse of what is dug is assumed, so all cut is taken away and all fill is brought in.")
+	m.Assumed = append(m.Assumed, "Volumes: cut is bank volume, fill compacted volume, never netted; all cut is taken away and all fill is brought in, but for what the case says may serve as fill.")
 	if f.Settings.DepthOfInterest > 0 {
 		m.Assumed = append(m.Assumed, fmt.Sprintf("Slips nowhere deeper than %s m below ground are left out.", report.SizeText(f.Settings.DepthOfInterest)))
 	}

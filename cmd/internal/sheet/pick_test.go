@@ -228,3 +228,30 @@ func TestLand(t *testing.T) {
 		}
 	}
 }
+
+// What nothing is asked of has no row, and costs stand with their currency, also for a point of the trade-off.
+func TestAdvisoryAndCost(t *testing.T) {
+	f := invented(1.1, meetsTarget, 1.306, 10, point(0.1, 1.41, 12))
+	f.Economics.Currency = "EUR"
+	o := &f.Options[0]
+	cost, carbon := report.Number(1234.5), report.Number(2.25)
+	o.Totals.Cost, o.Tradeoff[0].Carbon, o.Totals.Carbon = &cost, &carbon, &carbon
+	o.Stages = append(o.Stages, report.Stage{Name: "open hole, plane strain", Advisory: true, Found: report.Found{FS: 0.9}, Section: o.Section})
+	m := newBuilder(f)
+	for _, r := range m.m.Data.Rows {
+		if r.Name == "open hole, plane strain" {
+			t.Error("an advisory check has a row")
+		}
+	}
+	d := m.sized(o)
+	if got := d.Texts["cost"]; got != "1,235 EUR" {
+		t.Errorf("cost %q", got)
+	}
+	p := m.traded(o, &o.Tradeoff[0], &d)
+	if got := p.Texts["carbon"]; got != "3 t" {
+		t.Errorf("carbon of a point %q", got)
+	}
+	if got := p.Texts["cost"]; got != "not worked out for this target" {
+		t.Errorf("cost of a point without one %q", got)
+	}
+}

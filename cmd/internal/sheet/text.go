@@ -40,8 +40,8 @@ func given(v *report.Number, unit string) string {
 }
 
 // forTarget returns a total of a point of a trade-off, which may be missing where the option as specified has one.
-func forTarget(v *report.Number, specified string) string {
-	if text := given(v, ""); text != notGiven || specified == notGiven {
+func forTarget(v *report.Number, unit, specified string) string {
+	if text := given(v, unit); text != notGiven || specified == notGiven {
 		return text
 	}
 	return "not worked out for this target"
