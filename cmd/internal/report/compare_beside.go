@@ -43,17 +43,16 @@ func (p *printer) materials(f *File) {
 	for i := range f.Options {
 		t := &f.Options[i].Totals
 		row := table.Row{f.Options[i].Title}
-		for _, c := range []struct {
-			shown bool
-			text  string
-		}{
-			{haul, TotalText(t.Import)}, {haul, TotalText(t.Dispose)}, {loads, optional(t.Loads, TotalText)}, {cost, optional(t.Cost, TotalText)},
-			{carbon, optional(t.Carbon, QuantityText)},
-		} {
-			if c.shown {
-				row = append(row, c.text)
+		cell := func(shown bool, text string) {
+			if shown {
+				row = append(row, text)
 			}
 		}
+		cell(haul, TotalText(t.Import))
+		cell(haul, TotalText(t.Dispose))
+		cell(loads, optional(t.Loads, TotalText))
+		cell(cost, optional(t.Cost, TotalText))
+		cell(carbon, optional(t.Carbon, QuantityText))
 		rows = append(rows, row)
 	}
 	p.heading(fmt.Sprintf("For the whole length of %s m (rounded up; - where a rate or factor is blank)", SizeText(f.Case.Length)))

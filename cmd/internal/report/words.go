@@ -175,10 +175,10 @@ func (f *File) objective() string {
 
 // named returns the title of an option, with its cost or carbon where that is what was made least.
 func (f *File) named(o *Option) string {
-	switch o2, _ := remedies.ParseObjective(f.Settings.Objective); {
-	case o2 == remedies.LeastCost && o.Totals.Cost != nil:
+	switch least, _ := remedies.ParseObjective(f.Settings.Objective); {
+	case least == remedies.LeastCost && o.Totals.Cost != nil:
 		return o.Title + ", " + f.money(TotalText(float64(*o.Totals.Cost)))
-	case o2 == remedies.LeastCarbon && o.Totals.Carbon != nil:
+	case least == remedies.LeastCarbon && o.Totals.Carbon != nil:
 		return o.Title + ", " + QuantityText(float64(*o.Totals.Carbon)) + " t CO2 equivalent"
 	}
 	return o.Title
@@ -225,7 +225,7 @@ func (f *File) RelaxationTexts(o *Option) []string {
 			saves = f.money(floorText(r.Saves, 0))
 		case remedies.LeastCarbon:
 			saves += " kg CO2 equivalent"
-		default:
+		case remedies.LeastEarthworks:
 			saves += " m3 per metre run"
 		}
 		out = append(out, fmt.Sprintf("Moving the %s %s saves %s (%s; searched, not audited).", strings.TrimPrefix(r.Limit, "the "),
