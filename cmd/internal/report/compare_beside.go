@@ -113,8 +113,12 @@ func (p *printer) sensitivity(f *File, o *Option) {
 	}
 	p.heading(fmt.Sprintf("How sure: FS of %s, and of the slope as it is, with one input at either end of its swing (searched, not audited)", o.Title))
 	p.table([]column{
-		{head: "input", most: 30}, {head: "FS low", right: true}, {head: "FS high", right: true}, {head: "before\nworks, low", right: true},
-		{head: "before\nworks, high", right: true}, {most: 36},
+		{head: "input", most: 30},
+		{head: "FS low", right: true},
+		{head: "FS high", right: true},
+		{head: "before\nworks, low", right: true},
+		{head: "before\nworks, high", right: true},
+		{most: 36},
 	}, rows)
 }
 
