@@ -12,7 +12,7 @@ import (
 
 // Measures of the strip of construction, points.
 const (
-	panelsAcross = 3
+	panelsAcross = 3    // At most; four stand two by two.
 	panelGap     = 14.0 // Between panels, side by side and above each other.
 	panelHead    = 2.0  // Lines of the name of a panel.
 	panelFoot    = 2.0  // Lines of its answer.
@@ -83,6 +83,9 @@ func (p *picture) frame(panels []panel) {
 func layOutSequence(p *picture, panels []panel, width float64) *Figure {
 	s := &sheet{}
 	across := min(panelsAcross, len(panels))
+	if len(panels) == panelsAcross+1 {
+		across = 2
+	}
 	rows := (len(panels) + across - 1) / across
 	w := (width - panelGap*float64(across-1)) / float64(across)
 	tall := max(leastPanel, w*(p.hi-p.lo)*(1+2*panelSpare)/(p.x1-p.x0))

@@ -9,7 +9,7 @@ import (
 
 // closing writes what the answer rests on and what would undo it.
 func (a *author) closing() {
-	a.chapter("Assumptions, sensitivity to them, cautions")
+	a.chapter("Assumptions, what would change the answer, cautions")
 	a.assumptions()
 	a.changes()
 	a.heading("Cautions")
@@ -23,8 +23,12 @@ func (a *author) assumptions() {
 	list := []string{
 		"The ground between and below the points given is as drawn; strengths and unit weights are those of the case, not factored, and the same along the works.",
 		"The water lines given are taken as the worst credible ones of their situations, and those under works stay as drawn.",
-		"All fill is brought and all cut is taken away, unless the case says what is used again. No bulking is counted in the earthworks.",
 		"Fill has its full strength as soon as it is placed and compacted, on stripped and benched ground.",
+	}
+	if len(a.f.OnSite) == 0 {
+		list = append(list, "All fill is brought to the site and all cut is taken away: the case names no material of the site to use.")
+	} else {
+		list = append(list, "Cut and stockpiles are fit for the use that the case gives them, and what is won is not lost.")
 	}
 	if a.f.StageSettings != nil {
 		list = append(list, "Works are done in the order of their stages, in the water of the construction season.")
@@ -48,6 +52,10 @@ func (a *author) changes() {
 		a.margin(o)
 		if s := a.f.StepLessText(o); s != "" {
 			a.item(title(cubic(s)))
+		}
+		a.shortSwings(o)
+		for _, s := range a.f.RelaxationTexts(o) {
+			a.item(cubic(s))
 		}
 		a.shifted(o)
 		a.next(o)

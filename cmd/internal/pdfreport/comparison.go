@@ -30,6 +30,7 @@ func (a *author) comparison() error {
 		text("option"), number("earthworks\nm³/m"), number("cut\nm³/m"), number("fill\nm³/m"), number("drains\nm/m"), number("earthworks\nin all, m³"),
 		text("check with the least margin"), number("FS"), number("required"), text("status"),
 	}, rows)
+	a.haul()
 	a.matrix()
 	high := contentFoot - a.y - 3*faceHead.lead()
 	if high < leastPlot { // It goes to the next page.

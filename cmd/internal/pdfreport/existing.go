@@ -23,6 +23,14 @@ func (a *author) existing() error {
 	for _, n := range append(append([]string{}, o.Notes...), o.NotChecked...) {
 		a.item(sentence(n))
 	}
+	a.handChecks(o)
+	if err := a.sensitivity(o, r); err != nil {
+		return err
+	}
+	back, err := a.back()
+	if err != nil {
+		return err
+	}
 	g := r.Governing()
 	if g != nil && !math.IsNaN(g.FS) {
 		a.para(fmt.Sprintf("The section with the slip that governs (%s), its slice table, and its influence line of load follow on pages that fold out.", g.Check.Label()))
@@ -37,7 +45,7 @@ func (a *author) existing() error {
 	if err := a.influence(g); err != nil {
 		return err
 	}
-	return a.back()
+	return a.onFold(back, nil)
 }
 
 // influence draws what loads on the ground do to the critical slip of a check.

@@ -22,6 +22,7 @@ func (a *author) inputs() {
 	a.loads()
 	a.situations()
 	a.limits()
+	a.economics()
 	a.settings()
 }
 
@@ -246,6 +247,23 @@ func (a *author) limits() {
 	for _, m := range l.MaxLevels {
 		rows = append(rows, cells(m.Name, "ground after works no higher than level "+report.SizeText(m.Level)+" m", span(m.FromX, m.ToX)))
 	}
+	for _, o := range l.Overhead {
+		rows = append(rows, cells(o.Name, fmt.Sprintf("ground after works stays %s m clear of level %s m", report.SizeText(o.Clearance), report.SizeText(o.Level)), span(o.FromX, o.ToX)))
+	}
+	for _, n := range []struct {
+		name, words, unit string
+		value             *float64
+	}{
+		{"steepest face that stays", "1V:", "H", l.Permanent},
+		{"steepest face during construction", "1V:", "H", l.Temporary},
+		{"least width of a bench", "", " m", l.MinBench},
+		{"least width that plant travels on", "", " m", l.MinHaul},
+		{"most fill and stone brought", "", " m³ compacted, for the whole length", l.MaxImport},
+	} {
+		if n.value != nil {
+			rows = append(rows, cells(n.name, n.words+report.SizeText(*n.value)+n.unit, none))
+		}
+	}
 	if l.Outfall != nil {
 		rows = append(rows, cells("drain outfall", "drains discharge at level "+report.SizeText(*l.Outfall)+" m or above", none))
 	}
@@ -282,6 +300,7 @@ func (a *author) settings() {
 		return "offset " + span(r[0], r[1]) + " m"
 	}
 	rows := []row{
+		cells("what sizings make least", objective(a.f)),
 		cells("depth of interest: slips nowhere deeper below the ground are left out", report.SizeText(s.DepthOfInterest)+" m"),
 		cells("movement looked at", movement),
 		cells("slices of a slip in a search; twice as many in an audit", fmt.Sprint(s.Slices)),

@@ -17,17 +17,27 @@ func (a *author) option(o *report.Option, r *remedies.Option) error {
 	a.chapter("Option: " + optionTitle(o))
 	a.status(o)
 	a.quantities(o)
+	a.bill(o)
 	list := answersOf(o)
 	a.heading("Situations and stages: factor of safety by method on the critical slip (rounded down)")
 	a.factors(list)
 	a.heading("Critical slips")
 	a.slips(list)
+	for i := range o.Stages {
+		if s := &o.Stages[i]; s.Says != "" {
+			a.item(sentence(s.Name + ": " + s.Says))
+		}
+	}
+	a.handChecks(o)
 	a.certificate(o)
 	figure, err := drawing.Sequence(&a.r.Existing, r, a.r.Job, a.width())
 	if err := a.amid("Construction, from left to right: the lowest FS of each state", figure, err); err != nil {
 		return err
 	}
 	if err := a.tradeoff(o, r); err != nil {
+		return err
+	}
+	if err := a.sensitivity(o, r); err != nil {
 		return err
 	}
 	section, err := drawing.Section(a.r.Job, r, drawing.Options{})
@@ -90,8 +100,8 @@ func (a *author) quantities(o *report.Option) {
 		name  string
 		value *report.Number
 		unit  string
-	}{{"lorry loads", t.Loads, ""}, {"cost, at the rates of the case", t.Cost, ""}, {"carbon, at the factors of the case", t.Carbon, "t"}} {
-		if v.value != nil && v.value.Known() {
+	}{{"lorry loads", t.Loads, ""}, {"cost, at the rates of the case", t.Cost, a.f.Economics.Currency}, {"carbon, at the factors of the case", t.Carbon, "t CO2e"}} {
+		if known(v.value) {
 			rows = append(rows, cells(v.name, "", report.TotalText(float64(*v.value)), v.unit))
 		}
 	}
@@ -118,6 +128,9 @@ func (a *author) certificate(o *report.Option) {
 	}
 	if s := a.f.StepLessText(o); s != "" {
 		a.para(cubic(s))
+	}
+	for _, s := range a.f.RelaxationTexts(o) {
+		a.item(cubic(s))
 	}
 	var axes []row
 	for _, x := range c.Axes {

@@ -86,6 +86,7 @@ func TestTextsOfAnyCaseStandFree(t *testing.T) {
 	for _, c := range []struct {
 		name   string
 		change func(f *report.File)
+		want   []string
 	}{
 		{"long names", func(f *report.File) {
 			f.Case.Title, f.Case.File, f.Program.Version = long+" "+long, long, long
@@ -93,25 +94,58 @@ func TestTextsOfAnyCaseStandFree(t *testing.T) {
 			f.Case.Notes = []string{long + long}
 			f.Existing.Section.Surcharges[0].Name = long
 			f.Limits.KeepClear[0].Name = long
-		}},
+		}, nil},
 		{"other scripts", func(f *report.File) {
 			f.Case.Title = "Łódź φ′ ≥ 1.25 \U0001f600\x01 滑坡"
 			f.Options[0].Title = "\U0001f600"
-		}},
+		}, []string{"Łódź φ′ ≥ 1.25 ?"}},
 		{"many options", func(f *report.File) {
 			for len(f.Options) < 20 {
 				f.Options = append(f.Options, f.Options[1])
 			}
+		}, nil},
+		{"all that a result may hold", func(f *report.File) {
+			n := func(v float64) *float64 { return &v }
+			money, weight := report.Number(1234.5), report.Number(56.789)
+			f.Economics = report.Economics{
+				Currency: "EUR", StripDepth: n(0.3), LorryLoad: n(10), Rates: map[string]float64{"cut": 1, "import": 3},
+				Carbon: map[string]float64{"cut": 2}, Soils: map[string]report.SoilFactors{"stiff clay": {Bulking: n(1.3), ImportRate: n(5)}},
+			}
+			f.OnSite = []report.OnSiteFill{{Name: "cut clay", CutOf: "stiff clay", Serves: []string{"granular fill"}, Share: 0.8, Volume: n(1200)}}
+			f.Limits.Overhead = []report.Overhead{{Name: "line", FromX: 30, ToX: 40, Level: 115, Clearance: 2}}
+			f.Limits.Permanent, f.Limits.MinBench, f.Limits.MaxImport = n(2), n(3), n(2000)
+			o := &f.Options[0]
+			o.Totals.Cost, o.Totals.Carbon, o.Totals.Loads = &money, &weight, &weight
+			o.Bill = []report.BillItem{{Work: "import", Soil: "granular fill", Unit: "m3", PerMetre: &weight, Total: &money, Cost: &money, Carbon: &weight}, {Work: "strip", Unit: "m2"}}
+			o.HandChecks = []report.HandCheck{{Name: "bearing under the fill", FS: 3.8449, RequiredFS: 1.1, Working: "5.14 x 35 kPa over 46.8 kPa", Source: "Prandtl (1921)"}}
+			o.Relaxations = []report.Relaxation{{Limit: "toe fence", Change: "moved 1.00 m outwards", Saves: 1.239, Parameters: o.Parameters}}
+			o.Sensitivity = []report.Bar{{
+				Input: "water level", Base: report.Swung{FS: 1.3069, Check: "normal water", RequiredFS: 1.3}, Low: report.Swung{FS: 1.4009, Check: "normal water", RequiredFS: 1.3},
+				High: report.Swung{FS: 1.2019, Check: "normal water", RequiredFS: 1.3},
+			}, {Input: "unit weight", Base: report.Swung{FS: 1.3}, Low: report.Swung{FS: report.Number(math.NaN())}, High: report.Swung{FS: 1.3}}}
+			o.Stages[0].Advisory, o.Stages[0].RequiredFS, o.Stages[0].Says = true, 0, "as if open along the whole length"
+		}, []string{
+			"1,235", "56.79", "3.844", "low 1.400", "high 1.201", "no answer at one end", "saves 1.23 m³", "short of 1.30", "told only", "80 % of the cut of stiff clay",
+			"stays 2 m clear of level 115 m", "steepest face that stays 1V:2H", "as if open along the whole length",
 		}},
 		{"wide numbers", func(f *report.File) {
 			f.Options[0].Quantities.Earthworks, f.Options[0].Totals.Earthworks = 123456789.123, 9876543210.5
-		}},
+		}, []string{"123456789.13", "9,876,543,211"}},
 	} {
 		t.Run(c.name, func(t *testing.T) {
 			f := demo(t, "cutting")
 			c.change(f)
 			b := laidOut(t, f)
 			standing(t, b)
+			text := said(b)
+			for _, want := range c.want {
+				if !strings.Contains(text, want) {
+					t.Errorf("the report does not say %q", want)
+				}
+			}
+			if strings.Contains(text, "NaN") {
+				t.Error("a number that there is not is shown")
+			}
 			written(t, f)
 		})
 	}

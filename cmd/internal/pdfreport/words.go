@@ -30,6 +30,9 @@ func line(ps []report.Point) string {
 // cubic writes cubic metres as printers do.
 func cubic(s string) string { return strings.ReplaceAll(s, " m3", " m³") }
 
+// raised writes the powers of a unit as printers do.
+func raised(unit string) string { return strings.NewReplacer("m2", "m²", "m3", "m³").Replace(unit) }
+
 // sentence gives a text a capital and a full stop; quotation marks of the case file are left out.
 func sentence(s string) string {
 	s = strings.ReplaceAll(s, "`", "")
@@ -96,6 +99,14 @@ func verdict(a *report.Found, required float64) (string, colour) {
 		return "unresolved", inkBad
 	}
 	return "meets", inkGood
+}
+
+// objective names what sizings make least.
+func objective(f *report.File) string {
+	if f.Settings.Objective == "" { // A result of an earlier version.
+		return "earthworks"
+	}
+	return f.Settings.Objective
 }
 
 // methodsOf returns the methods that answered in any of the checks, in the engine's order.
