@@ -149,14 +149,22 @@ func (s *sheet) state(p *picture, q *panel) {
 		s.add(stroke{pen{inkGrey, 0.6, []float64{4, 2}}, [][]xy{s.view.line(before)}})
 	}
 	if o := q.outcome; o != nil {
-		if w := o.Check.Situation.Water.Line; len(w) > 0 {
-			s.add(stroke{pen{waterInk, 0.7, nil}, [][]xy{s.view.line(cropInside(w, p.x0, p.x1))}})
-		}
+		s.panelWater(p, &o.Check.Situation.Water)
 		if !math.IsNaN(o.FS) {
 			s.add(stroke{pen{slipInk, 1.1, nil}, [][]xy{s.view.line(slipLine(o))}})
 		}
 	}
 	s.add(stroke{pen{inkBlack, 1.2, nil}, [][]xy{s.view.line(ground)}})
+}
+
+// panelWater draws the water line, lowered by drains where there are any, and their invert.
+func (s *sheet) panelWater(p *picture, w *lem.Water) {
+	line := w.Line
+	if w.Drains != nil {
+		line = remedies.LoweredLine(w)
+		s.add(stroke{pen{waterInk, 0.6, []float64{4, 1.5, 1, 1.5}}, [][]xy{s.view.line(cropInside(w.Drains.Invert, p.x0, p.x1))}})
+	}
+	s.add(stroke{pen{waterInk, 0.7, nil}, [][]xy{s.view.line(cropInside(line, p.x0, p.x1))}})
 }
 
 // answer is the FS of a panel in words.

@@ -78,7 +78,7 @@ func (b *book) heading(name string) {
 func (b *book) headingHere(name string) {
 	const follows = 46.0
 	if b.y > contentTop {
-		b.y += 8
+		b.y += 6
 	}
 	b.need(faceHead.lead() + follows)
 	for _, l := range b.wrap(faceHead, name, b.width()) {

@@ -136,7 +136,7 @@ func (a *author) reasons() {
 	for i := range a.f.Options {
 		o := &a.f.Options[i]
 		if o.Reason != "" && o.Status != meetsTarget {
-			out = append(out, fmt.Sprintf("%s, %s: %s", optionTitle(o), o.Status, strings.TrimPrefix(o.Reason, o.Title+", "+o.Status+": ")))
+			out = append(out, fmt.Sprintf("%s, %s: %s", optionTitle(o), o.Status, strings.TrimPrefix(reason(o), o.Title+", "+o.Status+": ")))
 		}
 	}
 	if len(out) == 0 {

@@ -100,6 +100,7 @@ func (a *author) checker() {
 // form draws an empty table to be filled in by hand; lead are the words in its first column.
 func (a *author) form(heads []string, shares []float64, rows int, lead ...string) {
 	const high = 19.0
+	a.need(16 + high*float64(rows))
 	top := a.y
 	x := a.left()
 	for i, h := range heads {

@@ -53,7 +53,7 @@ func (a *author) status(o *report.Option) {
 	if o.Status != meetsTarget {
 		c = inkBad
 	}
-	a.indented(faceStrong, c, 0, "", title(o.Status)+": "+cubic(o.Reason)+".")
+	a.indented(faceStrong, c, 0, "", title(o.Status)+": "+reason(o)+".")
 	if dims := o.Dimensions(o.Parameters); dims != "" {
 		a.para("Works: " + dims + ".")
 	}
@@ -69,6 +69,15 @@ func (a *author) status(o *report.Option) {
 	for _, n := range o.NotChecked {
 		a.item("Not checked: " + n + ".")
 	}
+}
+
+// reason says why the status is what it is, with the names of dimensions in words.
+func reason(o *report.Option) string {
+	s := cubic(o.Reason)
+	for _, name := range o.Order {
+		s = strings.ReplaceAll(s, name, dimension(name))
+	}
+	return s
 }
 
 // quantities writes the amounts that are not 0, per metre run and in all.
@@ -177,8 +186,13 @@ func (a *author) tradeoff(o *report.Option, r *remedies.Option) error {
 		if !t.ReachedFS.Known() || !t.Earthworks.Known() {
 			continue
 		}
-		rows = append(rows, cells(asked(t), report.FactorText(reached(o, t)), report.QuantityText(float64(t.Earthworks)),
-			report.TotalText(float64(t.Earthworks)*a.f.Case.Length), o.Dimensions(t.Parameters)))
+		r := cells(asked(t), report.FactorText(reached(o, t)), report.QuantityText(float64(t.Earthworks)),
+			report.TotalText(float64(t.Earthworks)*a.f.Case.Length), o.Dimensions(t.Parameters))
+		if t.ReachedFS < t.RequiredFS {
+			r.cells[4] = "not reached; the best: " + r.cells[4]
+			r.inks = map[int]colour{1: inkBad, 4: inkBad}
+		}
+		rows = append(rows, r)
 	}
 	a.table([]column{number("FS asked for"), number("FS reached"), number("earthworks\nm³/m"), number("in all\nm³"), text("works")}, rows)
 	a.note("The required factor of every check moves alike; shown is that of the check that governs the option. Designs for another target were searched, and not audited: size the case anew before relying on one.")
