@@ -27,6 +27,12 @@ func (m *Model) lowest(ws *Workspace, s *Slip, o *Setting) (best Result, at part
 	}
 	for i := 0; i < len(ws.parts); i++ {
 		p := ws.parts[i]
+		if p.from < m.left || p.to > m.right { // Out there nobody has said what the ground is.
+			if best.Status == Missed {
+				best.Status, best.Reason = Inadmissible, NotDaylighting
+			}
+			continue
+		}
 		depth, clear := m.depthOf(s, p)
 		if depth < o.MinDepth || depth <= stepWidth*(m.right-m.left) { // A sliver no deeper than a drawn-out step is wide is rounding.
 			continue

@@ -106,7 +106,7 @@ func TestLineAboveGroundIsNoLoad(t *testing.T) {
 
 // TestRulesOfAdmissibility checks what keeps a slip from having an F.
 func TestRulesOfAdmissibility(t *testing.T) {
-	s := uniform(face(8, 26*degree, 30), Soil{UnitWeight: 19, Cohesion: 3, Friction: 35 * degree})
+	s := uniform(face(8, 26*degree, 90), Soil{UnitWeight: 19, Cohesion: 3, Friction: 35 * degree})
 	based := *s
 	based.FirmBase = level(-1)
 	deep := Slip{Centre: Point{-2, 14}, Radius: 17}    // Bottom at -3.

@@ -9,7 +9,7 @@ type Reason uint8
 // The reasons, in the order in which they are looked for.
 const (
 	Admissible     Reason = iota
-	NotDaylighting        // The slip does not come up to the ground at both ends.
+	NotDaylighting        // The slip does not come up to the ground of the section at both ends.
 	BelowFirmBase         // The slip passes below the firm base.
 	CirclesOnly           // The method is for circles, the slip is none.
 	// SmallMAlpha: where the base rises towards the exit, m-alpha = cos(alpha) + sin(alpha) tan(phi)/F is below 0.2 (Whitman and Bailey 1967
@@ -29,7 +29,7 @@ const (
 )
 
 var reasonWords = [numReasons]string{
-	"admissible", "slip does not daylight at both ends", "slip passes below the firm base", "method is for circles only",
+	"admissible", "slip does not daylight in the section at both ends", "slip passes below the firm base", "method is for circles only",
 	"m-alpha too small at the exit", "interslice drag reversed", "tension over the base", "line of thrust far outside",
 }
 

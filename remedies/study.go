@@ -176,6 +176,7 @@ func (st *study) size(group []Request) error {
 		if found, err = d.searchBoth(ctx); err != nil {
 			return err
 		}
+		found = append(found, res.Best.Binding)
 	}
 	if len(found) > 0 {
 		o.Situations, o.Stages = split(d.outcomes(found))
