@@ -39,6 +39,10 @@ func checkTrial(ctx context.Context, j *Job, s *Settings, t *Trial) (*Option, er
 	default:
 		o.Binding = g.Check.Label()
 		o.Reason = fmt.Sprintf("%s: FS %s, required %s", g.Check.Label(), floorFS(g.FS), fsText(g.Check.Required))
+		if g.Margin() >= 0 {
+			o.Reason = fmt.Sprintf("%s: FS %s is within the search allowance %g of the %s required", g.Check.Label(), floorFS(g.FS), s.Allowance,
+				fsText(g.Check.Required))
+		}
 	}
 	return o, nil
 }
