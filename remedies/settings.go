@@ -9,7 +9,7 @@ type Settings struct {
 	Curves      bool    // Also size each single remedy for a range of required FS.
 	Pairs       bool    // Also size every compatible pair of remedies.
 	Relaxations bool    // Also size each answer with the limits that bind moved a little.
-	Sensitivity bool    // Also swing the job's inputs by Job.Swings, for the existing slope and each single remedy.
+	Sensitivity bool    // Also swing the inputs by Job.Swings: of the slope as it is, single remedies and pairs that meet the target.
 	Progress    func(Progress)
 	Finished    func(*Option) // Told of each option as soon as it is known, single remedies first.
 }

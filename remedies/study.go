@@ -196,7 +196,7 @@ func (st *study) size(group []Request) error {
 			return err
 		}
 	}
-	if j := st.j; j.Swings.Any() && st.s.Sensitivity && len(group) == 1 && !o.WhatIf {
+	if j := st.j; j.Swings.Any() && st.s.Sensitivity && (len(group) == 1 || o.Status == MeetsTarget) && !o.WhatIf {
 		if o.Sensitivity, err = z.sensitivity(ctx, o.Proposal); err != nil {
 			return err
 		}
