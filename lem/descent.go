@@ -13,7 +13,7 @@ const (
 func (s *searcher) descend(c candidate, scale vector) candidate {
 	for round := range roundsOfDescent {
 		before := c.r.F
-		c = s.simplex(c, scale)
+		c = s.simplex(c, scale, &allFree)
 		if round > 0 && !(before-c.r.F > descentGain*before) {
 			break
 		}
@@ -24,34 +24,39 @@ func (s *searcher) descend(c candidate, scale vector) candidate {
 	return c
 }
 
-// simplex is one run of Nelder and Mead's method.
-func (s *searcher) simplex(c candidate, scale vector) candidate {
-	var v [4]candidate
+// simplex is one run of Nelder and Mead's method in the parameters that a pin leaves free.
+func (s *searcher) simplex(c candidate, scale vector, pin *pin) candidate {
+	var corners [4]candidate
+	n := len(pin.free)
+	v := corners[:n+1]
 	v[0] = c
-	for i := range scale {
+	for k, i := range pin.free {
 		p := c.p
 		p[i] += scale[i]
-		v[i+1] = s.try(p)
-		if math.IsInf(v[i+1].r.F, 1) { // Perhaps there is room on the other side.
+		v[k+1] = s.tryPinned(p, pin)
+		if math.IsInf(v[k+1].r.F, 1) { // Perhaps there is room on the other side.
 			p[i] = c.p[i] - scale[i]
-			v[i+1] = s.try(p)
+			v[k+1] = s.tryPinned(p, pin)
 		}
 	}
 	for used := len(v); used < descentTrials; used++ {
-		order(&v)
-		if v[3].r.F-v[0].r.F <= descentRelTol*v[0].r.F {
+		order(v)
+		if v[n].r.F-v[0].r.F <= descentRelTol*v[0].r.F {
 			break
 		}
 		var mid vector
 		for i := range mid {
-			mid[i] = (v[0].p[i] + v[1].p[i] + v[2].p[i]) / 3
+			for _, c := range v[:n] {
+				mid[i] += c.p[i]
+			}
+			mid[i] /= float64(n)
 		}
 		along := func(t float64) candidate {
 			p := mid
 			for i := range p {
-				p[i] += t * (v[3].p[i] - mid[i])
+				p[i] += t * (v[n].p[i] - mid[i])
 			}
-			return s.try(p)
+			return s.tryPinned(p, pin)
 		}
 		r := along(-1)
 		switch {
@@ -60,17 +65,17 @@ func (s *searcher) simplex(c candidate, scale vector) candidate {
 			if e := along(-2); e.r.F < r.r.F {
 				r = e
 			}
-			v[3] = r
-		case r.r.F < v[2].r.F:
-			v[3] = r
+			v[n] = r
+		case r.r.F < v[n-1].r.F:
+			v[n] = r
 		default:
 			used++
 			t := 0.5
-			if r.r.F < v[3].r.F {
+			if r.r.F < v[n].r.F {
 				t = -0.5
 			}
-			if k := along(t); k.r.F < min(r.r.F, v[3].r.F) {
-				v[3] = k
+			if k := along(t); k.r.F < min(r.r.F, v[n].r.F) {
+				v[n] = k
 				continue
 			}
 			for j := 1; j < len(v); j++ {
@@ -78,17 +83,17 @@ func (s *searcher) simplex(c candidate, scale vector) candidate {
 				for i := range p {
 					p[i] += 0.5 * (v[j].p[i] - p[i])
 				}
-				v[j] = s.try(p)
+				v[j] = s.tryPinned(p, pin)
 			}
-			used += 3
+			used += n
 		}
 	}
-	order(&v)
+	order(v)
 	return v[0]
 }
 
-// order sorts the four corners by F, stable.
-func order(v *[4]candidate) {
+// order sorts the corners by F, stable.
+func order(v []candidate) {
 	for i := 1; i < len(v); i++ {
 		for j := i; j > 0 && v[j].r.F < v[j-1].r.F; j-- {
 			v[j], v[j-1] = v[j-1], v[j]

@@ -13,6 +13,7 @@ const (
 	turnTol       = 1e-6 // A bend to the wrong side of less than this, as a difference of slope, is rounding.
 	shortestPiece = 2e-3 // Nodes of a trial stay this share of its length apart.
 	mostDeepening = 1.6  // A trial shallower than the depth of interest is deepened by at most this factor.
+	polyOvershoot = 1e-3 // It is brought to within this share below the depth of interest.
 	deepenings    = 3    // It takes more than one where the ground bends over a piece.
 	circlePieces  = 7    // Straight pieces for a whole circle.
 	arcPiece      = 0.13 // Greatest angle of the pieces of the arcs of a composite slip, rad: F within 0.1 % of the arc,
@@ -116,7 +117,7 @@ func (p *polySearch) deepen(nodes []Point) bool {
 		if depth >= least {
 			return true
 		}
-		factor := least * (1 + depthOvershoot/2) / depth
+		factor := least * (1 + polyOvershoot/2) / depth
 		if !(factor < mostDeepening) {
 			return false
 		}

@@ -32,6 +32,7 @@ func (m *Model) Search(ctx context.Context, o SearchOptions) (Minima, error) {
 		s.found = append(s.found, s.descend(st, s.scale(st)))
 	}
 	s.found = s.distinct(s.found)
+	s.improvePinned(ctx)
 	s.tryKnown()
 	if s.o.Polylines && ctx.Err() == nil {
 		s.searchPolylines(ctx)
@@ -253,7 +254,7 @@ func (s *searcher) polish(ctx context.Context) {
 			for i := range scale {
 				scale[i] /= 8
 			}
-			polished = append(polished, s.descend(s.try(c.p), scale))
+			polished = append(polished, s.descendPinned(s.descend(s.try(c.p), scale)))
 		}
 		s.extra = append(s.extra, s.distinct(polished)...)
 	}

@@ -7,11 +7,13 @@ import (
 
 // Bounds of trial arcs.
 const (
-	flattest       = 0.02 // Least half angle of an arc, rad.
-	roundest       = 1.65 // Greatest half angle, rad: a little beyond a half circle.
-	projectSteps   = 10   // Steps to bring an arc to the depth of interest or up to the firm base.
-	tangentSteps   = 20   // Halvings of the half angle to bring an arc to a boundary.
-	depthOvershoot = 1e-3 // An arc is brought to within this share above the depth of interest.
+	flattest     = 0.02 // Least half angle of an arc, rad.
+	roundest     = 1.65 // Greatest half angle, rad: a little beyond a half circle.
+	projectSteps = 24   // Steps to bring an arc to the depth of interest or up to the firm base.
+	tangentSteps = 20   // Halvings of the half angle to bring an arc to a boundary.
+	// An arc is brought to within this share above the depth of interest. Where a boundary lies at just that depth, as beneath a berm with a face
+	// parallel to the old one, an arc deeper by a share d cuts a chord through it as long as the root of d: 1e-3 cost F up to a tenth.
+	depthOvershoot = 1e-9
 )
 
 // build makes the slip of a vector and reports whether there is one. An arc too shallow or through the firm base is first brought to the
@@ -109,17 +111,17 @@ func (s *searcher) project(q *float64, least, most float64, over part, arc func(
 }
 
 // firstAbove returns a point between a, where f is negative, and b where f lies between 0 and tol, by regula falsi with the Illinois
-// safeguard; ok is false if f(b) is negative.
+// safeguard; ok is false if f(b) is negative. Either of a and b may be the greater.
 func firstAbove(f func(float64) float64, a, b, tol float64) (v float64, ok bool) {
 	fa, fb := f(a), f(b)
-	if fb < 0 {
+	if !(fb >= 0) {
 		return 0, false
 	}
 	side := 0
 	best := b
 	for range projectSteps {
 		v := b - (fb-tol/2)*(b-a)/(fb-fa) // Aim at half the tolerance above zero.
-		if !(v > a && v < b) {
+		if !((v-a)*(b-v) > 0) {
 			v = (a + b) / 2
 		}
 		fv := f(v)
