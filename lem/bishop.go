@@ -17,18 +17,14 @@ func (ws *Workspace) bishop(leftward bool) (float64, Status) {
 		return math.NaN(), NotConverged
 	}
 	ss := ws.slice[:ws.n]
-	pole := 0.0
 	var sum float64
 	for i := range ss {
-		s := &ss[i]
-		if s.sin < 0 && -s.sin*s.tan > pole*s.cos {
-			pole = -s.sin * s.tan / s.cos
-		}
-		sum += s.frees
+		sum += ss[i].frees
 	}
 	if !(sum > 0) {
 		return math.NaN(), NotConverged
 	}
+	pole := ws.pole()
 	lo, hi := pole, math.Inf(1)
 	f := max(sum/d, 1.5*pole)
 	for range maxIterations {

@@ -2,68 +2,9 @@ package lem
 
 import (
 	"context"
-	"fmt"
 	"math"
 	"testing"
 )
-
-// filled is a slope with a berm at its toe, invented: top level, top width and outer batter.
-func filled(height, width, batter float64) (s *Section, inner, outer, toe float64) {
-	before := Profile{{-40, 9}, {0, 9}, {22, 0}, {80, 0}}
-	inner = profileX(before, height)
-	outer = inner + width
-	toe = outer + batter*height
-	return &Section{
-		Ground: Profile{{-40, 9}, {0, 9}, {inner, height}, {outer, height}, {toe, 0}, {80, 0}},
-		Soils: []Soil{
-			{UnitWeight: 19, Cohesion: 4, Friction: 24 * degree},
-			{UnitWeight: 17, Cohesion: 2, Friction: 20 * degree},
-			{UnitWeight: 20, Friction: 36 * degree},
-		},
-		Strata: []Stratum{{0, before}, {1, Profile{{-40, -1}, {80, -1}}}, {2, Profile{{-40, -5}, {80, -5}}}},
-		Placed: []Body{{2, []Point{{inner, height}, {outer, height}, {toe, 0}, {22, 0}}}},
-	}, inner, outer, toe
-}
-
-// TestSlipsAboutFill checks that slips over, through, beneath and beyond placed fill, and on its own face, are all among the trials.
-func TestSlipsAboutFill(t *testing.T) {
-	for _, c := range [][3]float64{{3, 6, 2}, {1.5, 3, 1.5}, {5, 2, 2.5}, {2, 14, 2}} {
-		t.Run(fmt.Sprint(c), func(t *testing.T) {
-			sec, inner, outer, toe := filled(c[0], c[1], c[2])
-			s := newSearcher(compiled(t, sec, &Situation{}), SearchOptions{Window: Window{Direction: RightwardOnly}})
-			s.sweep(context.Background())
-			found := map[string]bool{}
-			for _, k := range s.cells {
-				head, exit := k.r.ends()
-				lowest := math.Inf(1)
-				for x := head; x < exit; x += (exit - head) / 100 {
-					if dx := x - k.slip.Centre.X; x > inner && x < toe {
-						lowest = min(lowest, k.slip.Centre.Y-math.Sqrt(k.slip.Radius*k.slip.Radius-dx*dx))
-					}
-				}
-				switch {
-				case head >= inner && exit <= toe:
-					found["on the fill alone"] = true
-				case exit <= inner:
-					found["over the fill"] = true
-				case exit < outer:
-					found["out of the top of the fill"] = true
-				case exit < toe:
-					found["through the fill"] = true
-				case exit > toe+2 && lowest < -1:
-					found["beneath and beyond the fill"] = true
-				}
-			}
-			for _, want := range []string{
-				"over the fill", "out of the top of the fill", "through the fill", "beneath and beyond the fill", "on the fill alone",
-			} {
-				if !found[want] {
-					t.Errorf("no trial %s", want)
-				}
-			}
-		})
-	}
-}
 
 // TestPolylineSlidesBeneathFill checks that a slip along the soft ground beneath a fill, and one along the fill's own base, are found where
 // they govern.
