@@ -124,9 +124,10 @@ func regradeShape(s *slope, x []float64) shape {
 	return sh
 }
 
-// benchLevels returns the levels of the benches from the lowest up, or the shape that says why there are none.
+// benchLevels returns the levels of the benches from the lowest up, or the shape that says why there are none. Between two numbers of benches,
+// where only the estimate with continuous sizes looks, the nearer one holds.
 func benchLevels(s *slope, x []float64) ([]float64, *shape) {
-	if math.IsNaN(x[regradeBenches]) || x[regradeBenches] == 0 {
+	if math.IsNaN(x[regradeBenches]) || math.Round(x[regradeBenches]) == 0 {
 		return nil, nil
 	}
 	count := int(math.Round(x[regradeBenches]))

@@ -67,6 +67,25 @@ func TestBenches(t *testing.T) {
 	}
 }
 
+// TestBenchesBetween: the estimate with continuous sizes asks for numbers of benches that are none; the nearest whole one is drawn.
+func TestBenchesBetween(t *testing.T) {
+	j := cutting()
+	r := request("regrade", nil, 2.6, 0, 0, nan, nan, 2)
+	r.Axes[regradeBenches] = optimize.Axis{Name: "benches", Min: 0, Max: 2, Step: 1}
+	at := func(benches float64) *Proposal {
+		p, err := Apply(j, []Request{r}, [][]float64{{2.6, 0, benches, nan, nan, 2, nan}})
+		if err != nil {
+			t.Fatal(err)
+		}
+		return p
+	}
+	for _, c := range [][2]float64{{0.05, 0}, {0.49, 0}, {0.51, 1}, {1.4, 1}, {1.6, 2}} {
+		got, want := at(c[0]), at(c[1])
+		samePoints(t, got.Section.Ground, want.Section.Ground)
+		near(t, "cut", got.Quantities.TotalCut(), want.Quantities.TotalCut(), 1e-12)
+	}
+}
+
 // TestBenchFaults lists benches that cannot be, and requests that make no sense.
 func TestBenchFaults(t *testing.T) {
 	p := apply(t, cutting(), request("regrade", nil, 2.5, 0, 2, 4.5, nan, 2))
