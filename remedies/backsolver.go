@@ -24,7 +24,10 @@ type backSolver struct {
 func newBackSolver(j *Job, o *Observed, s *BackSettings) (*backSolver, error) {
 	p := Start(j)
 	c := situationCheck(p, o.Situation, &j.Situations[o.Situation], "", p.Waters[o.Situation])
-	b := &backSolver{section: *c.Section, situation: c.Situation, slip: o.Slip, setting: lem.Setting{Method: s.Method, Slices: s.Slices}}
+	b := &backSolver{
+		section: *c.Section, situation: c.Situation, slip: o.Slip,
+		setting: lem.Setting{Method: s.Method, Slices: s.Slices, SideForce: j.SideForce},
+	}
 	switch {
 	case s.Method == lem.Ordinary && o.Slip.Kind == lem.Circle:
 		b.setting.Method = lem.Bishop

@@ -24,6 +24,7 @@ type Job struct {
 	Head      lem.Range     // Daylight range of slips at the head; zero: everywhere.
 	Exit      lem.Range     // Daylight range of slips at the toe; zero: everywhere.
 	Direction lem.Direction // Movement that searches look at.
+	SideForce lem.SideForce // Side-force function of Morgenstern-Price; zero: half sine.
 
 	Observed *Observed // A slip that has happened; nil: none.
 

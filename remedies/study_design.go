@@ -146,7 +146,7 @@ func (d *design) searchAll(ctx context.Context, e optimize.Effort) ([][]optimize
 
 func (d *design) searchOne(ctx context.Context, i int, e optimize.Effort) ([]optimize.Found[Cut], error) {
 	o := lem.SearchOptions{
-		Slices: d.z.s.Slices, MinDepth: d.z.j.MinDepth, Seed: e.Seed + d.z.s.Seed, Window: d.z.j.window(),
+		Slices: d.z.s.Slices, MinDepth: d.z.j.MinDepth, Seed: e.Seed + d.z.s.Seed, Window: d.z.j.window(), SideForce: d.z.j.SideForce,
 		Below: d.required(i) + d.z.s.Allowance, Polylines: !d.z.circlesOnly,
 	}
 	if e.Audit {

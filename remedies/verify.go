@@ -32,7 +32,7 @@ func Contradict(j *Job, o *Option) []Outcome {
 			var m lem.Model
 			got := math.NaN()
 			if err := m.Compile(c.Check.Section, &c.Check.Situation); err == nil {
-				got = m.FS(&ws, &c.Slip, lem.Setting{Method: c.Method, Window: j.window()}).F
+				got = m.FS(&ws, &c.Slip, lem.Setting{Method: c.Method, Window: j.window(), SideForce: j.SideForce}).F
 			}
 			if !(math.Abs(got-c.FS) <= reportedTol*c.FS) {
 				c.FS = got
@@ -67,7 +67,7 @@ func Refute(ctx context.Context, j *Job, o *Option, s Settings) (refuting []Outc
 			}
 			minima, err := m.Search(ctx, lem.SearchOptions{
 				Slices: auditSlices * s.Slices, MinDepth: j.MinDepth, Window: j.window(), Below: d.required(i), Polylines: true,
-				Sampler: sampler, Effort: effort, Seed: s.Seed + verifySeed + uint64(i),
+				Sampler: sampler, Effort: effort, Seed: s.Seed + verifySeed + uint64(i), SideForce: j.SideForce,
 			})
 			if err != nil {
 				return nil, searches, err

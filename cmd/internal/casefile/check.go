@@ -214,14 +214,23 @@ func (r *reader) checkList(s *shape, v value) {
 // checkCount rejects a list or mapping with too few or too many items.
 func (r *reader) checkCount(s *shape, v value, n int) bool {
 	one, many := "item", "items"
-	if s.kind == listKind && s.elem.kind == tupleKind {
+	switch {
+	case s.kind == listKind && s.elem.kind == tupleKind:
 		one, many = "point", "points"
+	case s.kind == listKind && s.elem.kind == numberKind:
+		one, many = "number", "numbers"
+	}
+	such := ""
+	if v.example != "" {
+		such = "for example " + v.example
 	}
 	switch {
+	case s.min == s.max && n != s.min:
+		r.reject(v, such, "has %s; it needs %d", counted(n, one, many), s.min)
 	case n == 0 && s.min > 0:
-		r.reject(v, "", "is empty; it needs at least %s", counted(s.min, one, many))
+		r.reject(v, such, "is empty; it needs at least %s", counted(s.min, one, many))
 	case n < s.min:
-		r.reject(v, "", "has %s; it needs at least %d", counted(n, one, many), s.min)
+		r.reject(v, such, "has %s; it needs at least %d", counted(n, one, many), s.min)
 	case n > s.max:
 		r.reject(v, "", "has %s; at most %d are allowed", counted(n, one, many), s.max)
 	default:

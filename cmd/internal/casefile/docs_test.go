@@ -69,6 +69,9 @@ func valueText(s *shape) string {
 		if s.elem.kind == tupleKind {
 			return "list of " + s.elem.tupleText()
 		}
+		if s.elem.kind == numberKind && s.min == s.max {
+			return limitedText(fmt.Sprintf("list of %d numbers", s.min), s.elem.bounds)
+		}
 		return "list of " + valueText(s.elem)
 	case eitherKind:
 		var all []string

@@ -68,7 +68,7 @@ func TestFeaturesAreRead(t *testing.T) {
 
 // TestFeaturesRoundTrip writes each of the small cases, after a cut, and reads it back.
 func TestFeaturesRoundTrip(t *testing.T) {
-	for _, name := range []string{"water.yaml", "strength.yaml", "loads.yaml", "crack.yaml", "known.yaml"} {
+	for _, name := range []string{"water.yaml", "strength.yaml", "loads.yaml", "crack.yaml", "known.yaml", "side-forces.yaml"} {
 		for _, edit := range []func(*lem.Section){func(*lem.Section) {}, byDepth} {
 			c := readFeature(t, name)
 			edit(&c.Job.Section)

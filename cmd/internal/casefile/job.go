@@ -60,6 +60,7 @@ func (r *reader) build(root value) *builder {
 	b.readObserved(r.get(root, "observed_slip"))
 	b.readStages(r.get(root, "stages"))
 	b.checkStrengths()
+	b.readSideForce(r.get(root, "side_force_function"))
 	b.readSlips(r.get(root, "slips"))
 	b.readSlope(root)
 	b.readWorks(root)

@@ -62,6 +62,7 @@ func caseShape() *shape {
 		field{key: "limits", shape: limitsShape(), standard: "no limits", meaning: "Limits of the works.", example: "{works_between: {left: 24, right: 58.5}}"},
 		field{key: "on_site_fill", shape: list(onSiteShape(), 0, maxZones), standard: "none: all fill is brought, all cut is taken away", meaning: "Material of the site that may serve as fill.", example: "[{name: cut clay, cut_of: stiff clay, serves: [granular fill], share: 80%}]"},
 		field{key: "economics", shape: economicsShape(), standard: "blank: no costs, carbon or lorry loads", meaning: "Rates and factors of your own; whatever is blank is never guessed.", example: "{lorry_load: 10, rates: {cut: 1, import: 3, dispose: 4}}"},
+		sideForceField(),
 		field{key: "slips", shape: slipsShape(), standard: "everywhere, both directions", meaning: "Which slips are looked at.", example: "{head: [5, 30], direction: rightward}"},
 		field{key: "observed_slip", shape: observedShape(), standard: "none", meaning: "A slip that has happened, for `standfast backanalyse`.", example: "{line: [[28, 109], [36, 101], [46, 98.5], [54, 100]], situation: high water}"},
 		field{key: "known_slips", shape: list(knownSlipShape(), 0, maxBodies), standard: "none", meaning: "Slip surfaces that exist already, with the residual strength on them: a slip that runs along one finds that strength and not the soil's, and every search looks at them.", example: "[{line: [[28, 109], [36, 101], [46, 98.5], [54, 100]], friction: 12}]"},

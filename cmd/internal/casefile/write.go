@@ -52,6 +52,7 @@ func (c *Case) Proposed(o *remedies.Option) ([]byte, error) {
 	m.put("known_slips", w.knownSlips())
 	m.put("situations", situations)
 	m.put("limits", w.limits())
+	m.put("side_force_function", sideForceNode(&c.Job.SideForce))
 	m.put("slips", w.slips())
 	root := m.block()
 	root.HeadComment = c.header(o)

@@ -69,7 +69,7 @@ func compareProposal(t *testing.T, c *Case, o *remedies.Option, again *Case) {
 		}
 	}
 	same := func(j *remedies.Job) []any {
-		return []any{j.Crest, j.Toe, j.Clay, j.Limits, j.MinDepth, j.Head, j.Exit, j.Direction, j.Length}
+		return []any{j.Crest, j.Toe, j.Clay, j.Limits, j.MinDepth, j.Head, j.Exit, j.Direction, j.SideForce, j.Length}
 	}
 	if diff := cmp.Diff(same(c.Job), same(again.Job), exact, cmpopts.EquateEmpty()); diff != "" {
 		t.Errorf("%s: (-written +read):\n%s", o.Name, diff)
@@ -142,6 +142,7 @@ limits:
   minimum_haul_width: 3.5
   maximum_import: 0
 slips: {head: [0, 20], toe: [25, 50], direction: rightward}
+side_force_function: [0.1, 0.5, 0.7, 0.9, 1, 1, 1, 0.9, 0.7, 0.5, 0.25]
 `
 	c, err := Parse("all.yaml", []byte(src))
 	if err != nil {

@@ -214,7 +214,7 @@ func (g *stranger) compare(t *testing.T, name string, a *theirAnswer, meets bool
 		case "spencer":
 			by = rigorous(func(float64) float64 { return 1 }, want)
 		case "morgenstern-price":
-			by = rigorous(func(s float64) float64 { return math.Sin(math.Pi * s) }, want)
+			by = rigorous(g.file.sideForce, want)
 		default:
 			continue
 		}

@@ -11,6 +11,10 @@ type (
 			GammaW    float64 `json:"gamma_w_kN_m3"`
 			Direction string
 			Ranges    struct{ Head, Exit *[2]float64 } `json:"search_ranges"`
+			SideForce struct {
+				Function  string
+				Ordinates []float64
+			} `json:"side_force_function"`
 		}
 		Soils      map[string]theirSoil
 		Situations []struct {

@@ -34,6 +34,21 @@ func rigorous(shape func(s float64) float64, want float64) solution {
 	}
 }
 
+// sideForce is the side-force function that the settings name.
+func (f *theirFile) sideForce(s float64) float64 {
+	switch side := &f.Settings.SideForce; side.Function {
+	case "half-sine":
+		return math.Sin(math.Pi * s)
+	case "constant":
+		return 1
+	case "given":
+		last := len(side.Ordinates) - 1
+		i := min(int(s*float64(last)), last-1)
+		return side.Ordinates[i] + (side.Ordinates[i+1]-side.Ordinates[i])*(s*float64(last)-float64(i))
+	}
+	return math.NaN()
+}
+
 // closed returns the F at which horizontal forces close at this lambda, and the moment about the origin that is left.
 func closed(ss []theirSlice, shape func(s float64) float64, lambda float64) (moment, f float64) {
 	low, high := 0.2, 8.0

@@ -24,7 +24,7 @@ func TestMain(m *testing.M) {
 }
 
 // TestScripts runs testdata/script; -update is not needed, since the scripts compare no whole outputs. Every script finds the small case
-// bank.yaml in its folder. "rc CODE PROGRAM ARGS" runs a program that must end with that exit code.
+// bank.yaml and the cases of single features, features/*.yaml, in its folder. "rc CODE PROGRAM ARGS" runs a program that must end with that exit code.
 func TestScripts(t *testing.T) {
 	testscript.Run(t, testscript.Params{
 		Dir:                 "testdata/script",
@@ -35,7 +35,10 @@ func TestScripts(t *testing.T) {
 			if err != nil {
 				return err
 			}
-			return os.WriteFile(filepath.Join(e.WorkDir, "bank.yaml"), bank, 0o644)
+			return errors.Join(
+				os.WriteFile(filepath.Join(e.WorkDir, "bank.yaml"), bank, 0o644),
+				os.CopyFS(filepath.Join(e.WorkDir, "features"), os.DirFS(featureCases)),
+			)
 		},
 		Cmds: map[string]func(*testscript.TestScript, bool, []string){"rc": exitsWith, "pause": pause},
 	})

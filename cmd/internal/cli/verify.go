@@ -78,6 +78,13 @@ func runVerify(ctx context.Context, c *cobra.Command, o *verifyOptions, folder s
 	if err != nil {
 		return err
 	}
+	side, err := witnesses.SideForce.Engine()
+	if err != nil {
+		return usagef("%s: %w", witnessesName, err)
+	}
+	if side != job.SideForce || side != result.Job.SideForce {
+		return usagef("the side-force function in %s or %s is not that of the case", resultName, witnessesName)
+	}
 	settings := remedies.Settings{
 		Workers: o.jobs, Seed: file.Settings.Seed, Slices: file.Settings.Slices, Allowance: file.Settings.Allowance,
 	}
@@ -134,8 +141,8 @@ func askedJob(file *report.File, rebuilt *remedies.Job) (*remedies.Job, error) {
 func verifyOption(ctx context.Context, asked, rebuilt *remedies.Job, o *remedies.Option, w *report.Witnesses, s remedies.Settings) (verdict, error) {
 	v := verdict{Option: o.Name, Mismatches: []mismatch{}, Refuting: []report.Slip{}, Lines: []string{}}
 	if held, ok := w.Options[o.Name]; ok {
-		window := lem.Window{Direction: asked.Direction, Head: asked.Head, Toe: asked.Exit}
-		pool, designs, err := held.Certificate(window)
+		common := lem.Setting{Window: lem.Window{Direction: asked.Direction, Head: asked.Head, Toe: asked.Exit}, SideForce: asked.SideForce}
+		pool, designs, err := held.Certificate(common)
 		if err != nil {
 			return v, usagef("%s: %w", witnessesName, err)
 		}

@@ -305,6 +305,7 @@ func (a *author) settings() {
 		cells("movement looked at", movement),
 		cells("slices of a slip in a search; twice as many in an audit", fmt.Sprint(s.Slices)),
 		cells("FS by which an answer exceeds what is required, for the search being finite", report.SizeText(s.Allowance)),
+		cells("side-force function of Morgenstern-Price", s.SideForce.String()),
 		cells("unit weight of water", report.SizeText(s.GammaW)+" kN/m³"),
 	}
 	if r := s.SearchRanges; r.Head != nil || r.Exit != nil {

@@ -21,8 +21,8 @@ func sameFactor(f, g float64) bool {
 // setting returns how the governing slip of a check was found.
 func (a *author) setting(o *remedies.Outcome, slices int) lem.Setting {
 	j := a.r.Job
-	direction := map[string]lem.Direction{"either": lem.EitherWay, "left": lem.LeftwardOnly, "right": lem.RightwardOnly}[a.f.Settings.Direction]
-	return lem.Setting{Method: o.Method, Slices: slices, MinDepth: j.MinDepth, Window: lem.Window{Direction: direction, Head: j.Head, Toe: j.Exit}}
+	window := lem.Window{Direction: j.Direction, Head: j.Head, Toe: j.Exit}
+	return lem.Setting{Method: o.Method, Slices: slices, MinDepth: j.MinDepth, Window: window, SideForce: j.SideForce}
 }
 
 // working analyses the governing slip of a check again: with the fewest slices that give the FS as

@@ -70,8 +70,8 @@ func list(s []string) []string { return append(make([]string, 0, len(s)), s...) 
 func settingsOf(r *remedies.Result, overrides []string) Settings {
 	s := Settings{
 		Objective: r.Job.Objective.String(), Seed: r.Settings.Seed, DepthOfInterest: r.Job.MinDepth, Allowance: r.Settings.Allowance, Slices: r.Settings.Slices,
-		GammaW: lem.GammaW, Direction: directionName(r.Job.Direction),
-		SearchRanges: SearchRanges{Head: rangeOf(r.Job.Head), Exit: rangeOf(r.Job.Exit)}, Overrides: list(overrides),
+		GammaW: lem.GammaW, Direction: directions[r.Job.Direction],
+		SearchRanges: SearchRanges{Head: rangeOf(r.Job.Head), Exit: rangeOf(r.Job.Exit)}, SideForce: sideForceOf(&r.Job.SideForce), Overrides: list(overrides),
 	}
 	if s.Allowance == 0 {
 		s.Allowance = remedies.DefaultAllowance
@@ -82,9 +82,8 @@ func settingsOf(r *remedies.Result, overrides []string) Settings {
 	return s
 }
 
-func directionName(d lem.Direction) string {
-	return [...]string{"either", "left", "right"}[d]
-}
+// directions are the names of the directions of movement.
+var directions = [...]string{lem.EitherWay: "either", lem.LeftwardOnly: "left", lem.RightwardOnly: "right"}
 
 func rangeOf(r lem.Range) *[2]float64 {
 	if r == (lem.Range{}) {

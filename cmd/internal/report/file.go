@@ -55,6 +55,7 @@ type Settings struct {
 	GammaW          float64      `json:"gamma_w_kN_m3"`                                           // Unit weight of water, kN/m3.
 	Direction       string       `json:"direction" jsonschema:"enum=either,enum=left,enum=right"` // Movement that searches look at: "either", "left" or "right".
 	SearchRanges    SearchRanges `json:"search_ranges"`                                           // Where a slip may leave the ground.
+	SideForce       SideForce    `json:"side_force_function"`                                     // Of Morgenstern-Price's method.
 	Overrides       []string     `json:"overrides"`                                               // Command-line flags that changed what the case file asks.
 }
 

@@ -70,6 +70,15 @@ func (b *rebuilder) job() *remedies.Job {
 	if r := f.Settings.SearchRanges.Exit; r != nil {
 		j.Exit = lem.Range{From: r[0], To: r[1]}
 	}
+	if i := slices.Index(directions[:], f.Settings.Direction); i >= 0 {
+		j.Direction = lem.Direction(i)
+	} else {
+		b.wrong("there is no direction %q", f.Settings.Direction)
+	}
+	var err error
+	if j.SideForce, err = f.Settings.SideForce.Engine(); err != nil {
+		b.wrong("%v", err)
+	}
 	for _, name := range f.SoilOrder {
 		j.Clay = append(j.Clay, f.Soils[name].SlowDraining)
 	}

@@ -11,6 +11,7 @@ import (
 	"github.com/google/go-cmp/cmp/cmpopts"
 
 	"standfast/cmd/internal/drawing"
+	"standfast/lem"
 	"standfast/remedies"
 )
 
@@ -73,6 +74,9 @@ func TestRebuildRefuses(t *testing.T) {
 		{"a line that runs back", `"ground": [[0, 109], [30, 109]`, `"ground": [[0, 109], [-30, 109]`, "runs back"},
 		{"a line that is a point", `"line": [[0, 106], [75, 99]]`, `"line": [[0, 106]]`, "no length"},
 		{"a water line that is not there", `"water_line": "spring"`, `"water_line": "autumn"`, `no water line "autumn"`},
+		{"a direction that there is not", `"direction": "right"`, `"direction": "up"`, `no direction "up"`},
+		{"a function that there is not", `"function": "half-sine"`, `"function": "square"`, `no side-force function "square"`},
+		{"a function without ordinates", `"function": "half-sine"`, `"function": "given"`, "0 ordinates, not 11"},
 		{"a circle without a radius", `"radius": 20.5`, `"radius": 0`, "without centre or radius"},
 	} {
 		t.Run(c.name, func(t *testing.T) {
@@ -152,6 +156,27 @@ func TestRebuildKeepsEconomics(t *testing.T) {
 	} {
 		if diff := cmp.Diff(pair[0], pair[1], cmpopts.EquateNaNs(), cmpopts.EquateEmpty()); diff != "" {
 			t.Errorf("%s (-was +turned back):\n%s", name, diff)
+		}
+	}
+}
+
+// Which slips are looked at and how they are solved is turned back, so that a new search looks at the same.
+func TestRebuildKeepsSearches(t *testing.T) {
+	result, src := sample()
+	j := result.Job
+	for _, side := range []lem.SideForce{{}, {Shape: lem.Constant}, {Shape: lem.Given, Ordinates: [lem.SideOrdinates]float64{0, 0.5, 1, 1, 1, 1, 1, 1, 1, 0.25}}} {
+		j.SideForce = side
+		f, err := Decode(strings.NewReader(encoded(t, New(result, src))))
+		if err != nil {
+			t.Fatal(err)
+		}
+		r, err := Rebuild(f)
+		if err != nil {
+			t.Fatal(err)
+		}
+		search := func(j *remedies.Job) []any { return []any{j.MinDepth, j.Head, j.Exit, j.Direction, j.SideForce} }
+		if diff := cmp.Diff(search(j), search(r.Job)); diff != "" {
+			t.Errorf("searches (-was +turned back):\n%s", diff)
 		}
 	}
 }

@@ -15,9 +15,10 @@ const WitnessFormat = "standfast-witnesses/1"
 // Witnesses is witnesses.json: for every option that was sized, the pool of slips and, for every cheaper design of the lattice, the slip
 // that rejects it.
 type Witnesses struct {
-	Format  string                   `json:"format"`  // Name of this layout, "standfast-witnesses/1".
-	Case    WitnessCase              `json:"case"`    // The case, as in result.json.
-	Options map[string]WitnessOption `json:"options"` // By name of the option.
+	Format    string                   `json:"format"`              // Name of this layout, "standfast-witnesses/1".
+	Case      WitnessCase              `json:"case"`                // The case, as in result.json.
+	SideForce SideForce                `json:"side_force_function"` // Of Morgenstern-Price's method in all that follows.
+	Options   map[string]WitnessOption `json:"options"`             // By name of the option.
 }
 
 // WitnessCase says to which result the witnesses belong.
@@ -60,7 +61,10 @@ type WitnessDesign struct {
 
 // NewWitnesses lays out the certificates of a result as the contents of witnesses.json.
 func NewWitnesses(r *remedies.Result, src Source) *Witnesses {
-	w := &Witnesses{Format: WitnessFormat, Case: WitnessCase{File: src.File, SHA256: src.SHA256}, Options: map[string]WitnessOption{}}
+	w := &Witnesses{
+		Format: WitnessFormat, Case: WitnessCase{File: src.File, SHA256: src.SHA256}, SideForce: sideForceOf(&r.Job.SideForce),
+		Options: map[string]WitnessOption{},
+	}
 	for i := range r.Options {
 		o := &r.Options[i]
 		if o.Certificate != nil && o.Proposal != nil {
@@ -85,14 +89,17 @@ func DecodeWitnesses(from io.Reader) (*Witnesses, error) {
 	return w, nil
 }
 
-// Certificate returns the pool and the witnesses of an option as package remedies replays them. Its error names a method that there is not.
-func (o *WitnessOption) Certificate(window lem.Window) (pool []remedies.CutOf, witnesses []remedies.Witness, err error) {
+// Certificate returns the pool and the witnesses of an option as package remedies replays them, with the window and the side-force function of
+// common. Its error names a method that there is not.
+func (o *WitnessOption) Certificate(common lem.Setting) (pool []remedies.CutOf, witnesses []remedies.Witness, err error) {
 	for i := range o.Pool {
 		c := &o.Pool[i]
 		method, ok := lem.MethodNamed(c.Method)
 		if !ok {
 			return nil, nil, fmt.Errorf("%w: there is no method %q", ErrFormat, c.Method)
 		}
+		setting := common
+		setting.Method, setting.Slices, setting.MinDepth = method, c.Slices, c.MinDepth
 		slip := lem.Slip{Kind: lem.Polyline, Radius: c.Slip.Radius}
 		if c.Slip.Centre != nil {
 			slip.Kind, slip.Centre = lem.Circle, lem.Point{X: c.Slip.Centre[0], Y: c.Slip.Centre[1]}
@@ -100,9 +107,7 @@ func (o *WitnessOption) Certificate(window lem.Window) (pool []remedies.CutOf, w
 		for _, p := range c.Slip.Points {
 			slip.Nodes = append(slip.Nodes, lem.Point{X: p[0], Y: p[1]})
 		}
-		pool = append(pool, remedies.CutOf{
-			Check: c.Check, Setting: lem.Setting{Method: method, Slices: c.Slices, MinDepth: c.MinDepth, Window: window}, Slip: slip,
-		})
+		pool = append(pool, remedies.CutOf{Check: c.Check, Setting: setting, Slip: slip})
 	}
 	for _, d := range o.Designs {
 		x := make([]float64, len(d.X))
