@@ -155,4 +155,5 @@ type Result struct {
 	Existing Option
 	Options  []Option // In ascending earthworks; what-ifs behind them, those that fail last.
 	Least    string   // Name of the least-earthworks option, "existing" if nothing is needed, "" if nothing meets the target.
+	Points   *Points  // Everything sized again at the points of a back-analysis; nil: not asked for, or no slip observed.
 }

@@ -10,6 +10,7 @@ type Settings struct {
 	Pairs       bool    // Also size every compatible pair of remedies.
 	Relaxations bool    // Also size each answer with the limits that bind moved a little.
 	Sensitivity bool    // Also swing the inputs by Job.Swings: of the slope as it is, single remedies and pairs that meet the target.
+	Points      bool    // Also size everything at the low, the middle and the high point of the back-analysis of Job.Observed, if there is one.
 	Progress    func(Progress)
 	Finished    func(*Option) // Told of each option as soon as it is known, single remedies first.
 }

@@ -11,9 +11,9 @@ import (
 	"standfast/optimize"
 )
 
-// Study answers a job: it assesses the slope as it is, sizes every remedy asked for, then pairs of them, and checks the user's own works. The
-// answer depends on the job and the settings only, not on the number of workers. The error is that of the context, or a fault of a
-// request.
+// Study answers a job: it assesses the slope as it is, sizes every remedy asked for, then pairs of them, and checks the user's own works; all of
+// it again at the points of a back-analysis, if asked for. The answer depends on the job and the settings only, not on the number of workers.
+// The error is that of the context, or a fault of a request.
 func Study(ctx context.Context, job *Job, s Settings) (*Result, error) {
 	s = s.resolved()
 	j, existing, err := assess(ctx, job, &s)
@@ -27,26 +27,39 @@ func Study(ctx context.Context, job *Job, s Settings) (*Result, error) {
 		}
 	}
 	st := &study{ctx: ctx, j: j, s: &s, existing: existing, pools: map[string][]pooled{}}
-	needed := !adequate(existing, &s)
-	var groups [][]Request
+	again := s.Points && job.Observed != nil
+	if st.total = len(j.groups(s.Pairs)) + len(j.Trials); again {
+		st.total *= 1 + len(pointNames)
+	}
+	res, err := st.answer()
+	if err == nil && again {
+		res.Points, err = st.points(job)
+	}
+	if err != nil {
+		return nil, err
+	}
+	return res, nil
+}
+
+// answer sizes and checks everything on the slope as assessed, and ranks it.
+func (st *study) answer() (*Result, error) {
+	needed := !adequate(st.existing, st.s)
 	if needed {
-		groups = j.groups(s.Pairs)
+		for _, g := range st.j.groups(st.s.Pairs) {
+			if err := st.size(g); err != nil {
+				return nil, err
+			}
+		}
 	}
-	st.total = len(groups) + len(j.Trials)
-	for _, g := range groups {
-		if err := st.size(g); err != nil {
+	for i := range st.j.Trials {
+		if err := st.check(&st.j.Trials[i]); err != nil {
 			return nil, err
 		}
 	}
-	for i := range j.Trials {
-		if err := st.check(&j.Trials[i]); err != nil {
-			return nil, err
-		}
-	}
-	res := &Result{Job: j, Settings: s, Existing: *existing, Options: st.options}
-	rank(j, res.Options)
+	res := &Result{Job: st.j, Settings: *st.s, Existing: *st.existing, Options: st.options}
+	rank(st.j, res.Options)
 	if !needed {
-		res.Least = existing.Name
+		res.Least = st.existing.Name
 		return res, nil
 	}
 	for i := range res.Options {
@@ -65,14 +78,17 @@ type study struct {
 	s        *Settings
 	existing *Option
 	options  []Option
+	done     int                 // Options of the studies before.
 	total    int                 // Options in all.
 	pools    map[string][]pooled // Slips known from sizing a remedy, by its name.
+	plain    bool                // What does not fit is not sized once more without limits.
+	at       string              // Behind the names in reports of progress.
 }
 
 // tell reports progress.
 func (st *study) tell(name string, share float64) {
 	if st.s.Progress != nil {
-		st.s.Progress(Progress{Option: name, Done: len(st.options), Total: st.total, Share: share})
+		st.s.Progress(Progress{Option: name + st.at, Done: st.done + len(st.options), Total: st.total, Share: share})
 	}
 }
 
@@ -155,7 +171,8 @@ func (st *study) size(group []Request) error {
 		return err
 	}
 	ctx := st.ctx
-	res, err := z.minimize(ctx, z.cost, st.start(z, group), st.tell)
+	start := st.start(z, group)
+	res, err := z.minimize(ctx, z.cost, start, st.tell)
 	if err != nil {
 		return err
 	}
@@ -183,7 +200,7 @@ func (st *study) size(group []Request) error {
 	}
 	z.judge(o, &res)
 	if o.Status == Infeasible {
-		if err := z.explain(ctx, o, &res, st.tell); err != nil {
+		if err := z.explain(ctx, o, &res, st.plain, st.tell); err != nil {
 			return err
 		}
 	}
@@ -206,7 +223,7 @@ func (st *study) size(group []Request) error {
 			return err
 		}
 	}
-	st.keep(w.name, d.checks, res.Pool)
+	st.keep(w.name, d.checks, res.Pool[len(start):])
 	st.add(o)
 	return nil
 }

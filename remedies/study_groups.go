@@ -64,23 +64,27 @@ func (st *study) keep(name string, checks []Check, pool []Cut) {
 	}
 }
 
-// start returns the slips to start a sizing of several remedies with: those known from each of them alone.
+// start returns the slips to start a sizing with: those known from sizing the same works before, with another strength, and from each of several
+// remedies alone.
 func (st *study) start(z *sizing, group []Request) []Cut {
-	if len(group) < 2 {
+	known := st.pools[z.w.name]
+	if len(group) > 1 {
+		for _, r := range group {
+			known = append(known[:len(known):len(known)], st.pools[r.Kind]...)
+		}
+	}
+	if len(known) == 0 {
 		return nil
 	}
-	checks := Checks(st.j, z.w.apply(st.j, z.w.smallest()))
 	index := map[string]int{}
-	for i := range checks {
-		index[checks[i].Label()] = i
+	for i, c := range Checks(st.j, z.w.apply(st.j, z.w.smallest())) {
+		index[c.Label()] = i
 	}
 	var out []Cut
-	for _, r := range group {
-		for _, p := range st.pools[r.Kind] {
-			if i, ok := index[p.label]; ok {
-				p.cut.Check = uint16(i)
-				out = append(out, p.cut)
-			}
+	for _, p := range known {
+		if i, ok := index[p.label]; ok {
+			p.cut.Check = uint16(i)
+			out = append(out, p.cut)
 		}
 	}
 	return out

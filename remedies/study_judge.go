@@ -32,8 +32,8 @@ func (z *sizing) judge(o *Option, res *optimize.Result[Cut]) {
 }
 
 // explain says why nothing within the limits meets the target: the best FS reached, and what binds. To tell which limit, the remedy is sized
-// once more without limits.
-func (z *sizing) explain(ctx context.Context, o *Option, res *optimize.Result[Cut], tell func(string, float64)) error {
+// once more without limits, unless plain.
+func (z *sizing) explain(ctx context.Context, o *Option, res *optimize.Result[Cut], plain bool, tell func(string, float64)) error {
 	var reached string
 	if g := o.Governing(); g != nil && res.Best.X != nil {
 		o.Binding = g.Check.Label()
@@ -42,6 +42,12 @@ func (z *sizing) explain(ctx context.Context, o *Option, res *optimize.Result[Cu
 	}
 	if res.Forbidden == 0 {
 		o.Reason = reached + z.endsOfRange(res.Best.X)
+		return nil
+	}
+	if plain {
+		if o.Reason = reached; reached == "" {
+			o.Reason = noDesign
+		}
 		return nil
 	}
 	var start []Cut
@@ -69,11 +75,14 @@ func (z *sizing) explain(ctx context.Context, o *Option, res *optimize.Result[Cu
 	}
 	o.Binding = strings.Join(limits, ", ")
 	if reached == "" {
-		reached = "no design is within the limits"
+		reached = noDesign
 	}
 	o.Reason = reached + "; " + fmt.Sprintf(verdict, dimensions(z.w, x), o.Binding, strings.Join(details, "; "))
 	return nil
 }
+
+// noDesign is why a remedy that the limits forbid altogether does not do.
+const noDesign = "no design is within the limits"
 
 // costWithoutLimits is cost with the limits of the site left out; works that geometry does not allow are still refused.
 func (z *sizing) costWithoutLimits(x []float64) (cost, tie float64, ok bool) {

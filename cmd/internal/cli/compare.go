@@ -15,7 +15,8 @@ type compareOptions struct {
 	out  string
 	only []string
 
-	pairs bool
+	pairs    bool
+	skipBack bool
 }
 
 func newCompareCommand() *cobra.Command {
@@ -29,6 +30,10 @@ writes the results, drawings and proposed sections to a folder.
 Remedies are sized one by one, and the ` + "`combinations`" + ` of the case together. With --pairs every pair that can be built together is
 sized too. A pair has as many designs as its two remedies multiplied, so that this takes minutes where their ranges are fine.
 
+A case with an ` + "`observed_slip`" + ` is back-analysed as backanalyse does without flags, and everything is sized again with the low, the middle
+and the high strength with which that slip just fails, to show whether the choice hangs on what one failure leaves open. This takes about as
+long again as the rest; --skip-back-analysis leaves it out.
+
 ` + exitCodes(exitOK, exitInput, exitNothingMeets, exitInterrupted, exitOther),
 		Example:           "  standfast compare case.yaml --only berm,regrade --target \"high water=1.25\"",
 		Args:              oneArgument("a case file"),
@@ -39,6 +44,7 @@ sized too. A pair has as many designs as its two remedies multiplied, so that th
 	c.Flags().StringVar(&o.out, "out", "", "folder for the results (default ./<case>-works); one of an earlier run is replaced, any other refused")
 	c.Flags().StringSliceVar(&o.only, "only", nil, "size only these remedies, such as berm,regrade")
 	c.Flags().BoolVar(&o.pairs, "pairs", false, "also size every pair of remedies that can be built together; takes minutes on fine ranges")
+	c.Flags().BoolVar(&o.skipBack, "skip-back-analysis", false, "do not size again with the strengths that the observed slip of the case leaves open")
 	if err := c.RegisterFlagCompletionFunc("only", completeRemedies); err != nil {
 		panic("cli: " + err.Error()) // The flag is not defined: a programmer's error.
 	}
@@ -75,6 +81,7 @@ func runCompare(c *cobra.Command, o *compareOptions, path string) error {
 		printWarnings(c, read.Warnings)
 	}
 	settings.Curves, settings.Relaxations, settings.Sensitivity, settings.Pairs = true, true, true, o.pairs
+	settings.Points = !o.skipBack
 	progress := newProgress(c.ErrOrStderr(), o.quiet)
 	settings.Progress = progress.show
 	result, err := remedies.Study(ctx, read.Job, settings)
@@ -102,6 +109,9 @@ func (o *compareOptions) overrides() []string {
 	}
 	if o.pairs {
 		out = append(out, "--pairs")
+	}
+	if o.skipBack {
+		out = append(out, "--skip-back-analysis")
 	}
 	return out
 }

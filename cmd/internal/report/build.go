@@ -43,6 +43,7 @@ func New(r *remedies.Result, src Source) *File {
 		f.Options = append(f.Options, b.option(&r.Options[i]))
 	}
 	f.Situations = b.situations(r)
+	f.BackAnalysis = b.backAnalysis(r.Points)
 	if r.Least != "" {
 		least := r.Least
 		f.LeastEarthworks = &least

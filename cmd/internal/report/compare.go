@@ -21,6 +21,7 @@ func WriteComparison(w io.Writer, f *File, look Look) error {
 		p.relaxations(f)
 	}
 	p.answer(f)
+	p.points(f)
 	p.cautions(f.Cautions)
 	return p.err
 }

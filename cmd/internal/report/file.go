@@ -22,9 +22,11 @@ type File struct {
 	Options       []Option       `json:"options"`    // In ascending earthworks; what-ifs behind them, those that fail last.
 	// Name of the option with the least earthworks of those that meet the target, "existing" if nothing is needed, null if nothing
 	// meets it.
-	LeastEarthworks *string  `json:"least_earthworks" jsonschema:"nullable"`
-	Cautions        []string `json:"cautions"` // What the reader must bear in mind.
-	Files           []string `json:"files"`    // Names of the files written to the same folder, this one included.
+	LeastEarthworks *string `json:"least_earthworks" jsonschema:"nullable"`
+	// What the observed slip of the case leaves open; absent: none was observed, or it was left out.
+	BackAnalysis *BackAnalysis `json:"back_analysis,omitempty"`
+	Cautions     []string      `json:"cautions"` // What the reader must bear in mind.
+	Files        []string      `json:"files"`    // Names of the files written to the same folder, this one included.
 }
 
 // Case says which case was read.
