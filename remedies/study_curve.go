@@ -35,10 +35,15 @@ func (z *sizing) curve(ctx context.Context, o *Option, res *optimize.Result[Cut]
 		point := c.point(x, found)
 		point.Shift, point.RequiredFS = shift, g.Check.Required+shift
 		point.Reached += point.RequiredFS
-		out = append(out, *point)
-		if found[0].Margin < z.s.Allowance { // The most that the remedy can do.
-			break
+		if found[0].Margin >= z.s.Allowance {
+			out = append(out, *point)
+			continue
 		}
+		// The most that the remedy can do, unless a design of a lower target did as much.
+		if len(out) == 0 || point.Reached > out[len(out)-1].Reached {
+			out = append(out, *point)
+		}
+		break
 	}
 	return out, nil
 }

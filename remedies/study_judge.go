@@ -132,14 +132,26 @@ func ParameterWords(name string) string { return strings.NewReplacer("_", " ", "
 
 // String prints a parameter for people: "top width 5.50 m", "batter 1V:2.5H".
 func (v Value) String() string {
+	decimals := -1
+	if v.Unit == "m" {
+		decimals = 2
+	}
+	return v.Words(strconv.FormatFloat(v.Value, 'f', decimals, 64))
+}
+
+// Words puts a parameter into words, with its value written as given.
+func (v Value) Words(number string) string {
 	name := ParameterWords(v.Name)
-	number := strconv.FormatFloat(v.Value, 'f', -1, 64)
-	switch v.Unit {
-	case "1V:nH":
+	switch {
+	case strings.HasSuffix(name, "pivot") && v.Value == 0:
+		return name + " at the toe"
+	case strings.HasSuffix(name, "pivot") && v.Value == 1:
+		return name + " at the crest"
+	case strings.HasSuffix(name, "pivot"):
+		return name + " at " + number + " of the height"
+	case v.Unit == "1V:nH":
 		return name + " 1V:" + number + "H"
-	case "m":
-		return name + " " + strconv.FormatFloat(v.Value, 'f', 2, 64) + " m"
-	case "1", "":
+	case v.Unit == "1", v.Unit == "":
 		return name + " " + number
 	}
 	return name + " " + number + " " + v.Unit

@@ -207,9 +207,22 @@ func (d *trenchDrains) measure(j *Job, p *Proposal, s *slope, t *trench) {
 	}
 	p.checkSpan(j, t.from, t.to, left, right)
 	p.checkDig(j, t.invert, t.from, t.to, "trench drain")
-	middle := (t.from + t.to) / 2
-	p.Dimensions = append(p.Dimensions, lengthDim("drain depth",
-		lem.Point{X: middle, Y: j.Section.Ground.At(middle)}, lem.Point{X: middle, Y: t.invert.At(middle)}))
+	at := t.deepest(j.Section.Ground)
+	p.Dimensions = append(p.Dimensions, lengthDim("drain depth", lem.Point{X: at, Y: j.Section.Ground.At(at)}, lem.Point{X: at, Y: t.invert.At(at)}))
+}
+
+// deepest returns where the trench is deepest below a ground, in its middle part: near its ends an outfall or the bottom of the soil may hold the
+// invert up.
+func (t *trench) deepest(ground lem.Profile) float64 {
+	var at float64
+	most := math.Inf(-1)
+	for _, share := range []float64{0.5, 0.4, 0.6, 0.3, 0.7, 0.2, 0.8} {
+		x := t.from + share*(t.to-t.from)
+		if d := ground.At(x) - t.invert.At(x); d > most+limitSlack {
+			at, most = x, d
+		}
+	}
+	return at
 }
 
 // fall says by what ratio the head above the invert falls at the invert.

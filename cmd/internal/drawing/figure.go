@@ -5,6 +5,7 @@ import (
 	"image/color"
 	"image/png"
 	"io"
+	"strings"
 
 	"gonum.org/v1/plot/vg"
 	"gonum.org/v1/plot/vg/vgimg"
@@ -166,12 +167,29 @@ type text struct {
 func (t text) draw(c vg.Canvas) {
 	c.SetColor(t.colour)
 	if !t.turned {
-		c.FillString(t.font.vg(), t.at.vg(), t.s)
+		t.fill(c, t.at)
 		return
 	}
 	c.Push()
 	c.Translate(t.at.vg())
 	c.Rotate(quarterTurn)
-	c.FillString(t.font.vg(), vg.Point{}, t.s)
+	t.fill(c, xy{})
 	c.Pop()
+}
+
+// fill sets the text with its baseline starting at a point. In an image it is set word by word: kerning in whole pixels would close up the blanks
+// beside letters such as A and T.
+func (t text) fill(c vg.Canvas, at xy) {
+	if _, image := c.(*vgimg.Canvas); !image {
+		c.FillString(t.font.vg(), at.vg(), t.s)
+		return
+	}
+	blank := t.font.width(" ")
+	for i, word := range strings.Split(t.s, " ") {
+		if i > 0 {
+			at.X += blank
+		}
+		c.FillString(t.font.vg(), at.vg(), word)
+		at.X += t.font.width(word)
+	}
 }

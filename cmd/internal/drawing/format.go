@@ -41,15 +41,14 @@ func metres(v float64) string { return number(v, 2) + " m" }
 
 // value writes a parameter of an option in words.
 func value(v remedies.Value) string {
-	name := strings.ReplaceAll(v.Name, "_", " ")
+	decimals := 0
 	switch v.Unit {
 	case "1V:nH":
-		return name + " 1V:" + number(v.Value, 1) + "H"
-	case "1", "":
-		return name + " " + number(v.Value, 2)
-	default:
-		return name + " " + number(v.Value, 2) + " " + v.Unit
+		decimals = 1
+	case "m":
+		decimals = 2
 	}
+	return v.Words(number(v.Value, decimals))
 }
 
 // methodName writes a method of slices as people spell it.

@@ -65,6 +65,7 @@ type picture struct {
 	bodies         []body
 	waters         []waterDrawn
 	free           []freeDrawn
+	known          []lem.PressurePoint
 	drains         *lem.Drawdown
 	slip           []lem.Point
 	key            key
@@ -189,6 +190,7 @@ func (p *picture) chooseHeight() {
 	for _, f := range p.free {
 		see([]lem.Point{{X: f.FromX, Y: f.Level}})
 	}
+	p.seeLimits(see)
 	// Lines far below the slope are shown only in the section as read: they would make the slope small.
 	deepest := p.lo - 0.6*(p.hi-p.lo)
 	if p.opt == nil || p.whole {
@@ -205,6 +207,35 @@ func (p *picture) chooseHeight() {
 	}
 	p.lo = floor
 	p.lo -= 0.14 * max(p.hi-p.lo, (p.x1-p.x0)/20)
+}
+
+// seeLimits shows the levels of limits, restraints and known slips in the window.
+func (p *picture) seeLimits(see func([]lem.Point)) {
+	for _, m := range p.job.Limits.MaxLevels {
+		if max(m.FromX, p.x0) < min(m.ToX, p.x1) {
+			see([]lem.Point{{Y: m.Level}})
+		}
+	}
+	for _, o := range p.job.Limits.Overhead {
+		if max(o.FromX, p.x0) < min(o.ToX, p.x1) {
+			see([]lem.Point{{Y: o.Level}})
+		}
+	}
+	for _, r := range p.sec.Restraints {
+		if p.inWindow(r.X) {
+			see([]lem.Point{{Y: r.Top}, {Y: r.Bottom}})
+		}
+	}
+	for _, k := range p.sec.Known {
+		see(cropInside(k.Line, p.x0, p.x1))
+	}
+	see(p.observedLine())
+	see(p.crackLine())
+	for _, q := range p.known {
+		if p.opt == nil || p.whole {
+			see([]lem.Point{{Y: q.Y}})
+		}
+	}
 }
 
 // otherLines returns the strata and water lines in the window.

@@ -110,6 +110,11 @@ func (s *sheet) tryDimension(a, b, u, normal xy, o, long float64, n note, outsid
 			}
 		}
 	}
+	// A line along another can be told from it no more.
+	stretch := Box{min(l.a.X, l.b.X), min(l.a.Y, l.b.Y), max(l.a.X, l.b.X), max(l.a.Y, l.b.Y)}
+	if min(stretch.width(), stretch.height()) < 1 {
+		cost += s.place.covered(stretch)
+	}
 	return l, cost + s.place.covered(l.box)
 }
 

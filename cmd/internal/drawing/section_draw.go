@@ -1,9 +1,6 @@
 package drawing
 
 import (
-	"math"
-	"strings"
-
 	"standfast/lem"
 )
 
@@ -38,12 +35,16 @@ func (p *picture) fillKey() {
 	if len(p.free) > 0 {
 		p.key.addTint("free water", waterFill)
 	}
+	if len(p.known) > 0 {
+		p.key.add("pore pressure known", samplePressure)
+	}
 	if p.slip != nil {
 		p.key.addLine("governing slip", slipPen)
 	}
 	if p.sec.FirmBase != nil {
 		p.key.addLine("firm base, no slip below", firmPen)
 	}
+	p.keyGiven()
 	p.keyLimits()
 	for _, t := range p.sec.Strata {
 		p.key.addTint(p.soilWords(t.Soil), soilTint(t.Soil))
@@ -60,14 +61,20 @@ func (p *picture) keyLimits() {
 	if len(p.sec.Loads) > 0 {
 		p.key.add("surcharge", sampleLoad)
 	}
+	if len(p.sec.LineLoads) > 0 {
+		p.key.add("line load", sampleLineLoad)
+	}
 	if l.Left != nil || l.Right != nil {
 		p.key.addLine("limit of works, arrow towards the works", limitPen)
 	}
 	if len(l.KeepClear) > 0 {
-		p.key.addHatch("keep-clear zone", paper, zonePen, 0)
+		p.key.add("keep-clear zone", sampleZone)
 	}
 	if len(l.MaxLevels) > 0 {
 		p.key.addLine("greatest level of works", zonePen)
+	}
+	if len(l.Overhead) > 0 {
+		p.key.add("overhead line with its clearance", sampleOverhead)
 	}
 }
 
@@ -78,36 +85,6 @@ func (p *picture) hasAdded() bool {
 		}
 	}
 	return false
-}
-
-// soilWords names a soil with its parameters.
-func (p *picture) soilWords(i int) string {
-	c := &p.sec.Soils[i]
-	words := []string{c.Name + ": γ" + string(noBreak) + number(c.UnitWeight, 1) + string(noBreak) + "kN/m³"}
-	if c.SaturatedUnitWeight != 0 && c.SaturatedUnitWeight != c.UnitWeight {
-		words[0] += " (" + number(c.SaturatedUnitWeight, 1) + " saturated)"
-	}
-	words = append(words, "c′ "+number(c.Cohesion, 0)+" kPa", "φ′ "+number(c.Friction*180/math.Pi, 0)+"°")
-	if u := c.Undrained; u != nil {
-		switch {
-		case len(u.Points) > 0:
-			words = append(words, "cu at points")
-		case u.Gradient != 0:
-			words = append(words, "cu "+number(u.Strength, 0)+" + "+number(u.Gradient, 1)+" kPa/m")
-		default:
-			words = append(words, "cu "+number(u.Strength, 0)+" kPa")
-		}
-	}
-	if c.HasRu {
-		words = append(words, "ru "+number(c.Ru, 2))
-	}
-	if c.FreeDraining {
-		words = append(words, "free-draining")
-	}
-	for i, w := range words[1:] {
-		words[i+1] = strings.ReplaceAll(w, " ", string(noBreak))
-	}
-	return strings.Join(words, ", ")
 }
 
 // drawSection draws everything inside the frame: areas, then lines, then texts.
@@ -130,6 +107,7 @@ func (p *picture) drawSection(s *sheet) {
 	p.drawLines(s)
 	p.drawLimits(s)
 	p.drawLoads(s)
+	p.drawGiven(s)
 	p.drawSlip(s)
 	p.label(s)
 }
@@ -214,6 +192,7 @@ func (p *picture) label(s *sheet) {
 	p.labelLoads(s)
 	p.labelSlope(s)
 	p.labelWater(s)
+	p.labelGiven(s)
 	p.labelLimits(s)
 	p.labelStrata(s)
 }

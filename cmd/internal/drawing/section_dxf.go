@@ -21,6 +21,7 @@ const (
 	layerSlips    = "SLIPS"
 	layerLimits   = "LIMITS"
 	layerLoads    = "LOADS"
+	layerHolding  = "RESTRAINTS"
 	layerCut      = "CUT"
 	layerFill     = "FILL"
 	layerText     = "TEXT"
@@ -36,6 +37,7 @@ var dxfLayers = []dxf.Layer{
 	{Name: layerSlips, Colour: 220, Line: dxf.Solid},
 	{Name: layerLimits, Colour: 43, Line: dxf.DashDot},
 	{Name: layerLoads, Colour: 203, Line: dxf.Solid},
+	{Name: layerHolding, Colour: 7, Line: dxf.Solid},
 	{Name: layerCut, Colour: 32, Line: dxf.Solid},
 	{Name: layerFill, Colour: 106, Line: dxf.Solid},
 	{Name: layerText, Colour: 7, Line: dxf.Solid},
@@ -97,6 +99,9 @@ func (d *board) draw() {
 	d.drawSlips()
 	d.marks(layerLimits, d.drawLimits)
 	d.marks(layerLoads, d.drawLoads)
+	d.marks(layerHolding, d.drawRestraints)
+	d.marks(layerSlips, d.drawSurfaces)
+	d.marks(layerWater, d.drawPressures)
 	d.marks("", d.drawLines) // Labels keep off the lines, which are drawn already.
 	d.marks("", d.drawSlip)
 	d.tagSlips()
@@ -337,7 +342,11 @@ func (d *board) notes() {
 		if o.Check.Stage {
 			name = "stage: " + name
 		}
-		lines = append(lines, fmt.Sprintf("Slip %d, %s: FS %s (%s), required %s", i+1, name, fsDown(o.FS), methodName(o.Method), number(o.Check.Required, 2)))
+		asked := "required " + number(o.Check.Required, 2)
+		if o.Check.Advisory {
+			asked = "told only"
+		}
+		lines = append(lines, fmt.Sprintf("Slip %d, %s: FS %s (%s), %s", i+1, name, fsDown(o.FS), methodName(o.Method), asked))
 	}
 	if len(d.sheet.unplaced) > 0 {
 		lines = append(lines, "Also drawn, without room for a label: "+strings.Join(d.sheet.unplaced, "; ")+".")

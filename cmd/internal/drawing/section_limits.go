@@ -9,17 +9,14 @@ import (
 
 // Heights and depths of marks at the ground, points.
 const (
-	fenceAbove   = 34.0
-	fenceBelow   = 14.0
-	zoneAbove    = 13.0 // of a zone that no load may enter
-	zoneBelow    = 22.0 // of a zone that no dig may enter
-	zoneHatch    = 3.4
-	outfallMark  = 16.0
-	arrowHead    = 4.6
-	arrowHalf    = 1.35
-	loadHeight   = 13.0
-	loadArrows   = 11.0 // between the arrows of a surcharge
-	loadStacking = 17.0
+	fenceAbove  = 34.0
+	fenceBelow  = 14.0
+	zoneAbove   = 13.0 // of a zone that no load may enter
+	zoneBelow   = 22.0 // of a zone that no dig may enter
+	zoneHatch   = 3.4
+	outfallMark = 16.0
+	arrowHead   = 4.6
+	arrowHalf   = 1.35
 )
 
 // inWindow reports whether x is drawn.
@@ -54,27 +51,46 @@ func (p *picture) drawLimits(s *sheet) {
 	list, inwards := p.fences()
 	for i, f := range list {
 		top := p.fenceTop(s, f)
-		s.stroke(limitPen, medium, []xy{top, {top.X, p.lowest(s, f.X) - fenceBelow}})
+		s.stroke(limitPen, heavy, []xy{top, {top.X, p.lowest(s, f.X) - fenceBelow}})
 		tip := xy{top.X + inwards[i]*11, top.Y - 4}
 		s.stroke(pen{limitInk, 0.7, nil}, medium, []xy{{top.X, tip.Y}, tip})
 		s.arrow(limitInk, tip, xy{inwards[i], 0})
 	}
 	for i := range p.job.Limits.KeepClear {
 		if ring := p.zone(s, &p.job.Limits.KeepClear[i]); ring != nil {
-			s.stroke(pen{limitInk, 0.3, nil}, lighter, hatch(0, zoneHatch, [][]xy{ring})...)
-			s.stroke(zonePen, medium, append(ring, ring[0]))
+			s.stroke(zoneHatchPen, light, hatch(0, zoneHatch, [][]xy{ring})...)
+			s.stroke(zonePen, heavy, append(ring, ring[0]))
 		}
 	}
 	for _, m := range p.job.Limits.MaxLevels {
 		if x0, x1 := max(m.FromX, p.x0), min(m.ToX, p.x1); x0 < x1 {
-			s.stroke(zonePen, medium, s.view.line([]lem.Point{{X: x0, Y: m.Level}, {X: x1, Y: m.Level}}))
+			s.stroke(zonePen, heavy, s.view.line([]lem.Point{{X: x0, Y: m.Level}, {X: x1, Y: m.Level}}))
 		}
 	}
+	p.drawOverhead(s)
 	if a, ok := p.outfall(s); ok {
 		s.stroke(pen{waterInk, 0.9, nil}, medium, []xy{{a.X - outfallMark/2, a.Y}, {a.X + outfallMark/2, a.Y}})
 		s.arrow(waterInk, xy{a.X + p.job.Facing()*(outfallMark/2+arrowHead), a.Y}, xy{p.job.Facing(), 0})
 	}
 	p.drawRanges(s)
+}
+
+// drawOverhead draws what hangs above the ground, with the level that works must stay below for its clearance.
+func (p *picture) drawOverhead(s *sheet) {
+	for _, o := range p.job.Limits.Overhead {
+		x0, x1 := max(o.FromX, p.x0), min(o.ToX, p.x1)
+		if x0 >= x1 {
+			continue
+		}
+		level := func(y float64) []xy { return s.view.line([]lem.Point{{X: x0, Y: y}, {X: x1, Y: y}}) }
+		s.stroke(overheadPen, heavy, level(o.Level))
+		s.stroke(zonePen, medium, level(o.Level-o.Clearance))
+	}
+}
+
+// sampleOverhead draws what hangs above the ground in the key.
+func sampleOverhead(s *sheet, b Box) {
+	s.add(stroke{overheadPen, [][]xy{{{b.MinX, b.MaxY - 1.5}, {b.MaxX, b.MaxY - 1.5}}}}, stroke{zonePen, [][]xy{{{b.MinX, b.MinY + 1.5}, {b.MaxX, b.MinY + 1.5}}}})
 }
 
 // zone returns the outline of a keep-clear zone along the ground, on the page; nil outside the window.
@@ -105,6 +121,12 @@ func (p *picture) zone(s *sheet, k *remedies.KeepClear) []xy {
 		ring = append(ring, xy{g[i].X, max(g[i].Y-down, s.view.frame.MinY)})
 	}
 	return ring
+}
+
+// sampleZone draws a keep-clear zone in the key.
+func sampleZone(s *sheet, b Box) {
+	ring := b.corners()
+	s.add(stroke{zoneHatchPen, hatch(0, zoneHatch, [][]xy{ring})}, stroke{zonePen, [][]xy{append(ring, ring[0])}})
 }
 
 // outfall returns where the drain outfall is marked.
@@ -143,7 +165,7 @@ func (p *picture) ranges() []daylight {
 func (p *picture) drawRanges(s *sheet) {
 	for _, d := range p.ranges() {
 		a, b, y := p.bracket(s, d)
-		s.stroke(rangePen, medium, []xy{{a, y + 3}, {a, y - 3}}, []xy{{a, y}, {b, y}}, []xy{{b, y + 3}, {b, y - 3}})
+		s.stroke(rangePen, heavy, []xy{{a, y + 3}, {a, y - 3}}, []xy{{a, y}, {b, y}}, []xy{{b, y + 3}, {b, y - 3}})
 	}
 }
 
@@ -162,7 +184,9 @@ func (p *picture) labelLimits(s *sheet) {
 	for i := range p.job.Limits.KeepClear {
 		k := &p.job.Limits.KeepClear[i]
 		if ring := p.zone(s, k); ring != nil {
-			put(zoneWords(k), middle(ring), below)
+			n := noteOf(bodyFace, limitInk, 120, zoneWords(k))
+			n.pointed = true
+			s.label(n, below, middle(ring))
 		}
 	}
 	for _, m := range p.job.Limits.MaxLevels {
@@ -172,6 +196,12 @@ func (p *picture) labelLimits(s *sheet) {
 				anchors = append(anchors, s.view.at(lem.Point{X: x0 + t*(x1-x0), Y: m.Level}))
 			}
 			s.label(noteOf(bodyFace, limitInk, 120, m.Name+": works no higher than "+metres(m.Level)), above, anchors...)
+		}
+	}
+	for _, o := range p.job.Limits.Overhead {
+		if x0, x1 := max(o.FromX, p.x0), min(o.ToX, p.x1); x0 < x1 {
+			words := o.Name + ", level " + metres(o.Level) + ": works stay " + metres(o.Clearance) + " below"
+			s.label(noteOf(bodyFace, limitInk, 130, words), above, s.view.at(lem.Point{X: (x0 + x1) / 2, Y: o.Level}))
 		}
 	}
 	for _, d := range p.ranges() {
@@ -211,99 +241,4 @@ func middle(ring []xy) xy {
 		b = Box{min(b.MinX, q.X), min(b.MinY, q.Y), max(b.MaxX, q.X), max(b.MaxY, q.Y)}
 	}
 	return b.centre()
-}
-
-// loadRow returns how many surcharges stand below the i-th: those before it that share an x with it.
-func (p *picture) loadRow(i int) float64 {
-	row, l := 0.0, p.sec.Loads[i]
-	for _, o := range p.sec.Loads[:i] {
-		if o.FromX < l.ToX && l.FromX < o.ToX {
-			row++
-		}
-	}
-	return row
-}
-
-// sky returns the height kept free above the ground for labels, points.
-func (p *picture) sky() float64 {
-	rows := 0.0
-	for i := range p.sec.Loads {
-		rows = max(rows, p.loadRow(i))
-	}
-	return skyAbove + rows*loadStacking
-}
-
-// loadLine returns the line that a surcharge's arrows hang from, along the ground; nil outside the window. Surcharges that share an
-// x stand above each other.
-func (p *picture) loadLine(s *sheet, i int) (upper, lower []xy) {
-	l := p.sec.Loads[i]
-	x0, x1 := max(l.FromX, p.x0), min(l.ToX, p.x1)
-	if x0 >= x1 {
-		return nil, nil
-	}
-	row := p.loadRow(i)
-	lower = s.view.line(crop(p.ground, x0, x1))
-	top := row*loadStacking + loadHeight + 2
-	for k := range lower {
-		lower[k].Y += row*loadStacking + 2
-		upper = append(upper, xy{lower[k].X, lower[k].Y + top - row*loadStacking - 2})
-	}
-	return upper, lower
-}
-
-func (p *picture) drawLoads(s *sheet) {
-	for i := range p.sec.Loads {
-		up, low := p.loadLine(s, i)
-		if up == nil {
-			continue
-		}
-		s.stroke(loadPen, medium, up)
-		first, last := up[0].X, up[len(up)-1].X
-		n := max(1, math.Round((last-first)/loadArrows))
-		for k := 0.0; k <= n; k++ {
-			x := first + (last-first)*k/n
-			foot, head := xy{x, heightAt(low, x)}, xy{x, heightAt(up, x)}
-			s.stroke(loadPen, light, []xy{head, {x, foot.Y + arrowHead/2}})
-			s.arrow(loadInk, foot, xy{0, -1})
-		}
-	}
-}
-
-// sampleLoad draws a surcharge in the key.
-func sampleLoad(s *sheet, b Box) {
-	s.add(stroke{loadPen, [][]xy{{{b.MinX + 4, b.MaxY}, {b.MaxX - 4, b.MaxY}}}})
-	for k := range 3 {
-		x := b.MinX + 4 + float64(k)*(b.width()-8)/2
-		s.add(stroke{loadPen, [][]xy{{{x, b.MaxY}, {x, b.MinY + arrowHead/2}}}})
-		s.arrow(loadInk, xy{x, b.MinY}, xy{0, -1})
-	}
-}
-
-// heightAt returns the height of a line of the page at x.
-func heightAt(l []xy, x float64) float64 {
-	for i := 0; i+1 < len(l); i++ {
-		if a, b := l[i], l[i+1]; x <= b.X && b.X > a.X {
-			return a.Y + (b.Y-a.Y)*(x-a.X)/(b.X-a.X)
-		}
-	}
-	return l[len(l)-1].Y
-}
-
-func (p *picture) labelLoads(s *sheet) {
-	for i, l := range p.sec.Loads {
-		up, _ := p.loadLine(s, i)
-		if up == nil {
-			continue
-		}
-		x := (up[0].X + up[len(up)-1].X) / 2
-		txt := l.Name
-		if txt != "" {
-			txt += " "
-		}
-		txt += number(l.Pressure, 0) + " kPa"
-		if l.Variable {
-			txt += " (variable)"
-		}
-		s.label(noteOf(bodyFace, loadInk, 130, txt), above, xy{x, heightAt(up, x)})
-	}
 }

@@ -40,7 +40,7 @@ func (p *picture) layOut(opts Options, listed []string) *sheet {
 		columns, width = 3, (inner-tableWidth)/3
 	}
 	cols, keyHeight := p.key.layOut(columns, width)
-	stripHeight := max(keyHeight, float64(len(rows)+1)*tableRow)
+	stripHeight := max(keyHeight, tableHeight(rows))
 	foot := footLines(inner, opts, listed)
 
 	headHeight, footHeight := head.height(), float64(len(foot))*cautionFace.lineHeight()
@@ -205,8 +205,22 @@ const (
 
 // fsRow is a row of the table of factors of safety.
 type fsRow struct {
-	name, required, fs, method, verdict string
-	bad                                 bool
+	name                          []string // Its lines.
+	required, fs, method, verdict string
+	bad                           bool
+}
+
+func (r *fsRow) height() float64 {
+	return tableRow + float64(len(r.name)-1)*smallFace.lineHeight()
+}
+
+// tableHeight returns what the table takes with its head, points.
+func tableHeight(rows []fsRow) float64 {
+	h := tableRow
+	for i := range rows {
+		h += rows[i].height()
+	}
+	return h
 }
 
 func (p *picture) fsRows() []fsRow {
@@ -215,13 +229,16 @@ func (p *picture) fsRows() []fsRow {
 	}
 	var rows []fsRow
 	for _, o := range slices.Concat(p.opt.Situations, p.opt.Stages) {
-		r := fsRow{name: checkName(&o.Check), required: number(o.Check.Required, 2), fs: "none", verdict: "unresolved", bad: true}
+		name := checkName(&o.Check)
 		if o.Check.Stage {
-			r.name = "stage: " + r.name
+			name = "stage: " + name
 		}
+		r := fsRow{name: nameLines(name), required: number(o.Check.Required, 2), fs: "none", verdict: "unresolved", bad: true}
 		if !math.IsNaN(o.FS) {
 			r.fs, r.method = fsDown(o.FS), methodName(o.Method)
 			switch {
+			case o.Check.Advisory:
+				r.required, r.verdict, r.bad = "", "told only", false
 			case !(o.FS >= o.Check.Required):
 				r.verdict = "below"
 			case o.Resolved:
@@ -231,9 +248,14 @@ func (p *picture) fsRows() []fsRow {
 		rows = append(rows, r)
 	}
 	if more := len(rows) - tableMost; more > 0 {
-		rows = append(rows[:tableMost-1], fsRow{name: fmt.Sprintf("and %d more, in the result file", more+1)})
+		rows = append(rows[:tableMost-1], fsRow{name: []string{fmt.Sprintf("and %d more, in the result file", more+1)}})
 	}
 	return rows
+}
+
+// nameLines breaks the name of a check for the table.
+func nameLines(name string) []string {
+	return smallFace.wrap(clean(name), columnRequired-smallFace.width("required")-6, 2)
 }
 
 // Right edges of the columns of the table, points from its left edge.
@@ -258,7 +280,9 @@ func (s *sheet) drawTable(rows []fsRow, left, top float64) {
 				s.line(f, c, left+x, y, txt)
 			}
 		}
-		put(0, f.fit(clean(r.name), columnRequired-f.width("required")-4))
+		for i, l := range r.name {
+			s.line(f, c, left, y-float64(i)*f.lineHeight(), l)
+		}
 		put(columnRequired-f.width(r.required), r.required)
 		put(columnFS-f.width(r.fs), r.fs)
 		put(columnMethod, f.fit(r.method, columnVerdict-columnMethod-4))
@@ -266,11 +290,11 @@ func (s *sheet) drawTable(rows []fsRow, left, top float64) {
 	}
 	headFace := smallFace
 	headFace.bold = true
-	cell(headFace, fsRow{name: "situation or stage", required: "required", fs: "FS", method: "method", verdict: "verdict"}, top)
+	cell(headFace, fsRow{name: []string{"situation or stage"}, required: "required", fs: "FS", method: "method", verdict: "verdict"}, top)
 	y := top - tableRow
 	s.add(stroke{tickPen, [][]xy{{{left, y + 0.8}, {left + tableWidth, y + 0.8}}}})
 	for _, r := range rows {
 		cell(smallFace, r, y)
-		y -= tableRow
+		y -= r.height()
 	}
 }

@@ -2,8 +2,10 @@ package drawing
 
 import (
 	"slices"
+	"strings"
 
 	"standfast/lem"
+	"standfast/remedies"
 )
 
 // waterDrawn is a water line of the picture.
@@ -44,8 +46,10 @@ func (p *picture) gatherWater() {
 		p.gatherWaterAsRead()
 		return
 	}
-	line, free, drains, name := p.governingWater()
+	w, name := p.governingWater()
+	line, drains := w.Line, w.Drains
 	p.drains = drains
+	p.addPressures(w.Points)
 	at := p.waterBefore()
 	if at >= 0 {
 		w := p.job.Waters[at]
@@ -63,7 +67,10 @@ func (p *picture) gatherWater() {
 			p.waters = append(p.waters, waterDrawn{"head at drain invert", l, headPen, "head left at the invert of drains"})
 		}
 	}
-	p.addFree(name, free)
+	for _, own := range w.BySoil {
+		p.addWater("water in "+p.sec.Soils[own.Soil].Name, own.Line, waterSoilPen, "water line of one soil")
+	}
+	p.addFree(name, w.Free)
 	for i, w := range p.opt.Proposal.Waters {
 		if i < len(p.job.Situations) {
 			p.addWater(p.job.Situations[i].Name, w.Line, waterOtherPen, "water line after works, other situations")
@@ -77,10 +84,37 @@ func (p *picture) gatherWaterAsRead() {
 		if p.gov != nil && p.waterBefore() != i {
 			pn, what = waterOtherPen, "water line, other situations"
 		}
-		p.addWater(w.Name+" water", w.Line, pn, what)
+		if k := p.drawnWater(w.Line); k >= 0 {
+			p.waters[k].name = strings.TrimSuffix(p.waters[k].name, " water") + ", " + waterName(&w) + " water"
+			if pn.colour == waterInk {
+				p.waters[k].pen, p.waters[k].what = pn, what
+			}
+		} else {
+			p.addWater(waterName(&w)+" water", w.Line, pn, what)
+		}
+		for _, own := range w.BySoil {
+			p.addWater(w.Name+" water in "+p.sec.Soils[own.Soil].Name, own.Line, waterSoilPen, "water line of one soil")
+		}
+		p.addPressures(w.Points)
 	}
 	for _, s := range p.job.Situations {
 		p.addFree(s.Name, s.Free)
+	}
+}
+
+// waterName names a water line with what sets it apart.
+func waterName(w *remedies.WaterLine) string {
+	if w.Inclined {
+		return w.Name + " (inclined)"
+	}
+	return w.Name
+}
+
+func (p *picture) addPressures(list []lem.PressurePoint) {
+	for _, q := range list {
+		if p.inWindow(q.X) && !slices.Contains(p.known, q) {
+			p.known = append(p.known, q)
+		}
 	}
 }
 
@@ -101,16 +135,15 @@ func (p *picture) waterBefore() int {
 	return at
 }
 
-// governingWater returns the water after works in the governing check, the first situation's if none governs.
-func (p *picture) governingWater() (line lem.Profile, free []lem.FreeWater, d *lem.Drawdown, name string) {
-	var w lem.Water
+// governingWater returns the water after works in the governing check, the first situation's if none governs, and the check's name.
+func (p *picture) governingWater() (w lem.Water, name string) {
 	switch {
 	case p.gov != nil:
-		w, name = p.gov.Check.Situation.Water, p.gov.Check.Name
+		return p.gov.Check.Situation.Water, p.gov.Check.Name
 	case len(p.opt.Proposal.Waters) > 0 && len(p.job.Situations) > 0:
-		w, name = p.opt.Proposal.Waters[0], p.job.Situations[0].Name
+		return p.opt.Proposal.Waters[0], p.job.Situations[0].Name
 	}
-	return w.Line, w.Free, w.Drains, name
+	return w, name
 }
 
 func (p *picture) cropLine(l lem.Profile) lem.Profile {
@@ -122,16 +155,15 @@ func (p *picture) cropLine(l lem.Profile) lem.Profile {
 
 // addWater adds a line unless the same line is drawn already.
 func (p *picture) addWater(name string, l lem.Profile, pn pen, what string) {
+	if c := p.cropLine(l); c != nil && p.drawnWater(l) < 0 {
+		p.waters = append(p.waters, waterDrawn{name, c, pn, what})
+	}
+}
+
+// drawnWater returns which line of the picture is the same as l; -1: none.
+func (p *picture) drawnWater(l lem.Profile) int {
 	c := p.cropLine(l)
-	if c == nil {
-		return
-	}
-	for _, w := range p.waters {
-		if same(w.line, c) {
-			return
-		}
-	}
-	p.waters = append(p.waters, waterDrawn{name, c, pn, what})
+	return slices.IndexFunc(p.waters, func(w waterDrawn) bool { return c != nil && same(w.line, c) })
 }
 
 func (p *picture) addFree(name string, list []lem.FreeWater) {
@@ -209,7 +241,26 @@ func (p *picture) drawWater(s *sheet) {
 	if p.drains != nil && len(p.drains.Invert) > 1 {
 		s.stroke(invertPen, medium, s.view.line(cropInside(p.drains.Invert, p.x0, p.x1)))
 	}
+	p.drawPressures(s)
 }
+
+// drawPressures marks the points at which a pore pressure is known; those below what is drawn are left out.
+func (p *picture) drawPressures(s *sheet) {
+	for _, q := range p.known {
+		if at := s.view.at(lem.Point{X: q.X, Y: q.Y}); s.view.frame.holds(at) {
+			s.stroke(pressurePen, medium, pressureMark(at)...)
+		}
+	}
+}
+
+// pressureMark is an upright cross.
+func pressureMark(at xy) [][]xy {
+	const half = 2.6
+	return [][]xy{{{at.X - half, at.Y}, {at.X + half, at.Y}}, {{at.X, at.Y - half}, {at.X, at.Y + half}}}
+}
+
+// samplePressure draws a known pore pressure in the key.
+func samplePressure(s *sheet, b Box) { s.add(stroke{pressurePen, pressureMark(b.centre())}) }
 
 // Share of the window's width at which the marks of water lines are looked for, from the head of the slope on.
 var markShares = []float64{0.06, 0.14, 0.24, 0.34, 0.9, 0.8, 0.46, 0.7, 0.58}
@@ -219,16 +270,16 @@ var freeShares = []float64{0.5, 0.25, 0.75, 0.38, 0.62}
 
 // labelWater marks and names the water lines and free water.
 func (p *picture) labelWater(s *sheet) {
-	type named struct {
+	type item struct {
 		txt string
 		at  xy
 	}
-	var list []named
+	var list []item
 	for i, f := range p.free {
 		if wet := p.wet(f); len(wet) > 0 {
 			x0, x1 := ends(wet[len(wet)/2])
 			t := freeShares[i%len(freeShares)]
-			list = append(list, named{"free water, " + f.name + ", level " + metres(f.Level), s.view.at(lem.Point{X: x0 + t*(x1-x0), Y: f.Level})})
+			list = append(list, item{"free water, " + f.name + ", level " + metres(f.Level), s.view.at(lem.Point{X: x0 + t*(x1-x0), Y: f.Level})})
 			s.waterMark(list[len(list)-1].at)
 		}
 	}
@@ -237,9 +288,14 @@ func (p *picture) labelWater(s *sheet) {
 		if p.job.Facing() < 0 {
 			t = 1 - t
 		}
-		list = append(list, named{w.name, p.onLine(s, w.line, t)})
+		list = append(list, item{w.name, p.onLine(s, w.line, t)})
 		if w.pen.colour == waterInk {
 			s.waterMark(list[len(list)-1].at)
+		}
+	}
+	for _, q := range p.known {
+		if at := s.view.at(lem.Point{X: q.X, Y: q.Y}); s.place.area.holds(at) && q.Pressure > 0 {
+			list = append(list, item{"u " + number(q.Pressure, 0) + " kPa", at})
 		}
 	}
 	for _, n := range list { // All marks stand before the first label looks for room.

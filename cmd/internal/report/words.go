@@ -11,14 +11,7 @@ import (
 
 // sizeOf returns a dimension in words, such as "top width 4 m" or "batter 1V:2H".
 func sizeOf(name string, value float64, unit string) string {
-	words := remedies.ParameterWords(name)
-	switch unit {
-	case "", "1":
-		return words + " " + SizeText(value)
-	case "1V:nH":
-		return words + " 1V:" + SizeText(value) + "H"
-	}
-	return words + " " + SizeText(value) + " " + unit
+	return remedies.Value{Name: name, Value: value, Unit: unit}.Words(SizeText(value))
 }
 
 // Dimensions returns dimensions of an option in words, in the order of its remedy: its own, or those of a point of its trade-off.
