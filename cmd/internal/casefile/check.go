@@ -2,6 +2,7 @@ package casefile
 
 import (
 	"fmt"
+	"strconv"
 	"strings"
 	"unicode"
 
@@ -145,6 +146,10 @@ func checkNumber(s *shape, n *yaml.Node) *problem {
 	switch {
 	case p == nil && !s.bounds.holds(x):
 		return outside(s, n.Value)
+	case p != nil && s.unit == "" && percentRule.MatchString(n.Value):
+		if x, err := strconv.ParseFloat(percentRule.FindStringSubmatch(n.Value)[1], 64); err == nil {
+			p.suggestion = "write the ratio: " + figure(round9(x/100))
+		}
 	case p != nil && rangeRule.MatchString(n.Value):
 		p.suggestion = "only remedies to be sized have ranges: write one number"
 	}

@@ -60,7 +60,7 @@ func TestFeaturesAreRead(t *testing.T) {
 	if diff := cmp.Diff(wantLines, loads.LineLoads); diff != "" {
 		t.Errorf("line loads (-want +read):\n%s", diff)
 	}
-	wantCrack := &lem.TensionCrack{Line: lem.Profile{{X: 0, Y: 37.5}, {X: 25, Y: 37.5}}, WaterShare: 0.6}
+	wantCrack := &lem.TensionCrack{Line: lem.Profile{{X: 0, Y: 37.5}, {X: 25, Y: 37.5}}, HasWaterLevel: true, WaterLevel: 39}
 	if diff := cmp.Diff(wantCrack, readFeature(t, "crack.yaml").Job.Section.Crack); diff != "" {
 		t.Errorf("crack (-want +read):\n%s", diff)
 	}

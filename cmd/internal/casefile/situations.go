@@ -33,12 +33,14 @@ func (b *builder) readLineLoads(v value) {
 		l.Name, _ = b.text(b.get(item, "name"))
 		x := b.get(item, "x")
 		l.X, _ = b.number(x)
-		l.Vertical, _ = b.number(b.get(item, "vertical"))
-		l.Horizontal, _ = b.number(b.get(item, "horizontal"))
+		vertical, horizontal := b.get(item, "vertical"), b.get(item, "horizontal")
+		l.Vertical, _ = b.number(vertical)
+		l.Horizontal, _ = b.number(horizontal)
 		if g := b.job.Section.Ground; b.usable(x) && g != nil && (l.X < g.Left() || l.X > g.Right()) {
 			b.addFault(x, "", "the load lies beyond the ground, which runs from x = %s to %s", figure(g.Left()), figure(g.Right()))
 		}
-		if b.usable(item) && l.Vertical == 0 && l.Horizontal == 0 {
+		readable := (b.usable(vertical) || !vertical.there()) && (b.usable(horizontal) || !horizontal.there())
+		if b.usable(item) && readable && l.Vertical == 0 && l.Horizontal == 0 {
 			b.addFault(b.get(item, "name"), "write its `vertical` or `horizontal` force", "the line load has no force")
 		}
 		b.job.Section.LineLoads = append(b.job.Section.LineLoads, l)

@@ -87,3 +87,35 @@ func TestFeatureSideForcesAreKept(t *testing.T) {
 		t.Error("the function makes no difference")
 	}
 }
+
+// TestFeatureJanbuCorrection: F with Janbu's factor over F without it is f0 = 1 + b1 [d/L - 1.4 (d/L)^2], d the greatest distance of the slip from its
+// chord L, b1 = 0.31 without cohesion, 0.69 without friction, else 0.5 (Janbu 1973 as usually fitted, recalled from memory).
+func TestFeatureJanbuCorrection(t *testing.T) {
+	const tolerance = 1e-4
+	for _, c := range []struct {
+		name    string
+		replace []string
+		b1      float64
+	}{
+		{"loads.yaml", nil, 0.5},
+		{"sand.yaml", []string{"shallower_than: 0.05", "shallower_than: 1"}, 0.31},
+		{"fredlund.yaml", []string{"friction: 20}", "friction: 20}, undrained: {strength: 60}", "water: none", "water: none, strength: undrained"}, 0.69},
+	} {
+		_, f := assessed(t, c.name, c.replace...)
+		s := f.Existing.Situations[0]
+		from, to := s.Slip.From, s.Slip.To
+		chord := math.Hypot(to[0]-from[0], to[1]-from[1])
+		var d float64
+		for _, p := range s.Slip.Points {
+			d = max(d, math.Abs((p[0]-from[0])*(to[1]-from[1])-(p[1]-from[1])*(to[0]-from[0]))/chord)
+		}
+		if s.Slip.Kind == "circle" {
+			d = s.Slip.Radius - math.Sqrt(s.Slip.Radius*s.Slip.Radius-chord*chord/4)
+		}
+		want := 1 + c.b1*(d/chord-1.4*d*d/chord/chord)
+		got := float64(s.FSByMethod["janbu simplified"] / s.FSByMethod["janbu simplified (uncorrected)"])
+		if !(math.Abs(got-want) <= tolerance) || want < 1.005 {
+			t.Errorf("%s: f0 %.5f, want %.5f", c.name, got, want)
+		}
+	}
+}

@@ -206,7 +206,7 @@ func TestFeaturesOnAPlane(t *testing.T) {
 func TestFeatureCurvedEnvelope(t *testing.T) {
 	const pa, weight, tolerance = 101.325, 20 * 5.0, 1e-5 // The slab is 5 m thick, vertically.
 	for _, ru := range []float64{0, 0.15} {
-		f := backAnalysed(t, edited(t, "slab.yaml", "b: 0.8}", fmt.Sprintf("b: 0.8}, ru: %g", ru)), "--method", "spencer")
+		f := backAnalysed(t, edited(t, "slab.yaml", "ru: 0.15", fmt.Sprintf("ru: %g", ru)), "--method", "spencer")
 		normal := weight*planeCos*planeCos - ru*weight
 		want := 0.9 * pa * math.Pow(normal/pa, 0.8) / (weight * planeSin * planeCos)
 		if got := float64(f.AsGiven); !(math.Abs(got-want) <= tolerance*want) {

@@ -96,7 +96,7 @@ func TestFeatureLoadsAndCrack(t *testing.T) {
 		}
 	}
 	fs, f := assessed(t, "crack.yaml")
-	dry, full := of("crack.yaml", "dry ground", "filled: 60%", "filled: 0%"), of("crack.yaml", "dry ground", "filled: 60%", "water_level: 40")
+	dry, full := of("crack.yaml", "dry ground", "water_level: 39", "filled: 0%"), of("crack.yaml", "dry ground", "water_level: 39", "filled: 100%")
 	if filled := fs["dry ground"]; !(full < filled && filled < dry) {
 		t.Errorf("FS with the crack full %.4f, 60 %% full %.4f, dry %.4f", full, filled, dry)
 	}
