@@ -97,6 +97,9 @@ func (r *run[C]) solve() error {
 	default:
 		r.res.Status = Infeasible
 	}
+	if r.s.NoBest {
+		return nil
+	}
 	return r.rankBest()
 }
 

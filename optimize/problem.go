@@ -76,6 +76,8 @@ type Settings[C any] struct {
 	BestSearches int
 	// BestUnaudited leaves the audit of Result.Best to the caller: its margin is then that of a search and the whole pool.
 	BestUnaudited bool
+	// NoBest leaves Result.Best empty: nobody asks for it.
+	NoBest bool
 	// Start is the initial pool.
 	Start []C
 	// Progress, when set, is called from the goroutine of Minimize after each piece of work.

@@ -72,7 +72,8 @@ type Result[C any] struct {
 	Cost   float64   // of the answer; NaN unless Optimal
 	// Lowest holds all basins at the answer from its search and its audit, ascending by margin; nil unless Optimal.
 	Lowest []Found[C]
-	// Best is the design with the greatest margin when the status is Infeasible or Unresolved; X is nil when there is none.
+	// Best is the design with the greatest margin when the status is Infeasible or Unresolved; X is nil when there is none, or when
+	// Settings.NoBest is set.
 	// Candidates are taken by their lowest margin on the pool, which bounds their margin from above, and searched and audited
 	// until the best of them is at least as good as every bound left, or until Settings.BestSearches of them have been
 	// taken: then it is the best of those. Unresolved designs are no candidates.

@@ -8,6 +8,7 @@ type Settings struct {
 	Allowance   float64 // FS by which an answer must exceed the requirement; 0: DefaultAllowance.
 	Curves      bool    // Also size each single remedy for a range of required FS.
 	Pairs       bool    // Also size every compatible pair of remedies.
+	Fronts      bool    // Also find the front of earthworks against metres of drain of remedies sized together with drains.
 	Relaxations bool    // Also size each answer with the limits that bind moved a little.
 	Sensitivity bool    // Also swing the inputs by Job.Swings: of the slope as it is, single remedies and pairs that meet the target.
 	Points      bool    // Also size everything at the low, the middle and the high point of the back-analysis of Job.Observed, if there is one.

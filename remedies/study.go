@@ -172,11 +172,11 @@ func (st *study) size(group []Request) error {
 	}
 	ctx := st.ctx
 	start := st.start(z, group)
-	res, err := z.minimize(ctx, z.cost, start, st.tell)
+	res, front, err := st.fronted(z, group, start)
 	if err != nil {
 		return err
 	}
-	o := &Option{Name: w.name, Title: w.title, Remedies: w.kinds, WhatIf: w.whatIf}
+	o := &Option{Name: w.name, Title: w.title, Remedies: w.kinds, WhatIf: w.whatIf, Front: front}
 	x := res.X
 	found := res.Lowest
 	if x == nil {

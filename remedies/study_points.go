@@ -14,8 +14,8 @@ type Points struct {
 	Sized  []SizedPoint  // At the low, the middle and the high point.
 }
 
-// SizedPoint is the study of a job with one strength of the back-analysis: searched and audited like any study, without curves, moved limits
-// and swings.
+// SizedPoint is the study of a job with one strength of the back-analysis: searched and audited like any study, without curves, fronts,
+// moved limits and swings.
 type SizedPoint struct {
 	Name     string // "low", "middle" or "high", by cohesion.
 	Strength BackPoint
@@ -36,7 +36,7 @@ func (st *study) points(job *Job) (*Points, error) {
 	}
 	out := &Points{Back: back}
 	s := *st.s
-	s.Curves, s.Relaxations, s.Sensitivity, s.Finished = false, false, false, nil
+	s.Curves, s.Fronts, s.Relaxations, s.Sensitivity, s.Finished = false, false, false, false, nil
 	for i, at := range []BackPoint{back.Low, back.Middle, back.High} {
 		sub := &study{
 			ctx: st.ctx, s: &s, pools: st.pools, plain: true, at: " at the " + pointNames[i] + " point",

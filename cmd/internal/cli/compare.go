@@ -81,7 +81,7 @@ func runCompare(c *cobra.Command, o *compareOptions, path string) error {
 		printWarnings(c, read.Warnings)
 	}
 	settings.Curves, settings.Relaxations, settings.Sensitivity, settings.Pairs = true, true, true, o.pairs
-	settings.Points = !o.skipBack
+	settings.Points, settings.Fronts = !o.skipBack, true
 	progress := newProgress(c.ErrOrStderr(), o.quiet)
 	settings.Progress = progress.show
 	result, err := remedies.Study(ctx, read.Job, settings)
