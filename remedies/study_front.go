@@ -13,7 +13,7 @@ import (
 // searched and audited as an answer is.
 type Front struct {
 	Points     []FrontPoint // In descending metres of drain, hence ascending earthworks; with less drain than the last has, nothing was found to do.
-	Whole      bool         // Every design of the front is a point; else they are some of them, set apart evenly in metres of drain.
+	Whole      bool         // Every design of the front is a point; else there may be more between them.
 	Unresolved int          // Designs that could be neither passed nor rejected, and might be points.
 	Searches   int          // One search is one check of one design, audits included.
 }

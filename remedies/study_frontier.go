@@ -93,7 +93,7 @@ func (f *frontier[C]) front(ctx context.Context) (stands []stand[C], whole bool,
 	}
 }
 
-// along goes along the front once, from its least earthworks to its least drain, and reports whether it passed by no point.
+// along goes along the front once, from its least earthworks to its least drain, then between the points found as far as there may be more.
 func (f *frontier[C]) along(ctx context.Context) (stands []stand[C], whole bool, err error) {
 	first, found := f.answer, true
 	if f.byCost {
@@ -107,36 +107,55 @@ func (f *frontier[C]) along(ctx context.Context) (stands []stand[C], whole bool,
 	if err != nil || !found {
 		return stands, true, err
 	}
-	least, step := f.drain[last.index], sameMetres
-	if whole = f.lengths(least, at) <= frontMost; !whole {
-		step = (at - least) / (frontMost - 1)
-	}
+	step := (at - f.drain[last.index]) / (frontMost - 1)
 	for {
 		below := at - step
 		if own := f.drain[f.answer.index]; own < at-sameMetres && own > below { // Not past the answer.
 			below = own
 		}
-		next, found, err := f.size(ctx, f.byEarthworks, func(i int) bool {
-			return f.drain[i] < below+sameMetres/2 && f.drain[i] > least+sameMetres && f.earthworks[i] < f.earthworks[last.index]
-		})
-		if err != nil || !found {
-			return append(stands, last), whole, err
+		next, found, err := f.between(ctx, below+sameMetres/2, last)
+		if err != nil {
+			return nil, false, err
+		}
+		if !found {
+			return f.fill(ctx, append(stands, last))
 		}
 		stands = append(stands, next)
 		at = f.drain[next.index]
 	}
 }
 
-// lengths counts the different lengths of drain from least to most among the designs that may still stand.
-func (f *frontier[C]) lengths(least, most float64) int {
-	var all []float64
-	for i, d := range f.drain {
-		if !f.out[i] && d > least-sameMetres && d < most+sameMetres {
-			all = append(all, d)
+// fill looks for more points in the widest gaps between some, and reports whether there are no more.
+func (f *frontier[C]) fill(ctx context.Context, stands []stand[C]) ([]stand[C], bool, error) {
+	empty := map[int]bool{} // By the design that a gap begins with.
+	for len(stands) < frontMost {
+		at, widest := 0, 0.0
+		for i := 1; i < len(stands); i++ {
+			if w := f.drain[stands[i-1].index] - f.drain[stands[i].index]; w > widest && !empty[stands[i-1].index] {
+				at, widest = i, w
+			}
+		}
+		if at == 0 {
+			return stands, true, nil
+		}
+		begin := stands[at-1].index
+		next, found, err := f.between(ctx, f.drain[begin]-sameMetres, stands[at])
+		if err != nil {
+			return nil, false, err
+		}
+		if found {
+			stands = slices.Insert(stands, at, next)
+		} else {
+			empty[begin] = true
 		}
 	}
-	slices.Sort(all)
-	return len(slices.CompactFunc(all, func(a, b float64) bool { return math.Abs(b-a) <= sameMetres }))
+	return stands, false, nil
+}
+
+// between returns the least earthworks with less drain than so much, but with more drain and less earthworks than a point.
+func (f *frontier[C]) between(ctx context.Context, below float64, point stand[C]) (stand[C], bool, error) {
+	drain, earthworks := f.drain[point.index]+sameMetres, f.earthworks[point.index]
+	return f.size(ctx, f.byEarthworks, func(i int) bool { return f.drain[i] < below && f.drain[i] > drain && f.earthworks[i] < earthworks })
 }
 
 // byEarthworks and byDrain are what a point is the least of, and what breaks ties.

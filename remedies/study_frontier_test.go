@@ -132,7 +132,9 @@ func TestFrontierAgainstAllPairs(t *testing.T) {
 			}
 			return
 		}
-		parts++
+		if parts++; len(want) < frontMost {
+			t.Fatalf("the %d points of the front were not all found", len(want))
+		}
 		if len(got) > most || got[0] != want[0] || got[len(got)-1] != want[len(want)-1] {
 			t.Fatalf("%d points from %v to %v, want %d at most from %v to %v", len(got), got[0], got[len(got)-1], most, want[0], want[len(want)-1])
 		}

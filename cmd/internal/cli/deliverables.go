@@ -31,16 +31,21 @@ func deliverables(f *report.File) ([]output, error) {
 			return nil, err
 		}
 		out = append(out, files...)
+		if files, err = pictures("front-"+names[i], func() (*drawing.Figure, error) {
+			return drawing.Front(r.Job.Title, &r.Options[i], drawing.Options{})
+		}); err != nil {
+			return nil, err
+		}
+		out = append(out, files...)
 		if o := &f.Options[i]; exchange.HasSettingOut(o) {
 			out = append(out, output{"setting-out-" + names[i] + ".csv", func(w io.Writer) error { return exchange.WriteSettingOut(w, o) }})
 		}
 	}
-	switch figure, err := drawing.Tradeoff(r.Job.Title, r.Options, drawing.Options{}); {
-	case err == nil:
-		out = append(out, asFiles("tradeoff", figure)...)
-	case !errors.Is(err, drawing.ErrNothingToDraw):
-		return nil, fmt.Errorf("drawing tradeoff: %w", err)
+	files, err := pictures("tradeoff", func() (*drawing.Figure, error) { return drawing.Tradeoff(r.Job.Title, r.Options, drawing.Options{}) })
+	if err != nil {
+		return nil, err
 	}
+	out = append(out, files...)
 	out = append(out, output{sheet.Name, func(w io.Writer) error { return sheet.Write(w, f) }})
 	out = append(out, output{pdfreport.Name, func(w io.Writer) error { return pdfreport.Write(w, f) }})
 	if len(f.Options) > 0 {
@@ -51,14 +56,23 @@ func deliverables(f *report.File) ([]output, error) {
 
 // drawSection returns the drawings of a section in every format; none if there is nothing to draw.
 func drawSection(name string, j *remedies.Job, o *remedies.Option) ([]output, error) {
-	figure, err := drawing.Section(j, o, drawing.Options{})
+	out, err := pictures(name, func() (*drawing.Figure, error) { return drawing.Section(j, o, drawing.Options{}) })
+	if len(out) > 0 {
+		out = append(out, output{name + ".dxf", func(w io.Writer) error { return drawing.SectionDXF(w, j, o) }})
+	}
+	return out, err
+}
+
+// pictures returns a figure in every format of pictures; none if there is nothing to draw.
+func pictures(name string, draw func() (*drawing.Figure, error)) ([]output, error) {
+	figure, err := draw()
 	if errors.Is(err, drawing.ErrNothingToDraw) {
 		return nil, nil
 	}
 	if err != nil {
 		return nil, fmt.Errorf("drawing %s: %w", name, err)
 	}
-	return append(asFiles(name, figure), output{name + ".dxf", func(w io.Writer) error { return drawing.SectionDXF(w, j, o) }}), nil
+	return asFiles(name, figure), nil
 }
 
 // asFiles returns a figure in every format of pictures.

@@ -47,6 +47,8 @@ func value(v remedies.Value) string {
 		decimals = 1
 	case "m":
 		decimals = 2
+	case "m/s": // A permeability or a recharge is a power of ten.
+		return v.Words(strings.Replace(strconv.FormatFloat(v.Value, 'g', 3, 64), "e-0", "e-", 1))
 	}
 	return v.Words(number(v.Value, decimals))
 }

@@ -1,6 +1,10 @@
 package drawing
 
-import "testing"
+import (
+	"testing"
+
+	"standfast/remedies"
+)
 
 func TestRounding(t *testing.T) {
 	tests := []struct{ name, got, want string }{
@@ -16,6 +20,7 @@ func TestRounding(t *testing.T) {
 		{"number with least decimals", number(2.5, 2), "2.50"},
 		{"number keeps what it needs", number(0.125, 2), "0.125"},
 		{"number without decimals", number(30, 0), "30"},
+		{"permeability", value(remedies.Value{Name: "drilled_drains.permeability", Unit: "m/s", Value: 1e-6}), "drilled drains permeability 1e-6 m/s"},
 	}
 	for _, c := range tests {
 		t.Run(c.name, func(t *testing.T) {

@@ -37,6 +37,9 @@ func (a *author) option(o *report.Option, r *remedies.Option) error {
 	if err := a.tradeoff(o, r); err != nil {
 		return err
 	}
+	if err := a.drainFront(o, r); err != nil {
+		return err
+	}
 	if err := a.sensitivity(o, r); err != nil {
 		return err
 	}

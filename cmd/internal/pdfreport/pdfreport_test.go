@@ -274,6 +274,13 @@ func TestEveryOutcome(t *testing.T) {
 				o.Situations[i].Found = report.Found{FS: report.Number(math.NaN())}
 			}
 		}, "no slip converged", "NaN"},
+		{"earthworks against drain", func(f *report.File) {
+			o := &f.Options[0]
+			point := report.FrontPoint{Drain: 2.5, Earthworks: 7.001, Answer: true, Check: "high water", FS: 1.2159, RequiredFS: 1.2, Parameters: o.Parameters}
+			other := point
+			other.Drain, other.Earthworks, other.Answer = 1.25, 11.5, false
+			o.Front = &report.Front{Points: []report.FrontPoint{point, other}}
+		}, "this, 1", "of one and no more of the other than these"},
 		{"a situation told only", func(f *report.File) { f.Options[0].Situations[1].RequiredFS = 0 }, "told only", "NaN"},
 		{"no stage settings", func(f *report.File) { f.StageSettings = nil }, "construction stages were not checked", "NaN"},
 		{"case of another version", func(f *report.File) { f.Case.Source = "" }, "Thornbeck", "Back-analysis"},

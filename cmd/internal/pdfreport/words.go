@@ -7,6 +7,7 @@ import (
 
 	"standfast/cmd/internal/report"
 	"standfast/lem"
+	"standfast/remedies"
 )
 
 // meetsTarget is the status of an option that meets the target.
@@ -141,4 +142,4 @@ func strength(s report.Strength, order []string) string {
 func unbroken(s string) string { return strings.ReplaceAll(s, " ", noBreak) }
 
 // dimension is the name of a parameter in words.
-func dimension(name string) string { return strings.ReplaceAll(name, "_", " ") }
+func dimension(name string) string { return remedies.ParameterWords(name) }

@@ -32,6 +32,7 @@ func (b *builder) option(o *remedies.Option) Option {
 	}
 	out.Relaxations, out.Sensitivity = relaxationsOf(o.Relaxations), barsOf(o.Sensitivity)
 	out.Certificate = certificateOf(o)
+	out.Front = b.front(o)
 	b.addProposal(&out, o)
 	b.addAnswers(&out, o)
 	return out

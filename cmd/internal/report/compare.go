@@ -19,6 +19,7 @@ func WriteComparison(w io.Writer, f *File, look Look) error {
 		p.materials(f)
 		p.reasons(f)
 		p.relaxations(f)
+		p.fronts(f)
 	}
 	p.answer(f)
 	p.points(f)

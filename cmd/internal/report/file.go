@@ -155,6 +155,9 @@ type Option struct {
 	Certificate *Certificate `json:"certificate" jsonschema:"nullable"` // What the answer rests on; null if nothing was sized.
 	Section     *Section     `json:"section"`                           // The section after works.
 	Tradeoff    []TradePoint `json:"tradeoff"`                          // Least earthworks against the FS asked for.
+	// Earthworks against metres of drain, of remedies sized together with drains among them that meet the target; null: none, or the drains have
+	// one length.
+	Front *Front `json:"front" jsonschema:"nullable"`
 }
 
 // Limit is a limit of the site that a design breaks.

@@ -25,6 +25,7 @@ func (b *rebuilder) option(j *remedies.Job, o *Option) remedies.Option {
 		return out
 	}
 	addRobustness(&out, o)
+	out.Front = frontOf(o)
 	for i := range o.Situations {
 		a := &o.Situations[i]
 		c := remedies.Check{

@@ -50,9 +50,13 @@ func TotalText(q float64) string {
 	return s
 }
 
-// SizeText returns a dimension with the decimals it was set out with, three at most.
+// SizeText returns a dimension with the decimals it was set out with, three at most; one that these would show as nothing, such as a
+// permeability, as a power of ten.
 func SizeText(v float64) string {
 	const decimals = 1e3
+	if v != 0 && math.Abs(v) < 0.5/decimals {
+		return strings.Replace(strconv.FormatFloat(v, 'g', 3, 64), "e-0", "e-", 1)
+	}
 	return strconv.FormatFloat(math.Round(v*decimals)/decimals, 'f', -1, 64)
 }
 

@@ -42,6 +42,8 @@ func TestRounding(t *testing.T) {
 		{"size of a lattice", SizeText(1.5000000000000002), "1.5"},
 		{"size whole", SizeText(4), "4"},
 		{"size fine", SizeText(2.085), "2.085"},
+		{"permeability", SizeText(1.25e-6), "1.25e-6"},
+		{"nothing", SizeText(0), "0"},
 	} {
 		t.Run(c.name, func(t *testing.T) {
 			if c.got != c.want {
