@@ -95,8 +95,9 @@ func (f *frontier[C]) front(ctx context.Context) (stands []stand[C], whole bool,
 
 // along goes along the front once, from its least earthworks to its least drain, then between the points found as far as there may be more.
 func (f *frontier[C]) along(ctx context.Context) (stands []stand[C], whole bool, err error) {
-	first, found := f.answer, true
+	first := f.answer
 	if f.byCost {
+		var found bool
 		if first, found, err = f.size(ctx, f.byEarthworks, func(int) bool { return true }); err != nil || !found {
 			return nil, false, err
 		}
