@@ -96,18 +96,12 @@ func (b *builder) readKnownSlips(v value) {
 
 // knownSlips returns the known slip surfaces that the works have not dug away.
 func (w *writer) knownSlips() *yaml.Node {
-	list := listNode()
-	for _, k := range w.section.Known {
-		if !passesBelow(k.Line, w.section.Ground) {
-			continue
-		}
-		var m mapping
+	left := slices.DeleteFunc(slices.Clone(w.section.Known), func(k lem.KnownSlip) bool { return !passesBelow(k.Line, w.section.Ground) })
+	return listNode(mappingsOf(left, func(m *mapping, k *lem.KnownSlip) {
 		m.put("line", pointsNode(k.Line))
 		m.put("cohesion", numberNode(k.Cohesion))
 		m.put("friction", numberNode(round9(k.Friction*180/math.Pi)))
-		list.Content = append(list.Content, m.inline())
-	}
-	return list
+	})...)
 }
 
 // passesBelow reports whether a line lies below the ground somewhere between its ends.

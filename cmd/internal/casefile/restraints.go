@@ -40,15 +40,11 @@ func (b *builder) readRestraints(v value) {
 }
 
 func (w *writer) restraints() *yaml.Node {
-	list := listNode()
-	for _, r := range w.section.Restraints {
-		var m mapping
+	return listNode(mappingsOf(w.section.Restraints, func(m *mapping, r *lem.Restraint) {
 		m.put("name", textNode(r.Name))
 		m.put("x", numberNode(r.X))
 		m.put("top", numberNode(r.Top))
 		m.put("bottom", numberNode(r.Bottom))
 		m.put("force", numberNode(r.Force))
-		list.Content = append(list.Content, m.inline())
-	}
-	return list
+	})...)
 }

@@ -143,11 +143,7 @@ func soilNode(s lem.Soil, clay bool) *yaml.Node {
 func undrainedNode(u *lem.UndrainedStrength) *yaml.Node {
 	var m mapping
 	if len(u.Points) > 0 {
-		row := rowNode()
-		for _, p := range u.Points {
-			row.Content = append(row.Content, numbersNode(p.X, p.Y, p.Strength))
-		}
-		m.put("points", row)
+		m.put("points", rowNode(nodesOf(u.Points, func(p *lem.StrengthPoint) *yaml.Node { return numbersNode(p.X, p.Y, p.Strength) })...))
 		return m.inline()
 	}
 	if u.Ratio != 0 {
@@ -169,35 +165,26 @@ func undrainedNode(u *lem.UndrainedStrength) *yaml.Node {
 }
 
 func (w *writer) strata() *yaml.Node {
-	list := listNode()
-	for i, s := range w.section.Strata {
-		var m mapping
+	first := &w.section.Strata[0]
+	return listNode(mappingsOf(w.section.Strata, func(m *mapping, s *lem.Stratum) {
 		m.put("soil", textNode(w.section.Soils[s.Soil].Name))
-		if i == 0 {
+		if s == first {
 			m.put("top", textNode(wordGround))
 		} else {
 			m.put("top", pointsNode(s.Top))
 		}
-		list.Content = append(list.Content, m.inline())
-	}
-	return list
+	})...)
 }
 
 func (w *writer) placed() *yaml.Node {
-	list := listNode()
-	for _, p := range w.section.Placed {
-		var m mapping
+	return listNode(mappingsOf(w.section.Placed, func(m *mapping, p *lem.Body) {
 		m.put("soil", textNode(w.section.Soils[p.Soil].Name))
 		m.put("outline", pointsNode(p.Outline))
-		list.Content = append(list.Content, m.inline())
-	}
-	return list
+	})...)
 }
 
 func (w *writer) surcharges() *yaml.Node {
-	list := listNode()
-	for _, s := range w.section.Loads {
-		var m mapping
+	return listNode(mappingsOf(w.section.Loads, func(m *mapping, s *lem.Surcharge) {
 		m.put("name", textNode(s.Name))
 		m.put("from", numberNode(s.FromX))
 		m.put("to", numberNode(s.ToX))
@@ -211,22 +198,16 @@ func (w *writer) surcharges() *yaml.Node {
 		if s.Variable {
 			m.put("variable", trueNode())
 		}
-		list.Content = append(list.Content, m.inline())
-	}
-	return list
+	})...)
 }
 
 func (w *writer) lineLoads() *yaml.Node {
-	list := listNode()
-	for _, l := range w.section.LineLoads {
-		var m mapping
+	return listNode(mappingsOf(w.section.LineLoads, func(m *mapping, l *lem.LineLoad) {
 		m.put("name", textNode(l.Name))
 		m.put("x", numberNode(l.X))
 		m.put("vertical", numberNode(l.Vertical))
 		m.put("horizontal", numberNode(l.Horizontal))
-		list.Content = append(list.Content, m.inline())
-	}
-	return list
+	})...)
 }
 
 func crackNode(k *lem.TensionCrack) *yaml.Node {

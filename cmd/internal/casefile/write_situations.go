@@ -59,11 +59,7 @@ func (w *writer) water(after *lem.Water, before *remedies.WaterLine) *yaml.Node 
 		m.put("by_soil", own.block())
 	}
 	if len(after.Points) > 0 {
-		points := rowNode()
-		for _, p := range after.Points {
-			points.Content = append(points.Content, numbersNode(p.X, p.Y, p.Pressure))
-		}
-		m.put("points", points)
+		m.put("points", rowNode(nodesOf(after.Points, func(p *lem.PressurePoint) *yaml.Node { return numbersNode(p.X, p.Y, p.Pressure) })...))
 	}
 	if after.InclinedLine {
 		m.put("inclined", trueNode())
@@ -141,15 +137,11 @@ func (w *writer) strength(undrained []bool) *yaml.Node {
 }
 
 func freeWaterNode(free []lem.FreeWater) *yaml.Node {
-	list := rowNode()
-	for _, f := range free {
-		var m mapping
+	return rowNode(mappingsOf(free, func(m *mapping, f *lem.FreeWater) {
 		m.put("level", numberNode(f.Level))
 		m.put("from", numberNode(f.FromX))
 		m.put("to", numberNode(f.ToX))
-		list.Content = append(list.Content, m.inline())
-	}
-	return list
+	})...)
 }
 
 func drainsNode(d *lem.Drawdown) *yaml.Node {
@@ -170,21 +162,13 @@ func (w *writer) limits() *yaml.Node {
 		between.put("right", fenceNode(l.Right))
 	}
 	m.put("works_between", between.inline())
-	zones := listNode()
-	for i := range l.KeepClear {
-		zones.Content = append(zones.Content, keepClearNode(&l.KeepClear[i]))
-	}
-	m.put("keep_clear", zones)
-	tops := listNode()
-	for _, t := range l.MaxLevels {
-		var z mapping
+	m.put("keep_clear", listNode(mappingsOf(l.KeepClear, keepClear)...))
+	m.put("maximum_levels", listNode(mappingsOf(l.MaxLevels, func(z *mapping, t *remedies.MaxLevel) {
 		z.put("name", textNode(t.Name))
 		z.put("from", numberNode(t.FromX))
 		z.put("to", numberNode(t.ToX))
 		z.put("level", numberNode(t.Level))
-		tops.Content = append(tops.Content, z.inline())
-	}
-	m.put("maximum_levels", tops)
+	})...))
 	if l.Outfall != nil {
 		m.put("drain_outfall", numberNode(*l.Outfall))
 	}
@@ -194,17 +178,13 @@ func (w *writer) limits() *yaml.Node {
 
 // formLimitNodes writes the limits on faces, widths and import.
 func formLimitNodes(m *mapping, l *remedies.Limits) {
-	over := listNode()
-	for _, o := range l.Overhead {
-		var z mapping
+	m.put("overhead", listNode(mappingsOf(l.Overhead, func(z *mapping, o *remedies.Overhead) {
 		z.put("name", textNode(o.Name))
 		z.put("from", numberNode(o.FromX))
 		z.put("to", numberNode(o.ToX))
 		z.put("level", numberNode(o.Level))
 		z.put("clearance", numberNode(o.Clearance))
-		over.Content = append(over.Content, z.inline())
-	}
-	m.put("overhead", over)
+	})...))
 	var batters mapping
 	batters.putAbove0("permanent", l.Batters.Permanent)
 	batters.putAbove0("temporary", l.Batters.Temporary)
@@ -230,8 +210,7 @@ func fenceNode(f *remedies.Fence) *yaml.Node {
 	return m.inline()
 }
 
-func keepClearNode(z *remedies.KeepClear) *yaml.Node {
-	var m mapping
+func keepClear(m *mapping, z *remedies.KeepClear) {
 	m.put("name", textNode(z.Name))
 	m.put("from", numberNode(z.FromX))
 	m.put("to", numberNode(z.ToX))
@@ -246,7 +225,6 @@ func keepClearNode(z *remedies.KeepClear) *yaml.Node {
 	if z.DigBelow != nil {
 		m.put("dig_allowed_to_depth", numberNode(*z.DigBelow))
 	}
-	return m.inline()
 }
 
 func (w *writer) slips() *yaml.Node {

@@ -53,18 +53,28 @@ func rowNode(items ...*yaml.Node) *yaml.Node {
 	return &yaml.Node{Kind: yaml.SequenceNode, Style: yaml.FlowStyle, Content: items}
 }
 
-func numbersNode(x ...float64) *yaml.Node {
-	row := rowNode()
-	for _, v := range x {
-		row.Content = append(row.Content, numberNode(v))
+// nodesOf returns a node for each item.
+func nodesOf[T any](items []T, node func(*T) *yaml.Node) []*yaml.Node {
+	out := make([]*yaml.Node, len(items))
+	for i := range items {
+		out[i] = node(&items[i])
 	}
-	return row
+	return out
+}
+
+// mappingsOf returns a mapping in braces for each item.
+func mappingsOf[T any](items []T, fill func(*mapping, *T)) []*yaml.Node {
+	return nodesOf(items, func(item *T) *yaml.Node {
+		var m mapping
+		fill(&m, item)
+		return m.inline()
+	})
+}
+
+func numbersNode(x ...float64) *yaml.Node {
+	return rowNode(nodesOf(x, func(v *float64) *yaml.Node { return numberNode(*v) })...)
 }
 
 func pointsNode(p []lem.Point) *yaml.Node {
-	row := rowNode()
-	for _, a := range p {
-		row.Content = append(row.Content, numbersNode(a.X, a.Y))
-	}
-	return row
+	return rowNode(nodesOf(p, func(a *lem.Point) *yaml.Node { return numbersNode(a.X, a.Y) })...)
 }

@@ -49,19 +49,9 @@ the working folder. Without either it writes no files.
 
 func runAssess(c *cobra.Command, o *assessOptions, path string) error {
 	ctx := c.Context()
-	settings, err := o.settings()
+	read, settings, err := o.open(c, path)
 	if err != nil {
 		return err
-	}
-	read, err := readCase(path)
-	if err != nil {
-		return err
-	}
-	if err := applyTargets(read.Job, o.targets); err != nil {
-		return err
-	}
-	if !o.quiet {
-		printWarnings(c, read.Warnings)
 	}
 	existing, err := remedies.Assess(ctx, read.Job, settings)
 	if err != nil {

@@ -53,15 +53,8 @@ long again as the rest; --skip-back-analysis leaves it out.
 
 func runCompare(c *cobra.Command, o *compareOptions, path string) error {
 	ctx := c.Context()
-	settings, err := o.settings()
+	read, settings, err := o.open(c, path)
 	if err != nil {
-		return err
-	}
-	read, err := readCase(path)
-	if err != nil {
-		return err
-	}
-	if err := applyTargets(read.Job, o.targets); err != nil {
 		return err
 	}
 	if err := applyOnly(read.Job, o.only); err != nil {
@@ -76,9 +69,6 @@ func runCompare(c *cobra.Command, o *compareOptions, path string) error {
 	}
 	if err := checkFolder(out); err != nil {
 		return err
-	}
-	if !o.quiet {
-		printWarnings(c, read.Warnings)
 	}
 	settings.Curves, settings.Relaxations, settings.Sensitivity, settings.Pairs = true, true, true, o.pairs
 	settings.Points, settings.Fronts = !o.skipBack, true

@@ -43,6 +43,25 @@ func (o *studyOptions) settings() (remedies.Settings, error) {
 	return remedies.Settings{Workers: o.jobs, Seed: o.seed}, nil
 }
 
+// open reads the flags and the case, with the required FS that the flags ask for, and prints what the case is warned of.
+func (o *studyOptions) open(c *cobra.Command, path string) (*casefile.Case, remedies.Settings, error) {
+	settings, err := o.settings()
+	if err != nil {
+		return nil, settings, err
+	}
+	read, err := readCase(path)
+	if err != nil {
+		return nil, settings, err
+	}
+	if err := applyTargets(read.Job, o.targets); err != nil {
+		return nil, settings, err
+	}
+	if !o.quiet {
+		printWarnings(c, read.Warnings)
+	}
+	return read, settings, nil
+}
+
 // overrides lists the flags that change what the case asks, as they go into the results.
 func (o *studyOptions) overrides() []string {
 	var out []string
