@@ -14,7 +14,7 @@ import (
 // slippedBank returns the test cutting after a slip, with a berm and trench drains to size in one situation.
 func slippedBank() *Job {
 	j := fencedBerm(66)
-	j.Situations[0].RequiredFS, j.Situations[0].DrainsWorking = 1.15, 1
+	j.Situations[0].RequiredFS, j.Situations[0].RatioToExisting, j.Situations[0].DrainsWorking = 0, 1.2, 1
 	j.Requests[0].Axes[0] = optimize.Axis{Name: "height", Min: 1, Max: 4, Step: 0.5}
 	j.Requests[0].Axes[1] = optimize.Axis{Name: "top_width", Min: 2, Max: 8, Step: 1}
 	drains := request("trench_drains", nil, 3, 8, 0.6, 0.8)
@@ -44,7 +44,8 @@ func summaryOf(options []Option) []string {
 	return out
 }
 
-// TestPointIsTheStudyOfThatStrength: the slips that a point starts with from sizings before change nothing but the time that it takes.
+// TestPointIsTheStudyOfThatStrength: the slips that a point starts with from sizings before change nothing but the time that it takes, and a required
+// FS given as a ratio is one to the slope with the strength of the point.
 func TestPointIsTheStudyOfThatStrength(t *testing.T) {
 	j := slippedBank()
 	res, err := Study(context.Background(), j, Settings{Points: true, Slices: fewSlices})
@@ -66,6 +67,9 @@ func TestPointIsTheStudyOfThatStrength(t *testing.T) {
 		}
 		if got, want := summaryOf(p.Options), summaryOf(cold.Options); !reflect.DeepEqual(got, want) || p.Least != cold.Least {
 			t.Errorf("%s point: %q, least %s; alone: %q, least %s", p.Name, got, p.Least, want, cold.Least)
+		}
+		if c := &p.Existing.Situations[0]; c.Check.Required != 1.2*c.FS {
+			t.Errorf("%s point: required FS %g, of a slope at %g", p.Name, c.Check.Required, c.FS)
 		}
 		// The observed slip, at FS 1, is one of those that a search may find.
 		if fs := p.Existing.Situations[0].FS; !(fs <= 1+DefaultAllowance) {

@@ -50,6 +50,7 @@ type (
 		Reason     string
 		Binds      string `json:"binds_on"`
 		WhatIf     bool   `json:"what_if"`
+		Parameters map[string]struct{ Value float64 }
 		Earthworks struct {
 			Total float64 `json:"earthworks_m3_per_m"`
 		} `json:"quantities"`

@@ -32,6 +32,7 @@ func (a *author) comparison() error {
 	}, rows)
 	a.haul()
 	a.matrix()
+	a.points()
 	high := contentFoot - a.y - 3*faceHead.lead()
 	if high < leastPlot { // It goes to the next page.
 		high = mostPlot

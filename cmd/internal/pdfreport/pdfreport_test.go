@@ -128,6 +128,11 @@ func TestTextsOfAnyCaseStandFree(t *testing.T) {
 			"1,235", "56.79", "3.844", "low 1.400", "high 1.201", "no answer at one end", "saves 1.23 m³", "short of 1.30", "told only", "80 % of the cut of stiff clay",
 			"stays 2 m clear of level 115 m", "steepest face that stays 1V:2H", "as if open along the whole length",
 		}},
+		{"an observed slip", slipped, []string{
+			"Is the choice the same whatever the observed slip leaves open?", "The choice does not hold at every point.", "at the high point (c' 11.25 kPa, phi' 13.40 degrees): nothing meets",
+			"low point c' 0.00 kPa phi' 25.50 degrees", "infeasible",
+		}},
+		{"a slip without an answer", func(f *report.File) { f.BackAnalysis = &report.BackAnalysis{Reason: "too strong"} }, []string{"nothing was sized for it: too strong."}},
 		{"wide numbers", func(f *report.File) {
 			f.Options[0].Quantities.Earthworks, f.Options[0].Totals.Earthworks = 123456789.123, 9876543210.5
 		}, []string{"123456789.13", "9,876,543,211"}},
@@ -148,6 +153,20 @@ func TestTextsOfAnyCaseStandFree(t *testing.T) {
 			}
 			written(t, f)
 		})
+	}
+}
+
+// slipped adds what the observed slip leaves open to a result: its first option at two points, and nothing at the third.
+func slipped(f *report.File) {
+	least, no := f.Options[0].Name, false
+	point := func(name string, cohesion, friction float64, least *string, options []report.Option) report.Sized {
+		return report.Sized{Name: name, Cohesion: cohesion, Friction: friction, FS: 1, Existing: f.Existing, Options: options, Least: least}
+	}
+	short := append([]report.Option(nil), f.Options...)
+	short[0].Status = "infeasible"
+	f.BackAnalysis = &report.BackAnalysis{
+		Soil: "stiff clay", Share: 1, Situation: "high water", Method: "bishop", AsGiven: 1.05, SameLeast: &no, SameOrder: &no,
+		Points: []report.Sized{point("low", 0, 25.5, &least, f.Options), point("middle", 5.625, 19.7, &least, f.Options), point("high", 11.25, 13.4, nil, short)},
 	}
 }
 

@@ -21,6 +21,10 @@ type model struct {
 	Rests    []string // What the answer rests on.
 	Assumed  []string // What was deduced or assumed.
 	Existing existingText
+
+	Points  []pointText         // Of the back-analysis.
+	Ranking []report.RankingRow // What options come to at each.
+	Verdict []string            // Whether the choice is the same at all of them.
 }
 
 // card is an option as it stands in the page before the script moves anything.

@@ -66,6 +66,34 @@ func (b *builder) addPage() {
 	}
 	b.addSoils()
 	b.addRests()
+	b.addPoints()
+}
+
+// pointText is a point of the back-analysis.
+type pointText struct {
+	Name, Strength string
+}
+
+// addPoints adds what options come to with the strengths that the observed slip leaves open.
+func (b *builder) addPoints() {
+	m, f := b.m, b.f
+	if f.BackAnalysis == nil {
+		return
+	}
+	for i := range f.BackAnalysis.Points {
+		p := &f.BackAnalysis.Points[i]
+		m.Points = append(m.Points, pointText{title(p.Name), p.Text()})
+	}
+	for _, r := range f.RankingRows() {
+		r.Title = title(r.Title)
+		for i, c := range r.Cells {
+			r.Cells[i] = cubic(c)
+		}
+		m.Ranking = append(m.Ranking, r)
+	}
+	for _, s := range f.RankingTexts() {
+		m.Verdict = append(m.Verdict, cubic(s))
+	}
 }
 
 func (b *builder) card(i int, least bool) card {

@@ -110,6 +110,9 @@ func TestEveryOutcome(t *testing.T) {
 				o.Situations[i].Found = report.Found{FS: unknownFS(t)}
 			}
 		}, "unresolved"},
+		{"an observed slip", slipped, "<td>infeasible</td>"},
+		{"its strengths", slipped, "High point <span class=\"asked-line\">c&#39; 11.25 kPa, phi&#39; 13.40 degrees</span>"},
+		{"a slip without an answer", func(f *report.File) { f.BackAnalysis = &report.BackAnalysis{Reason: "too strong"} }, "nothing was sized for it: too strong."},
 	} {
 		t.Run(c.name, func(t *testing.T) {
 			f := demo(t, "cutting")
@@ -118,6 +121,20 @@ func TestEveryOutcome(t *testing.T) {
 				t.Errorf("the page does not say %q", c.want)
 			}
 		})
+	}
+}
+
+// slipped adds what the observed slip leaves open to a result: its first option at two points, and nothing at the third.
+func slipped(f *report.File) {
+	least, no := f.Options[0].Name, false
+	point := func(name string, cohesion, friction float64, least *string, options []report.Option) report.Sized {
+		return report.Sized{Name: name, Cohesion: cohesion, Friction: friction, FS: 1, Existing: f.Existing, Options: options, Least: least}
+	}
+	short := append([]report.Option(nil), f.Options...)
+	short[0].Status = "infeasible"
+	f.BackAnalysis = &report.BackAnalysis{
+		Soil: "stiff clay", Share: 1, Situation: "high water", Method: "bishop", AsGiven: 1.05, SameLeast: &no, SameOrder: &no,
+		Points: []report.Sized{point("low", 0, 25.5, &least, f.Options), point("middle", 5.625, 19.7, &least, f.Options), point("high", 11.25, 13.4, nil, short)},
 	}
 }
 
