@@ -3,6 +3,7 @@ package optimize
 import (
 	"cmp"
 	"container/heap"
+	"slices"
 )
 
 // bestBatch is how many candidates have the pool tried on them at a time.
@@ -16,7 +17,8 @@ type candidate[C any] struct {
 	tried    int   // pool cuts tried, from the first
 	searched bool
 	audited  bool
-	missing  int // unresolved cuts met by search and audit
+	found    []Found[C] // by search and audit
+	missing  int        // unresolved cuts met by search and audit
 }
 
 // candidates is a heap, greatest bound first, then lowest rank.
@@ -100,16 +102,18 @@ func (r *run[C]) tightenTop(queue *candidates[C]) error {
 	return err
 }
 
-// searchCandidate searches a candidate in full, unless that was done before.
+// searchCandidate searches a candidate for all that there is to find, unless that was done before.
 func (r *run[C]) searchCandidate(c *candidate[C]) error {
 	c.searched = true
 	v, known := r.verdicts[c.rank]
+	if v.whole {
+		c.missing, c.found = v.missing, v.found
+		return nil
+	}
 	if !known {
 		r.res.Spent.FullySearched++
-		return r.lower(c, false)
 	}
-	c.missing = v.missing
-	return nil
+	return r.lower(c, false)
 }
 
 // auditCandidate audits a candidate that has been searched.
@@ -124,10 +128,11 @@ func (r *run[C]) lower(c *candidate[C], audit bool) error {
 	x := r.point(r.designs[c.rank])
 	d := r.open(x)
 	defer d.Close()
-	found, err := r.search(d, x, audit)
+	found, err := r.search(d, x, Effort{Audit: audit})
 	if err != nil {
 		return err
 	}
+	c.found = arrange(append(slices.Clone(c.found), found...))
 	c.missing += unresolved(found)
 	lowest := int32(len(r.pool))
 	if r.joinFound(found, c.bound, 0); int(lowest) < len(r.pool) {
@@ -140,6 +145,6 @@ func (r *run[C]) acceptBest(c *candidate[C]) {
 	d := r.designs[c.rank]
 	r.res.Best = Attempt[C]{
 		X: r.point(d), Cost: d.cost, Margin: c.bound, Unresolved: c.missing,
-		Binding: Found[C]{Cut: r.pool[c.cut], Margin: c.bound},
+		Binding: Found[C]{Cut: r.pool[c.cut], Margin: c.bound}, Found: c.found,
 	}
 }

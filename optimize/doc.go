@@ -16,7 +16,8 @@
 //     Result.ContinuousEstimate: an estimate, never a bound.
 //  2. Walk. Every design that geometry allows is visited in ascending (cost, tie, lattice index). One pool cut with a
 //     margin below the allowance rejects it and is kept as its witness. What no pool cut rejects is searched in full;
-//     what the search rejects adds all its violating cuts to the pool; what passes is audited (another sampler, another
+//     what the search rejects adds the violating cuts it found to the pool (Effort.ToReject lets it end at the first that
+//     are quick to find; what it does not reject it has looked at in full); what passes is audited (another sampler, another
 //     seed, finer), and a failed audit is treated like a failed search. The first design to pass both is the answer.
 //     The margin of one design is never inferred from that of another.
 //  3. When no design passes, the design with the greatest margin is looked for, best bound first: see Result.Best.

@@ -6,6 +6,8 @@ import (
 )
 
 const (
+	// leadShare is the share of what the last search found missing that the next master answer must have to spare on the pool.
+	leadShare = 0.7
 	// nearCuts is how many cuts at or above the allowance join the pool with the violating ones of a search, lowest first:
 	// the next master answer is likely to violate those.
 	nearCuts = 3
@@ -14,39 +16,59 @@ const (
 )
 
 // exchange fills the pool: master answer, full search at the nearest lattice design that passes the pool, violating cuts
-// to the pool, again. It ends when the search there finds no violating cut, when the master or the lattice near it has no
-// answer, or when its share of the searches is spent. With an empty pool the master's answer is the cheapest design.
+// to the pool, again. Cuts of a small design often say little of a larger one, which then fails by almost as much, so the master asks the
+// pool for a lead as well: a share of what the last search found missing. It ends when a search finds no violating cut
+// without a lead, when the master or the lattice near it has no answer, or when its share of the searches is spent. With an
+// empty pool the master's answer is the cheapest design.
 func (r *run[C]) exchange() error {
 	m := newMaster(r)
 	rounds := r.s.FullSearches * 2 / 3
 	if len(m.free) == 0 || rounds == 0 {
 		return nil
 	}
-	for round := 0; ; round++ {
+	lead := 0.0
+	for round := range rounds {
 		near := []int{0}
 		if len(r.pool) > 0 {
-			answer, ok, err := m.solve(round)
+			answer, ok, err := m.solve(round, lead)
 			if err != nil {
 				return err
 			}
-			r.res.ContinuousEstimate = answer.cost
-			if !ok {
-				return nil
+			if lead == 0 {
+				r.res.ContinuousEstimate = answer.cost
+				if !ok {
+					return nil
+				}
 			}
-			near = m.nearest(answer.u)
-		}
-		if round == rounds {
-			return nil
+			near = m.nearest(answer.u) // Where nothing has the lead, the design that misses it by least tells most.
 		}
 		rank, ok, err := r.firstPassing(near)
-		if err != nil || !ok {
+		if err != nil || !ok && lead == 0 {
 			return err
 		}
-		if v, err := r.examineRank(rank); err != nil || v.standing != rejected {
+		if !ok {
+			lead = 0
+			continue
+		}
+		v, err := r.examineRank(rank)
+		switch {
+		case err != nil:
 			return err
+		case v.standing == rejected:
+			lead = leadShare * (r.s.Allowance - v.found[0].Margin)
+		case lead == 0:
+			return nil
+		default:
+			lead = 0
 		}
 		r.report(Exchanging, 0)
 	}
+	if len(r.pool) == 0 {
+		return nil
+	}
+	answer, _, err := m.solve(rounds, 0)
+	r.res.ContinuousEstimate = answer.cost
+	return err
 }
 
 // firstPassing returns the first of the ranks that no pool cut rejects and that has not been searched. A searched one

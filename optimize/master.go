@@ -27,7 +27,9 @@ const (
 	cmaIterations   = 25
 	cmaStall        = 8    // iterations without gain that end it
 	cmaGain         = 1e-4 // gain of scaled cost that counts
-	simplexSize     = 0.05 // of the first simplex, in shares of an axis
+	cmaRounds       = 2    // rounds of the exchange that evolve a population; later ones start near the answer
+	simplexSize     = 0.05 // of the first simplex after CMA-ES, in shares of an axis,
+	simplexAlone    = 0.15 // and without it
 	simplexMoves    = 80
 	simplexStall    = 15
 	simplexGain     = 1e-6
@@ -61,6 +63,7 @@ type master[C any] struct {
 	span      []float64 // of the free axes
 	costMin   float64
 	costRange float64
+	asked     float64   // of every margin: the allowance and a lead, see exchange
 	home      []float64 // an allowed point
 
 	mu     sync.Mutex
@@ -103,17 +106,23 @@ func (m *master[C]) scaled(d design) []float64 {
 	return u
 }
 
-// solve returns the best point found on the present pool; ok is false, and the cost NaN, when none holds.
-func (m *master[C]) solve(round int) (best trial, ok bool, err error) {
+// solve returns the best point found on the present pool, asked for the allowance and a lead; when none holds, that is the one that
+// misses by least, ok is false and its cost NaN.
+func (m *master[C]) solve(round int, lead float64) (best trial, ok bool, err error) {
+	m.asked = m.r.s.Allowance + lead
 	m.best = trial{value: math.Inf(1), cost: math.NaN(), u: m.home}
 	n := len(m.r.designs)
 	for i := range min(n, scanPoints) {
 		m.value(m.scaled(m.r.designs[i*n/min(n, scanPoints)]))
 	}
-	if len(m.free) == 1 {
+	switch {
+	case len(m.free) == 1:
 		m.bracket()
-	} else {
+	case round < cmaRounds:
 		m.evolve(round)
+		m.slide(simplexSize)
+	default:
+		m.slide(simplexAlone)
 	}
 	return m.best, m.best.holds(), m.r.ctx.Err()
 }
@@ -135,8 +144,7 @@ func (m *master[C]) bracket() {
 	}
 }
 
-// evolve runs CMA-ES from the best point so far, then Nelder-Mead from the best of that. How they end does not matter,
-// since the best point evaluated counts.
+// evolve runs CMA-ES from the best point so far. How it ends does not matter, since the best point evaluated counts.
 func (m *master[C]) evolve(round int) {
 	dim := len(m.free)
 	problem := gopt.Problem{Func: m.guarded, Status: m.status}
@@ -155,10 +163,15 @@ func (m *master[C]) evolve(round int) {
 		Src: rand.NewPCG(m.r.s.Seed, uint64(round)),
 	})
 	m.caught.rethrow()
+}
+
+// slide runs Nelder and Mead's method from the best point so far.
+func (m *master[C]) slide(size float64) {
+	problem := gopt.Problem{Func: m.guarded, Status: m.status}
 	_, _ = gopt.Minimize(problem, slices.Clone(m.best.u), &gopt.Settings{
 		MajorIterations: simplexMoves,
 		Converger:       &gopt.FunctionConverge{Absolute: simplexGain, Iterations: simplexStall},
-	}, &gopt.NelderMead{SimplexSize: simplexSize})
+	}, &gopt.NelderMead{SimplexSize: size})
 	m.caught.rethrow()
 }
 
@@ -221,8 +234,8 @@ func (m *master[C]) shortfall(x []float64) float64 {
 	defer d.Close()
 	short := 0.0
 	for k := range m.r.pool {
-		if margin := d.Margin(&m.r.pool[k]); m.r.s.Allowance-margin > short {
-			short = m.r.s.Allowance - margin
+		if margin := d.Margin(&m.r.pool[k]); m.asked-margin > short {
+			short = m.asked - margin
 		}
 	}
 	m.r.margins.Add(int64(len(m.r.pool)))

@@ -19,9 +19,12 @@ const (
 
 // Effort says how a Search is to look.
 type Effort struct {
-	Audit bool   // the design has passed a search: use another sampler, finer
-	Round int    // how many searches and audits this Minimize has made before
-	Seed  uint64 // for the sampler; differs from round to round
+	Audit bool // the design has passed a search: use another sampler, finer
+	// ToReject says that one cut with a margin below the allowance is enough: a search may begin with what is quick and end there if
+	// that rejects the design. One that does not reject it must have looked at everything.
+	ToReject bool
+	Round    int    // how many searches and audits this Minimize has made before
+	Seed     uint64 // for the sampler; differs from round to round
 }
 
 // Found is a cut met by a Search, the lowest of its basin.

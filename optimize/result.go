@@ -51,9 +51,10 @@ type Witness struct {
 type Attempt[C any] struct {
 	X          []float64
 	Cost       float64
-	Margin     float64  // the lowest known: of its search, its audit and the whole pool
-	Binding    Found[C] // the cut that has this margin
-	Unresolved int      // cuts of its search and audit without a margin, any of which could lie lower
+	Margin     float64    // the lowest known: of its search, its audit and the whole pool
+	Binding    Found[C]   // the cut that has this margin
+	Found      []Found[C] // what its search and audit found, ascending by margin
+	Unresolved int        // cuts of its search and audit without a margin, any of which could lie lower
 }
 
 // Spent counts the work done; it does not depend on the number of workers unless the run is interrupted.

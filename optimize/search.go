@@ -20,17 +20,18 @@ const (
 // verdict is the outcome of searching one design in full.
 type verdict[C any] struct {
 	standing standing
-	found    []Found[C] // of search and, once made, audit, in the order of arrange; nil when rejected
+	found    []Found[C] // of search and, once made, audit, in the order of arrange
+	whole    bool       // the search looked at everything
 	missing  int        // unresolved cuts among all that were found
 	witness  hit        // when rejected
 }
 
-// search makes one search or audit and returns what it found in the order of arrange.
-func (r *run[C]) search(d Design[C], x []float64, audit bool) ([]Found[C], error) {
+// search makes one search or audit, with a seed of its own, and returns what it found in the order of arrange.
+func (r *run[C]) search(d Design[C], x []float64, e Effort) ([]Found[C], error) {
 	spent := &r.res.Spent
-	round := spent.Searches + spent.Audits
-	e := Effort{Audit: audit, Round: round, Seed: rand.NewPCG(r.s.Seed, uint64(round)).Uint64()}
-	if audit {
+	e.Round = spent.Searches + spent.Audits
+	e.Seed = rand.NewPCG(r.s.Seed, uint64(e.Round)).Uint64()
+	if e.Audit {
 		spent.Audits++
 	} else {
 		spent.Searches++
@@ -92,16 +93,16 @@ func unresolved[C any](found []Found[C]) int {
 // examine searches or audits an open design and keeps the verdict. If that rejects the design, the cuts below the
 // allowance join the pool, and up to near others.
 func (r *run[C]) examine(d Design[C], rank int, audit bool, near int) (verdict[C], error) {
-	found, err := r.search(d, r.point(r.designs[rank]), audit)
+	found, err := r.search(d, r.point(r.designs[rank]), Effort{Audit: audit, ToReject: !audit})
 	if err != nil {
 		return verdict[C]{}, err
 	}
 	v := verdict[C]{standing: judge(found, r.s.Allowance)}
+	v.whole = audit || v.standing != rejected
 	v.found = arrange(append(slices.Clone(r.verdicts[rank].found), found...))
 	v.missing = unresolved(v.found)
 	if v.standing == rejected {
 		v.witness = hit{cut: int32(len(r.pool)), margin: found[0].Margin}
-		v.found = nil
 		r.joinFound(found, r.s.Allowance, near)
 	}
 	r.verdicts[rank] = v

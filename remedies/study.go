@@ -189,11 +189,11 @@ func (st *study) size(group []Request) error {
 	o.Proposal = w.apply(st.j, x)
 	d := z.openProposal(o.Proposal)
 	defer d.Close()
-	if res.X == nil && res.Best.X != nil {
-		if found, err = d.searchBoth(ctx); err != nil {
+	if res.X == nil && res.Best.X != nil { // Searched already; the audit is left to us.
+		if found, err = d.Search(ctx, optimize.Effort{Audit: true, Seed: 2}); err != nil {
 			return err
 		}
-		found = append(found, res.Best.Binding)
+		found = append(append(found, res.Best.Found...), res.Best.Binding)
 	}
 	if len(found) > 0 {
 		o.Situations, o.Stages = split(d.outcomes(found))
@@ -254,9 +254,9 @@ func (z *sizing) price(p *Proposal, x []float64) (cost, tie float64) {
 func (z *sizing) minimize(ctx context.Context, cost costFunc, start []Cut, tell func(string, float64)) (optimize.Result[Cut], error) {
 	settings := optimize.Settings[Cut]{
 		Workers: z.s.Workers, Seed: z.s.Seed, Allowance: z.s.Allowance, Start: start,
-		BestSearches: bestSearches, BestUnaudited: true, // searchBoth audits it.
+		BestSearches: bestSearches, BestUnaudited: true, // size audits it.
 	}
-	if z.circlesOnly { // The pool is full already: no exchange.
+	if z.noAudit { // An estimate, and the pool is full already: no exchange.
 		settings.FullSearches, settings.BestSearches = 1, 1
 	}
 	if tell != nil {

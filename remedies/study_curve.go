@@ -23,7 +23,7 @@ func (z *sizing) curve(ctx context.Context, o *Option, res *optimize.Result[Cut]
 		return nil, nil
 	}
 	c := newSizing(z.j, z.w, z.s)
-	c.noAudit, c.circlesOnly = true, true
+	c.noAudit = true
 	var out []TradeoffPoint
 	pool := res.Pool
 	for _, shift := range z.shifts() {
@@ -48,57 +48,28 @@ func (z *sizing) curve(ctx context.Context, o *Option, res *optimize.Result[Cut]
 	return out, nil
 }
 
-// curveRounds bounds how often a point of a curve is sized again with the non-circular slips found at its answer.
-const curveRounds = 6
-
-// settle sizes the works for the shift in force: against the pool and circles, then against the non-circular slips found at that answer, until
-// the answer stands or the rounds are spent. It returns the answer, or the best there is, with all that was found there in ascending margin; the
-// pool grows.
+// settle sizes the works for the shift in force. It returns the answer, or the best there is, with all that was found there and the slips of the
+// pool, in ascending margin; the pool grows.
 func (z *sizing) settle(ctx context.Context, pool *[]Cut) (x []float64, found []optimize.Found[Cut], err error) {
-	for range curveRounds {
-		r, err := z.minimize(ctx, z.cost, *pool, nil)
-		if err != nil {
-			return nil, nil, err
-		}
-		*pool = r.Pool
-		stands := r.X != nil
-		if x = r.X; !stands {
-			if x = r.Best.X; x == nil {
-				return nil, nil, nil
-			}
-		}
-		if found, err = z.searchedFully(ctx, x, *pool); err != nil {
-			return nil, nil, err
-		}
-		if !stands || found[0].Margin >= z.s.Allowance {
-			return x, found, nil
-		}
-		for _, f := range found {
-			if f.Margin < z.s.Allowance {
-				*pool = append(*pool, f.Cut)
-			}
-		}
-	}
-	return x, found, nil
-}
-
-// searchedFully searches a design for slips of every kind, and evaluates those of the pool on it too.
-func (z *sizing) searchedFully(ctx context.Context, x []float64, pool []Cut) ([]optimize.Found[Cut], error) {
-	full := newSizing(z.j, z.w, z.s)
-	full.shift = z.shift
-	d := full.openProposal(z.w.apply(z.j, x))
-	defer d.Close()
-	found, err := d.Search(ctx, optimize.Effort{Seed: 1})
+	r, err := z.minimize(ctx, z.cost, *pool, nil)
 	if err != nil {
-		return nil, err
+		return nil, nil, err
 	}
-	for i := range pool {
-		if m := d.Margin(&pool[i]); !math.IsNaN(m) && !math.IsInf(m, 1) {
-			found = append(found, optimize.Found[Cut]{Cut: pool[i], Margin: m})
+	*pool = r.Pool
+	if x, found = r.X, r.Lowest; x == nil {
+		if x, found = r.Best.X, r.Best.Found; x == nil {
+			return nil, nil, nil
+		}
+	}
+	d := z.openProposal(z.w.apply(z.j, x))
+	defer d.Close()
+	for i := range r.Pool {
+		if m := d.Margin(&r.Pool[i]); !math.IsNaN(m) && !math.IsInf(m, 1) {
+			found = append(found, optimize.Found[Cut]{Cut: r.Pool[i], Margin: m})
 		}
 	}
 	slices.SortStableFunc(found, func(a, b optimize.Found[Cut]) int { return cmp.Compare(keyOf(a), keyOf(b)) })
-	return found, nil
+	return x, found, nil
 }
 
 // keyOf orders what was found by margin; what has none comes last.

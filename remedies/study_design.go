@@ -4,6 +4,7 @@ import (
 	"context"
 	"fmt"
 	"math"
+	"slices"
 	"sync"
 	"sync/atomic"
 
@@ -25,7 +26,6 @@ type sizing struct {
 	workers        int
 	shift          float64 // Added to every required FS; 0 but for trade-off curves.
 	noAudit        bool    // Trade-off curves are searched, not audited.
-	circlesOnly    bool    // Searches look at circles only; see settle.
 	existingMargin float64 // Least margin of the slope as it is.
 	models         sync.Pool
 	searches       atomic.Int64 // One search is one check of one design.
@@ -96,19 +96,21 @@ func (d *design) Search(ctx context.Context, e optimize.Effort) ([]optimize.Foun
 	if e.Audit && d.z.noAudit {
 		return []optimize.Found[Cut]{{Margin: math.Inf(1)}}, nil
 	}
-	found, err := d.searchAll(ctx, e)
-	var out []optimize.Found[Cut]
-	for _, f := range found {
-		out = append(out, f...)
+	if e.ToReject { // Circles are quick, and one that fails is enough.
+		if found, err := d.searchAll(ctx, e, false); err != nil || d.rejectedBy(found) {
+			return found, err
+		}
 	}
-	if len(out) == 0 {
-		out = []optimize.Found[Cut]{{Margin: math.Inf(1)}}
-	}
-	return out, err
+	return d.searchAll(ctx, e, true)
 }
 
-// searchAll searches every check and returns what was found by check.
-func (d *design) searchAll(ctx context.Context, e optimize.Effort) ([][]optimize.Found[Cut], error) {
+// rejectedBy reports whether a search found a slip that fails.
+func (d *design) rejectedBy(found []optimize.Found[Cut]) bool {
+	return slices.ContainsFunc(found, func(f optimize.Found[Cut]) bool { return !f.Unresolved && f.Margin < d.z.s.Allowance })
+}
+
+// searchAll searches every check and returns what was found: circles, and non-circular slips too if asked for.
+func (d *design) searchAll(ctx context.Context, e optimize.Effort, polylines bool) ([]optimize.Found[Cut], error) {
 	found := make([][]optimize.Found[Cut], len(d.checks))
 	errs := make([]error, len(d.checks))
 	same := d.sameAs()
@@ -125,7 +127,7 @@ func (d *design) searchAll(ctx context.Context, e optimize.Effort) ([][]optimize
 					return
 				}
 				if same[i] == i {
-					found[i], errs[i] = d.searchOne(ctx, i, e)
+					found[i], errs[i] = d.searchOne(ctx, i, e, polylines)
 				}
 			}
 		})
@@ -141,13 +143,16 @@ func (d *design) searchAll(ctx context.Context, e optimize.Effort) ([][]optimize
 			found[i] = d.asFoundIn(i, k, found[k])
 		}
 	}
-	return found, nil
+	if out := slices.Concat(found...); len(out) > 0 {
+		return out, nil
+	}
+	return []optimize.Found[Cut]{{Margin: math.Inf(1)}}, nil
 }
 
-func (d *design) searchOne(ctx context.Context, i int, e optimize.Effort) ([]optimize.Found[Cut], error) {
+func (d *design) searchOne(ctx context.Context, i int, e optimize.Effort, polylines bool) ([]optimize.Found[Cut], error) {
 	o := lem.SearchOptions{
 		Slices: d.z.s.Slices, MinDepth: d.z.j.MinDepth, Seed: e.Seed + d.z.s.Seed, Window: d.z.j.window(), SideForce: d.z.j.SideForce,
-		Below: d.required(i) + d.z.s.Allowance, Polylines: !d.z.circlesOnly,
+		Below: d.required(i) + d.z.s.Allowance, Polylines: polylines,
 	}
 	if e.Audit {
 		o.Sampler, o.Effort, o.Slices = lem.ByCentre, auditEffort, auditSlices*d.z.s.Slices
