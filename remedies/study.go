@@ -229,7 +229,7 @@ func (st *study) size(group []Request) error {
 }
 
 // bestSearches bounds the designs that are searched to find the best of a remedy that cannot meet the target.
-const bestSearches = 3
+const bestSearches = 5
 
 // costFunc is the Cost of an optimize.Problem.
 type costFunc func(x []float64) (cost, tie float64, ok bool)
