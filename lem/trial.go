@@ -9,6 +9,7 @@ import (
 const (
 	flattest     = 0.02 // Least half angle of an arc, rad.
 	roundest     = 1.65 // Greatest half angle, rad: a little beyond a half circle.
+	touchTol     = 1e-9 // How close an arc is brought to the firm base, as a share of its size.
 	projectSteps = 24   // Steps to bring an arc to the depth of interest or up to the firm base.
 	tangentSteps = 20   // Halvings of the half angle to bring an arc to a boundary.
 	// An arc is brought to within this share above the depth of interest. Where a boundary lies at just that depth, as beneath a berm with a face
@@ -99,7 +100,7 @@ func (s *searcher) project(q *float64, least, most float64, over part, arc func(
 	if !clears(lo) {
 		return false
 	}
-	for range 3 * projectSteps {
+	for hi-lo > touchTol*hi {
 		if mid := (lo + hi) / 2; clears(mid) {
 			lo = mid
 		} else {
