@@ -110,15 +110,12 @@ func (w *writer) situations() (*yaml.Node, error) {
 	return list, nil
 }
 
-// requiredFS returns the FS required in a situation, as resolved when the option was checked; 0 if a ratio is not resolved.
+// requiredFS returns the FS required in a situation, as resolved when the option or the slope as it is was checked; 0 if a ratio is not resolved.
 func (w *writer) requiredFS(i int) float64 {
 	for _, o := range w.option.Situations {
 		if o.Check.SituationI == i && o.Check.Note == "" && o.Check.Required > 0 {
 			return o.Check.Required
 		}
-	}
-	if w.job.Situations[i].RatioToExisting != 0 {
-		return 0
 	}
 	return w.job.Situations[i].RequiredFS
 }

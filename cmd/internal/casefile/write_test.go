@@ -3,6 +3,7 @@ package casefile
 import (
 	"errors"
 	"math"
+	"slices"
 	"strings"
 	"testing"
 
@@ -151,6 +152,14 @@ side_force_function: [0.1, 0.5, 0.7, 0.9, 1, 1, 1, 0.9, 0.7, 0.5, 0.25]
 	o := option(c, "existing", remedies.Start(c.Job))
 	if _, err := c.Proposed(o); !errors.Is(err, ErrNotWritable) {
 		t.Errorf("an unresolved ratio is written: %v", err)
+	}
+	resolved, unchecked := *c, *o
+	j := *c.Job
+	j.Situations = slices.Clone(j.Situations)
+	j.Situations[1].RequiredFS = 1.44
+	resolved.Job, unchecked.Situations = &j, nil
+	if text, err := resolved.Proposed(&unchecked); err != nil || !strings.Contains(string(text), "1.44") {
+		t.Errorf("an option that was never checked, where the ratio came to 1.44: %v", err)
 	}
 	o.Situations[1].Check.Required = 1.44
 	o.Proposal.Waters[0].Drains = &lem.Drawdown{Invert: lem.Profile{{X: 20, Y: 6}, {X: 30, Y: 4}}, Ratio: []float64{0.5, 1. / 3}, Fade: 1.25}

@@ -20,12 +20,14 @@ func writeWorks(ctx context.Context, out string, c *casefile.Case, r *remedies.R
 		return nil, err
 	}
 	names := fileNames(r.Options)
+	resolved := *c
+	resolved.Job = r.Job // With required FS where the case has ratios: an option that cannot be built was never checked.
 	for i := range r.Options {
 		o := &r.Options[i]
 		if o.Proposal == nil {
 			continue
 		}
-		text, err := c.Proposed(o)
+		text, err := resolved.Proposed(o)
 		if err != nil {
 			return nil, fmt.Errorf("%s as a case file: %w", o.Title, err)
 		}
