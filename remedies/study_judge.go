@@ -63,8 +63,15 @@ func (z *sizing) explain(ctx context.Context, o *Option, res *optimize.Result[Cu
 		x, verdict = free.Best.X, "even %s, which breaks %s, would not reach the target: %s"
 	}
 	var limits, details []string
+	broken := o.Proposal // Of the smallest works, where the ground allows none of them.
 	if x != nil {
-		for _, v := range z.w.apply(z.j, x).Violations {
+		broken = z.w.apply(z.j, x)
+	} else if reached == "" {
+		reached, verdict = "no design of the range can be built", "even %s breaks %s: %s"
+		x = z.w.smallest()
+	}
+	if x != nil {
+		for _, v := range broken.Violations {
 			limits = appendOnce(limits, v.Limit)
 			details = append(details, v.Detail)
 		}

@@ -15,12 +15,14 @@ const (
 	verifySeed   = 0x5eed
 )
 
-// reportedTol is the share by which the FS of a reported slip may differ when it is evaluated again with the default number of slices.
+// reportedTol is the share by which the FS of a reported slip may differ when it is evaluated again with the same number of slices: its ends
+// are then those on the ground, and slices fall otherwise.
 const reportedTol = 0.003
 
-// Contradict evaluates the reported slip of every check of an option again, by the reported method, and returns the outcomes whose FS is not
-// what the option says, with the FS found now.
-func Contradict(j *Job, o *Option) []Outcome {
+// Contradict evaluates the reported slip of every check of an option again, by the reported method and with as many slices as a search and
+// as an audit has, and returns the outcomes whose FS is neither time what the option says, with the FS found now.
+func Contradict(j *Job, o *Option, s Settings) []Outcome {
+	s = s.resolved()
 	var out []Outcome
 	var ws lem.Workspace
 	for _, list := range [][]Outcome{o.Situations, o.Stages} {
@@ -32,7 +34,12 @@ func Contradict(j *Job, o *Option) []Outcome {
 			var m lem.Model
 			got := math.NaN()
 			if err := m.Compile(c.Check.Section, &c.Check.Situation); err == nil {
-				got = m.FS(&ws, &c.Slip, lem.Setting{Method: c.Method, Window: j.window(), SideForce: j.SideForce}).F
+				for _, n := range []int{s.Slices, auditSlices * s.Slices} {
+					f := m.FS(&ws, &c.Slip, lem.Setting{Method: c.Method, Slices: n, Window: j.window(), SideForce: j.SideForce}).F
+					if math.IsNaN(got) || math.Abs(f-c.FS) < math.Abs(got-c.FS) {
+						got = f
+					}
+				}
 			}
 			if !(math.Abs(got-c.FS) <= reportedTol*c.FS) {
 				c.FS = got

@@ -156,7 +156,7 @@ func verifyOption(ctx context.Context, asked, rebuilt *remedies.Job, o *remedies
 			v.Lines = append(v.Lines, fmt.Sprintf("the witness against x = %v does not hold: %s", m.X, m.Why))
 		}
 	}
-	for _, c := range remedies.Contradict(rebuilt, o) {
+	for _, c := range remedies.Contradict(rebuilt, o, s) {
 		v.Lines = append(v.Lines, fmt.Sprintf("in %s the reported slip has FS %s (%s) on the reported section, which is not what is reported",
 			c.Check.Label(), report.FactorText(report.Number(c.FS)), c.Method))
 	}
