@@ -79,11 +79,11 @@ func TestFeatureSideForcesAreKept(t *testing.T) {
 	if cuts == 0 {
 		t.Error("no cuts")
 	}
-	if bad := remedies.Contradict(r.Job, &r.Existing); len(bad) > 0 {
+	if bad := remedies.Contradict(r.Job, &r.Existing, r.Settings); len(bad) > 0 {
 		t.Errorf("FS of reported slips is another: %+v", bad)
 	}
 	r.Job.SideForce = lem.SideForce{Shape: lem.Constant}
-	if bad := remedies.Contradict(r.Job, &r.Existing); len(bad) == 0 {
+	if bad := remedies.Contradict(r.Job, &r.Existing, r.Settings); len(bad) == 0 {
 		t.Error("the function makes no difference")
 	}
 }
