@@ -195,8 +195,12 @@ func (b *backSolver) single(most float64, falling bool) error {
 	var ok bool
 	if b.out.Middle, ok = at(1); !ok {
 		lowest, greatest := b.alone(0), b.alone(most)
+		why := b.why()
+		if math.IsNaN(lowest.FS) && greatest.FS > 1 || math.IsNaN(greatest.FS) && lowest.FS > 1 {
+			why = fmt.Sprintf("where it should be 1 %s gives no answer on the slip", b.setting.Method)
+		}
 		return fmt.Errorf("%w: FS of the observed slip goes from %s to %s as %s goes from 0 to %s, and is 1 nowhere: %s", ErrNoBackAnalysis,
-			fsOrNone(lowest.FS), fsOrNone(greatest.FS), b.unknown(), b.limit(most), b.why())
+			fsOrNone(lowest.FS), fsOrNone(greatest.FS), b.unknown(), b.limit(most), why)
 	}
 	b.out.Margin = backMargin
 	down, up := 1-backMargin, 1+backMargin

@@ -55,11 +55,11 @@ func newBerm(j *Job, r *Request) (Remedy, error) {
 	soil := r.soil("blanket_fill")
 	switch {
 	case r.has(bermBlanket) != (soil != noSoil):
-		return nil, fmt.Errorf("%w: berm: a blanket needs its thickness, blanket, and its soil, blanket_fill", ErrRequest)
+		return nil, fmt.Errorf("%w: berm: a blanket needs its thickness and its soil: give blanket and blanket_fill", ErrRequest)
 	case soil == noSoil:
 		return works, nil
 	case !j.Section.Soils[soil].FreeDraining:
-		return nil, fmt.Errorf("%w: berm: blanket_fill %q is not free-draining", ErrRequest, j.Section.Soils[soil].Name)
+		return nil, fmt.Errorf("%w: berm: blanket_fill %q is not free-draining: name a free-draining soil", ErrRequest, j.Section.Soils[soil].Name)
 	}
 	works.under = &blanket{soil: soil, thickness: bermBlanket}
 	return works, nil

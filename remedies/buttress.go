@@ -68,7 +68,7 @@ func buttressKind() Kind {
 func newButtress(j *Job, r *Request) (Remedy, error) {
 	soil := r.soil("fill")
 	if !j.Section.Soils[soil].FreeDraining {
-		return nil, fmt.Errorf("%w: buttress: fill %q is not free-draining; choose a free-draining rockfill, or a berm", ErrRequest, j.Section.Soils[soil].Name)
+		return nil, fmt.Errorf("%w: buttress: fill %q is not free-draining: choose a free-draining rockfill, or a berm", ErrRequest, j.Section.Soils[soil].Name)
 	}
 	works := &earthworks{noun: "buttress", soil: soil, fills: true, shape: bermShape("buttress")}
 	if !r.has(keyDepth) {
@@ -80,7 +80,7 @@ func newButtress(j *Job, r *Request) (Remedy, error) {
 		return works, nil
 	}
 	if !r.has(keyWidth) {
-		return nil, fmt.Errorf("%w: buttress: the key needs a key_width", ErrRequest)
+		return nil, fmt.Errorf("%w: buttress: the key needs a width: give key_width", ErrRequest)
 	}
 	if err := panelFault(r, keyPanel, keySpacing); err != nil {
 		return nil, err
@@ -133,9 +133,9 @@ func panelParameter(name, meaning string) Parameter {
 func panelFault(r *Request, open, spacing int) error {
 	switch {
 	case r.has(open) != r.has(spacing):
-		return fmt.Errorf("%w: %s: panels need their length and their spacing", ErrRequest, r.Kind)
+		return fmt.Errorf("%w: %s: panels need their length and their spacing: give panel and panel_spacing", ErrRequest, r.Kind)
 	case r.has(open) && r.Axes[open].Max >= r.Axes[spacing].Min:
-		return fmt.Errorf("%w: %s: panels %g m long leave no ground between them at a spacing of %g m", ErrRequest, r.Kind, r.Axes[open].Max, r.Axes[spacing].Min)
+		return fmt.Errorf("%w: %s: panels %g m long leave no ground between them at a spacing of %g m: give a panel_spacing greater than panel", ErrRequest, r.Kind, r.Axes[open].Max, r.Axes[spacing].Min)
 	}
 	return nil
 }

@@ -71,7 +71,7 @@ func newTrenchDrains(j *Job, r *Request) (Remedy, error) {
 		return nil, fmt.Errorf("%w: trench_drains: how far the drains lower the water is not known: name the soil that they reach down to under low_permeability, or give an effectiveness", ErrRequest)
 	}
 	if soil != noSoil && !slices.ContainsFunc(j.Section.Strata, func(s lem.Stratum) bool { return s.Soil == soil }) {
-		return nil, fmt.Errorf("%w: trench_drains: low_permeability names %q, which is no stratum of the section", ErrRequest, j.Section.Soils[soil].Name)
+		return nil, fmt.Errorf("%w: trench_drains: low_permeability names %q, which is no stratum of the section: name the soil of a stratum", ErrRequest, j.Section.Soils[soil].Name)
 	}
 	return &trenchDrains{soil: soil}, nil
 }

@@ -70,10 +70,10 @@ func drilledDrainsKind() Kind {
 // newDrilledDrains makes the remedy; how far the drains lower the water follows from numbers that nobody but the user can know.
 func newDrilledDrains(_ *Job, r *Request) (Remedy, error) {
 	if !r.has(drilledPermeability) || !r.has(drilledRecharge) {
-		return nil, fmt.Errorf("%w: drilled_drains: give the permeability and the recharge, both in m/s: the spacing follows from them", ErrRequest)
+		return nil, fmt.Errorf("%w: drilled_drains: the spacing follows from the flow: give the permeability and the recharge, both in m/s", ErrRequest)
 	}
 	if r.Axes[drilledRecharge].Max >= r.Axes[drilledPermeability].Min {
-		return nil, fmt.Errorf("%w: drilled_drains: a recharge of %g m/s does not pass through ground of permeability %g m/s", ErrRequest,
+		return nil, fmt.Errorf("%w: drilled_drains: a recharge of %g m/s does not pass through ground of permeability %g m/s: give a recharge below it", ErrRequest,
 			r.Axes[drilledRecharge].Max, r.Axes[drilledPermeability].Min)
 	}
 	return drilledDrains{}, nil

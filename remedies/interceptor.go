@@ -71,11 +71,11 @@ func pipedParameters(depth optimize.Axis, place Parameter) []Parameter {
 // newPiped makes the remedy.
 func newPiped(j *Job, r *Request, crest bool) (Remedy, error) {
 	if !r.has(pipedPermeability) || !r.has(pipedRecharge) {
-		return nil, fmt.Errorf("%w: %s: give the permeability and the recharge, both in m/s: the water line follows from them", ErrRequest, r.Kind)
+		return nil, fmt.Errorf("%w: %s: the water line follows from the flow: give the permeability and the recharge, both in m/s", ErrRequest, r.Kind)
 	}
 	soil := r.soil("low_permeability")
 	if !slices.ContainsFunc(j.Section.Strata, func(s lem.Stratum) bool { return s.Soil == soil }) {
-		return nil, fmt.Errorf("%w: %s: low_permeability names %q, which is no stratum of the section", ErrRequest, r.Kind, j.Section.Soils[soil].Name)
+		return nil, fmt.Errorf("%w: %s: low_permeability names %q, which is no stratum of the section: name the soil of a stratum", ErrRequest, r.Kind, j.Section.Soils[soil].Name)
 	}
 	noun := "toe drain"
 	if crest {

@@ -43,7 +43,7 @@ func newLightweight(j *Job, r *Request) (Remedy, error) {
 	fill := &j.Section.Soils[soil]
 	for i, st := range j.Section.Strata {
 		if s := &j.Section.Soils[st.Soil]; i == 0 && s.UnitWeight <= fill.UnitWeight {
-			return nil, fmt.Errorf("%w: lightweight_fill: fill %q, %g kN/m3, is not lighter than the ground, %q with %g kN/m3", ErrRequest,
+			return nil, fmt.Errorf("%w: lightweight_fill: fill %q, %g kN/m3, is not lighter than the ground, %q with %g kN/m3: name a lighter fill", ErrRequest,
 				fill.Name, fill.UnitWeight, s.Name, s.UnitWeight)
 		}
 	}

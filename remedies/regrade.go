@@ -77,9 +77,9 @@ func newRegrade(_ *Job, r *Request) (Remedy, error) {
 	case !r.has(regradeBenches) && (r.has(regradeInterval) || r.has(regradeFirst) || r.has(regradeWidth) || r.has(regradeUpper)):
 		return nil, fmt.Errorf("%w: regrade: bench_interval, first_bench, bench_width and upper_batter need benches: give their number", ErrRequest)
 	case r.has(regradeBenches) && (benches.Min != math.Trunc(benches.Min) || benches.Step != math.Trunc(benches.Step)):
-		return nil, fmt.Errorf("%w: regrade: benches is a whole number", ErrRequest)
+		return nil, fmt.Errorf("%w: regrade: benches is a whole number: write 1, 2, 3", ErrRequest)
 	case r.has(regradeBenches) && benches.Max > 0 && !r.has(regradeWidth):
-		return nil, fmt.Errorf("%w: regrade: benches need a bench_width", ErrRequest)
+		return nil, fmt.Errorf("%w: regrade: benches need a width: give bench_width", ErrRequest)
 	}
 	soil := r.soil("fill")
 	return &earthworks{noun: "regraded face", soil: soil, cuts: true, fills: soil != noSoil && r.Axes[regradePivot].Max > 0, shape: regradeShape}, nil

@@ -100,7 +100,7 @@ func TestBenchFaults(t *testing.T) {
 		want    string
 	}{
 		{"width without number", request("regrade", nil, 2.5, 0, nan, nan, nan, 3), "need benches: give their number"},
-		{"number without width", request("regrade", nil, 2.5, 0, 1), "benches need a bench_width"},
+		{"number without width", request("regrade", nil, 2.5, 0, 1), "benches need a width: give bench_width"},
 		{"half a bench", half, "benches is a whole number"},
 	}
 	for _, tt := range tests {

@@ -65,7 +65,7 @@ func NewRemedies(j *Job, requests []Request) ([]Remedy, error) {
 	}
 	if n := slices.IndexFunc(requests, isDrains); n >= 0 {
 		if m := slices.IndexFunc(requests[n+1:], isDrains); m >= 0 {
-			faults = append(faults, fmt.Errorf("%w: %s and %s: one kind of drains at a time, since their effects do not add up", ErrRequest, requests[n].Kind, requests[n+1+m].Kind))
+			faults = append(faults, fmt.Errorf("%w: the effects of %s and %s do not add up: name one kind of drains at a time", ErrRequest, requests[n].Kind, requests[n+1+m].Kind))
 		}
 	}
 	if err := errors.Join(faults...); err != nil {

@@ -180,7 +180,7 @@ func TestKeyFaults(t *testing.T) {
 	sized.Axes[keyPanel] = optimize.Axis{Name: "key_panel", Min: 3, Max: 10, Step: 1}
 	for name, r := range map[string]Request{
 		"key_width needs a key":          request("buttress", fillOf(rockfill), 2, 4, 1.5, nan, 3),
-		"the key needs a key_width":      request("buttress", fillOf(rockfill), 2, 4, 1.5, 1),
+		"the key needs a width":          request("buttress", fillOf(rockfill), 2, 4, 1.5, 1),
 		"their length and their spacing": request("buttress", fillOf(rockfill), 2, 4, 1.5, 1, 3, nan, nan, 3),
 		"leave no ground between them":   sized,
 	} {

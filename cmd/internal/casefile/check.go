@@ -56,7 +56,7 @@ func (r *reader) checkPlain(v value) bool {
 // checkEmpty deals with a key that has nothing behind it: legal for an object that may be left empty, if no key of it is required.
 func (r *reader) checkEmpty(s *shape, v value) {
 	if !s.nullable {
-		r.reject(v, "write "+s.String(), "is empty")
+		r.reject(v, written(s, v), "is empty")
 		return
 	}
 	r.checkKeys(s, v, nil)
@@ -79,11 +79,15 @@ func (r *reader) wrongType(s *shape, v value) {
 	if v.node.Kind == yaml.MappingNode {
 		is = "a mapping"
 	}
-	suggestion := "write " + s.String()
-	if v.example != "" {
-		suggestion += ", such as " + v.example
+	r.reject(v, written(s, v), "%s does not fit here", is)
+}
+
+// written says what to write at a value, with its example if it has one.
+func written(s *shape, v value) string {
+	if v.example == "" {
+		return "write " + s.String()
 	}
-	r.reject(v, suggestion, "%s does not fit here", is)
+	return "write " + s.String() + ", such as " + v.example
 }
 
 func (r *reader) checkText(s *shape, v value) {
@@ -212,6 +216,7 @@ func (r *reader) checkList(s *shape, v value) {
 		return
 	}
 	for _, item := range r.items(v) {
+		item.example = v.example
 		r.check(s.elem, item)
 	}
 }
@@ -251,7 +256,7 @@ func (r *reader) checkNamed(s *shape, v value) {
 	r.checkDuplicates(v)
 	for _, e := range r.entries(v) {
 		if message := badName(e.key.Value); message != "" {
-			r.faultAt(e.key, v.path, "", "the name `%s` %s", clip(e.key.Value), message)
+			r.faultAt(e.key, v.path, fmt.Sprintf("write a name on one line, of at most %d characters", maxName), "the name \"%s\" %s", clip(e.key.Value), message)
 			r.bad[e.key] = true
 			continue
 		}
@@ -344,18 +349,18 @@ func (r *reader) checkOneOf(s *shape, v value, have map[string]bool) {
 	if len(s.oneOf) == 0 {
 		return
 	}
-	n := 0
+	var given []string
 	for _, k := range s.oneOf {
 		if have[k] {
-			n++
+			given = append(given, k)
 		}
 	}
 	switch {
-	case n == 0:
+	case len(given) == 0:
 		f := s.field(s.oneOf[0])
 		r.missing(v, fmt.Sprintf("write `%s: %s` (%s)", f.key, f.example, firstSentence(f.meaning)), "one of the keys %s is missing", orList(s.oneOf))
-	case n > 1:
-		r.addFault(v, "keep one of them", "has more than one of the keys %s", orList(s.oneOf))
+	case len(given) > 1:
+		r.addFault(v, "keep one of them", "has both %s", andList(given))
 	}
 }
 

@@ -4,6 +4,7 @@ import (
 	"flag"
 	"os"
 	"path/filepath"
+	"regexp"
 	"strings"
 	"testing"
 
@@ -34,6 +35,12 @@ func golden(t *testing.T, path, got string) {
 	}
 }
 
+// boundRule matches messages that tell what would be right themselves: by the bounds of a value.
+var boundRule = regexp.MustCompile(`it must be |at most \d+ |lies beyond the ground, which runs from `)
+
+// placeless matches messages of what stands nowhere in the file.
+var placeless = regexp.MustCompile("^the key `.*` is missing$|^the file is empty$")
+
 // TestFaultyCases reads each faulty case and compares all of its messages with those that were read and approved.
 func TestFaultyCases(t *testing.T) {
 	files, err := filepath.Glob(root + "/testdata/cases/*.yaml")
@@ -50,6 +57,14 @@ func TestFaultyCases(t *testing.T) {
 			_, err = Parse(name, src)
 			if err == nil {
 				t.Fatal("no fault found")
+			}
+			for _, f := range Faults(err) {
+				if (f.Line == 0) != (f.Path == "" && placeless.MatchString(f.Message)) || (f.LineText == "") != (f.Line == 0) {
+					t.Errorf("no line: %v", f)
+				}
+				if f.Suggestion == "" && !boundRule.MatchString(f.Message) {
+					t.Errorf("it does not say what would be right: %v", f)
+				}
 			}
 			golden(t, strings.TrimSuffix(path, ".yaml")+".txt", err.Error()+"\n")
 		})

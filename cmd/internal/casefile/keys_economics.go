@@ -70,7 +70,7 @@ func workMeaning(w remedies.Work) string {
 
 // formLimits returns the limits on faces, widths and import.
 func formLimits() []field {
-	batter := number("1V:nH", above(0).upTo(20))
+	batter := number(batterUnit, above(0).upTo(20))
 	return []field{
 		{key: "overhead", shape: list(overheadShape(), 0, maxZones), standard: "none", meaning: "Lines and structures above the ground that works must stay clear of.", example: "[{name: power line, from: 33, to: 45, level: 116, clearance: 6}]"},
 		{key: "steepest_batters", shape: object(

@@ -35,6 +35,8 @@ func parseNumber(n *yaml.Node) (float64, *problem) {
 		p := &problem{message: fmt.Sprintf("%q is text, not a number", text)}
 		if numberRule.MatchString(text) {
 			p.suggestion = fmt.Sprintf("write %s without quotes", text)
+		} else {
+			p.suggestion = notANumber(text).suggestion
 		}
 		return 0, p
 	}

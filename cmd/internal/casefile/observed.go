@@ -68,7 +68,7 @@ func (b *builder) slipLine(v value) (lem.Profile, bool) {
 	if passesBelow(line, g) {
 		return line, true
 	}
-	b.addFault(v, "", "no point of the slip lies below the ground")
+	b.addFault(v, "write levels, not depths, some of them below the ground", "no point of the slip lies below the ground")
 	return line, false
 }
 
@@ -89,7 +89,7 @@ func (b *builder) slipCircle(v value, s *lem.Slip) bool {
 			return true
 		}
 	}
-	b.addFault(v, "", "the lower arc of the circle does not pass below the ground")
+	b.addFault(v, "write a centre above the ground and a radius that reaches below it", "the lower arc of the circle does not pass below the ground")
 	return false
 }
 

@@ -145,10 +145,7 @@ func (s *shape) String() string {
 	case textKind:
 		return s.what
 	case numberKind:
-		if s.unit != "" {
-			return "a number in " + s.unit
-		}
-		return "a number"
+		return numberText(s.unit)
 	case booleanKind:
 		return "`true` or `false`"
 	case wordKind:
@@ -173,6 +170,23 @@ func (s *shape) String() string {
 		return strings.Join(all, ", or ")
 	}
 	return ""
+}
+
+// batterUnit is the unit of a batter.
+const batterUnit = "1V:nH"
+
+// numberText says what a number in a unit is.
+func numberText(unit string) string {
+	of, perUnit := strings.CutPrefix(unit, "1/")
+	switch {
+	case unit == "":
+		return "a number"
+	case unit == batterUnit:
+		return "the n of " + batterUnit
+	case perUnit:
+		return "a number per " + of
+	}
+	return "a number in " + unit
 }
 
 func (s *shape) tupleText() string {

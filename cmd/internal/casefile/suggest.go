@@ -76,7 +76,12 @@ func editDistance(a, b string) int {
 }
 
 // orList returns the words quoted, as "`a`, `b` or `c`".
-func orList(words []string) string {
+func orList(words []string) string { return quotedList(words, "or") }
+
+// andList returns the words quoted, as "`a`, `b` and `c`".
+func andList(words []string) string { return quotedList(words, "and") }
+
+func quotedList(words []string, join string) string {
 	quoted := make([]string, len(words))
 	for i, w := range words {
 		quoted[i] = "`" + w + "`"
@@ -85,5 +90,5 @@ func orList(words []string) string {
 		return strings.Join(quoted, "")
 	}
 	last := len(quoted) - 1
-	return strings.Join(quoted[:last], ", ") + " or " + quoted[last]
+	return strings.Join(quoted[:last], ", ") + " " + join + " " + quoted[last]
 }

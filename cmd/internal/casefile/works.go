@@ -130,6 +130,11 @@ func (b *builder) tryRemedies(qs []remedies.Request, v value) {
 		return
 	}
 	for _, line := range strings.Split(err.Error(), "\n") {
-		b.addFault(v, "", "%s", strings.TrimPrefix(line, remedies.ErrRequest.Error()+": "))
+		line = strings.TrimPrefix(line, remedies.ErrRequest.Error()+": ")
+		for _, q := range qs { // The place of the fault says which remedy it is.
+			line = strings.TrimPrefix(line, q.Kind+": ")
+		}
+		message, suggestion, _ := strings.Cut(line, ": ") // What is wrong: what would be right.
+		b.addFault(v, suggestion, "%s", message)
 	}
 }
