@@ -23,7 +23,7 @@ var features = []feature{
 	{"Bishop", "", "sand.yaml fredlund.yaml", "**Bishop simplified** (Bishop 1955)", "method is for circles"},
 	{"Janbu with and without f0", "", "sand.yaml loads.yaml", "**Janbu simplified** (Janbu 1954, 1973)", ""},
 	{"Spencer and Morgenstern-Price", "side_force_function", "side-forces.yaml fredlund.yaml", "**Spencer** (1967) and **Morgenstern-Price** (Morgenstern and Price 1965)", ""},
-	{"slice table", "", "loads.yaml", "## The slice table", ""},
+	{"slice table", "", "plane.yaml", "## The slice table", ""},
 	{"slips that are no circles", "slips.head slips.toe slips.direction", "side-forces.yaml", "## Slips that are no circles", ""},
 	{"composite slips", "strata[].top", "fredlund.yaml side-forces.yaml", "composite\nslip", ""},
 	{"known slips", "known_slips[].line known_slips[].friction", "known.yaml", "A known slip surface has a strength of its own", ""},

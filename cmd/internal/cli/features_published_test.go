@@ -1,8 +1,13 @@
 package cli
 
 import (
+	"bytes"
+	"encoding/csv"
 	"fmt"
 	"math"
+	"os"
+	"path/filepath"
+	"strconv"
 	"strings"
 	"testing"
 )
@@ -109,14 +114,65 @@ func TestFeatureCrackPublished(t *testing.T) {
 	}
 }
 
+// knownPlane makes the plane of plane.yaml a known slip in stronger ground, so that a search finds it.
+var knownPlane = []string{
+	planeClay, "{unit_weight: 19, drained: {cohesion: 60, friction: 30}",
+	planeStrata, planeStrata + "known_slips: [{line: [[12, 30], [36, 18]], cohesion: 5, friction: 20}]\n",
+	"slope:", "ignore_slips_shallower_than: 1\nslope:",
+}
+
+// TestFeatureSliceTable: the table that is written for a hand check adds up to the weight of the wedge and the length of its base, and R over D is FS by
+// statics.
+func TestFeatureSliceTable(t *testing.T) {
+	const tolerance = 1e-3
+	folder := t.TempDir()
+	path := filepath.Join(folder, "case.yaml")
+	if err := os.WriteFile(path, []byte(edited(t, "plane.yaml", knownPlane...)), 0o644); err != nil {
+		t.Fatal(err)
+	}
+	var out, errs bytes.Buffer
+	if code := run(t.Context(), []string{"assess", path, "--slices", "--out", folder}, nil, &out, &errs); code != exitOK {
+		t.Fatalf("exit code %d: %s", code, &errs)
+	}
+	in, err := os.Open(filepath.Join(folder, "case-slices-failure.csv"))
+	if err != nil {
+		t.Fatal(err)
+	}
+	defer in.Close() //nolint:errcheck // only read from
+	r := csv.NewReader(in)
+	r.FieldsPerRecord = -1
+	rows, err := r.ReadAll()
+	if err != nil {
+		t.Fatal(err)
+	}
+	sum := map[string]float64{}
+	for _, row := range rows[1:] {
+		if _, err := strconv.Atoi(row[0]); err != nil {
+			break // The sums.
+		}
+		for i, head := range rows[0] {
+			if v, err := strconv.ParseFloat(row[i], 64); err == nil {
+				sum[head] += v
+			}
+		}
+	}
+	wedge := onPlane{v: wedgeWeight, cl: 5 * planeLength, tan: math.Tan(20 * degree)}
+	for what, c := range map[string][2]float64{
+		"weight": {sum["W (kN)"], wedgeWeight}, "length of the base": {sum["l (m)"], planeLength}, "width": {sum["b (m)"], planeRun},
+		"FS": {sum["R (kN)"] / sum["D (kN)"], wedge.fs()}, "mobilised": {sum["S (kN)"], wedgeWeight * planeSin},
+		"normal force": {sum["N' (kN)"], wedgeWeight * planeCos},
+	} {
+		if !(math.Abs(c[0]-c[1]) <= tolerance*c[1]) {
+			t.Errorf("%s: %.4f, want %.4f", what, c[0], c[1])
+		}
+	}
+}
+
 // TestFeatureInfluence: on a plane the change of FS by a load, at once and in the long term, is that of statics, and it is the same everywhere; on
 // other slips a load at once leaves FS as it is above the lowest point (Hutchinson 1977).
 func TestFeatureInfluence(t *testing.T) {
 	const load, tolerance = 10.0, 0.005
-	_, f := assessed(t, "plane.yaml",
-		planeClay, "{unit_weight: 19, drained: {cohesion: 60, friction: 30}",
-		planeStrata, planeStrata+"known_slips: [{line: [[12, 30], [36, 18]], cohesion: 5, friction: 20}]\n",
-		"slope:", "ignore_slips_shallower_than: 1\nslope:")
+	_, f := assessed(t, "plane.yaml", knownPlane...)
 	wedge := onPlane{v: wedgeWeight, cl: 5 * planeLength, tan: math.Tan(20 * degree)}
 	loaded, pressed := wedge, wedge
 	loaded.v += load
