@@ -12,36 +12,26 @@ func (ws *Workspace) janbu() (float64, Status) {
 	ss := ws.slice[:ws.n]
 	for i := range ss {
 		s := &ss[i]
-		d += s.h + s.k + s.q*s.sin/s.cos
-		sum += s.frees / s.cos
+		inv := 1 / s.cos
+		d += s.h + s.k + s.q*s.sin*inv
+		sum += s.frees * inv
 	}
 	if !(d > 0 && sum > 0) {
 		return math.NaN(), NotConverged
 	}
-	pole := ws.pole()
-	lo, hi := pole, math.Inf(1)
-	f := max(sum/d, 1.5*pole)
+	root := bracket{ws.pole(), math.Inf(1)}
+	f := max(sum/d, 1.5*root.lo)
 	for range maxIterations {
-		var g, dg float64
+		var g, dg, ddg float64
 		for i := range ss {
 			s := &ss[i]
-			q := 1 / (f*s.cos + s.sin*s.tan)
-			t := s.frees * q
-			g += t / s.cos
-			dg += t * q
+			q := 1 / ((f*s.cos + s.sin*s.tan) * s.cos)
+			t, h := s.frees*q, q*s.cos*s.cos
+			g += t
+			dg += t * h
+			ddg += t * h * h
 		}
-		g -= d
-		if g > 0 {
-			lo = f
-		} else {
-			hi = f
-		}
-		next := f + g/dg
-		if !(next > lo && next < hi) { // Outside the bracket, or not a number.
-			if next = (lo + hi) / 2; math.IsInf(hi, 1) {
-				next = 2 * lo
-			}
-		}
+		next := root.next(f, g-d, dg, ddg)
 		if math.Abs(next-f) <= fRelTol*next {
 			return ws.admitted(next)
 		}

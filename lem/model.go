@@ -67,6 +67,7 @@ type layer struct {
 	datum        line
 	curve        envelope // For kind == strengthCurved.
 	known        int32    // 1 + index of the known slip surface that the layer is the band of; 0: none.
+	plain        bool     // Model.fillPlain does for slices whose base lies in it.
 }
 
 type line struct{ a, b float64 }
@@ -147,7 +148,22 @@ func (m *Model) Compile(s *Section, sit *Situation) error {
 	for i := 0; i+1 < len(xs); i++ {
 		m.addColumn(d, xs[i], xs[i+1])
 	}
+	m.markPlain()
 	return nil
+}
+
+// markPlain marks the layers whose slices need nothing but constant strength, a water line and permanent pressures.
+func (m *Model) markPlain() {
+	if m.pooled || m.curved || m.sheared || m.kh != 0 {
+		return
+	}
+	for i := range m.cols {
+		c := &m.cols[i]
+		for k := c.first; k < c.last; k++ {
+			l := &m.layers[k]
+			l.plain = l.kind == strengthConstant && (l.pore == poreNone || l.pore == poreLine && c.fade == 0)
+		}
+	}
 }
 
 func extent(p Profile) (low, high float64) {

@@ -112,12 +112,33 @@ func (ws *Workspace) startLambda() float64 {
 // pole returns the F below which m-alpha of some slice is negative.
 func (ws *Workspace) pole() float64 {
 	var p float64
-	for i := range ws.slice[:ws.n] {
-		if s := &ws.slice[i]; s.sin < 0 && -s.sin*s.tan > p*s.cos {
+	ss := ws.rising()
+	for i := range ss {
+		if s := &ss[i]; -s.sin*s.tan > p*s.cos {
 			p = -s.sin * s.tan / s.cos
 		}
 	}
 	return p
+}
+
+// rising returns slices among which are all whose base rises towards the exit; on an arc they lie at the exit, and there are no others.
+func (ws *Workspace) rising() []slice {
+	ss := ws.slice[:ws.n]
+	if !ws.arc {
+		return ss
+	}
+	if ss[0].sin < ss[len(ss)-1].sin {
+		i := 0
+		for i < len(ss) && ss[i].sin < 0 {
+			i++
+		}
+		return ss[:i]
+	}
+	i := len(ss)
+	for i > 0 && ss[i-1].sin < 0 {
+		i--
+	}
+	return ss[i:]
 }
 
 // newton solves both equations together. It gives up where an iterate leaves the range in which every m-alpha and every 1 + g lambda f is
@@ -211,7 +232,7 @@ func (ws *Workspace) forceF(start, lambda, pole float64, leftward bool) (f, mome
 			lo = f
 		}
 		next := f - c.e/c.eF
-		if !(next > lo && next < hi) { // Outside the bounds, or not a number.
+		if !(next > lo && next < hi || next == f) { // Outside the bounds, or not a number.
 			if next = (lo + hi) / 2; math.IsInf(hi, 1) {
 				next = 2 * f
 			}

@@ -8,49 +8,83 @@ const crossingMargin = 1e-6
 // leastAngle is the least angle of a slice, rad: what an arc cuts off a column by rounding only is left out.
 const leastAngle = 1e-10
 
+// seriesUpTo is the angle, rad, up to which the series of sine and cosine, cut off as they are in smallSincos, are exact to rounding.
+const seriesUpTo = 0.1
+
 // sliceCircle cuts a part of a circle into slices of equal angle: never across a column's edge nor across a boundary between layers, however
-// short the arc's dip into the next layer, so that the answer converges with the square of the slice width.
+// short the arc's dip into the next layer, so that the answer converges with the square of the slice width. First the stretches between such
+// cuts, whose angles do not wait for each other, then the slices.
 func (m *Model) sliceCircle(ws *Workspace, p part, c Point, r float64, target int) {
 	ws.n, ws.wet, ws.arc, ws.centre, ws.radius = 0, false, true, c, r
-	theta := ws.angle(p.from)
-	width := (ws.angle(p.to) - theta) / float64(max(target, MinSlices))
+	ws.reaches = ws.reaches[:0]
+	curvature := 1 / r
+	at := bearingOf(p.from, c.X, curvature)
 	for i := p.first; i <= p.last; i++ {
 		col := &m.cols[i]
 		a, b := max(col.x0, p.from), min(col.x1, p.to)
 		if b <= a {
 			continue
 		}
-		k := col.first
+		next := bearingOf(b, c.X, curvature)
 		if col.last-col.first > 1 {
-			m.arcCuts(ws, col, a, b)
+			m.arcCuts(ws, col, a, b, c.Y-r*at.cos, c.Y-r*next.cos)
 			for _, x := range ws.cuts {
-				next := ws.angle(x)
-				k = m.addArc(ws, col, k, theta, next, width)
-				theta = next
+				mid := bearingOf(x, c.X, curvature)
+				ws.reaches = append(ws.reaches, reach{i, at, at.angleTo(mid)})
+				at = mid
 			}
 		}
-		next := ws.angle(b)
-		m.addArc(ws, col, k, theta, next, width)
-		theta = next
+		ws.reaches = append(ws.reaches, reach{i, at, at.angleTo(next)})
+		at = next
+	}
+	var angle float64
+	for i := range ws.reaches {
+		angle += ws.reaches[i].angle
+	}
+	perWidth := float64(max(target, MinSlices)) / angle
+	k, before := int32(0), -1
+	for i := range ws.reaches {
+		reach := &ws.reaches[i]
+		col := &m.cols[reach.column]
+		if reach.column != before {
+			k, before = col.first, reach.column
+		}
+		if reach.angle > leastAngle {
+			k = m.addArc(ws, col, k, reach, perWidth)
+		}
 	}
 }
 
-// angle returns the angle of the arc at x from the vertical through the centre, positive to the right.
-func (ws *Workspace) angle(x float64) float64 {
-	return math.Asin(min(max((x-ws.centre.X)/ws.radius, -1), 1))
+// reach is a stretch of an arc in one column and one layer: from a bearing over an angle, rad.
+type reach struct {
+	column int
+	from   bearing
+	angle  float64
 }
 
-// arcLevel returns the level of the arc at x.
-func (ws *Workspace) arcLevel(x float64) float64 {
-	dx := x - ws.centre.X
-	return ws.centre.Y - math.Sqrt(max(0, ws.radius*ws.radius-dx*dx))
+// bearing is the angle of a point of an arc from the vertical through the centre, positive to the right, by its sine and cosine.
+type bearing struct{ sin, cos float64 }
+
+// bearingOf returns the bearing of the point at x of an arc about a centre with the given x.
+func bearingOf(x, centre, curvature float64) bearing {
+	s := min(max((x-centre)*curvature, -1), 1)
+	return bearing{s, math.Sqrt((1 - s) * (1 + s))}
 }
 
-// arcCuts lists in ws.cuts, from left to right, where the arc crosses boundaries between layers of a column from x = a to b.
-func (m *Model) arcCuts(ws *Workspace, col *column, a, b float64) {
+// angleTo returns the angle from one bearing to another further right.
+func (b bearing) angleTo(to bearing) float64 {
+	sin, cos := to.sin*b.cos-b.sin*to.cos, to.cos*b.cos+to.sin*b.sin
+	if sin > cos {
+		return math.Atan2(sin, cos)
+	}
+	return 2 * math.Atan(sin/(1+cos)) // Of so small a tangent it costs little.
+}
+
+// arcCuts lists in ws.cuts, from left to right, where the arc crosses boundaries between layers of a column from x = a to b; ya and yb are its levels
+// there.
+func (m *Model) arcCuts(ws *Workspace, col *column, a, b, ya, yb float64) {
 	ws.cuts = ws.cuts[:0]
 	c, r := ws.centre, ws.radius
-	ya, yb := ws.arcLevel(a), ws.arcLevel(b)
 	for k := col.first; k < col.last-1; k++ {
 		l := m.layers[k].bottom
 		aboveA, aboveB := l.at(a) > ya, l.at(b) > yb
@@ -85,34 +119,43 @@ func (ws *Workspace) cut(x, a, b float64) {
 	}
 }
 
-// addArc adds the slices over an arc from angle from to angle to, which lies in one layer; it is walked by rotation, half a slice at a time.
-// k is where to start looking for the layer; it returns the layer.
-func (m *Model) addArc(ws *Workspace, col *column, k int32, from, to, width float64) int32 {
-	if to-from <= leastAngle {
-		return k
-	}
+// addArc adds the slices over a reach of the arc; it is walked by rotation from middle to middle. k is where to start looking for the layer; it
+// returns the layer.
+func (m *Model) addArc(ws *Workspace, col *column, k int32, over *reach, perWidth float64) int32 {
 	c, r := ws.centre, ws.radius
-	n := max(1, int(math.Ceil((to-from)/width-crossingMargin)))
-	delta := (to - from) / float64(n)
-	sinHalf, cosHalf := math.Sincos(delta / 2)
+	n := max(1, int(math.Ceil(over.angle*perWidth-crossingMargin)))
+	delta := over.angle / float64(n)
+	sinHalf, cosHalf := smallSincos(delta / 2)
+	sinDelta, cosDelta := 2*sinHalf*cosHalf, 1-2*sinHalf*sinHalf
 	// Area between arc and chord, R^2/2 (delta - sin delta), over the chord: how far the arc lies below it on the average.
-	bulge := r * (delta - 2*sinHalf*cosHalf) / (4 * sinHalf)
-	sin, cos := math.Sincos(from)
-	first := true
+	bulge := r * (delta - sinDelta) / (4 * sinHalf)
+	length, chord, apothem := r*delta, 2*r*sinHalf, r*cosHalf
+	sin, cos := over.from.sin*cosHalf+over.from.cos*sinHalf, over.from.cos*cosHalf-over.from.sin*sinHalf
+	k = m.layerAt(col, k, c.X+apothem*sin, c.Y-apothem*cos-bulge/cos)
+	l := &m.layers[k]
+	wet := false
 	for range n {
-		midSin, midCos := sin*cosHalf+cos*sinHalf, cos*cosHalf-sin*sinHalf
-		sin, cos = midSin*cosHalf+midCos*sinHalf, midCos*cosHalf-midSin*sinHalf
 		s := ws.add()
-		s.sin, s.cos = -midSin, midCos
-		s.b = 2 * r * sinHalf * midCos
-		s.x = c.X + r*cosHalf*midSin
-		s.y = c.Y - r*cosHalf*midCos - bulge/midCos
-		if first {
-			k, first = m.layerAt(col, k, s.x, s.y), false
-		}
-		ws.wet = m.fill(s, col, &m.layers[k], r*delta) || ws.wet
+		s.sin, s.cos = -sin, cos
+		s.b = chord * cos
+		s.x = c.X + apothem*sin
+		s.y = c.Y - apothem*cos - bulge/cos
+		wet = m.fill(s, col, l, length) || wet
+		sin, cos = sin*cosDelta+cos*sinDelta, cos*cosDelta-sin*sinDelta
 	}
+	ws.wet = ws.wet || wet
 	return k
+}
+
+// smallSincos returns sine and cosine of an angle, by their series where it is small.
+func smallSincos(x float64) (sin, cos float64) {
+	if x > seriesUpTo {
+		return math.Sincos(x)
+	}
+	q := x * x
+	sin = x * (1 - q*(1.0/6-q*(1.0/120-q*(1.0/5040-q*(1.0/362880)))))
+	cos = 1 - q*(0.5-q*(1.0/24-q*(1.0/720-q*(1.0/40320))))
+	return sin, cos
 }
 
 // layerAt returns the layer of the column at a point, starting from layer k.
@@ -167,6 +210,30 @@ func (m *Model) addSlice(ws *Workspace, col *column, k int32, x0, y0, x1, y1 flo
 // fill works out the forces on a slice whose geometry is set and whose base, of the given length, lies in layer l of the column. It reports whether
 // free water loads the slice.
 func (m *Model) fill(s *slice, col *column, l *layer, length float64) (wet bool) {
+	if l.plain {
+		m.fillPlain(s, col, l, length)
+		return false
+	}
+	return m.fillAny(s, col, l, length)
+}
+
+// fillPlain is fillAny without what hardly any section has, for speed: searches spend half of their time here.
+func (m *Model) fillPlain(s *slice, col *column, l *layer, length float64) {
+	soil := (l.sigma + l.slope*s.x - l.gamma*s.y ) * s.b
+	q := soil * m.vert
+	var ul float64
+	if l.pore == poreLine {
+		ul = l.unit * max(0, col.water.at(s.x)-s.y) * length
+	}
+	cl := l.c * length
+	s.soilW, s.q, s.h, s.k = soil, q, 0, 0
+	s.variable, s.ground = col.variable, col.ground.at(s.x)
+	s.tan, s.cl, s.ul = l.tan, cl, ul
+	s.frees = cl*s.cos + (q-ul*s.cos)*l.tan
+}
+
+// fillAny is fill for all that a section may have.
+func (m *Model) fillAny(s *slice, col *column, l *layer, length float64) (wet bool) {
 	b := s.b
 	weight := l.sigma + l.slope*s.x - l.gamma*s.y
 	pressure := col.pressure.at(s.x)
@@ -181,7 +248,11 @@ func (m *Model) fill(s *slice, col *column, l *layer, length float64) (wet bool)
 	switch l.pore {
 	case poreNone:
 	case poreLine:
-		u = l.unit * max(0, col.head(s.x, s.y)-s.y)
+		head := col.water.at(s.x)
+		if col.fade != 0 {
+			head = col.drained(head, s.x, s.y)
+		}
+		u = l.unit * max(0, head-s.y)
 	case poreRu:
 		u = l.ru * weight
 	case poreOwn:
@@ -236,12 +307,8 @@ func (s *slice) press(free, slope float64) bool {
 	return true
 }
 
-// head returns the level of the piezometric head at a point, drains counted: see Drawdown.
-func (col *column) head(x, y float64) float64 {
-	w := col.water.at(x)
-	if col.fade == 0 {
-		return w
-	}
+// drained returns the level of the piezometric head at a point over which drains lower the head from level w: see Drawdown.
+func (col *column) drained(w, x, y float64) float64 {
 	inv := col.invert.at(x)
 	if inv >= w {
 		return w

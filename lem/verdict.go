@@ -52,7 +52,7 @@ const (
 
 // admitted returns F with the verdict of the m-alpha rule, for methods that have no other.
 func (ws *Workspace) admitted(f float64) (float64, Status) {
-	ss := ws.slice[:ws.n]
+	ss := ws.rising()
 	for i := range ss {
 		s := &ss[i]
 		if s.sin < 0 && s.cos*f+s.sin*s.tan < minMAlpha*f {
@@ -114,8 +114,9 @@ func (ws *Workspace) judge(f, lambda float64, leftward bool) Verdict {
 // leastMAlpha returns the least m-alpha of the bases that rise towards the exit.
 func (ws *Workspace) leastMAlpha(f float64) float64 {
 	least := 1.0
-	for i := range ws.slice[:ws.n] {
-		if s := &ws.slice[i]; s.sin < 0 {
+	ss := ws.rising()
+	for i := range ss {
+		if s := &ss[i]; s.sin < 0 {
 			least = min(least, s.cos+s.sin*s.tan/f)
 		}
 	}

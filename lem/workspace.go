@@ -3,15 +3,16 @@ package lem
 // Workspace is the memory of one evaluation: the slices of the part at hand. Make one per goroutine; the zero value is ready. It
 // grows to the largest slip seen and then allocates no more.
 type Workspace struct {
-	n      int // Slices in use.
-	parts  []part
-	slice  []slice
-	arc    bool      // The slip is a circle:
-	centre Point     // its centre
-	radius float64   // and radius;
-	cuts   []float64 // where it crosses layers in the column at hand.
-	wet    bool      // Free water loads some slice.
-	trial  int       // Evaluations since the workspace was made.
+	n       int // Slices in use.
+	parts   []part
+	slice   []slice
+	arc     bool      // The slip is a circle:
+	centre  Point     // its centre
+	radius  float64   // and radius;
+	cuts    []float64 // where it crosses layers in the column at hand,
+	reaches []reach   // and its stretches between the edges of columns and such cuts.
+	wet     bool      // Free water loads some slice.
+	trial   int       // Evaluations since the workspace was made.
 
 	answer     float64      // F at which the equations of the last method close, admissible or not.
 	sideForce  SideForce    // Of the setting in force, for MorgensternPrice.
