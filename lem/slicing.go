@@ -219,7 +219,7 @@ func (m *Model) fill(s *slice, col *column, l *layer, length float64) (wet bool)
 
 // fillPlain is fillAny without what hardly any section has, for speed: searches spend half of their time here.
 func (m *Model) fillPlain(s *slice, col *column, l *layer, length float64) {
-	soil := (l.sigma + l.slope*s.x - l.gamma*s.y) * s.b
+	soil := (l.sigma + l.slope*s.x - l.gamma*s.y + col.pressure.at(s.x)) * s.b
 	q := soil * m.vert
 	var ul float64
 	if l.pore == poreLine {
