@@ -102,6 +102,9 @@ func (b *rebuilder) water(w Water, own ...string) lem.Water {
 		if line := w.BySoil[name].Line; line != nil {
 			out.BySoil = append(out.BySoil, lem.SoilWater{Soil: i, Line: b.line(line)})
 		}
+		if level := w.BySoil[name].LevelY; level != nil { // One level for all free-draining soils.
+			out.FreeDrainingLevel, out.HasFreeDrainingLevel = *level, true
+		}
 	}
 	for _, f := range w.FreeWater {
 		out.Free = append(out.Free, lem.FreeWater{Level: f.Level, FromX: f.FromX, ToX: f.ToX})

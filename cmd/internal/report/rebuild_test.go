@@ -65,6 +65,40 @@ func TestRebuildDrawsTheSame(t *testing.T) {
 	}
 }
 
+// TestRebuildKeepsWater: the water of every check is turned back as it was, with the level to which free-draining soils fill.
+func TestRebuildKeepsWater(t *testing.T) {
+	result, src := sample()
+	f, err := Decode(strings.NewReader(encoded(t, New(result, src))))
+	if err != nil {
+		t.Fatal(err)
+	}
+	back, err := Rebuild(f)
+	if err != nil {
+		t.Fatal(err)
+	}
+	levels := 0
+	same := func(o, got *remedies.Option) {
+		for k, list := range [][]remedies.Outcome{o.Situations, o.Stages} {
+			for i := range list {
+				want, now := &list[i].Check, &[][]remedies.Outcome{got.Situations, got.Stages}[k][i].Check
+				if diff := cmp.Diff(want.Situation.Water, now.Situation.Water, cmpopts.EquateApprox(0, 1e-9), cmpopts.EquateEmpty()); diff != "" {
+					t.Errorf("%s, %s (-written +read):\n%s", o.Name, want.Label(), diff)
+				}
+				if now.Situation.Water.HasFreeDrainingLevel {
+					levels++
+				}
+			}
+		}
+	}
+	same(&result.Existing, &back.Existing)
+	for i := range result.Options {
+		same(&result.Options[i], &back.Options[i])
+	}
+	if levels == 0 {
+		t.Error("no check with a level of free-draining soils")
+	}
+}
+
 func TestRebuildRefuses(t *testing.T) {
 	good := encoded(t, New(sample()))
 	for _, c := range []struct{ name, old, new, want string }{
