@@ -4,6 +4,7 @@ import (
 	"bytes"
 	"encoding/json"
 	"errors"
+	"maps"
 	"math"
 	"math/rand/v2"
 	"os"
@@ -53,12 +54,12 @@ func resultOf(t *testing.T, path string, only ...string) *theirFile {
 	return f
 }
 
-// strangers returns a stranger for each check of an option, with the answer that the file gives.
+// strangers returns a stranger for each check of an option, with the answer that the file gives. What is only told beside a check is left out.
 func strangers(f *theirFile, o *theirOption) (gs []*stranger, answers []*theirAnswer) {
 	for i := range o.Situations {
 		a := &o.Situations[i]
 		for _, s := range f.Situations {
-			if s.Name == a.Name {
+			if s.Name == a.Name || s.Name == a.Of {
 				gs = append(gs, &stranger{f, &o.Section, o.Section.Water[a.Name], s.Strength, s.Kh})
 				answers = append(answers, a)
 			}
@@ -66,7 +67,13 @@ func strangers(f *theirFile, o *theirOption) (gs []*stranger, answers []*theirAn
 	}
 	for i := range o.Stages {
 		a := &o.Stages[i]
-		gs = append(gs, &stranger{f, &a.Section, a.Section.Water[a.Name], a.Strength, a.Kh})
+		if a.Advisory {
+			continue
+		}
+		own := *f
+		own.Soils = maps.Clone(f.Soils)
+		maps.Copy(own.Soils, a.Section.Soils)
+		gs = append(gs, &stranger{&own, &a.Section, a.Section.Water[a.Name], a.Strength, a.Kh})
 		answers = append(answers, a)
 	}
 	return gs, answers

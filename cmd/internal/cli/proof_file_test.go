@@ -60,7 +60,9 @@ type (
 	}
 	theirAnswer struct {
 		Name     string
+		Of       string  `json:"variant_of"` // The situation that it is a variant of.
 		Required float64 `json:"required_fs"`
+		Advisory bool
 		FS       *float64
 		ByMethod map[string]float64 `json:"fs_by_method"`
 		Slip     *struct {
@@ -91,7 +93,8 @@ type (
 			KPa  float64
 			Kind string
 		}
-		FirmBase theirLine `json:"firm_base"`
+		FirmBase theirLine            `json:"firm_base"`
+		Soils    map[string]theirSoil // Of this section alone.
 		Water    map[string]theirWater
 	}
 	theirWater struct {

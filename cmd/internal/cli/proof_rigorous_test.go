@@ -4,8 +4,9 @@ import "math"
 
 // rigorous is the method of Morgenstern and Price (1965, Geotechnique 15) on any slip, with X = lambda shape(s) E between slices, s from 0 at
 // the head to 1 at the exit; a constant shape is Spencer's method (1967, Geotechnique 17). For each of many lambdas, F is halved until the
-// horizontal forces close; between lambdas where the moment of all forces about the origin changes its sign, lambda is halved until it
-// vanishes. Of several answers it returns the one nearest to want.
+// horizontal forces close near want: further off, a slice whose denominator vanishes can feign closure. Between lambdas where the
+// moment of all forces about the origin changes its sign, lambda is halved until it vanishes. Of several answers it returns the one nearest to
+// want.
 func rigorous(shape func(s float64) float64, want float64) solution {
 	return func(ss []theirSlice) float64 {
 		best := math.NaN()
@@ -13,18 +14,18 @@ func rigorous(shape func(s float64) float64, want float64) solution {
 		previous, atPrevious := math.NaN(), math.NaN()
 		for i := range steps + 1 {
 			lambda := least + (most-least)*float64(i)/steps
-			moment, _ := closed(ss, shape, lambda)
+			moment, _ := closed(ss, shape, lambda, want)
 			if moment*atPrevious < 0 {
 				a, b := previous, lambda
 				for range 25 {
 					mid := (a + b) / 2
-					if m, _ := closed(ss, shape, mid); m*atPrevious > 0 {
+					if m, _ := closed(ss, shape, mid, want); m*atPrevious > 0 {
 						a = mid
 					} else {
 						b = mid
 					}
 				}
-				if m, f := closed(ss, shape, a); math.Abs(m) < 1e-3*math.Abs(atPrevious) && !(math.Abs(best-want) <= math.Abs(f-want)) {
+				if m, f := closed(ss, shape, a, want); math.Abs(m) < 1e-3*math.Abs(atPrevious) && !(math.Abs(best-want) <= math.Abs(f-want)) {
 					best = f
 				}
 			}
@@ -49,18 +50,34 @@ func (f *theirFile) sideForce(s float64) float64 {
 	return math.NaN()
 }
 
-// closed returns the F at which horizontal forces close at this lambda, and the moment about the origin that is left.
-func closed(ss []theirSlice, shape func(s float64) float64, lambda float64) (moment, f float64) {
-	low, high := 0.2, 8.0
-	for range 36 {
+// asides are the factors of want within which F is looked for, one after the other.
+var asides = []float64{1.01, 1.03, 1.1, 1.3, 1.8}
+
+// closed returns the F at which horizontal forces close at this lambda, and the moment about the origin that is left; NaN if they close
+// nowhere near want.
+func closed(ss []theirSlice, shape func(s float64) float64, lambda, want float64) (moment, f float64) {
+	low, high, least, most := 0.0, 0.0, 0.0, 0.0
+	for _, aside := range asides {
+		low, high = want/aside, want*aside
+		least, _ = forces(ss, shape, lambda, low)
+		if most, _ = forces(ss, shape, lambda, high); least < 0 && most > 0 {
+			break
+		}
+	}
+	if !(least < 0 && most > 0) {
+		return math.NaN(), math.NaN()
+	}
+	left := 0.0
+	for range 30 {
 		f = (low + high) / 2
-		left, m := forces(ss, shape, lambda, f)
-		moment = m
-		if left > 0 { // Too little resistance: the last slice still pushes.
+		if left, moment = forces(ss, shape, lambda, f); left > 0 { // Too little resistance: the last slice still pushes.
 			high = f
 		} else {
 			low = f
 		}
+	}
+	if !(math.Abs(left) < 1e-6*(most-least)) { // A jump and no closure.
+		return math.NaN(), math.NaN()
 	}
 	return moment, f
 }
