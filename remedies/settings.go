@@ -13,7 +13,7 @@ type Settings struct {
 	Sensitivity bool    // Also swing the inputs by Job.Swings: of the slope as it is, single remedies and pairs that meet the target.
 	Points      bool    // Also size everything at the low, the middle and the high point of the back-analysis of Job.Observed, if there is one.
 	Progress    func(Progress)
-	Finished    func(*Option) // Told of each option as soon as it is known, single remedies first.
+	Finished    func(*Option) // Told of each option as soon as it is sized, single remedies first; what Curves, Relaxations and Sensitivity ask comes after all.
 }
 
 // DefaultAllowance is the allowance for the search being finite: a design is accepted when every FS is at least the required FS

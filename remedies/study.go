@@ -20,16 +20,14 @@ func Study(ctx context.Context, job *Job, s Settings) (*Result, error) {
 	if err != nil {
 		return nil, err
 	}
-	if s.Sensitivity && j.Swings.Any() {
-		z := newSizing(j, &works{name: existing.Name, title: existing.Title}, &s)
-		if existing.Sensitivity, err = z.sensitivity(ctx, existing.Proposal); err != nil {
-			return nil, err
-		}
-	}
 	st := &study{ctx: ctx, j: j, s: &s, existing: existing, pools: map[string][]pooled{}}
 	again := s.Points && job.Observed != nil
-	if st.total = len(j.groups(s.Pairs)) + len(j.Trials); again {
+	groups := len(j.groups(s.Pairs))
+	if st.total = groups + len(j.Trials); again {
 		st.total *= 1 + len(pointNames)
+	}
+	if s.Curves || s.Relaxations || s.Sensitivity {
+		st.total += groups
 	}
 	res, err := st.answer()
 	if err == nil && again {
@@ -56,6 +54,9 @@ func (st *study) answer() (*Result, error) {
 			return nil, err
 		}
 	}
+	if err := st.beside(); err != nil {
+		return nil, err
+	}
 	res := &Result{Job: st.j, Settings: *st.s, Existing: *st.existing, Options: st.options}
 	rank(st.j, res.Options)
 	if !needed {
@@ -78,7 +79,8 @@ type study struct {
 	s        *Settings
 	existing *Option
 	options  []Option
-	done     int                 // Options of the studies before.
+	sized    []sized             // The options that were sized, for what is asked beside their size.
+	done     int                 // Options of the studies before, and of this one those for which all is done that is asked beside.
 	total    int                 // Options in all.
 	pools    map[string][]pooled // Slips known from sizing a remedy, by its name.
 	plain    bool                // What does not fit is not sized once more without limits.
@@ -208,21 +210,7 @@ func (st *study) size(group []Request) error {
 		o.StepLess = z.stepsLess(&res)
 	}
 	o.Certificate = z.certificate(&res)
-	if st.s.Relaxations && o.Status == MeetsTarget && len(group) == 1 {
-		if o.Relaxations, err = z.relaxations(ctx, &res); err != nil {
-			return err
-		}
-	}
-	if j := st.j; j.Swings.Any() && st.s.Sensitivity && (len(group) == 1 || o.Status == MeetsTarget) && !o.WhatIf {
-		if o.Sensitivity, err = z.sensitivity(ctx, o.Proposal); err != nil {
-			return err
-		}
-	}
-	if st.s.Curves && len(group) == 1 {
-		if o.Tradeoff, err = z.curve(ctx, o, &res); err != nil {
-			return err
-		}
-	}
+	st.sized = append(st.sized, sized{option: len(st.options), z: z, res: res, alone: len(group) == 1})
 	st.keep(w.name, d.checks, res.Pool[len(start):])
 	st.add(o)
 	return nil

@@ -73,7 +73,7 @@ func runCompare(c *cobra.Command, o *compareOptions, path string) error {
 	settings.Curves, settings.Relaxations, settings.Sensitivity, settings.Pairs = true, true, true, o.pairs
 	settings.Points, settings.Fronts = !o.skipBack, true
 	progress := newProgress(c.ErrOrStderr(), o.quiet)
-	settings.Progress = progress.show
+	settings.Progress, settings.Finished = progress.show, progress.finished
 	result, err := remedies.Study(ctx, read.Job, settings)
 	progress.clear()
 	if err != nil {

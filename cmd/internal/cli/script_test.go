@@ -150,8 +150,11 @@ func TestProgress(t *testing.T) {
 	p.last = time.Time{}
 	p.show(remedies.Progress{Option: "b", Done: 1, Total: 3})
 	p.show(remedies.Progress{Option: "too soon"})
+	p.finished(&remedies.Option{Title: "b", Status: remedies.Infeasible})
+	p.finished(&remedies.Option{Title: "c", Status: remedies.MeetsTarget, Proposal: &remedies.Proposal{}})
+	p.write("more")
 	p.clear()
-	want := "\rsizing berm, 2 of 3, 50 %\rsizing b, 2 of 3, 0 %    \r" + strings.Repeat(" ", 21) + "\r"
+	want := "\rsizing berm, 2 of 3, 50 %\rsizing b, 2 of 3, 0 %    \rb: infeasible        \n\rc: meets target, 0.00 m3/m\n\rmore\r    \r"
 	if got := b.String(); got != want {
 		t.Errorf("got %q, want %q", got, want)
 	}

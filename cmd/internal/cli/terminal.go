@@ -78,6 +78,22 @@ func (p *progress) show(s remedies.Progress) {
 	p.write(progressText(s, p.last.Sub(p.start)))
 }
 
+// finished leaves a line behind about an option as soon as it is sized: the tables come when all that is asked beside is known too.
+func (p *progress) finished(o *remedies.Option) {
+	if p.w == nil {
+		return
+	}
+	p.mu.Lock()
+	defer p.mu.Unlock()
+	line := fmt.Sprintf("%s: %s", o.Title, o.Status)
+	if o.Status == remedies.MeetsTarget {
+		line += fmt.Sprintf(", %s m3/m", report.QuantityText(o.Proposal.Quantities.Earthworks()))
+	}
+	p.write(line)
+	fmt.Fprintln(p.w)
+	p.written = 0
+}
+
 // progressText tells how far a study has come after a time, and how long it will go on if it keeps its pace.
 func progressText(s remedies.Progress, elapsed time.Duration) string {
 	out := fmt.Sprintf("sizing %s, %d of %d, %.0f %%", s.Option, s.Done+1, s.Total, 100*s.Share)
