@@ -10,6 +10,9 @@ import (
 	"standfast/optimize"
 )
 
+// NotEven stands in the reason of an option that a limit holds back, and that would not meet the target without the limit either.
+const NotEven = "would not reach the target"
+
 // judge sets status, reason and what binds from the optimiser's answer.
 func (z *sizing) judge(o *Option, res *optimize.Result[Cut]) {
 	switch res.Status {
@@ -60,7 +63,7 @@ func (z *sizing) explain(ctx context.Context, o *Option, res *optimize.Result[Cu
 	}
 	x, verdict := free.X, "the target would take about %s, which breaks %s: %s"
 	if x == nil {
-		x, verdict = free.Best.X, "even %s, which breaks %s, would not reach the target: %s"
+		x, verdict = free.Best.X, "even %s, which breaks %s, "+NotEven+": %s"
 	}
 	var limits, details []string
 	broken := o.Proposal // Of the smallest works, where the ground allows none of them.

@@ -55,11 +55,13 @@ func layOutInfluence(name string, o *remedies.Outcome, v *lem.Influence, opts Op
 	foot := footLines(inner, opts, listed)
 	footHeight := float64(len(foot)) * cautionFace.lineHeight()
 	s.fig.Width = pageWidth
-	s.fig.Height = math.Ceil(2*margin + h.height() + influenceFrame + framesApart + groundFrame + axisBelow + footHeight + 2*blockGap)
+	keyHeight := smallFace.lineHeight() + 4
+	s.fig.Height = math.Ceil(2*margin + h.height() + keyHeight + influenceFrame + framesApart + groundFrame + axisBelow + footHeight + 2*blockGap)
 	top := s.fig.Height - margin
 	s.drawHeading(h, margin, top, inner)
 	left, right := margin+axisLeft+8, margin+inner
-	upper := Box{left, top - h.height() - blockGap - influenceFrame, right, top - h.height() - blockGap}
+	s.influenceKey(left, top-h.height()-blockGap, (right-left)/float64(len(influenceLines)))
+	upper := Box{left, top - h.height() - blockGap - keyHeight - influenceFrame, right, top - h.height() - blockGap - keyHeight}
 	lower := Box{left, upper.MinY - framesApart - groundFrame, right, upper.MinY - framesApart}
 	x0, x1 := influenceWidth(o)
 	s.drawInfluence(v, upper, x0, x1)
@@ -103,21 +105,21 @@ func (s *sheet) drawInfluence(v *lem.Influence, f Box, x0, x1 float64) {
 	for _, n := range v.Neutral {
 		s.neutral(n, f)
 	}
-	for _, l := range influenceLines {
-		i := len(v.Points) / 5
-		if l.marked {
-			i = 4 * len(v.Points) / 5
-		}
-		for i+1 < len(v.Points) && math.IsNaN(l.of(&v.Points[i])) {
-			i++
-		}
-		if y := l.of(&v.Points[i]); !math.IsNaN(y) {
-			n := noteOf(strongFace, l.style.colour, 190, l.name)
-			n.clear, n.pointed = markerSize, true
-			s.label(n, above, s.pagePoint(v.Points[i].X, y))
-		}
-	}
 	s.influenceAxis(f, lo, hi)
+}
+
+// influenceKey names the lines in a row, each in a width.
+func (s *sheet) influenceKey(left, top, width float64) {
+	for i := range influenceLines {
+		l := &influenceLines[i]
+		x, y := left+float64(i)*width, top-smallFace.lineHeight()/2
+		if l.marked {
+			s.marker(l.style, xy{x + sampleWidth/2, y}, markerSize)
+		} else {
+			s.add(stroke{pen{l.style.colour, 1.3, l.style.dash}, [][]xy{{{x, y}, {x + sampleWidth, y}}}})
+		}
+		s.line(smallFace, inkBlack, x+sampleWidth+sampleGap, top, l.name)
+	}
 }
 
 // drawLine draws one line, parted where it has no answer.

@@ -3,31 +3,13 @@ package drawing
 import (
 	"bytes"
 	"os"
-	"os/exec"
 	"strings"
 	"testing"
 
 	"codeberg.org/go-pdf/fpdf"
-)
 
-// pageTexts returns the words of a PDF document as a general-purpose reader finds them. It skips the test where there is none, unless the
-// environment says that one must be there.
-func pageTexts(t *testing.T, doc []byte) string {
-	t.Helper()
-	if _, err := exec.LookPath("pdftotext"); err != nil {
-		if os.Getenv("STANDFAST_PDF") == "required" {
-			t.Fatal("pdftotext is required and not installed")
-		}
-		t.Skip("pdftotext is not installed")
-	}
-	c := exec.Command("pdftotext", "-raw", "-enc", "UTF-8", "-", "-")
-	c.Stdin = bytes.NewReader(doc)
-	out, err := c.Output()
-	if err != nil {
-		t.Fatal(err)
-	}
-	return strings.Join(strings.Fields(string(out)), " ")
-}
+	"standfast/cmd/internal/sample"
+)
 
 // Every label of a drawing can be found in its PDF, Greek, primes and Polish included.
 func TestPDFTexts(t *testing.T) {
@@ -43,7 +25,7 @@ func TestPDFTexts(t *testing.T) {
 			if err := f.WritePDF(&b); err != nil {
 				t.Fatal(err)
 			}
-			got := pageTexts(t, b.Bytes())
+			got := sample.PDFText(t, b.Bytes())
 			for _, l := range f.Labels {
 				for _, line := range strings.Split(l.Text, "\n") {
 					if want := strings.Join(strings.Fields(line), " "); !strings.Contains(got, want) {
@@ -76,7 +58,7 @@ func TestDrawPDF(t *testing.T) {
 			t.Fatal(err)
 		}
 	}
-	got := pageTexts(t, b.Bytes())
+	got := sample.PDFText(t, b.Bytes())
 	for _, want := range []string{"before and φ′ after", "top width 5.50 m"} {
 		if !strings.Contains(got, want) {
 			t.Errorf("%q is not found in the PDF", want)

@@ -5,11 +5,12 @@ import (
 	"strings"
 
 	"standfast/cmd/internal/report"
+	"standfast/remedies"
 )
 
 // closing writes what the answer rests on and what would undo it.
 func (a *author) closing() {
-	a.chapter("Assumptions, what would change the answer, cautions")
+	a.chapter("Assumptions and cautions")
 	a.assumptions()
 	a.changes()
 	a.heading("Cautions")
@@ -35,7 +36,7 @@ func (a *author) assumptions() {
 	}
 	for i := range a.f.Situations {
 		if s := &a.f.Situations[i]; s.VariantOf == "" && s.DrainsWorking != nil && s.DrainsWorking.Known() && float64(*s.DrainsWorking) < 1 {
-			list = append(list, fmt.Sprintf("In %s the drains have %s %% of their effect.", s.Name, report.SizeText(100*float64(*s.DrainsWorking))))
+			list = append(list, fmt.Sprintf("Drains have %s %% of their effect in the situation %s.", report.SizeText(100*float64(*s.DrainsWorking)), s.Name))
 		}
 	}
 	for _, s := range list {
@@ -79,6 +80,9 @@ func held(o *report.Option) string {
 			return fmt.Sprintf("%s: falls short in %s, with FS %s where %s is required.", optionTitle(o), o.BindsOn, report.FactorText(c.found.FS), required(c.required))
 		}
 	}
+	if strings.Contains(o.Reason, remedies.NotEven) {
+		return fmt.Sprintf("%s: held back by %s, and within the range given no size reaches the target without it either.", optionTitle(o), o.BindsOn)
+	}
 	return fmt.Sprintf("%s: held back by %s. Moved, it might let this option in.", optionTitle(o), o.BindsOn)
 }
 
@@ -117,6 +121,10 @@ func (a *author) shifted(o *report.Option) {
 	for i := range o.Tradeoff {
 		t := &o.Tradeoff[i]
 		if t.Shift == 0 || !t.Earthworks.Known() {
+			continue
+		}
+		if t.ReachedFS < t.RequiredFS {
+			parts = append(parts, fmt.Sprintf("FS %s: not reached, the best is %s", asked(t), report.FactorText(t.ReachedFS)))
 			continue
 		}
 		parts = append(parts, fmt.Sprintf("FS %s: %s m³/m", asked(t), report.QuantityText(float64(t.Earthworks))))

@@ -152,4 +152,7 @@ func (a *author) bill(o *report.Option) {
 	}
 	a.heading("Works as measured (rounded up)")
 	a.table(columns, rows)
+	if slices.ContainsFunc(rows, func(r row) bool { return slices.Contains(r.cells[2:], none) }) {
+		a.note(none + ": not worked out, since the case does not give the rate, the factor or the measure that it needs.")
+	}
 }

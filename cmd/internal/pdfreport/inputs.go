@@ -2,9 +2,11 @@ package pdfreport
 
 import (
 	"fmt"
+	"math"
 	"slices"
 	"strings"
 
+	"standfast/cmd/internal/casefile"
 	"standfast/cmd/internal/drawing"
 	"standfast/cmd/internal/report"
 )
@@ -153,15 +155,19 @@ func (a *author) loads() {
 			size += " to " + report.SizeText(*l.PressureTo) + " kPa"
 		}
 		if l.Horizontal != 0 {
-			size += ", horizontal " + report.SizeText(l.Horizontal) + " kPa"
+			size += ", " + report.SizeText(math.Abs(l.Horizontal)) + " kPa to the " + sideways(l.Horizontal)
 		}
 		rows = append(rows, cells(l.Name, l.Kind, size, span(l.FromX, l.ToX)))
 	}
 	for _, l := range s.LineLoads {
-		rows = append(rows, cells(l.Name, "line load", fmt.Sprintf("%s kN/m down, %s kN/m to the right", report.SizeText(l.Vertical), report.SizeText(l.Horizontal)), report.SizeText(l.X)))
+		rows = append(rows, cells(l.Name, "line load", forceWords(&l), report.SizeText(l.X)))
 	}
 	for _, r := range s.Restraints {
 		rows = append(rows, cells(r.Name, "row of elements", fmt.Sprintf("%s kN/m between levels %s and %s", report.SizeText(r.Force), report.SizeText(r.Bottom), report.SizeText(r.Top)), report.SizeText(r.X)))
+	}
+	for _, k := range s.Known {
+		strength := fmt.Sprintf("c′ %s kPa, φ′ %s° on it; ", report.SizeText(k.Cohesion), report.SizeText(k.Friction))
+		rows = append(rows, cells("slip surface", "exists already", strength+line(k.Line), span(k.Line[0][0], k.Line[len(k.Line)-1][0])))
 	}
 	if k := s.Crack; k != nil {
 		rows = append(rows, cells("tension crack", "at the head of every slip", crackWords(k), none))
@@ -169,8 +175,31 @@ func (a *author) loads() {
 	if len(rows) == 0 {
 		return
 	}
-	a.heading("Loads and what holds")
+	a.heading("Loads, what holds, and what has moved")
 	a.table([]column{text("name"), text("kind"), text("size"), text("offset, m")}, rows)
+}
+
+// forceWords says how large a line load is, and whereto.
+func forceWords(l *report.LineLoad) string {
+	var out []string
+	switch {
+	case l.Vertical > 0:
+		out = append(out, report.SizeText(l.Vertical)+" kN/m down")
+	case l.Vertical < 0:
+		out = append(out, report.SizeText(-l.Vertical)+" kN/m up")
+	}
+	if l.Horizontal != 0 {
+		out = append(out, report.SizeText(math.Abs(l.Horizontal))+" kN/m to the "+sideways(l.Horizontal))
+	}
+	return strings.Join(out, ", ")
+}
+
+// sideways names the direction of a horizontal force.
+func sideways(v float64) string {
+	if v < 0 {
+		return "left"
+	}
+	return "right"
 }
 
 func crackWords(k *report.TensionCrack) string {
@@ -319,6 +348,10 @@ func (a *author) settings() {
 
 // model draws the ground and water model.
 func (a *author) model() error {
-	figure, err := drawing.Section(a.r.Job, nil, drawing.Options{})
+	job := *a.r.Job
+	if read, err := casefile.Parse(a.f.Case.File, []byte(a.f.Case.Source)); err == nil { // A result of an earlier version may lack the case.
+		job.Observed = read.Job.Observed
+	}
+	figure, err := drawing.Section(&job, nil, drawing.Options{})
 	return a.onFold(figure, err)
 }

@@ -135,7 +135,7 @@ func (a *author) certificate(o *report.Option) {
 	if o.Status == meetsTarget {
 		a.para(title(cubic(strings.TrimPrefix(o.CertificateText(), "Certificate: "))))
 	} else {
-		a.para(fmt.Sprintf("No design of this lattice within the limits was found to meet every check. Shown is the best that was reached: %s of %s designs were rejected by a slip each.",
+		a.para(fmt.Sprintf("No design of this lattice within the limits was found to meet every check; shown is the best that was reached. %s of %s designs were rejected by a slip each.",
 			count(c.Witnessed), count(c.Cheaper)))
 	}
 	if s := a.f.StepLessText(o); s != "" {
@@ -150,14 +150,17 @@ func (a *author) certificate(o *report.Option) {
 		if x.Step == 0 {
 			step = "fixed"
 		}
-		axes = append(axes, cells(dimension(x.Name), report.SizeText(x.Min), report.SizeText(x.Max), step))
+		axes = append(axes, cells(withUnit(dimension(x.Name), o.Parameters[x.Name].Unit), report.SizeText(x.Min), report.SizeText(x.Max), step))
 	}
 	if len(axes) > 0 {
 		a.table([]column{text("lattice of sizes"), number("least"), number("greatest"), number("step")}, axes)
 	}
-	words := fmt.Sprintf("A limit or geometry forbids %s designs; %s were searched in full, %s slips evaluated.", count(c.Forbidden), count(c.DesignsSearched), count(c.SlipEvaluations))
+	words := fmt.Sprintf("%s searched in full, %s slips evaluated.", several(c.DesignsSearched, "design was", "designs were"), count(c.SlipEvaluations))
+	if c.Forbidden > 0 {
+		words = several(c.Forbidden, "design is", "designs are") + " forbidden by a limit or by geometry; " + words
+	}
 	if c.Unresolved > 0 {
-		words += fmt.Sprintf(" %s designs could be neither rejected nor accepted.", count(c.Unresolved))
+		words += " " + several(c.Unresolved, "design", "designs") + " could be neither rejected nor accepted."
 	}
 	if c.ContinuousEstimate.Known() {
 		words += " Without steps the estimate is " + report.QuantityText(float64(c.ContinuousEstimate)) + " m³/m: an estimate, not a bound."
@@ -174,14 +177,38 @@ func (a *author) certificate(o *report.Option) {
 
 func count(n int) string { return report.TotalText(float64(n)) }
 
+// several writes a number of things with the word for one or for more.
+func several(n int, one, more string) string {
+	if n == 1 {
+		return "1 " + one
+	}
+	return count(n) + " " + more
+}
+
+// withUnit names a dimension with its unit.
+func withUnit(name, unit string) string {
+	switch unit {
+	case "", "1":
+		return name
+	case "1V:nH":
+		return name + ", n of 1V:nH"
+	}
+	return name + ", " + unit
+}
+
 // tradeoff writes what other required factors would take.
 func (a *author) tradeoff(o *report.Option, r *remedies.Option) error {
 	if len(o.Tradeoff) < 2 {
 		return nil
 	}
-	figure, err := drawing.TradeoffPlot([]remedies.Option{*r}, a.width(), leastPlot)
-	if err := a.amid("What another required factor would take", figure, err); err != nil {
-		return err
+	const heading = "What another required factor would take"
+	if curved(o.Tradeoff) {
+		figure, err := drawing.TradeoffPlot([]remedies.Option{*r}, a.width(), leastPlot)
+		if err := a.amid(heading, figure, err); err != nil {
+			return err
+		}
+	} else {
+		a.heading(heading)
 	}
 	var rows []row
 	for i := range o.Tradeoff {
@@ -200,6 +227,17 @@ func (a *author) tradeoff(o *report.Option, r *remedies.Option) error {
 	a.table([]column{number("FS asked for"), number("FS reached"), number("earthworks\nm³/m"), number("in all\nm³"), text("works")}, rows)
 	a.note("The required factor of every check moves alike; shown is that of the check that governs the option. Designs for another target were searched, and not audited: size the case anew before relying on one.")
 	return nil
+}
+
+// curved reports whether a trade-off has designs of different earthworks, so that there is a line to draw.
+func curved(points []report.TradePoint) bool {
+	seen := map[string]bool{}
+	for i := range points {
+		if e := points[i].Earthworks; e.Known() && points[i].ReachedFS.Known() {
+			seen[report.QuantityText(float64(e))] = true
+		}
+	}
+	return len(seen) > 1
 }
 
 // asked is the required factor of a point of a trade-off, without what adding the shift leaves behind.

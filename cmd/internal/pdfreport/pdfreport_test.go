@@ -5,27 +5,14 @@ import (
 	"encoding/json"
 	"math"
 	"os"
-	"os/exec"
-	"path/filepath"
 	"regexp"
 	"strings"
 	"testing"
 
 	"standfast/cmd/internal/drawing"
 	"standfast/cmd/internal/report"
+	"standfast/cmd/internal/sample"
 )
-
-// demo reads the result of a demo case, as compare wrote it.
-func demo(t testing.TB, name string) *report.File {
-	t.Helper()
-	f, err := report.Read(filepath.Join("..", "sheet", "testdata", name+".json"))
-	if err != nil {
-		t.Fatal(err)
-	}
-	return f
-}
-
-var demos = []string{"cutting", "embankment"}
 
 func written(t testing.TB, f *report.File) []byte {
 	t.Helper()
@@ -75,8 +62,8 @@ func standing(t *testing.T, b *book) {
 }
 
 func TestTextsOfDemosStandFree(t *testing.T) {
-	for _, name := range demos {
-		t.Run(name, func(t *testing.T) { standing(t, laidOut(t, demo(t, name))) })
+	for _, name := range sample.Names {
+		t.Run(name, func(t *testing.T) { standing(t, laidOut(t, sample.Result(t, name))) })
 	}
 }
 
@@ -138,7 +125,7 @@ func TestTextsOfAnyCaseStandFree(t *testing.T) {
 		}, []string{"123456789.13", "9,876,543,211"}},
 	} {
 		t.Run(c.name, func(t *testing.T) {
-			f := demo(t, "cutting")
+			f := sample.Result(t, "cutting")
 			c.change(f)
 			b := laidOut(t, f)
 			standing(t, b)
@@ -172,8 +159,8 @@ func slipped(f *report.File) {
 
 // The same result gives the same bytes, also when it was written and read in between, and they are few.
 func TestSameBytes(t *testing.T) {
-	for _, name := range demos {
-		f := demo(t, name)
+	for _, name := range sample.Names {
+		f := sample.Result(t, name)
 		first := written(t, f)
 		var b bytes.Buffer
 		if err := f.Encode(&b); err != nil {
@@ -192,31 +179,12 @@ func TestSameBytes(t *testing.T) {
 	}
 }
 
-// pdfText returns the text of a document as a general-purpose reader finds it. Without one the test is skipped, or fails if STANDFAST_PDF is
-// "required".
-func pdfText(t *testing.T, doc []byte) string {
-	t.Helper()
-	if _, err := exec.LookPath("pdftotext"); err != nil {
-		if os.Getenv("STANDFAST_PDF") == "required" {
-			t.Fatal("pdftotext is required and not installed")
-		}
-		t.Skip("pdftotext is not installed")
-	}
-	c := exec.Command("pdftotext", "-raw", "-enc", "UTF-8", "-", "-")
-	c.Stdin = bytes.NewReader(doc)
-	out, err := c.Output()
-	if err != nil {
-		t.Fatal(err)
-	}
-	return strings.Join(strings.Fields(string(out)), " ")
-}
-
 // The numbers of the result are found in the document by a program that reads such documents.
 func TestDocumentSaysWhatTheResultSays(t *testing.T) {
-	for _, name := range demos {
+	for _, name := range sample.Names {
 		t.Run(name, func(t *testing.T) {
-			f := demo(t, name)
-			got := pdfText(t, written(t, f))
+			f := sample.Result(t, name)
+			got := sample.PDFText(t, written(t, f))
 			want := []string{
 				f.Case.Title, f.Case.SHA256, "standfast " + f.Program.Version, "Inputs as understood", "Methods and limits of validity",
 				"The slope as it is", "Options compared", "What would change the answer", "φ′", "kN/m³",
@@ -251,8 +219,8 @@ func TestDocumentSaysWhatTheResultSays(t *testing.T) {
 
 // Every slice table closes at the FS of the check that it is for.
 func TestSliceTablesCloseAtTheAnswer(t *testing.T) {
-	for _, name := range demos {
-		f := demo(t, name)
+	for _, name := range sample.Names {
+		f := sample.Result(t, name)
 		text := said(laidOut(t, f))
 		tables := regexp.MustCompile(`Slice table of the governing slip: .*? = ([0-9.]+); from the method: ([0-9.]+)`).FindAllStringSubmatch(text, -1)
 		var want []string
@@ -308,7 +276,7 @@ func TestEveryOutcome(t *testing.T) {
 		}, "Back-analysis of the observed slip", "No answer"},
 	} {
 		t.Run(c.name, func(t *testing.T) {
-			f := demo(t, "cutting")
+			f := sample.Result(t, "cutting")
 			c.change(f)
 			b := laidOut(t, f)
 			standing(t, b)
@@ -325,7 +293,7 @@ func TestEveryOutcome(t *testing.T) {
 
 // A result that lacks what drawings need is refused.
 func TestIncomplete(t *testing.T) {
-	f := demo(t, "cutting")
+	f := sample.Result(t, "cutting")
 	f.Existing.Section = nil
 	if err := Write(&bytes.Buffer{}, f); err == nil || !strings.Contains(err.Error(), "run compare again") {
 		t.Errorf("an incomplete result gives %v", err)
@@ -349,7 +317,7 @@ func TestRounding(t *testing.T) {
 
 // A rebuilt file gives the same report as one that holds more than it needs: the report reads nothing else than result.json.
 func TestUnknownFieldsDoNoHarm(t *testing.T) {
-	raw, err := os.ReadFile(filepath.Join("..", "sheet", "testdata", "cutting.json"))
+	raw, err := os.ReadFile(sample.Path("cutting"))
 	if err != nil {
 		t.Fatal(err)
 	}
@@ -366,13 +334,13 @@ func TestUnknownFieldsDoNoHarm(t *testing.T) {
 	if err != nil {
 		t.Fatal(err)
 	}
-	if !bytes.Equal(written(t, f), written(t, demo(t, "cutting"))) {
+	if !bytes.Equal(written(t, f), written(t, sample.Result(t, "cutting"))) {
 		t.Error("a later field changes the report")
 	}
 }
 
 func BenchmarkWrite(b *testing.B) {
-	f := demo(b, "cutting")
+	f := sample.Result(b, "cutting")
 	b.ReportAllocs()
 	for b.Loop() {
 		written(b, f)

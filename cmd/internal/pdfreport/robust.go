@@ -19,7 +19,7 @@ func (a *author) handChecks(o *report.Option) {
 		if h.RequiredFS.Known() {
 			asked = required(float64(h.RequiredFS))
 		}
-		rows = append(rows, cells(h.Name, factor(h.FS), asked, h.Working, h.Source))
+		rows = append(rows, cells(h.Name, factor(h.FS), asked, raised(h.Working), h.Source))
 	}
 	a.heading("Closed forms, for a check by hand")
 	a.table([]column{text("check"), number("FS"), number("held against"), text("numbers"), text("source")}, rows)

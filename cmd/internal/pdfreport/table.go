@@ -61,11 +61,7 @@ func (b *book) tableIn(s style, columns []column, rows []row, x, width float64) 
 		b.tableRow(strong, columns, head, widths, x, row{})
 		b.rule(x, x+width, b.y-0.4, 0.7, rule)
 	}
-	least := strong.height(head)
-	if len(rows) > 0 {
-		least += 2 * s.height(b.broken(s.font, rows[0], widths))
-	}
-	b.need(least)
+	b.need(strong.height(head) + b.together(s, rows, widths))
 	writeHead()
 	for i := range rows {
 		r := &rows[i]
@@ -81,6 +77,21 @@ func (b *book) tableIn(s style, columns []column, rows []row, x, width float64) 
 			b.rule(x, x+width, b.y-0.4, 0.35, ruleThi)
 		}
 	}
+}
+
+// wholeRows is the number of rows up to which a table is not parted between pages.
+const wholeRows = 8
+
+// together returns the height of the rows that stay with the head of their table: all of a short table, the first two of a long one.
+func (b *book) together(s style, rows []row, widths []float64) float64 {
+	if len(rows) > wholeRows {
+		rows = rows[:2]
+	}
+	var h float64
+	for i := range rows {
+		h += s.height(b.broken(s.font, rows[i], widths))
+	}
+	return h
 }
 
 // broken returns the lines of the cells of a row.

@@ -25,6 +25,7 @@ import (
 	"github.com/chromedp/chromedp/kb"
 
 	"standfast/cmd/internal/report"
+	"standfast/cmd/internal/sample"
 )
 
 //go:embed testdata/look.js
@@ -179,8 +180,8 @@ func TestInBrowser(t *testing.T) {
 
 // At every size: no two texts overlap, none is cut off, all can be read, and nothing moves when the target does.
 func testSizes(t *testing.T, b *tab) {
-	for _, name := range demos {
-		f := demo(t, name)
+	for _, name := range sample.Names {
+		f := sample.Result(t, name)
 		for _, size := range []struct {
 			name          string
 			width, height int64
@@ -224,7 +225,7 @@ func testSizes(t *testing.T, b *tab) {
 
 // The slider moves geometry and numbers to those of a design that was sized; options that cannot get there say why.
 func testTarget(t *testing.T, b *tab) {
-	f := demo(t, "cutting")
+	f := sample.Result(t, "cutting")
 	d := newModel(f).Data
 	b.open(t, f, 1366, 768, "screen")
 	start := make([]shown, len(f.Options))
@@ -279,7 +280,7 @@ func testTarget(t *testing.T, b *tab) {
 
 // Everything works from the keyboard: the slider, and reading off with the arrow keys; and reading off with a pointer.
 func testKeyboard(t *testing.T, b *tab) {
-	f := demo(t, "cutting")
+	f := sample.Result(t, "cutting")
 	d := newModel(f).Data
 	b.open(t, f, 1366, 900, "screen")
 	reached := map[string]bool{}
@@ -287,7 +288,7 @@ func testKeyboard(t *testing.T, b *tab) {
 		b.do(t, chromedp.KeyEvent(kb.Tab))
 		reached[ask[string](t, b, `(e => e.id || e.dataset.figure || e.className || e.tagName)(document.activeElement)`)] = true
 	}
-	for _, want := range []string{"skip", "existing", "less", "target", "more", "water", "slips", "check", "0", "enlarge", "scroll"} {
+	for _, want := range []string{"skip", "existing", "less", "target", "more", "water", "slips", "limits", "check", "0", "enlarge", "scroll"} {
 		if !reached[want] {
 			t.Errorf("the tab key does not reach %s: %v", want, reached)
 		}
@@ -315,6 +316,12 @@ func testKeyboard(t *testing.T, b *tab) {
 	if got := cardOf(t, b, 0).Readout; got != "" {
 		t.Errorf("escape leaves %q", got)
 	}
+	middle := math.Round((d.View.X0 + d.View.X1) / 2)
+	b.do(t, chromedp.KeyEvent(strings.Repeat(kb.PageUp, int(math.Round((60-middle)/5)))))
+	if got := cardOf(t, b, 0).Readout; !strings.Contains(got, "cable: no dig") {
+		t.Errorf("read off where the cable lies: %q", got)
+	}
+	b.do(t, chromedp.KeyEvent(kb.Escape))
 	testPointer(t, b, &d)
 	b.quiet(t)
 }
@@ -337,7 +344,7 @@ func testPointer(t *testing.T, b *tab, d *data) {
 	if perMetre == 0 {
 		t.Fatal("no ticks")
 	}
-	top := 6 + (d.View.Y1-109)*perMetre
+	top := 18 + (d.View.Y1-109)*perMetre
 	b.do(t, chromedp.MouseEvent(input.DispatchMouseEventTypeMouseMoved, box.X+x30, box.Y+top))
 	got := ask[string](t, b, `document.querySelector(".asis .readout").textContent`)
 	var x, y, ground float64
@@ -351,10 +358,10 @@ func testPointer(t *testing.T, b *tab, d *data) {
 
 // Water and slips can be hidden, and another check shown.
 func testLayers(t *testing.T, b *tab) {
-	f := demo(t, "cutting")
+	f := sample.Result(t, "cutting")
 	b.open(t, f, 1366, 900, "screen")
 	const visible = `[...document.querySelectorAll(".%s-layer")].filter(e => getComputedStyle(e).display !== "none").length`
-	for _, layer := range []struct{ box, class string }{{"water", "water"}, {"slips", "slip"}} {
+	for _, layer := range []struct{ box, class string }{{"water", "water"}, {"slips", "slip"}, {"limits", "limit"}} {
 		count := fmt.Sprintf(visible, layer.class)
 		if ask[int](t, b, count) == 0 {
 			t.Errorf("%s are not shown", layer.box)
@@ -385,7 +392,7 @@ var pdfPage = regexp.MustCompile(`/Type\s*/Page[^s]`)
 
 // The sheet prints on A3 and A4, in few pages, with no card torn apart.
 func testPaper(t *testing.T, b *tab) {
-	for _, name := range demos {
+	for _, name := range sample.Names {
 		for _, c := range []struct {
 			name      string
 			paper     chromedp.PaperSize
@@ -397,7 +404,7 @@ func testPaper(t *testing.T, b *tab) {
 			{"A4 portrait", chromedp.PaperA4, false, 5},
 		} {
 			t.Run(name+" on "+c.name, func(t *testing.T) {
-				b.open(t, demo(t, name), 1366, 768, "")
+				b.open(t, sample.Result(t, name), 1366, 768, "")
 				options := []chromedp.PDFOption{chromedp.PDFPaper(c.paper), chromedp.PDFPrintBackground(), chromedp.PDFMargin(0.394)}
 				if c.landscape {
 					options = append(options, chromedp.PDFLandscape())
@@ -415,7 +422,7 @@ func testPaper(t *testing.T, b *tab) {
 			})
 		}
 	}
-	b.open(t, demo(t, "cutting"), 1512, 1047, "print")
+	b.open(t, sample.Result(t, "cutting"), 1512, 1047, "print")
 	if high := ask[float64](t, b, `Math.max(...[...document.querySelectorAll(".card")].map(e => e.offsetHeight))`); high > 718 {
 		t.Errorf("a card is %v pixels high: it does not fit on A4 landscape", high)
 	}
@@ -428,7 +435,7 @@ func testPaper(t *testing.T, b *tab) {
 
 // Who asks for reduced motion gets none.
 func testStillness(t *testing.T, b *tab) {
-	b.open(t, demo(t, "cutting"), 1366, 768, "screen")
+	b.open(t, sample.Result(t, "cutting"), 1366, 768, "screen")
 	_, err := chromedp.Call(b.ctx, emulation.SetEmulatedMedia, emulation.SetEmulatedMediaParams{
 		Features: []*emulation.MediaFeature{{Name: "prefers-reduced-motion", Value: "reduce"}},
 	})

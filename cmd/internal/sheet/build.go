@@ -79,9 +79,19 @@ func (b *builder) section() {
 	for _, st := range s.Strata {
 		d.Strata = append(d.Strata, stratum{Soil: b.soil(st.Soil), Top: b.line(st.Top)})
 	}
-	for _, l := range s.Surcharges {
-		d.Loads = append(d.Loads, load{Name: l.Name + " " + report.SizeText(l.Pressure) + " kPa", From: l.FromX, To: l.ToX})
+	for i := range s.Surcharges {
+		l := &s.Surcharges[i]
+		end := l.Pressure
+		if l.PressureTo != nil {
+			end = *l.PressureTo
+		}
+		v := load{Name: loadWords(l), From: l.FromX, To: l.ToX, Start: 1, End: 1}
+		if most := max(l.Pressure, end); most > 0 {
+			v.Start, v.End = round(l.Pressure/most), round(end/most)
+		}
+		d.Loads = append(d.Loads, v)
 	}
+	b.site()
 }
 
 // line returns the index of a polyline; -1 for none.

@@ -11,6 +11,9 @@ type data struct {
 	Strata    []stratum     `json:"strata"`
 	Soils     []soil        `json:"soils"`
 	Loads     []load        `json:"loads"`
+	Forces    []force       `json:"forces"`
+	Known     []int         `json:"known"` // Slip surfaces that exist already, lines.
+	Limits    []limit       `json:"limits"`
 	Length    float64       `json:"length"` // Of the works, m.
 	Rows      []row         `json:"rows"`   // Situations with their variants, then stages.
 	Stops     []target      `json:"stops"`  // Of the slider, ascending.
@@ -41,9 +44,11 @@ type soil struct {
 }
 
 type load struct {
-	Name string  `json:"name"`
-	From float64 `json:"from"`
-	To   float64 `json:"to"`
+	Name  string  `json:"name"`
+	From  float64 `json:"from"`
+	To    float64 `json:"to"`
+	Start float64 `json:"start"` // Pressure at From, as a share of the greater of the two.
+	End   float64 `json:"end"`   // Pressure at To, likewise.
 }
 
 // row is a check of the matrix.
@@ -100,6 +105,7 @@ const (
 type design struct {
 	Ground    int               `json:"ground"`
 	Placed    []placed          `json:"placed"`
+	Posts     []post            `json:"posts"`
 	Answers   []*answer         `json:"answers"` // By row; null: not checked.
 	Governing int               `json:"governing"`
 	Texts     map[string]string `json:"texts"` // By the data-text of the elements that they stand in.

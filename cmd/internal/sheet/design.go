@@ -22,6 +22,7 @@ func (b *builder) designs(o *report.Option) []design {
 // sized lays out an option as specified, or the slope as it is.
 func (b *builder) sized(o *report.Option) design {
 	d := b.blank(o.Section.Ground, o.Section.Placed)
+	d.Posts = posts(o.Section)
 	for i := range o.Situations {
 		a := &o.Situations[i]
 		b.addAnswer(&d, a.Name, a.RequiredFS, &a.Found, o.Section.Water)
@@ -57,7 +58,7 @@ func (b *builder) currency() string {
 // traded lays out a point of a trade-off.
 func (b *builder) traded(o *report.Option, p *report.TradePoint, specified *design) design {
 	d := b.blank(p.Ground, p.Placed)
-	d.shift = p.Shift
+	d.Posts, d.shift = specified.Posts, p.Shift // The size of a row of elements changes, not where it stands.
 	for i := range p.Checks {
 		a := &p.Checks[i]
 		b.addAnswer(&d, a.Name, unshifted(a.RequiredFS, p.Shift), &a.Found, p.Water)

@@ -82,7 +82,13 @@ func (b *builder) target(shift float64) target {
 		if groups[fs] == nil {
 			order = append(order, fs)
 		}
-		groups[fs] = append(groups[fs], r.Name)
+		name := r.Name
+		if r.Stage {
+			name = "construction stages"
+		}
+		if !slices.Contains(groups[fs], name) {
+			groups[fs] = append(groups[fs], name)
+		}
 	}
 	for i, fs := range order {
 		order[i] = fs + " in " + strings.Join(groups[fs], ", ")

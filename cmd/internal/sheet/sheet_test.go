@@ -3,27 +3,14 @@ package sheet
 import (
 	"bytes"
 	"encoding/json"
-	"path/filepath"
 	"regexp"
 	"strings"
 	"testing"
 
 	"standfast/cmd/internal/report"
+	"standfast/cmd/internal/sample"
 	"standfast/remedies"
 )
-
-// demo reads a result of a demo case: result.json as compare once wrote it for testdata/demo. Fields may have been added since; a result
-// of an earlier version must still give a sheet. Make them anew when the sheet shows something that they lack.
-func demo(t testing.TB, name string) *report.File {
-	t.Helper()
-	f, err := report.Read(filepath.Join("testdata", name+".json"))
-	if err != nil {
-		t.Fatal(err)
-	}
-	return f
-}
-
-var demos = []string{"cutting", "embankment"}
 
 func written(t testing.TB, f *report.File) []byte {
 	t.Helper()
@@ -36,8 +23,8 @@ func written(t testing.TB, f *report.File) []byte {
 
 // The same result gives the same bytes, also when it was written and read in between.
 func TestSameBytes(t *testing.T) {
-	for _, name := range demos {
-		f := demo(t, name)
+	for _, name := range sample.Names {
+		f := sample.Result(t, name)
 		first := written(t, f)
 		var b bytes.Buffer
 		if err := f.Encode(&b); err != nil {
@@ -59,7 +46,7 @@ func TestSameBytes(t *testing.T) {
 // No text of a case can end its element or be run.
 func TestHostileTexts(t *testing.T) {
 	const evil = `</script><script>alert(1)</script><b>"'&`
-	f := demo(t, "cutting")
+	f := sample.Result(t, "cutting")
 	f.Case.Title = evil
 	f.Options[0].Title = evil
 	f.Options[0].Reason = evil
@@ -76,7 +63,7 @@ func TestHostileTexts(t *testing.T) {
 
 // The page names nothing that lies outside it, and its content policy allows its own style and script alone.
 func TestSelfContained(t *testing.T) {
-	page := string(written(t, demo(t, "cutting")))
+	page := string(written(t, sample.Result(t, "cutting")))
 	if m := regexp.MustCompile(`(?i)(src|href)="[^#d]|@import|url\(["']?(https?:|//)`).FindString(page); m != "" {
 		t.Errorf("the page refers to something outside it: %q", m)
 	}
@@ -115,7 +102,7 @@ func TestEveryOutcome(t *testing.T) {
 		{"a slip without an answer", func(f *report.File) { f.BackAnalysis = &report.BackAnalysis{Reason: "too strong"} }, "nothing was sized for it: too strong."},
 	} {
 		t.Run(c.name, func(t *testing.T) {
-			f := demo(t, "cutting")
+			f := sample.Result(t, "cutting")
 			c.change(f)
 			if page := string(written(t, f)); !strings.Contains(page, c.want) {
 				t.Errorf("the page does not say %q", c.want)
@@ -159,7 +146,7 @@ func TestEveryRemedyHasItsRisk(t *testing.T) {
 }
 
 func BenchmarkWrite(b *testing.B) {
-	f := demo(b, "cutting")
+	f := sample.Result(b, "cutting")
 	b.ReportAllocs()
 	for b.Loop() {
 		written(b, f)

@@ -29,6 +29,7 @@ func (b *builder) chooseView() {
 	for _, p := range [][2]float64{b.f.Case.Crest, b.f.Case.Toe} {
 		see(p[0], p[1])
 	}
+	b.seeLimits(see)
 	all := []*design{&d.Existing}
 	for i := range d.Options {
 		for k := range d.Options[i].Designs {

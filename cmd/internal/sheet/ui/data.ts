@@ -8,9 +8,17 @@ export interface Water { line: number; head: number; invert: number; free: FreeW
 export interface Answer { fs: string; method: string; slip: Slip | null; water: Water | null; ground: number }
 export interface Placed { soil: number; outline: number; works: boolean }
 
+export interface Post { x: number; top: number; bottom: number }
+export interface Force { name: string; x: number; dx: number; dy: number }
+export interface Load { name: string; from: number; to: number; start: number; end: number }
+export interface Limit {
+  kind: string; words: string; from: number; to: number; level: number; inward: number; dig: boolean; load: boolean; free: number;
+}
+
 export interface Design {
   ground: number;
   placed: Placed[];
+  posts: Post[];
   answers: (Answer | null)[];
   governing: number;
   texts: Record<string, string>;
@@ -29,7 +37,10 @@ export interface Data {
   before: number;
   strata: { soil: number; top: number }[];
   soils: { name: string; tint: number }[];
-  loads: { name: string; from: number; to: number }[];
+  loads: Load[];
+  forces: Force[];
+  known: number[];
+  limits: Limit[];
   length: number;
   rows: Row[];
   stops: Target[];

@@ -1,11 +1,11 @@
 // A section drawn to equal scales at the width of its element.
 
-import { answerOf, levelAt, type Answer, type Data, type Design, type Water, type XY } from "./data";
+import { answerOf, levelAt, type Answer, type Data, type Design, type Limit, type Water, type XY } from "./data";
 import { Labels, widthOf, type Place } from "./labels";
 
 const svgSpace = "http://www.w3.org/2000/svg";
 const textSize = 11;
-const margin = { left: 34, right: 8, top: 6, bottom: 20 };
+const margin = { left: 34, right: 8, top: 18, bottom: 20 };
 
 // What a figure shows besides its design.
 export interface Shown {
@@ -96,8 +96,10 @@ export class Figure {
     this.ground(design);
     if (this.answer?.water) this.waters(this.answer.water, was?.water ?? null);
     this.outlines(design, shown.ghost);
+    this.posts(design);
     this.slip(this.answer);
     this.loads(design, shown.named ? labels : null);
+    this.limits(labels);
     this.axes();
     this.name(design, shown, labels);
     this.cross = make(this.svg, "g", { class: "cross" });
@@ -119,9 +121,9 @@ export class Figure {
     make(make(defs, "clipPath", { id: `${this.id}-all` }), "rect", {
       x: margin.left, y: margin.top, width: cm((v.x1 - v.x0) * this.scale), height: cm((v.y1 - v.y0) * this.scale),
     });
-    for (const [name, turn] of [["cut", -45], ["fill", 45]] as const) {
+    for (const [name, turn, wide] of [["cut", -45, 6], ["fill", 45, 6], ["zone", 0, 4]] as const) {
       const p = make(defs, "pattern", {
-        id: `${this.id}-${name}`, width: 6, height: 6, patternUnits: "userSpaceOnUse", patternTransform: `rotate(${turn})`,
+        id: `${this.id}-${name}`, width: 6, height: wide, patternUnits: "userSpaceOnUse", patternTransform: `rotate(${turn})`,
       });
       make(p, "path", { d: "M-1 3H7", class: `hatch-${name}` });
     }
@@ -172,10 +174,15 @@ export class Figure {
     if (ghost && ghost.ground !== design.ground) make(g, "path", { d: this.path(this.pixels(this.line(ghost.ground))), class: "ghost" });
   }
 
+  private posts(design: Design): void {
+    for (const p of design.posts) make(this.clipped("all"), "path", { d: `M${cm(this.x(p.x))} ${cm(this.y(p.top))}V${cm(this.y(p.bottom))}`, class: "post" });
+  }
+
   private slip(answer: Answer | null): void {
+    const g = make(this.clipped("all"), "g", { class: "slip-layer" });
+    for (const k of this.data.known) make(g, "path", { d: this.path(this.line(k).map((p) => this.px(p))), class: "known" });
     const s = answer?.slip;
     if (!s) return;
-    const g = make(this.clipped("all"), "g", { class: "slip-layer" });
     make(g, "path", { d: this.path(this.slipPixels(answer)), class: "slip" });
   }
 
@@ -201,18 +208,21 @@ export class Figure {
   private loads(design: Design, labels: Labels | null): void {
     const v = this.data.view;
     const ground = this.line(design.ground);
+    for (const f of this.data.forces) this.force(ground, f.x, f.dx, f.dy, labels);
     for (const l of this.data.loads) {
       const from = Math.max(l.from, v.x0);
       const to = Math.min(l.to, v.x1);
-      if (from >= to) continue;
+      const least = 14; // Pixels: less of it would not be known for what it is.
+      if ((to - from) * this.scale < least) continue;
       const n = Math.max(2, Math.round(((to - from) * this.scale) / 14));
-      const high = 13;
       let d = "";
       const top: XY[] = [];
       for (let i = 0; i <= n; i++) {
-        const [x, y] = this.px([from + ((to - from) * i) / n, levelAt(ground, from + ((to - from) * i) / n)]);
+        const at = from + ((to - from) * i) / n;
+        const [x, y] = this.px([at, levelAt(ground, at)]);
+        const high = 2 + 11 * (l.start + ((l.end - l.start) * (at - l.from)) / (l.to - l.from));
         top.push([x, y - high]);
-        d += `M${cm(x)} ${cm(y - high)}V${cm(y - 2)}m-2 -4l2 4l2 -4`;
+        if (high > 7) d += `M${cm(x)} ${cm(y - high)}V${cm(y - 2)}m-2 -4l2 4l2 -4`;
       }
       make(this.svg, "path", { d: d + this.path(top), class: "load" });
       if (!labels) continue;
@@ -222,6 +232,54 @@ export class Figure {
         { x, y: y - 4, anchor: "middle" }, { x: top[0][0] - 6, y: y + 6, anchor: "end" }, { x: top[n][0] + 6, y: y + 2, anchor: "start" },
       ]);
     }
+  }
+
+  // force draws a line load: an arrow in its direction, with its tip on the ground or, where it pulls, its tail.
+  private force(ground: XY[], at: number, dx: number, dy: number, labels: Labels | null): void {
+    if (at < this.data.view.x0 || at > this.data.view.x1) return;
+    const long = 20;
+    const [x, y] = this.px([at, levelAt(ground, at)]);
+    const [tx, ty] = dy < 0 ? [x + dx * long, y + dy * long] : [x, y - 2];
+    labels?.avoid([[tx - dx * long, ty - dy * long], [tx, ty]]);
+    const side = (turn: number) => {
+      const [c, s] = [Math.cos(turn), Math.sin(turn)];
+      return `M${cm(tx)} ${cm(ty)}l${cm(-5 * (dx * c - dy * s))} ${cm(-5 * (dx * s + dy * c))}`;
+    };
+    make(this.svg, "path", { d: `M${cm(tx - dx * long)} ${cm(ty - dy * long)}L${cm(tx)} ${cm(ty)}${side(0.45)}${side(-0.45)}`, class: "force" });
+  }
+
+  // limits draws what the works must keep to. Labels keep off the lines.
+  private limits(labels: Labels): void {
+    const g = make(this.clipped("all"), "g", { class: "limit-layer" });
+    const ground = this.line(this.data.before);
+    for (const l of this.data.limits) {
+      if (l.kind === "fence") this.fence(g, ground, l, labels);
+      else if (l.kind === "zone") this.zone(g, ground, l, labels);
+      else {
+        const line = [this.px([l.from, l.level]), this.px([l.to, l.level])];
+        make(g, "path", { d: this.path(line), class: l.kind });
+        labels.avoid(line);
+      }
+    }
+  }
+
+  private fence(g: Element, ground: XY[], l: Limit, labels: Labels): void {
+    const [x, y] = this.px([l.from, levelAt(ground, l.from)]);
+    const top = y - 26;
+    make(g, "path", { d: `M${cm(x)} ${cm(top)}V${cm(y + 10)}`, class: "fence" });
+    make(g, "path", { d: `M${cm(x)} ${cm(top + 3)}h${9 * l.inward}m${-4 * l.inward} -2.5l${4 * l.inward} 2.5l${-4 * l.inward} 2.5`, class: "inward" });
+    labels.avoid([[x, top], [x, y + 10]]);
+  }
+
+  private zone(g: Element, ground: XY[], l: Limit, labels: Labels): void {
+    const inner = ground.filter((p) => p[0] > l.from && p[0] < l.to).map((p) => p[0]);
+    const along = [l.from, ...inner, l.to].map((x) => this.px([x, levelAt(ground, x)]));
+    const free = l.free * this.scale;
+    const up = l.load ? -9 : l.dig ? free : 0;
+    const down = l.dig ? 14 + free : 0;
+    const ring = [...along.map(([x, y]) => [x, y + up] as XY), ...along.reverse().map(([x, y]) => [x, y + down] as XY)];
+    make(g, "path", { d: this.path(ring) + "Z", class: "zone", fill: `url(#${this.id}-zone)` });
+    labels.avoid([...ring, ring[0]]);
   }
 
   private axes(): void {
@@ -239,6 +297,7 @@ export class Figure {
       if (this.x(x) + half < unitFrom - 6 && this.x(x) - half > 0) this.text(g, String(x), this.x(x), bottom + 15, "middle");
     }
     this.text(g, unit, this.width - margin.right, bottom + 15, "end");
+    this.text(g, "level, m", 2, 11, "start");
     const sy = step(v.y1 - v.y0, 20);
     for (let y = Math.ceil(v.y0 / sy) * sy; y <= v.y1; y += sy) {
       make(g, "path", { d: `M${margin.left} ${cm(this.y(y))}h-4`, class: "tick" });
@@ -288,6 +347,21 @@ export class Figure {
       this.write(labels, row >= 0 ? this.data.rows[row].name : "water", "water-name water-layer", false, places);
     }
     this.soils(design, labels);
+    this.limitNames(labels);
+  }
+
+  private limitNames(labels: Labels): void {
+    const ground = this.line(this.data.before);
+    for (const l of this.data.limits.filter((v) => v.words)) {
+      const middle = (Math.max(l.from, this.data.view.x0) + Math.min(l.to, this.data.view.x1)) / 2;
+      const [x, y] = this.px([middle, l.kind === "fence" || l.kind === "zone" ? levelAt(ground, middle) : l.level]);
+      const places: Place[] = l.kind === "fence"
+        ? [{ x, y: y - 30, anchor: "middle" }, { x: x - 5, y: y - 18, anchor: "end" }, { x: x + 5, y: y - 18, anchor: "start" }]
+        : l.kind === "zone"
+          ? [{ x, y: y + 28, anchor: "middle" }, { x, y: y - 14, anchor: "middle" }, { x: this.x(l.to) + 5, y: y + 12, anchor: "start" }, { x, y: y + 42, anchor: "middle" }]
+          : [{ x, y: y - 5, anchor: "middle" }, { x, y: y + 14, anchor: "middle" }, { x, y: y - 18, anchor: "middle" }];
+      this.write(labels, l.words, "limit-name limit-layer", false, places);
+    }
   }
 
   private soils(design: Design, labels: Labels): void {
@@ -381,7 +455,8 @@ export class Figure {
     else parts.push(`before ${before.toFixed(2)}`, `after ${after.toFixed(2)}`);
     const water = this.answer?.water;
     if (water && water.line >= 0) parts.push(`water ${levelAt(this.line(water.line), x).toFixed(2)}`);
-    return parts.join(", ") + " m";
+    const near = this.data.limits.filter((l) => l.words && l.kind !== "fence" && x >= l.from && x <= l.to).map((l) => `; ${l.words}`);
+    return parts.join(", ") + " m" + near.join("");
   }
 
   private mark(): void {

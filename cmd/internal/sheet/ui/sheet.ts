@@ -63,7 +63,7 @@ class Sheet {
       move(this.data.specified);
       target?.focus();
     });
-    for (const layer of ["water", "slips"]) {
+    for (const layer of ["water", "slips", "limits"]) {
       const box = find<HTMLInputElement>(`#${layer}`);
       const apply = () => document.body.classList.toggle(`no-${layer}`, !box!.checked);
       box?.addEventListener("change", apply);
