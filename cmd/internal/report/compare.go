@@ -18,6 +18,7 @@ func WriteComparison(w io.Writer, f *File, look Look) error {
 		p.options(f)
 		p.materials(f)
 		p.reasons(f)
+		p.handChecks(f)
 		p.relaxations(f)
 		p.fronts(f)
 	}

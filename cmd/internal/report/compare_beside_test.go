@@ -25,6 +25,7 @@ func TestComparisonBeside(t *testing.T) {
 	}}
 	berm.Certificate.UnresolvedDesigns = 1234
 	berm.Stages[0].Check.Advisory, berm.Stages[0].Check.Required, berm.Stages[0].FS = true, 0, 0.93
+	berm.Proposal.HandChecks = []remedies.HandCheck{{Name: remedies.Bearing, FS: 3.8459, Required: 1.1, Working: "5.14 x 35 kPa over 46.8 kPa"}}
 	var b bytes.Buffer
 	if err := WriteComparison(&b, New(result, src), Look{}); err != nil {
 		t.Fatal(err)
@@ -38,6 +39,7 @@ func TestComparisonBeside(t *testing.T) {
 		"water level 1.359 1.189 1.104 0.995 high: short of 1.200 in wet spring",
 		"least of the designs that could be judged on this lattice",
 		"1,234 cheaper designs are unresolved, neither rejected nor accepted",
+		"By hand, from closed forms (sources in the report)", "toe berm bearing under the 3.845 1.100 5.14 x 35 kPa over 46.8 kPa",
 		"in plane strain the open hole has FS 0.930: it does not stand without support",
 	} {
 		if !strings.Contains(text, want) {
