@@ -31,7 +31,7 @@ func TestFeaturesAreDrawn(t *testing.T) {
 		want []string
 		not  []string
 	}{
-		{"crack", []string{"bottom of tension cracks, 60 % full of water"}, nil},
+		{"crack", []string{"bottom of tension cracks, water in them at level 39.00 m"}, nil},
 		{"known", []string{"existing slip surface: c′ 0 kPa, φ′ 13°", "slip surface that exists already"}, nil},
 		{"loads", []string{
 			"heap 0 to 30 kPa", "abutment 30 kPa, 6 kPa to the right", "lorries 10 to 15 kPa, 1 kPa to the right (variable)", "wall 12 kN/m",
