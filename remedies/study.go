@@ -31,7 +31,7 @@ func Study(ctx context.Context, job *Job, s Settings) (*Result, error) {
 	}
 	res, err := st.answer()
 	if err == nil && again {
-		res.Points, err = st.points(job)
+		res.Points, err = st.points(job, res)
 	}
 	if err != nil {
 		return nil, err

@@ -68,6 +68,17 @@ func TestPointIsTheStudyOfThatStrength(t *testing.T) {
 		if got, want := summaryOf(p.Options), summaryOf(cold.Options); !reflect.DeepEqual(got, want) || p.Least != cold.Least {
 			t.Errorf("%s point: %q, least %s; alone: %q, least %s", p.Name, got, p.Least, want, cold.Least)
 		}
+		chosen := res.least()
+		if c := p.Chosen; c == nil || c.Name != res.Least || !reflect.DeepEqual(c.Parameters, chosen.Parameters) ||
+			(c.Status == MeetsTarget) != (c.Governing().Margin() >= DefaultAllowance) {
+			t.Errorf("%s point: chosen %+v, want %s as found before", p.Name, c, res.Least)
+		}
+		for k := range p.Options { // What costs less than the least that meets the target does not meet it.
+			o, c := &p.Options[k], p.Chosen
+			if o.Name == c.Name && c.Proposal.Quantities.Earthworks() < o.Proposal.Quantities.Earthworks() && c.Status == MeetsTarget && o.Status == MeetsTarget {
+				t.Errorf("%s point: %s of the size found before meets the target and takes less than the least", p.Name, c.Name)
+			}
+		}
 		if c := &p.Existing.Situations[0]; c.Check.Required != 1.2*c.FS {
 			t.Errorf("%s point: required FS %g, of a slope at %g", p.Name, c.Check.Required, c.FS)
 		}

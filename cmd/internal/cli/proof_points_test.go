@@ -31,6 +31,7 @@ type theirBack struct {
 			Existing theirOption
 			Options  []theirOption
 			Least    *string
+			Chosen   theirOption
 		}
 	} `json:"back_analysis"`
 }
@@ -94,9 +95,11 @@ func TestChoiceFlipsAfterASlip(t *testing.T) {
 				t.Errorf("%s point: a stranger's FS of the observed slip is %.4f", p.Name, fs)
 			}
 		}
-		for k := range p.Options {
-			o := &p.Options[k]
-			gs, answers := strangers(&then, o)
+		if built := p.Chosen.Status == "meets target"; p.Chosen.Name != "trench_drains" || built != (p.Name != "high") {
+			t.Errorf("%s point: %s as sized with the strengths of the case: %s", p.Name, p.Chosen.Name, p.Chosen.Status)
+		}
+		for _, o := range append(p.Options, p.Chosen) {
+			gs, answers := strangers(&then, &o)
 			for n, g := range gs {
 				g.compare(t, p.Name+" point, "+o.Name+", "+answers[n].Name, answers[n], o.Status == "meets target")
 			}

@@ -30,6 +30,9 @@ type Sized struct {
 	Options []Option `json:"options"`
 	// Name of the option with the least of the objective, "existing" if nothing is needed, null if nothing meets the target.
 	Least *string `json:"least" jsonschema:"nullable"`
+	// The option that least_earthworks of the file names, of the size found with the strengths of the case, searched and audited with this strength; absent
+	// if there is none.
+	Chosen *Option `json:"chosen,omitempty"`
 }
 
 // backAnalysis lays out what an observed slip leaves open; nil if that was not looked into.
@@ -59,6 +62,10 @@ func (b *builder) sized(p *remedies.SizedPoint) Sized {
 	}
 	for i := range p.Options {
 		out.Options = append(out.Options, b.option(&p.Options[i]))
+	}
+	if p.Chosen != nil {
+		chosen := b.option(p.Chosen)
+		out.Chosen = &chosen
 	}
 	if p.Least != "" {
 		least := p.Least

@@ -34,6 +34,7 @@ func slippedSample() (*remedies.Result, Source) {
 			point("high", "", 5, 14, short),
 		},
 	}
+	r.Points.Sized[0].Chosen, r.Points.Sized[2].Chosen = &berm, &short
 	return r, src
 }
 
@@ -84,11 +85,15 @@ func TestRankingIsTold(t *testing.T) {
 			"The choice flips. Least earthworks at the low point (c' 0.00 kPa, phi' 26.11 degrees): toe berm, 5.44 m3/m; at the middle point (c' 2.50 kPa, phi' 20.00 degrees): trench drains, ",
 			"at the high point (c' 5.00 kPa, phi' 14.00 degrees): nothing meets the target.",
 			"least first, are not the same at all three points: low: toe berm, trench drains; middle: trench drains, toe berm; high: none.",
+			"Toe berm, of the size found with the strengths of the case: low point, stands; high point, FS 1.100 of the 1.200 required in wet spring.",
 			"The lowest FS found in wet spring, where the observed slip has FS 1, is 1.041 at the low point,",
 		}, "is the same at all"},
 		{"the same", func(p *remedies.Points) { p.Sized[1], p.Sized[2] = p.Sized[0], p.Sized[0] }, []string{
-			"The option with the least earthworks is the same at all three points: toe berm (5.44 m3/m; 5.44 m3/m; 5.44 m3/m).",
+			"The option with the least earthworks is the same at all three points: toe berm (5.44 m3/m; 5.44 m3/m; 5.44 m3/m). The ranking",
 			"The ranking of the options that meet the target is the same",
+		}, "flips"},
+		{"the same, but not as given", func(p *remedies.Points) { p.Sized[0], p.Sized[2] = p.Sized[1], p.Sized[1] }, []string{
+			"is the same at all three points: trench drains (", "With the strengths of the case it is not the least.",
 		}, "flips"},
 		{"one alone", func(p *remedies.Points) {
 			for i := range p.Sized {

@@ -90,7 +90,35 @@ func (f *File) RankingTexts() []string {
 	if s := f.orderText(a); s != "" {
 		out = append(out, s)
 	}
+	if s := a.chosenText(); s != "" {
+		out = append(out, s)
+	}
 	return append(out, a.lowestText())
+}
+
+// chosenText tells how the works of the answer, of the size found with the strengths of the case, stand at each point; empty if there are none.
+func (a *BackAnalysis) chosenText() string {
+	var parts []string
+	title := ""
+	for i := range a.Points {
+		o := a.Points[i].Chosen
+		if o == nil {
+			continue
+		}
+		title = o.Title
+		says := "stands"
+		if g, ok := o.Governing(); o.Status != meetsTarget && ok {
+			says = fmt.Sprintf("FS %s of the %s required in %s", FactorText(g.FS), RequiredText(Number(g.RequiredFS)), g.Check)
+			if g.Margin() >= 0 {
+				says += ", " + o.Status
+			}
+		}
+		parts = append(parts, a.Points[i].Name+" point, "+says)
+	}
+	if len(parts) == 0 {
+		return ""
+	}
+	return fmt.Sprintf("%s, of the size found with the strengths of the case: %s.", upper(title), strings.Join(parts, "; "))
 }
 
 // leastText tells which option is least at each point.
@@ -106,8 +134,12 @@ func (f *File) leastText(a *BackAnalysis) string {
 		for i := range a.Points {
 			values = append(values, f.valued(a.Points[i].option(*first.Least)))
 		}
-		return fmt.Sprintf("The option with the least %s is the same at all three points: %s (%s).", f.objective(), first.option(*first.Least).Title,
-			strings.Join(values, "; "))
+		then := ""
+		if o := f.Least(); o == nil || o.Name != *first.Least {
+			then = " With the strengths of the case it is not the least."
+		}
+		return fmt.Sprintf("The option with the least %s is the same at all three points: %s (%s).%s", f.objective(), first.option(*first.Least).Title,
+			strings.Join(values, "; "), then)
 	}
 	var parts []string
 	for i := range a.Points {
