@@ -25,7 +25,7 @@ var features = []feature{
 	{"Spencer and Morgenstern-Price", "side_force_function", "side-forces.yaml fredlund.yaml", "**Spencer** (1967) and **Morgenstern-Price** (Morgenstern and Price 1965)", ""},
 	{"slice table", "", "plane.yaml", "## The slice table", ""},
 	{"slips that are no circles", "slips.head slips.toe slips.direction", "side-forces.yaml", "## Slips that are no circles", ""},
-	{"composite slips", "strata[].top", "fredlund.yaml side-forces.yaml", "composite\nslip", ""},
+	{"composite slips", "strata[].top", "fredlund.yaml side-forces.yaml", "composite slip", ""},
 	{"known slips", "known_slips[].line known_slips[].friction", "known.yaml", "A known slip surface has a strength of its own", ""},
 	{"slips about fill", "placed[].soil placed[].outline", "fill.yaml", "placed fill", ""},
 	{"firm base", "firm_base", "giam.yaml", "firm base", ""},
@@ -36,9 +36,9 @@ var features = []feature{
 	{"inclined lines", "water.NAME.inclined", "water.yaml sand.yaml", "cos^2(beta)", ""},
 	{"pressures at points", "water.NAME.points", "water.yaml", "| points |", ""},
 	{"pore pressure ratio", "soils.NAME.ru", "slab.yaml", "| pore pressure ratio |", ""},
-	{"cu by ratio", "soils.NAME.undrained.ratio soils.NAME.undrained.minimum soils.NAME.undrained.water_before", "strength.yaml", "ratio to the effective vertical stress before works", ""},
+	{"cu by ratio", "soils.NAME.undrained.ratio soils.NAME.undrained.minimum soils.NAME.undrained.water_before", "strength.yaml", "cu = max(minimum, r sigma'_v)", ""},
 	{"curved envelope", "soils.NAME.power_law.a soils.NAME.power_law.b", "strength.yaml slab.yaml", "Charles and Watts 1980", ""},
-	{"inclined and triangular strips", "surcharges[].pressure_to surcharges[].horizontal", "loads.yaml", "The horizontal part of a load", ""},
+	{"inclined and triangular strips", "surcharges[].pressure_to surcharges[].horizontal", "loads.yaml", "A strip presses with p(x)", ""},
 	{"line loads", "line_loads[].vertical line_loads[].horizontal", "loads.yaml", "A line load", ""},
 	{"earthquake", "situations[].kh situations[].kv", "sand.yaml water.yaml", "kv scales the same weight", ""},
 	{"back-analysis", "observed_slip.line observed_slip.circle observed_slip.situation", "observed.yaml plane.yaml fredlund.yaml", "## Back-analysis", `did you mean "strength"`},
@@ -75,7 +75,7 @@ func TestFeatureMatrix(t *testing.T) {
 					t.Errorf("no test runs %s", name)
 				}
 			}
-			if !strings.Contains(theory, f.theory) {
+			if !strings.Contains(strings.Join(strings.Fields(theory), " "), f.theory) { // However its lines are broken.
 				t.Errorf("docs/theory.md does not hold %q", f.theory)
 			}
 			if !strings.Contains(scripts, f.misuse) {
