@@ -50,6 +50,7 @@ func (r *run[C]) exchange() error {
 			lead = 0
 			continue
 		}
+		r.res.Spent.ExchangeSearched++
 		v, err := r.examineRank(rank)
 		switch {
 		case err != nil:

@@ -324,12 +324,12 @@ func rising(n, fail int) *table {
 
 func TestLittleIsWastedBehindTheAnswer(t *testing.T) {
 	p := rising(5000, 0)
-	if r := p.minimize(t, Settings[int]{Workers: 7}); r.Spent.DesignsOpened > 20 || r.Spent.FullySearched != 1 {
+	if r := p.minimize(t, Settings[int]{Workers: 7}); r.Spent.DesignsOpened > 20 || r.Spent.FullySearched != 1 || r.Spent.ExchangeSearched != 1 {
 		t.Errorf("first design passes: spent %+v", r.Spent)
 	}
 	p = rising(5000, 1000)
 	r := p.minimize(t, Settings[int]{Workers: 7, FullSearches: 1})
-	if r.X[0] != 1000 || r.Spent.DesignsOpened > 1000+largestBatch+8 || r.Spent.FullySearched != 2 {
+	if r.X[0] != 1000 || r.Spent.DesignsOpened > 1000+largestBatch+8 || r.Spent.FullySearched != 2 || r.Spent.ExchangeSearched != 0 {
 		t.Errorf("x %v, spent %+v", r.X, r.Spent)
 	}
 }

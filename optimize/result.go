@@ -62,6 +62,7 @@ type Spent struct {
 	Searches          int // searches that were no audits
 	Audits            int
 	FullySearched     int // distinct designs searched in full
+	ExchangeSearched  int // those of them that the exchange searched
 	DesignsOpened     int
 	MarginEvaluations int // calls of Design.Margin; what goes on inside Search is not counted
 }

@@ -113,7 +113,8 @@ type Certificate struct {
 	Allowance          float64 // FS that the answer had to exceed the requirement by.
 	Searches           int     // One search is one check of one design.
 	AuditSearches      int
-	DesignsSearched    int
+	DesignsSearched    int // In full, by exchange and walk together.
+	ExchangeDesigns    int // Those of them that the exchange searched.
 	SlipEvaluations    int
 	AuditLowest        []AuditLow
 	Pool               []Cut

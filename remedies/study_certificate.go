@@ -13,6 +13,7 @@ func (z *sizing) certificate(res *optimize.Result[Cut]) *Certificate {
 		Axes: res.Axes, Coarsened: res.Coarsened, CheaperDesigns: len(res.Lattice), Forbidden: res.Forbidden,
 		UnresolvedDesigns: res.Unresolved, ContinuousEstimate: res.ContinuousEstimate, Allowance: res.Allowance,
 		Searches: int(z.searches.Load()), AuditSearches: int(z.audits.Load()), DesignsSearched: res.Spent.FullySearched,
+		ExchangeDesigns: res.Spent.ExchangeSearched,
 		SlipEvaluations: int(z.trials.Load()) + res.Spent.MarginEvaluations, Pool: res.Pool,
 	}
 	checks := Checks(z.j, z.w.apply(z.j, z.w.smallest()))

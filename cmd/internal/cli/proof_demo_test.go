@@ -123,6 +123,20 @@ func TestStranger(t *testing.T) {
 	}
 }
 
+// TestExchangeIsShort checks that the exchange takes few designs searched in full for each remedy of the demos, and that it leaves the walk few
+// more: all others are rejected by slips known by then.
+func TestExchangeIsShort(t *testing.T) {
+	const exchange, all = 12, 18
+	for _, name := range []string{"cutting", "embankment"} {
+		for _, o := range demo(t, name).Options {
+			c := o.Certificate
+			if c == nil || c.Exchange < 1 || c.Exchange > exchange || c.Searched < c.Exchange || c.Searched > all {
+				t.Errorf("%s, %s: certificate %+v, want at most %d designs searched by the exchange and %d in all", name, o.Name, c, exchange, all)
+			}
+		}
+	}
+}
+
 // TestStoryOfTheCutting checks what the demo is there to show: within the limits flattening and unloading do not get there, and each says
 // what stops it; something else does.
 func TestStoryOfTheCutting(t *testing.T) {

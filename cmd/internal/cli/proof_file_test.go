@@ -57,6 +57,11 @@ type (
 		Situations []theirAnswer
 		Stages     []theirAnswer
 		Section    theirSection
+
+		Certificate *struct {
+			Searched int `json:"designs_searched"`
+			Exchange int `json:"exchange_designs_searched"`
+		}
 	}
 	theirAnswer struct {
 		Name     string

@@ -159,6 +159,9 @@ func (a *author) certificate(o *report.Option) {
 	if c.Forbidden > 0 {
 		words = several(c.Forbidden, "design is", "designs are") + " forbidden by a limit or by geometry; " + words
 	}
+	if c.ExchangeDesigns > 0 {
+		words += " Of those searched, the exchange took " + count(c.ExchangeDesigns) + "."
+	}
 	if c.Unresolved > 0 {
 		words += " " + several(c.Unresolved, "design", "designs") + " could be neither rejected nor accepted."
 	}

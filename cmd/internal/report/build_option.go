@@ -188,7 +188,7 @@ func certificateOf(o *remedies.Option) *Certificate {
 	out := &Certificate{
 		Axes: make([]Axis, 0, len(c.Axes)), Coarsened: c.Coarsened, Cheaper: c.CheaperDesigns, Witnessed: c.Witnessed,
 		Forbidden: c.Forbidden, Unresolved: c.UnresolvedDesigns, ContinuousEstimate: Number(c.ContinuousEstimate),
-		Allowance: Number(c.Allowance), Searches: c.Searches, DesignsSearched: c.DesignsSearched, SlipEvaluations: c.SlipEvaluations,
+		Allowance: Number(c.Allowance), Searches: c.Searches, DesignsSearched: c.DesignsSearched, ExchangeDesigns: c.ExchangeDesigns, SlipEvaluations: c.SlipEvaluations,
 		PoolSize: len(c.Pool), Audit: Audit{Methods: []string{}, Searches: c.AuditSearches, Lowest: make([]AuditLow, 0, len(c.AuditLowest))},
 	}
 	for _, a := range c.Axes {

@@ -267,7 +267,8 @@ type Certificate struct {
 	ContinuousEstimate Number `json:"continuous_estimate_m3_per_m"` // Earthworks of the continuous estimate, m3/m; an estimate, not a bound.
 	Allowance          Number `json:"search_allowance"`             // FS by which the answer had to exceed the requirement.
 	Searches           int    `json:"searches"`                     // One search is one check of one design.
-	DesignsSearched    int    `json:"designs_searched"`             // Designs searched in full.
+	DesignsSearched    int    `json:"designs_searched"`             // Designs searched in full, in every check, by the exchange and the walk.
+	ExchangeDesigns    int    `json:"exchange_designs_searched"`    // Those of them that the exchange searched; the walk searched the others.
 	SlipEvaluations    int    `json:"slip_evaluations"`             // Slips evaluated, pool included.
 	PoolSize           int    `json:"pool_size"`                    // Slips in the pool of witnesses.json.
 	Audit              Audit  `json:"audit"`                        // Independent search of the answer.
