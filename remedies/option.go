@@ -105,11 +105,12 @@ type Cut struct {
 type Certificate struct {
 	Axes               []optimize.Axis
 	Coarsened          bool
-	CheaperDesigns     int // Designs on the lattice, within the limits, cheaper than the answer (all of them when infeasible).
+	Steps              []float64 // By axis: the step asked for; nil unless the lattice was coarsened.
+	CheaperDesigns     int       // Designs on the lattice, within the limits, cheaper than the answer (all of them when infeasible).
 	Witnessed          int
 	Forbidden          int // Designs that a limit or geometry forbids.
 	UnresolvedDesigns  int
-	ContinuousEstimate float64 // Earthworks of the continuous estimate, m3/m; NaN when there is none.
+	ContinuousEstimate float64 // Earthworks of the continuous estimate, m3/m; NaN when there is none, or when something else is made least.
 	Allowance          float64 // FS that the answer had to exceed the requirement by.
 	Searches           int     // One search is one check of one design.
 	AuditSearches      int
@@ -155,7 +156,7 @@ type Result struct {
 	Job      *Job
 	Settings Settings
 	Existing Option
-	Options  []Option // In ascending earthworks; what-ifs behind them, those that fail last.
-	Least    string   // Name of the least-earthworks option, "existing" if nothing is needed, "" if nothing meets the target.
+	Options  []Option // In ascending order of what is made least; what-ifs behind them, those that fail last.
+	Least    string   // Name of the option with the least of what is made least, "existing" if nothing is needed, "" if nothing meets the target.
 	Points   *Points  // Everything sized again at the points of a back-analysis; nil: not asked for, or no slip observed.
 }

@@ -31,7 +31,7 @@ type Kind struct {
 	Summary    string // One sentence.
 	Parameters []Parameter
 	Choices    []Choice
-	WhatIf     bool   // Shows what could be; listed last and never the least-earthworks answer.
+	WhatIf     bool   // Shows what could be; listed last and never the answer.
 	Place      string // Where it works: "face", "head", "toe", "slip", "water", "toe water", "crest water"; two remedies of one place do not make a pair.
 	order      order
 	// New makes the remedy for a job and settings. Its errors are faults of the request, in words for the user.

@@ -16,6 +16,14 @@ func (z *sizing) certificate(res *optimize.Result[Cut]) *Certificate {
 		ExchangeDesigns: res.Spent.ExchangeSearched,
 		SlipEvaluations: int(z.trials.Load()) + res.Spent.MarginEvaluations, Pool: res.Pool,
 	}
+	if res.Coarsened {
+		for _, a := range z.w.axes {
+			c.Steps = append(c.Steps, a.Step)
+		}
+	}
+	if z.j.Objective != LeastEarthworks {
+		c.ContinuousEstimate = math.NaN()
+	}
 	checks := Checks(z.j, z.w.apply(z.j, z.w.smallest()))
 	for _, w := range res.Lattice {
 		if w.Cut == optimize.NoCut {

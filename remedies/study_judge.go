@@ -80,7 +80,7 @@ func (z *sizing) explain(ctx context.Context, o *Option, res *optimize.Result[Cu
 		}
 	}
 	if len(limits) == 0 { // The limits do not stand in the way: nothing of the range does.
-		o.Reason = reached + "; without the limits no design of the range would do better" + z.endsOfRange(x)
+		o.Reason = reached + "; without the limits no design of the range was found to do better" + z.endsOfRange(x)
 		return nil
 	}
 	o.Binding = strings.Join(limits, ", ")

@@ -25,7 +25,7 @@ func worksShape(toSize bool) *shape {
 		f := field{key: k.Name, shape: kindShape(k, toSize), standard: "not considered", meaning: k.Summary}
 		f.example = kindExample(f.shape)
 		if k.WhatIf {
-			f.meaning += " A what-if: listed last, never the least-earthworks answer."
+			f.meaning += " A what-if: listed last, never the answer."
 		}
 		s.fields = append(s.fields, f)
 	}

@@ -23,9 +23,11 @@ func newCompareCommand() *cobra.Command {
 	o := &compareOptions{}
 	c := &cobra.Command{
 		Use:   "compare CASE",
-		Short: "Size every remedy of a case and say which needs the least earthworks",
+		Short: "Size every remedy of a case and say which needs the least earthworks, or costs least",
 		Long: `compare analyses the slope of a case file as it is, sizes every remedy that the case asks for, compares them, and
 writes the results, drawings and proposed sections to a folder.
+
+What is made least is the ` + "`objective`" + ` of the case: earthworks unless it says cost or carbon, by the user's own rates and factors.
 
 Remedies are sized one by one, and the ` + "`combinations`" + ` of the case together. With --pairs every pair that can be built together is
 sized too. A pair has as many designs as its two remedies multiplied, so that this takes minutes where their ranges are fine.

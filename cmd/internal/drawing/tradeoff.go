@@ -146,7 +146,7 @@ func layOutTradeoff(name string, curves []curve, target float64, share bool, opt
 	s := &sheet{}
 	inner := pageWidth - 2*margin
 	h := heading{title: name, name: []string{"Earthworks against the factor of safety reached"}, lines: []string{
-		"Earthworks are bank cut plus compacted fill. Ringed: the size that meets every requirement with least earthworks for that remedy.",
+		"Earthworks are bank cut plus compacted fill. Ringed: the size that the remedy comes to for what is required.",
 	}}
 	if share {
 		h.lines = append(h.lines, "The remedies are governed by situations that ask for different factors: shown is FS reached over FS required.")

@@ -143,7 +143,7 @@ func (a *author) next(least *report.Option) {
 		case o == least:
 			behind = true
 		case behind && o.Status == meetsTarget && !o.WhatIf:
-			a.item(fmt.Sprintf("Should %s not be acceptable, %s comes next, with %s m³/m.", least.Title, o.Title, report.QuantityText(o.Quantities.Earthworks)))
+			a.item(fmt.Sprintf("Should %s not be acceptable, %s comes next, with %s.", least.Title, o.Title, cubic(a.f.Amount(o))))
 			return
 		}
 	}

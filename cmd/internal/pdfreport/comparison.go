@@ -21,7 +21,7 @@ func (a *author) comparison() error {
 	}
 	a.chapter("Options compared")
 	a.indented(faceStrong, ink, 0, "", cubic(a.f.Recommendation()))
-	a.heading("Works per metre run and in all, in ascending earthworks; those that fail last (FS rounded down, quantities up)")
+	a.heading("Works per metre run and in all, in ascending " + a.f.Objective() + "; those that fail last (FS rounded down, quantities up)")
 	var rows []row
 	for i := range a.f.Options {
 		rows = append(rows, optionRow(&a.f.Options[i]))

@@ -329,7 +329,7 @@ func (a *author) settings() {
 		return "offset " + span(r[0], r[1]) + " m"
 	}
 	rows := []row{
-		cells("what sizings make least", objective(a.f)),
+		cells("what sizings make least", a.f.Objective()),
 		cells("depth of interest: slips nowhere deeper below the ground are left out", report.SizeText(s.DepthOfInterest)+" m"),
 		cells("movement looked at", movement),
 		cells("slices of a slip in a search; twice as many in an audit", fmt.Sprint(s.Slices)),

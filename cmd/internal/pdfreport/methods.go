@@ -24,7 +24,7 @@ func (a *author) methods() {
 	a.item(fmt.Sprintf("Slips nowhere deeper than %s m below the ground in force are left out. Shallower ones, such as ravelling and erosion of a face, are dealt with by its batter, facing and drainage.", report.SizeText(s.DepthOfInterest)))
 	a.item("A check is unresolved, and not passed, where a trial that no governing method could solve may lie below what is required.")
 	a.heading("Sizing")
-	a.item("Each remedy is sized on a lattice of sizes that can be set out. Designs are looked at in ascending " + objective(a.f) + " (earthworks are bank cut plus compacted fill, never netted); one is rejected as soon as a slip below what is required is known, and accepted only after a full search of every situation and stage and the audit.")
+	a.item("Each remedy is sized on a lattice of sizes that can be set out. Designs are looked at in ascending " + a.f.Objective() + " (earthworks are bank cut plus compacted fill, never netted); one is rejected as soon as a slip below what is required is known, and accepted only after a full search of every situation and stage and the audit.")
 	a.item("The certificate lists a slip for every cheaper design that was rejected; witnesses.json holds them all, and verify evaluates them again. It says least on this lattice, for this remedy and these methods. It does not say that no smaller works could do.")
 	a.heading("Where the results hold")
 	for _, l := range []string{

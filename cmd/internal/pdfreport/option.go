@@ -155,6 +155,9 @@ func (a *author) certificate(o *report.Option) {
 	if len(axes) > 0 {
 		a.table([]column{text("lattice of sizes"), number("least"), number("greatest"), number("step")}, axes)
 	}
+	if s := o.CoarsenedText(); s != "" {
+		a.item(sentence(s))
+	}
 	words := fmt.Sprintf("%s searched in full, %s slips evaluated.", several(c.DesignsSearched, "design was", "designs were"), count(c.SlipEvaluations))
 	if c.Forbidden > 0 {
 		words = several(c.Forbidden, "design is", "designs are") + " forbidden by a limit or by geometry; " + words
@@ -166,7 +169,8 @@ func (a *author) certificate(o *report.Option) {
 		words += " " + several(c.Unresolved, "design", "designs") + " could be neither rejected nor accepted."
 	}
 	if c.ContinuousEstimate.Known() {
-		words += " Without steps the estimate is " + report.QuantityText(float64(c.ContinuousEstimate)) + " m³/m: an estimate, not a bound."
+		words += " Between the steps of the lattice the exchange estimated " + report.QuantityText(float64(c.ContinuousEstimate)) +
+			" m³/m from the slips that it knew: an estimate, not a bound, which may lie on either side of the answer."
 	}
 	a.para(words)
 	var lows []row

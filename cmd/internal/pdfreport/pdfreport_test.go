@@ -261,6 +261,14 @@ func TestEveryOutcome(t *testing.T) {
 				o.Situations[i].Found = report.Found{FS: report.Number(math.NaN())}
 			}
 		}, "no slip converged", "NaN"},
+		{"a lattice too large", func(f *report.File) {
+			c := f.Options[0].Certificate
+			c.Coarsened, c.Axes[0].StepAsked, c.Axes[0].Step = true, 0.05, 0.1
+		}, "has more than 200,000 designs and was coarsened: height by 0.1 instead of 0.05", "NaN"},
+		{"least cost", func(f *report.File) {
+			v := report.Number(4321)
+			f.Settings.Objective, f.Options[0].Totals.Cost = "cost", &v
+		}, "in all, in ascending cost; those", "east earthworks"},
 		{"earthworks against drain", func(f *report.File) {
 			o := &f.Options[0]
 			point := report.FrontPoint{Drain: 2.5, Earthworks: 7.001, Answer: true, Check: "high water", FS: 1.2159, RequiredFS: 1.2, Parameters: o.Parameters}

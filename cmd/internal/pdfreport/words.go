@@ -102,14 +102,6 @@ func verdict(a *report.Found, required float64) (string, colour) {
 	return "meets", inkGood
 }
 
-// objective names what sizings make least.
-func objective(f *report.File) string {
-	if f.Settings.Objective == "" { // A result of an earlier version.
-		return "earthworks"
-	}
-	return f.Settings.Objective
-}
-
 // methodsOf returns the methods that answered in any of the checks, in the engine's order.
 func methodsOf(found []*report.Found) []string {
 	var out []string

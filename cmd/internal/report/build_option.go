@@ -191,10 +191,15 @@ func certificateOf(o *remedies.Option) *Certificate {
 		Allowance: Number(c.Allowance), Searches: c.Searches, DesignsSearched: c.DesignsSearched, ExchangeDesigns: c.ExchangeDesigns, SlipEvaluations: c.SlipEvaluations,
 		PoolSize: len(c.Pool), Audit: Audit{Methods: []string{}, Searches: c.AuditSearches, Lowest: make([]AuditLow, 0, len(c.AuditLowest))},
 	}
-	for _, a := range c.Axes {
-		if a.Name != "" { // An absent optional parameter has no name.
-			out.Axes = append(out.Axes, Axis{Name: a.Name, Min: a.Min, Max: a.Max, Step: a.Step})
+	for i, a := range c.Axes {
+		if a.Name == "" { // An absent optional parameter has no name.
+			continue
 		}
+		axis := Axis{Name: a.Name, Min: a.Min, Max: a.Max, Step: a.Step}
+		if i < len(c.Steps) && c.Steps[i] != a.Step {
+			axis.StepAsked = c.Steps[i]
+		}
+		out.Axes = append(out.Axes, axis)
 	}
 	for _, l := range c.AuditLowest {
 		low := AuditLow{Check: l.Check, FS: Number(l.FS), RequiredFS: Number(l.Required)}

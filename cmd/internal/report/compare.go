@@ -70,7 +70,7 @@ func verdict(f Found, required float64) string {
 
 // options prints a row an option.
 func (p *printer) options(f *File) {
-	p.heading(fmt.Sprintf("Works per metre run, in ascending %s, those that fail last (FS rounded down, quantities up)", f.objective()))
+	p.heading(fmt.Sprintf("Works per metre run, in ascending %s, those that fail last (FS rounded down, quantities up)", f.Objective()))
 	var rows []table.Row
 	for i := range f.Options {
 		o := &f.Options[i]
@@ -118,6 +118,9 @@ func (p *printer) reasons(f *File) {
 			if s.Says != "" {
 				remarks = append(remarks, remark{o.Title + ": ", s.Name + ": " + s.Says})
 			}
+		}
+		if s := o.CoarsenedText(); s != "" {
+			remarks = append(remarks, remark{o.Title + ": ", s})
 		}
 		for _, n := range o.NotChecked {
 			remarks = append(remarks, remark{o.Title + ": ", n})

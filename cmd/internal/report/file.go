@@ -19,9 +19,9 @@ type File struct {
 	StageSettings *StageSettings `json:"stage_settings" jsonschema:"nullable"`
 	Situations    []Situation    `json:"situations"` // Design situations, with the variants that single options add.
 	Existing      Option         `json:"existing"`   // The slope as it is.
-	Options       []Option       `json:"options"`    // In ascending earthworks; what-ifs behind them, those that fail last.
-	// Name of the option with the least earthworks of those that meet the target, "existing" if nothing is needed, null if nothing
-	// meets it.
+	Options       []Option       `json:"options"`    // In ascending order of the objective of the settings; what-ifs behind them, those that fail last.
+	// Name of the answer, whatever the objective: of the options that meet the target the one with the least earthworks, or that with the least
+	// cost or carbon if the objective of the settings is that; "existing" if nothing is needed, null if nothing meets it.
 	LeastEarthworks *string `json:"least_earthworks" jsonschema:"nullable"`
 	// What the observed slip of the case leaves open; absent: none was observed, or it was left out.
 	BackAnalysis *BackAnalysis `json:"back_analysis,omitempty"`
@@ -133,7 +133,7 @@ type Option struct {
 	Status   string   `json:"status" jsonschema:"enum=meets target,enum=infeasible,enum=unresolved,enum=existing,enum=fails"` // "meets target", "infeasible", "unresolved", "existing", or "fails" for trial works.
 	Reason   string   `json:"reason"`                                                                                         // Why the status is what it is.
 	BindsOn  string   `json:"binds_on"`                                                                                       // The limit, situation or stage that binds; empty if none does.
-	WhatIf   bool     `json:"what_if"`                                                                                        // Shows what could be; never the least-earthworks answer.
+	WhatIf   bool     `json:"what_if"`                                                                                        // Shows what could be; never the answer.
 	Trial    bool     `json:"trial"`                                                                                          // The user's own works, only checked.
 	Broken   []Limit  `json:"limits_broken"`                                                                                  // Limits of the site that the works shown break.
 
@@ -154,7 +154,7 @@ type Option struct {
 	Notes       []string     `json:"notes"`                             // What the works changed besides, such as a water line cut down to the new ground.
 	Certificate *Certificate `json:"certificate" jsonschema:"nullable"` // What the answer rests on; null if nothing was sized.
 	Section     *Section     `json:"section"`                           // The section after works.
-	Tradeoff    []TradePoint `json:"tradeoff"`                          // Least earthworks against the FS asked for.
+	Tradeoff    []TradePoint `json:"tradeoff"`                          // The works against the FS asked for.
 	// Earthworks against metres of drain, of remedies sized together with drains among them that meet the target; null: none, or the drains have
 	// one length.
 	Front *Front `json:"front" jsonschema:"nullable"`
@@ -177,7 +177,7 @@ type Parameter struct {
 type Quantities struct {
 	Cut        float64            `json:"cut_m3_per_m"`                // Bank cut with the dig of trenches, m3/m.
 	Fill       float64            `json:"fill_m3_per_m"`               // Compacted fill with the stone of trenches, m3/m.
-	Earthworks float64            `json:"earthworks_m3_per_m"`         // Cut plus fill, m3/m: what a sizing makes least.
+	Earthworks float64            `json:"earthworks_m3_per_m"`         // Cut plus fill, m3/m: what a sizing makes least unless the objective is cost or carbon.
 	Import     float64            `json:"import_m3_per_m"`             // Fill and stone brought to the site, m3/m compacted; see on_site_fill.
 	Dispose    float64            `json:"dispose_m3_per_m"`            // Cut that is not used again, m3/m bank.
 	Drain      float64            `json:"drain_m_per_m"`               // Length of drain, m/m.
@@ -264,7 +264,7 @@ type Certificate struct {
 	Witnessed          int    `json:"witnessed"`                    // Of these, designs with a slip that rejects them, listed in witnesses.json.
 	Forbidden          int    `json:"forbidden_designs"`            // Designs that a limit or geometry forbids.
 	Unresolved         int    `json:"unresolved"`                   // Cheaper designs that could be neither rejected nor accepted.
-	ContinuousEstimate Number `json:"continuous_estimate_m3_per_m"` // Earthworks of the continuous estimate, m3/m; an estimate, not a bound.
+	ContinuousEstimate Number `json:"continuous_estimate_m3_per_m"` // Earthworks between the sizes of the lattice by the slips that the exchange knew, m3/m: an estimate, not a bound, which may lie above the answer or below it; null if there is none, or if cost or carbon was made least.
 	Allowance          Number `json:"search_allowance"`             // FS by which the answer had to exceed the requirement.
 	Searches           int    `json:"searches"`                     // One search is one check of one design.
 	DesignsSearched    int    `json:"designs_searched"`             // Designs searched in full, in every check, by the exchange and the walk.
@@ -280,6 +280,8 @@ type Axis struct {
 	Min  float64 `json:"min"`  // Least size.
 	Max  float64 `json:"max"`  // Greatest size.
 	Step float64 `json:"step"` // Step between sizes; 0: fixed.
+	// Step that was asked for, where the lattice asked for was too large; absent where it is the step between sizes.
+	StepAsked float64 `json:"step_asked,omitempty"`
 }
 
 // Audit is the search of the answer by another sampler and seed.
@@ -297,12 +299,12 @@ type AuditLow struct {
 	RequiredFS Number `json:"required_fs"` // FS required.
 }
 
-// TradePoint is one point of the curve of earthworks against the FS asked for.
+// TradePoint is one point of the curve of works against the FS asked for: the least of the objective of the settings.
 type TradePoint struct {
 	RequiredFS Number               `json:"required_fs"`         // Asked for, in the situation that governs the sized option.
 	Shift      float64              `json:"shift"`               // Added to the required FS of every check.
 	ReachedFS  Number               `json:"reached_fs"`          // Required FS and the least margin of every check at this design.
-	Earthworks Number               `json:"earthworks_m3_per_m"` // Least earthworks, m3/m.
+	Earthworks Number               `json:"earthworks_m3_per_m"` // Earthworks of the design, m3/m: the least, unless cost or carbon was made least.
 	Cost       *Number              `json:"cost"`                // Cost of the design for the whole length; null without rates, if one that it needs is blank, or of a what-if.
 	Carbon     *Number              `json:"carbon_t"`            // Carbon of it, t CO2 equivalent; null likewise.
 	Loads      *Number              `json:"lorry_loads"`         // Whole lorry loads of it; null if not known.

@@ -138,7 +138,7 @@ func (f *File) leastText(a *BackAnalysis) string {
 		if o := f.Least(); o == nil || o.Name != *first.Least {
 			then = " With the strengths of the case it is not the least."
 		}
-		return fmt.Sprintf("The option with the least %s is the same at all three points: %s (%s).%s", f.objective(), first.option(*first.Least).Title,
+		return fmt.Sprintf("The option with the least %s is the same at all three points: %s (%s).%s", f.Objective(), first.option(*first.Least).Title,
 			strings.Join(values, "; "), then)
 	}
 	var parts []string
@@ -158,7 +158,7 @@ func (f *File) leastText(a *BackAnalysis) string {
 	if a.flips() {
 		lead = "The choice flips"
 	}
-	return fmt.Sprintf("%s. Least %s %s.", lead, f.objective(), strings.Join(parts, "; "))
+	return fmt.Sprintf("%s. Least %s %s.", lead, f.Objective(), strings.Join(parts, "; "))
 }
 
 // orderText tells how the options that meet the target rank at each point; empty if that says nothing more.

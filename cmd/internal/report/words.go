@@ -6,6 +6,7 @@ import (
 	"strings"
 
 	"standfast/lem"
+	"standfast/optimize"
 	"standfast/remedies"
 )
 
@@ -59,7 +60,7 @@ func (o *Option) Governing() (Governing, bool) {
 	return g, any
 }
 
-// Least returns the option with the least earthworks of those that meet the target; nil if there is none. It may be the existing slope.
+// Least returns the option with the least of what sizings make least of those that meet the target; nil if there is none. It may be the existing slope.
 func (f *File) Least() *Option {
 	if f.LeastEarthworks == nil {
 		return nil
@@ -99,8 +100,7 @@ func (f *File) Recommendation() string {
 	if o := f.Least(); o == &f.Existing {
 		return "Nothing is needed: the slope as it is meets the required factor of safety in every situation."
 	} else if o != nil {
-		return fmt.Sprintf("Least %s: %s, %s m3 per metre run (%s m3 over %s m): %s.",
-			f.objective(), f.named(o), QuantityText(o.Quantities.Earthworks), TotalText(o.Totals.Earthworks), SizeText(f.Case.Length), o.Dimensions(o.Parameters))
+		return fmt.Sprintf("Least %s: %s, %s (%s m3 over %s m): %s.", f.Objective(), o.Title, f.Amount(o), TotalText(o.Totals.Earthworks), SizeText(f.Case.Length), o.Dimensions(o.Parameters))
 	}
 	o := f.Nearest()
 	if o == nil {
@@ -158,23 +158,42 @@ func (o *Option) CertificateText() string {
 	return s + "."
 }
 
-// objective names what sizings make least; earthworks in a file that does not say.
-func (f *File) objective() string {
+// CoarsenedText says that the lattice of an option is coarser than asked for, and where; empty if it is not.
+func (o *Option) CoarsenedText() string {
+	if o.Certificate == nil || !o.Certificate.Coarsened {
+		return ""
+	}
+	s := fmt.Sprintf("the lattice asked for has more than %s designs and was coarsened", TotalText(optimize.DefaultMaxDesigns))
+	var steps []string
+	for _, a := range o.Certificate.Axes {
+		if a.StepAsked != 0 {
+			steps = append(steps, fmt.Sprintf("%s by %s instead of %s", remedies.ParameterWords(a.Name), SizeText(a.Step), SizeText(a.StepAsked)))
+		}
+	}
+	if len(steps) > 0 {
+		s += ": " + strings.Join(steps, ", ")
+	}
+	return s + "; works between these sizes may do with less"
+}
+
+// Objective names what sizings make least; earthworks in a file that does not say.
+func (f *File) Objective() string {
 	if f.Settings.Objective == "" {
 		return remedies.LeastEarthworks.String()
 	}
 	return f.Settings.Objective
 }
 
-// named returns the title of an option, with its cost or carbon where that is what was made least.
-func (f *File) named(o *Option) string {
+// Amount returns in words what an option takes of what sizings make least: cost or carbon for the whole length, with its earthworks behind it.
+func (f *File) Amount(o *Option) string {
+	earthworks := QuantityText(o.Quantities.Earthworks) + " m3 per metre run"
 	switch least, _ := remedies.ParseObjective(f.Settings.Objective); {
 	case least == remedies.LeastCost && o.Totals.Cost != nil:
-		return o.Title + ", " + f.money(TotalText(float64(*o.Totals.Cost)))
+		return f.money(TotalText(float64(*o.Totals.Cost))) + ", " + earthworks
 	case least == remedies.LeastCarbon && o.Totals.Carbon != nil:
-		return o.Title + ", " + QuantityText(float64(*o.Totals.Carbon)) + " t CO2 equivalent"
+		return QuantityText(float64(*o.Totals.Carbon)) + " t CO2 equivalent, " + earthworks
 	}
-	return o.Title
+	return earthworks
 }
 
 // money puts the currency of the rates behind an amount.

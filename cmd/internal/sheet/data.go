@@ -67,7 +67,7 @@ type target struct {
 	Required []string `json:"required"` // By row.
 	Answer   string   `json:"answer"`   // What comes out, in a sentence.
 	Existing string   `json:"existing"` // Marks of the slope as it is, by row.
-	Least    int      `json:"least"`    // Option with the least earthworks of those that meet; -1: none.
+	Least    int      `json:"least"`    // Option with the least of what was made least of those that meet; -1: none.
 }
 
 // optionDrawn is an option with the designs that the slider chooses among.
@@ -116,7 +116,7 @@ type design struct {
 	fs       []report.Number
 	resolved []bool
 	margin   report.Number // Least margin over the checks.
-	works    float64       // Earthworks, m3/m.
+	works    float64       // Of what was made least: earthworks, m3/m, or cost or carbon of the whole length.
 	shift    float64       // Of the target that it was sized for.
 }
 

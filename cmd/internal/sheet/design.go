@@ -39,6 +39,7 @@ func (b *builder) sized(o *report.Option) design {
 	b.govern(&d)
 	t := &o.Totals
 	b.addTexts(&d, o, o.Parameters, &o.Quantities)
+	d.works = b.amount(&o.Quantities, t.Cost, t.Carbon)
 	d.Texts["cost"], d.Texts["carbon"], d.Texts["loads"] = given(t.Cost, b.currency()), given(t.Carbon, " t"), given(t.Loads, "")
 	if o.Status == meetsTarget {
 		d.Texts["change"] = "as much as for the specified target"
@@ -66,6 +67,7 @@ func (b *builder) traded(o *report.Option, p *report.TradePoint, specified *desi
 	b.govern(&d)
 	d.margin = min(d.margin, p.ReachedFS-p.RequiredFS+report.Number(p.Shift))
 	b.addTexts(&d, o, p.Parameters, &p.Quantities)
+	d.works = b.amount(&p.Quantities, p.Cost, p.Carbon)
 	d.Texts["cost"] = forTarget(p.Cost, b.currency(), specified.Texts["cost"])
 	d.Texts["carbon"] = forTarget(p.Carbon, " t", specified.Texts["carbon"])
 	d.Texts["loads"] = forTarget(p.Loads, "", specified.Texts["loads"])

@@ -8,6 +8,7 @@ import (
 	"strings"
 
 	"standfast/cmd/internal/report"
+	"standfast/remedies"
 )
 
 // The slider adds a shift to the required FS of every check. At each of its stops an option shows a design that was sized and searched:
@@ -251,7 +252,7 @@ func (b *builder) short(o *report.Option, d *design, shift float64) string {
 	return s + "."
 }
 
-// least returns the option with the least earthworks of those that meet the target of the stop being added, what-ifs left out; -1: none.
+// least returns the option with the least of what was made least of those that meet the target of the stop being added, what-ifs left out; -1: none.
 func (b *builder) least(shift float64) int {
 	best, works := -1, math.Inf(1)
 	for i := range b.m.Data.Options {
@@ -283,8 +284,15 @@ func (b *builder) answerAt(shift float64, least int) string {
 	o := &b.m.Data.Options[least]
 	s := o.Stops[len(o.Stops)-1]
 	t := o.Designs[s.Design].Texts
-	text := fmt.Sprintf("At this target least earthworks: %s, %s m³ per metre run (%s m³ over %s m): %s.", b.f.Options[least].Title,
-		t["earth-m"], t["earth"], report.SizeText(b.f.Case.Length), t["dims"])
+	amount := ""
+	switch objective, _ := remedies.ParseObjective(b.f.Objective()); {
+	case objective == remedies.LeastCost && t["cost"] != notGiven:
+		amount = t["cost"] + ", "
+	case objective == remedies.LeastCarbon && t["carbon"] != notGiven:
+		amount = t["carbon"] + " CO2 equivalent, "
+	}
+	text := fmt.Sprintf("At this target least %s: %s, %s%s m³ per metre run (%s m³ over %s m): %s.", b.f.Objective(), b.f.Options[least].Title,
+		amount, t["earth-m"], t["earth"], report.SizeText(b.f.Case.Length), t["dims"])
 	if s.Design > 0 {
 		text += " Searched, not audited."
 	}

@@ -57,6 +57,35 @@ func point(shift, fs, works float64) report.TradePoint {
 	}
 }
 
+// cost is a total of the made-up result.
+func cost(v float64) *report.Number {
+	n := report.Number(v)
+	return &n
+}
+
+// TestLeastCost checks that where cost was made least the slider goes by cost, though it takes more earthworks, and says so.
+func TestLeastCost(t *testing.T) {
+	dear, cheap := point(0.05, 1.358, 15), point(0.05, 1.36, 16)
+	dear.Cost, cheap.Cost = cost(900), cost(800)
+	f := invented(1.1, meetsTarget, 1.306, 10, dear)
+	other := invented(1.1, meetsTarget, 1.306, 11, cheap).Options[0]
+	f.Options[0].Totals.Cost, other.Totals.Cost = cost(700), cost(750)
+	other.Name, other.Title = "buttress", "toe buttress"
+	f.Options = append(f.Options, other)
+	for _, c := range []struct{ objective, want string }{
+		{"", "At this target least earthworks: toe berm, 15.00 m³ per metre run"},
+		{"cost", "At this target least cost: toe buttress, 800 EUR, 16.00 m³ per metre run"},
+	} {
+		f.Settings.Objective, f.Economics.Currency = c.objective, "EUR"
+		b := newBuilder(f)
+		b.addStops()
+		d := &b.m.Data
+		if got := d.Stops[d.Specified+5].Answer; !strings.HasPrefix(got, c.want) {
+			t.Errorf("the answer is %q, want %q", got, c.want)
+		}
+	}
+}
+
 // What is asked for is answered by the next design on the safe side, and by nothing in between.
 func TestPick(t *testing.T) {
 	met := func() *report.File {

@@ -89,6 +89,8 @@ func TestEveryOutcome(t *testing.T) {
 			f.Options, f.LeastEarthworks = nil, &least
 		}, "Nothing is needed"},
 		{"nothing meets", func(f *report.File) { f.Options, f.LeastEarthworks = f.Options[2:], nil }, "Nothing meets the target"},
+		{"least cost", func(f *report.File) { f.Settings.Objective = "cost"; f.Options[0].Totals.Cost = cost(4321) }, `<span class="best">least cost</span>`},
+		{"answer by cost", func(f *report.File) { f.Settings.Objective = "cost"; f.Options[0].Totals.Cost = cost(4321) }, "Least cost: toe berm, 4,321"},
 		{"no option sized", func(f *report.File) { f.Options, f.LeastEarthworks = nil, nil }, "No options were sized"},
 		{"an option without an FS", func(f *report.File) {
 			o := &f.Options[0]

@@ -6,6 +6,7 @@ import (
 	"strings"
 
 	"standfast/cmd/internal/report"
+	"standfast/remedies"
 )
 
 // notGiven stands for what the case gives no rates or factors for.
@@ -75,11 +76,27 @@ func (b *builder) addTexts(d *design, o *report.Option, parameters map[string]re
 	} {
 		t[v.key+"-m"], t[v.key] = report.QuantityText(v.value), report.TotalText(v.value*b.f.Case.Length)
 	}
-	d.Cut, d.Fill, d.works = q.Cut, q.Fill, q.Earthworks
+	d.Cut, d.Fill = q.Cut, q.Fill
 	t["fs"], t["check"] = "-", "no check answered"
 	if g := d.Governing; g >= 0 {
 		t["fs"], t["check"] = d.Answers[g].FS, b.m.Data.Rows[g].Name
 	}
+}
+
+// amount returns what a design takes of what was made least; +Inf where that is not known, as of a what-if.
+func (b *builder) amount(q *report.Quantities, cost, carbon *report.Number) float64 {
+	total := carbon
+	switch least, _ := remedies.ParseObjective(b.f.Objective()); least {
+	case remedies.LeastEarthworks:
+		return q.Earthworks
+	case remedies.LeastCost:
+		total = cost
+	case remedies.LeastCarbon:
+	}
+	if total == nil || !total.Known() {
+		return math.Inf(1)
+	}
+	return float64(*total)
 }
 
 // change says by how much the earthworks differ from those as specified: what is saved is rounded down, what is added up.
