@@ -24,6 +24,7 @@ type BackFile struct {
 	Share     float64     `json:"share"`     // Of the length of the slip that runs in it.
 	Situation string      `json:"situation"` // State at failure.
 	Method    string      `json:"method"`
+	SideForce *SideForce  `json:"side_force_function,omitempty"` // Of Morgenstern-Price's method; other methods have none.
 	Slip      *Slip       `json:"slip"`
 	Depth     float64     `json:"slip_depth_m"`
 	AsGiven   Number      `json:"fs_as_given"` // FS of the observed slip with the strengths of the case; null without an answer.
@@ -61,6 +62,10 @@ func NewBack(j *remedies.Job, b *remedies.BackAnalysis, src Source) *BackFile {
 		AsGiven: Number(b.AsGiven), Low: point(&b.Low), Middle: point(&b.Middle), High: point(&b.High), Margin: b.Margin, Bend: Number(b.Bend),
 		Cautions: append(BackCautions(), Cautions()...),
 	}
+	if b.Method == lem.MorgensternPrice {
+		side := sideForceOf(&j.SideForce)
+		f.SideForce = &side
+	}
 	for i := range b.Curve {
 		f.Curve = append(f.Curve, point(&b.Curve[i]))
 	}
@@ -97,8 +102,12 @@ const shownTol = 1e-6
 func WriteBack(w io.Writer, f *BackFile, look Look) error {
 	p := newPrinter(w, look)
 	p.para("", fmt.Sprintf("%s, from %s: back-analysis of the observed slip", f.Case.Title, f.Case.File))
+	method := f.Method
+	if f.SideForce != nil {
+		method += ", side-force function " + f.SideForce.String()
+	}
 	p.para("", fmt.Sprintf("Slip from (%.2f, %.2f) to (%.2f, %.2f), %.2f m deep; %.0f %% of it runs in %s. State at failure: %s. Method: %s.",
-		f.Slip.From[0], f.Slip.From[1], f.Slip.To[0], f.Slip.To[1], f.Depth, 100*f.Share, f.Soil, f.Situation, f.Method))
+		f.Slip.From[0], f.Slip.From[1], f.Slip.To[0], f.Slip.To[1], f.Depth, 100*f.Share, f.Soil, f.Situation, method))
 	p.para("", "FS with the strengths of the case: "+FactorText(f.AsGiven)+".")
 	p.heading(f.heading())
 	p.backTable(f, f.Curve, nil)
