@@ -75,6 +75,7 @@ func (p *picture) drawLoads(s *sheet) {
 			if head.Y-foot.Y < arrowHead { // Where a pressure begins at nothing there is no room for an arrow.
 				continue
 			}
+			s.place.marks = append(s.place.marks, Box{x, foot.Y, x, head.Y}.grown(arrowHalf+1.5))
 			s.stroke(loadPen, medium, []xy{head, {x, foot.Y + arrowHead/2}})
 			s.arrow(loadInk, foot, xy{0, -1})
 		}

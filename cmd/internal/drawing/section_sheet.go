@@ -126,7 +126,8 @@ func (p *picture) heading(width float64) heading {
 		if len(values) > 0 {
 			name += ": " + strings.Join(values, ", ")
 		}
-		h.name, h.status = headFace.wrap(clean(title(name)), width, 2), o.Status.String()
+		h.status = o.Status.String()
+		h.name = headFace.wrap(clean(title(name)), width-headFace.width(h.status)-statusRoom, 3)
 		if h.ink = goodInk; o.Status != remedies.MeetsTarget {
 			h.ink = badInk
 		}
@@ -175,13 +176,16 @@ func checkName(c *remedies.Check) string {
 	return c.Name + " (" + c.Note + ")"
 }
 
+// statusRoom is kept beside the status in the corner of a drawing, points.
+const statusRoom = 24.0
+
 func (s *sheet) drawHeading(h heading, left, top, width float64) {
 	room := width
 	if h.status != "" {
 		w := headFace.width(h.status)
 		b := s.line(headFace, h.ink, left+width-w-5, top-2, h.status).grown(4)
 		s.add(stroke{pen{h.ink, 1, nil}, [][]xy{append(b.corners(), b.corners()[0])}})
-		room -= w + 24
+		room -= w + statusRoom
 	}
 	s.line(titleFace, inkBlack, left, top, titleFace.fit(clean(h.title), room))
 	y := top - titleFace.lineHeight()

@@ -33,7 +33,7 @@ func (a *author) back() (*drawing.Figure, error) {
 		name  string
 		point *report.BackPoint
 	}{{"low cohesion", &f.Low}, {"middle", &f.Middle}, {"high cohesion", &f.High}} {
-		rows = append(rows, cells(p.name, p.point.Text()))
+		rows = append(rows, cells(p.name, symbols.Replace(p.point.Text())))
 	}
 	a.table([]column{text("point"), text("strength of " + f.Soil)}, rows)
 	for _, c := range report.BackCautions() {

@@ -16,6 +16,15 @@ type book struct {
 	y     float64 // Where the next thing stands on the last page.
 	part  string
 	parts []entry
+	last  headed // The heading written last.
+}
+
+// headed is a heading with where it stands, so that it can follow what it belongs to on to the next page.
+type headed struct {
+	name         string
+	page         int     // From 1.
+	marks, texts int     // On its page before it.
+	from, to     float64 // y.
 }
 
 // entry is a line of the contents.
@@ -77,15 +86,40 @@ func (b *book) heading(name string) {
 // headingHere writes a heading on the page in hand, whatever its size.
 func (b *book) headingHere(name string) {
 	const follows = 46.0
+	from := b.y
 	if b.y > contentTop {
 		b.y += 6
 	}
 	b.need(faceHead.lead() + follows)
+	p := b.page()
+	h := headed{name: name, page: len(b.pages), marks: len(p.marks), texts: len(p.texts), from: min(from, b.y)}
 	for _, l := range b.wrap(faceHead, name, b.width()) {
 		b.put(faceHead, ink, b.left(), b.y, l)
 		b.y += faceHead.lead()
 	}
 	b.y += 3
+	h.to = b.y
+	b.last = h
+}
+
+// together makes room for what is h high and stays in one piece, on the next page with the heading right above it if it must. What stands at the
+// top of a page already has all the room that there is.
+func (b *book) together(h float64) {
+	if b.y+h <= contentFoot || b.y <= contentTop {
+		return
+	}
+	l := b.last
+	if l.page != len(b.pages) || l.to != b.y {
+		b.turn(b.page().fold)
+		return
+	}
+	if l.from <= contentTop {
+		return
+	}
+	p := b.page()
+	p.marks, p.texts = p.marks[:l.marks], p.texts[:l.texts]
+	b.turn(p.fold)
+	b.headingHere(l.name)
 }
 
 // para writes a paragraph.
@@ -100,7 +134,7 @@ func (b *book) item(s string) { b.indented(faceBody, ink, 11, "–", s) }
 // indented writes a paragraph, its lines behind a mark.
 func (b *book) indented(f face, c colour, indent float64, lead, s string) {
 	b.upright()
-	for i, l := range b.wrap(f, s, b.width()-indent) {
+	for i, l := range b.wrap(f, tied(s), b.width()-indent) {
 		b.need(f.lead())
 		if i == 0 && lead != "" {
 			b.put(f, c, b.left(), b.y, lead)

@@ -61,7 +61,7 @@ func (b *book) tableIn(s style, columns []column, rows []row, x, width float64) 
 		b.tableRow(strong, columns, head, widths, x, row{})
 		b.rule(x, x+width, b.y-0.4, 0.7, rule)
 	}
-	b.need(strong.height(head) + b.together(s, rows, widths))
+	b.together(strong.height(head) + b.whole(s, rows, widths))
 	writeHead()
 	for i := range rows {
 		r := &rows[i]
@@ -82,8 +82,8 @@ func (b *book) tableIn(s style, columns []column, rows []row, x, width float64) 
 // wholeRows is the number of rows up to which a table is not parted between pages.
 const wholeRows = 8
 
-// together returns the height of the rows that stay with the head of their table: all of a short table, the first two of a long one.
-func (b *book) together(s style, rows []row, widths []float64) float64 {
+// whole returns the height of the rows that stay with the head of their table: all of a short table, the first two of a long one.
+func (b *book) whole(s style, rows []row, widths []float64) float64 {
 	if len(rows) > wholeRows {
 		rows = rows[:2]
 	}

@@ -2,6 +2,7 @@ package pdfreport
 
 import (
 	"fmt"
+	"regexp"
 	"slices"
 	"strings"
 
@@ -34,9 +35,12 @@ func cubic(s string) string { return strings.ReplaceAll(s, " m3", " m³") }
 // raised writes the powers of a unit as printers do.
 func raised(unit string) string { return strings.NewReplacer("m2", "m²", "m3", "m³").Replace(unit) }
 
+// symbols writes letters of formulas as printers do.
+var symbols = strings.NewReplacer("phi'", "φ′", "c' ", "c′ ", "tan beta", "tan β", " degrees", "°")
+
 // sentence gives a text a capital and a full stop; quotation marks of the case file are left out.
 func sentence(s string) string {
-	s = strings.ReplaceAll(s, "`", "")
+	s = symbols.Replace(strings.ReplaceAll(s, "`", ""))
 	if s == "" {
 		return ""
 	}
@@ -129,6 +133,12 @@ func strength(s report.Strength, order []string) string {
 	}
 	return "undrained in " + strings.Join(undrained, ", ") + "; drained elsewhere"
 }
+
+// measured finds a number with its unit.
+var measured = regexp.MustCompile(`(\d) (m[²³]?|kPa|kN|%|m³/m)([ ,.;:)]|$)`)
+
+// tied keeps numbers and their units on one line.
+func tied(s string) string { return measured.ReplaceAllString(s, "$1"+noBreak+"$2$3") }
 
 // unbroken keeps a text on one line.
 func unbroken(s string) string { return strings.ReplaceAll(s, " ", noBreak) }
