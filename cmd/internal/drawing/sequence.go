@@ -131,15 +131,18 @@ func (s *sheet) panel(p *picture, q *panel, number int, f Box) {
 func (s *sheet) state(p *picture, q *panel) {
 	before, ground := crop(q.section.GroundBefore(), p.x0, p.x1), crop(q.section.Ground, p.x0, p.x1)
 	s.add(fill{soilTint(0), s.view.lines([][]lem.Point{under(ground, s.view.y0-1)})})
-	for _, b := range q.section.Placed[min(len(p.job.Section.Placed), len(q.section.Placed)):] {
-		s.add(fill{soilTint(b.Soil), [][]xy{s.view.line(b.Outline)}})
+	const apart = 3.4 // Points between the lines of a hatch.
+	below := [][]xy{s.view.line(under(ground, s.view.y0-1))}
+	added := q.section.Placed[min(len(p.job.Section.Placed), len(q.section.Placed)):]
+	for _, b := range added {
+		ring := [][]xy{s.view.line(b.Outline)}
+		s.add(fill{soilTint(b.Soil), ring}, stroke{fillPen, hatch(fillHatchAngle, apart, ring, below)})
 	}
 	common := lower(before, ground)
-	const apart = 3.4 // Points between the lines of a hatch.
 	if cuts := s.view.lines(between(before, common)); len(cuts) > 0 {
 		s.add(stroke{cutPen, hatch(cutHatchAngle, apart, cuts)})
 	}
-	if fills := s.view.lines(between(ground, common)); len(fills) > 0 {
+	if fills := s.view.lines(between(ground, common)); len(fills) > 0 && len(added) == 0 {
 		s.add(stroke{fillPen, hatch(fillHatchAngle, apart, fills)})
 	}
 	for _, t := range q.section.Strata[1:] {
@@ -147,6 +150,9 @@ func (s *sheet) state(p *picture, q *panel) {
 	}
 	if !same(before, ground) {
 		s.add(stroke{pen{inkGrey, 0.6, []float64{4, 2}}, [][]xy{s.view.line(before)}})
+	}
+	for _, r := range q.section.Restraints {
+		s.add(stroke{pen{inkBlack, 1.8, nil}, [][]xy{s.view.line([]lem.Point{{X: r.X, Y: r.Top}, {X: r.X, Y: r.Bottom}})}})
 	}
 	if o := q.outcome; o != nil {
 		s.panelWater(p, &o.Check.Situation.Water)

@@ -96,7 +96,7 @@ func gatherCurves(options []remedies.Option) (curves []curve, target float64, sh
 		o := &options[i]
 		c := curve{name: curveName(o), style: curveStyles[len(curves)%len(curveStyles)]}
 		for _, t := range o.Tradeoff {
-			fs := t.Reached
+			fs := reached(o, &t)
 			if share {
 				fs /= t.RequiredFS - t.Shift
 			}
@@ -116,6 +116,18 @@ func gatherCurves(options []remedies.Option) (curves []curve, target float64, sh
 		target = 1
 	}
 	return curves, target, share
+}
+
+// reached is the FS of a point: where it is the design that was sized, not more than the audit left of it.
+func reached(o *remedies.Option, t *remedies.TradeoffPoint) float64 {
+	same := func(a, b remedies.Value) bool {
+		return a.Name == b.Name && (a.Value == b.Value || math.IsNaN(a.Value) && math.IsNaN(b.Value))
+	}
+	g := o.Governing()
+	if g == nil || math.IsNaN(g.FS) || !slices.EqualFunc(o.Parameters, t.Parameters, same) {
+		return t.Reached
+	}
+	return min(t.Reached, t.RequiredFS-t.Shift+g.FS-g.Check.Required)
 }
 
 // curveName is the direct label of a curve: the option, and what its sized design takes.

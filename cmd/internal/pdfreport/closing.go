@@ -123,8 +123,8 @@ func (a *author) shifted(o *report.Option) {
 		if t.Shift == 0 || !t.Earthworks.Known() {
 			continue
 		}
-		if t.ReachedFS < t.RequiredFS {
-			parts = append(parts, fmt.Sprintf("FS %s: not reached, the best is %s", asked(t), report.FactorText(t.ReachedFS)))
+		if reached(o, t) < t.RequiredFS {
+			parts = append(parts, fmt.Sprintf("FS %s: not reached, the best is %s", asked(t), report.FactorText(reached(o, t))))
 			continue
 		}
 		parts = append(parts, fmt.Sprintf("FS %s: %s m³/m", asked(t), report.QuantityText(float64(t.Earthworks))))

@@ -1,6 +1,7 @@
 package pdfreport
 
 import (
+	"math"
 	"regexp"
 	"strings"
 	"testing"
@@ -123,6 +124,21 @@ func TestWhatWouldChangeTheAnswer(t *testing.T) {
 		if !strings.Contains(got, want) {
 			t.Errorf("the report does not say %q", want)
 		}
+	}
+}
+
+// A design that was audited is never said to reach more than its audit left, whatever target it was sized for.
+func TestReachedIsAudited(t *testing.T) {
+	size := map[string]report.Parameter{"height": {Value: 2, Unit: "m"}}
+	o := &report.Option{Order: []string{"height"}, Parameters: size}
+	o.Situations = []report.Answer{{Name: "wet", RequiredFS: 1.3, Found: report.Found{FS: 1.25}}}
+	p := &report.TradePoint{RequiredFS: 1.25, Shift: -0.05, ReachedFS: 1.27, Parameters: size}
+	if got := float64(reached(o, p)); math.Abs(got-1.25) > 1e-12 {
+		t.Errorf("reached %v, want the 1.25 of the audit", got)
+	}
+	p.Parameters = map[string]report.Parameter{"height": {Value: 3, Unit: "m"}}
+	if got := reached(o, p); got != 1.27 {
+		t.Errorf("another design reached %v, want 1.27", got)
 	}
 }
 

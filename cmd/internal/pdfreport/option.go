@@ -225,7 +225,7 @@ func (a *author) tradeoff(o *report.Option, r *remedies.Option) error {
 		}
 		r := cells(asked(t), report.FactorText(reached(o, t)), report.QuantityText(float64(t.Earthworks)),
 			report.TotalText(float64(t.Earthworks)*a.f.Case.Length), o.Dimensions(t.Parameters))
-		if t.ReachedFS < t.RequiredFS {
+		if reached(o, t) < t.RequiredFS {
 			r.cells[4] = "not reached; the best: " + r.cells[4]
 			r.inks = map[int]colour{1: inkBad, 4: inkBad}
 		}
@@ -255,9 +255,9 @@ func asked(t *report.TradePoint) string {
 
 // reached is the FS of a point of a trade-off: where it is the design that was sized, not more than its audit left.
 func reached(o *report.Option, t *report.TradePoint) report.Number {
-	sized := t.Shift == 0 && o.Dimensions(t.Parameters) == o.Dimensions(o.Parameters)
+	sized := o.Dimensions(t.Parameters) == o.Dimensions(o.Parameters)
 	if g, ok := o.Governing(); ok && sized && g.FS.Known() {
-		return min(t.ReachedFS, t.RequiredFS+g.Margin())
+		return min(t.ReachedFS, t.RequiredFS-report.Number(t.Shift)+g.Margin())
 	}
 	return t.ReachedFS
 }
