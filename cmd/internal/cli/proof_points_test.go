@@ -5,8 +5,10 @@ import (
 	"encoding/json"
 	"maps"
 	"math"
+	"os"
 	"path/filepath"
 	"reflect"
+	"regexp"
 	"strings"
 	"testing"
 )
@@ -36,8 +38,16 @@ type theirBack struct {
 	} `json:"back_analysis"`
 }
 
-// pointsOf runs compare on a case and returns what it prints, the result, and the back-analysis in it, from which all else can be made again.
-func pointsOf(t *testing.T, path string, args ...string) (printed string, f *theirFile, back *theirBack) {
+// pointsRun is a comparison made by the command.
+type pointsRun struct {
+	folder  string
+	printed string // In one line.
+	file    *theirFile
+	back    *theirBack
+}
+
+// pointsOf runs compare on a case; what it writes can be made again from the result alone.
+func pointsOf(t *testing.T, path string, args ...string) pointsRun {
 	t.Helper()
 	var stdout, stderr bytes.Buffer
 	out := filepath.Join(t.TempDir(), "works")
@@ -53,24 +63,25 @@ func pointsOf(t *testing.T, path string, args ...string) (printed string, f *the
 			t.Errorf("%s is not made again as it was", name)
 		}
 	}
-	f, back = new(theirFile), new(theirBack)
-	for _, to := range []any{f, back} {
+	r := pointsRun{out, strings.Join(strings.Fields(stdout.String()), " "), new(theirFile), new(theirBack)}
+	for _, to := range []any{r.file, r.back} {
 		if err := json.Unmarshal(files[resultName], to); err != nil {
 			t.Fatal(err)
 		}
 	}
-	return strings.Join(strings.Fields(stdout.String()), " "), f, back
+	return r
 }
 
 // TestChoiceFlipsAfterASlip compares the slipped demo by the command: drains gain by friction, so that they are least where most of the strength
 // that the slip leaves open is friction, and do not get there where most of it is cohesion. A stranger finds FS 1 on the observed slip with the
 // strength of each point, and the FS that the file says on every slip of every option.
 func TestChoiceFlipsAfterASlip(t *testing.T) {
-	printed, f, back := pointsOf(t, filepath.Join(demoFolder, "slipped.yaml"))
+	r := pointsOf(t, filepath.Join(demoFolder, "slipped.yaml"))
+	f := r.file
 	want := map[string]string{"low": "trench_drains", "middle": "trench_drains", "high": "berm"}
-	b := &back.Back
-	if len(b.Points) != len(want) || b.SameLeast || b.SameOrder || !strings.Contains(printed, "The choice flips.") {
-		t.Fatalf("%d points, same least %t, same ranking %t; printed %s", len(b.Points), b.SameLeast, b.SameOrder, printed)
+	b := &r.back.Back
+	if len(b.Points) != len(want) || b.SameLeast || b.SameOrder || !strings.Contains(r.printed, "The choice flips.") {
+		t.Fatalf("%d points, same least %t, same ranking %t; printed %s", len(b.Points), b.SameLeast, b.SameOrder, r.printed)
 	}
 	for i := range b.Points {
 		p := &b.Points[i]
@@ -111,19 +122,42 @@ func TestChoiceFlipsAfterASlip(t *testing.T) {
 // which backanalyse writes for it gives.
 func TestOneOptionDoesNotFlip(t *testing.T) {
 	path := filepath.Join(demoFolder, "slipped.yaml")
-	printed, _, back := pointsOf(t, path, "--only", "berm")
-	b := &back.Back
-	if len(b.Points) != 3 || !b.SameLeast || !b.SameOrder || !strings.Contains(printed, "least earthworks is the same at all three points: toe berm") {
-		t.Fatalf("%d points, same least %t, same ranking %t; printed %s", len(b.Points), b.SameLeast, b.SameOrder, printed)
+	r := pointsOf(t, path, "--only", "berm")
+	b := &r.back.Back
+	if len(b.Points) != 3 || !b.SameLeast || !b.SameOrder || !strings.Contains(r.printed, "least earthworks is the same at all three points: toe berm") {
+		t.Fatalf("%d points, same least %t, same ranking %t; printed %s", len(b.Points), b.SameLeast, b.SameOrder, r.printed)
 	}
 	folder := t.TempDir()
 	backanalysed(t, path, "--write", folder)
-	printed, written, none := pointsOf(t, filepath.Join(folder, "slipped-middle.yaml"), "--only", "berm", "--skip-back-analysis")
-	if len(none.Back.Points) > 0 || strings.Contains(printed, "three points") {
+	written := pointsOf(t, filepath.Join(folder, "slipped-middle.yaml"), "--only", "berm", "--skip-back-analysis")
+	if len(written.back.Back.Points) > 0 || strings.Contains(written.printed, "three points") {
 		t.Error("--skip-back-analysis does not leave it out")
 	}
-	got, want := &b.Points[1].Options[0], &written.Options[0]
+	got, want := &b.Points[1].Options[0], &written.file.Options[0]
 	if got.Status != "meets target" || got.Status != want.Status || !reflect.DeepEqual(got.Parameters, want.Parameters) {
 		t.Errorf("middle point: %s %v; the case written for it: %s %v", got.Status, got.Parameters, want.Status, want.Parameters)
+	}
+	verifyTells(t, r.folder, exitOK, "berm at the high point: no slip below target found in 2 searches")
+	path = filepath.Join(r.folder, resultName)
+	src, err := os.ReadFile(path)
+	if err != nil {
+		t.Fatal(err)
+	}
+	forged := regexp.MustCompile(`("name": "high",\s+"cohesion_kPa": )6\.`).ReplaceAll(src, []byte("${1}5."))
+	if bytes.Equal(forged, src) {
+		t.Fatal("there is no cohesion to forge")
+	}
+	if err := os.WriteFile(path, forged, 0o644); err != nil {
+		t.Fatal(err)
+	}
+	verifyTells(t, r.folder, exitNothingMeets, "in wet winter the reported slip has FS")
+}
+
+// verifyTells runs verify on a folder, which must end with a code and say something.
+func verifyTells(t *testing.T, folder string, code int, want string) {
+	t.Helper()
+	var stdout, stderr bytes.Buffer
+	if got := run(t.Context(), []string{"verify", folder}, nil, &stdout, &stderr); got != code || !strings.Contains(stdout.String(), want) {
+		t.Errorf("exit code %d, want %d and %q: %s%s", got, code, want, &stdout, &stderr)
 	}
 }

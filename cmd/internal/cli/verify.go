@@ -7,6 +7,7 @@ import (
 	"io/fs"
 	"os"
 	"path/filepath"
+	"strings"
 
 	"github.com/spf13/cobra"
 
@@ -28,7 +29,8 @@ func newVerifyCommand() *cobra.Command {
 		Short: "Try to refute a finished comparison",
 		Long: `verify checks a finished comparison from its result.json and witnesses.json alone. It evaluates every witness again: the cheaper
 design, the slip, its FS. Then it searches every option that meets the target anew, with other trial slips and four times the effort. An option
-for which it finds a slip below the required FS is refuted, and the slip is printed.
+for which it finds a slip below the required FS is refuted, and the slip is printed. So is every option that meets the target with a strength
+that an observed slip leaves open.
 
 What is not refuted is not thereby proven: no slip below the target was found in so many searches.
 
@@ -46,6 +48,7 @@ What is not refuted is not thereby proven: no slip below the target was found in
 // verdict is what verify found of one option.
 type verdict struct {
 	Option     string        `json:"option"`
+	Point      string        `json:"point,omitempty"` // Of a back-analysis, that the option is judged at.
 	Witnesses  int           `json:"witnesses"`
 	Mismatches []mismatch    `json:"mismatches"`
 	Searches   int           `json:"searches"`
@@ -96,7 +99,11 @@ func runVerify(ctx context.Context, c *cobra.Command, o *verifyOptions, folder s
 		}
 		verdicts = append(verdicts, v)
 	}
-	return printVerdicts(c, o, verdicts)
+	points, err := verifyPoints(ctx, job, file, settings)
+	if err != nil {
+		return finished(ctx, err)
+	}
+	return printVerdicts(c, o, append(verdicts, points...))
 }
 
 // readWitnesses reads the witnesses of a folder.
@@ -178,6 +185,26 @@ func verifyOption(ctx context.Context, asked, rebuilt *remedies.Job, o *remedies
 	return v, nil
 }
 
+// summary says in a line what was found.
+func (v *verdict) summary() string {
+	name := v.Option
+	var parts []string
+	if v.Point != "" {
+		name += " at the " + v.Point + " point"
+	} else {
+		parts = append(parts, fmt.Sprintf("%d witnesses hold", v.Witnesses-len(v.Mismatches)))
+	}
+	switch {
+	case v.Searches > 0 && len(v.Refuting) > 0:
+		parts = append(parts, fmt.Sprintf("%d searches", v.Searches))
+	case v.Searches > 0:
+		parts = append(parts, fmt.Sprintf("no slip below target found in %d searches", v.Searches))
+	case v.Point != "": // Its slips were evaluated again.
+		parts = append(parts, "does not meet the target")
+	}
+	return name + ": " + strings.Join(parts, "; ")
+}
+
 func printVerdicts(c *cobra.Command, o *verifyOptions, verdicts []verdict) error {
 	refuted := false
 	for _, v := range verdicts {
@@ -190,14 +217,7 @@ func printVerdicts(c *cobra.Command, o *verifyOptions, verdicts []verdict) error
 		}
 	} else {
 		for _, v := range verdicts {
-			line := fmt.Sprintf("%s: %d witnesses hold", v.Option, v.Witnesses-len(v.Mismatches))
-			if v.Searches > 0 {
-				line += fmt.Sprintf("; no slip below target found in %d searches", v.Searches)
-				if len(v.Refuting) > 0 {
-					line = fmt.Sprintf("%s: %d witnesses hold; %d searches", v.Option, v.Witnesses-len(v.Mismatches), v.Searches)
-				}
-			}
-			if _, err := fmt.Fprintln(w, line); err != nil {
+			if _, err := fmt.Fprintln(w, v.summary()); err != nil {
 				return err
 			}
 			for _, l := range v.Lines {

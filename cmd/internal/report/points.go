@@ -1,6 +1,11 @@
 package report
 
-import "standfast/remedies"
+import (
+	"maps"
+	"slices"
+
+	"standfast/remedies"
+)
 
 // BackAnalysis says what the observed slip of the case leaves open: the strengths of one soil with which it just fails, and every option sized
 // again with each of them.
@@ -72,4 +77,24 @@ func (b *builder) sized(p *remedies.SizedPoint) Sized {
 		out.Least = &least
 	}
 	return out
+}
+
+// At returns the file as it would be with the strength of a point: its soil, the slope as it is and the options, and behind them the works
+// chosen without it where they are of another size.
+func (f *File) At(p *Sized) *File {
+	out := *f
+	out.BackAnalysis, out.Existing, out.Options, out.LeastEarthworks = nil, p.Existing, slices.Clone(p.Options), p.Least
+	out.Soils = maps.Clone(f.Soils)
+	s := out.Soils[f.BackAnalysis.Soil]
+	s.PowerLaw, s.Drained = nil, Drained{Cohesion: p.Cohesion, Friction: p.Friction}
+	out.Soils[f.BackAnalysis.Soil] = s
+	if c := p.Chosen; c != nil {
+		if o := p.option(c.Name); o != nil && maps.Equal(o.Parameters, c.Parameters) {
+			return &out
+		}
+		chosen := *c
+		chosen.Name += " as chosen"
+		out.Options = append(out.Options, chosen)
+	}
+	return &out
 }
