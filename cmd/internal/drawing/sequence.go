@@ -136,6 +136,10 @@ func (s *sheet) state(p *picture, q *panel) {
 	added := q.section.Placed[min(len(p.job.Section.Placed), len(q.section.Placed)):]
 	for _, b := range added {
 		ring := [][]xy{s.view.line(b.Outline)}
+		if b.Soil >= len(p.job.Section.Soils) { // What a hole in panels leaves, as a mean along the works.
+			s.add(fill{soilTint(0), ring}, stroke{cutPen, hatch(cutHatchAngle, 2*apart, ring, below)})
+			continue
+		}
 		s.add(fill{soilTint(b.Soil), ring}, stroke{fillPen, hatch(fillHatchAngle, apart, ring, below)})
 	}
 	common := lower(before, ground)

@@ -138,18 +138,37 @@ func (b *builder) addSoils() {
 		}
 		t := soilText{
 			Name: name, Tint: fmt.Sprintf("tint%d", tints[name]), Weight: report.SizeText(s.UnitWeight) + " kN/m³",
-			Drained: fmt.Sprintf("c′ %s kPa, φ′ %s°", report.SizeText(s.Drained.Cohesion), report.SizeText(s.Drained.Friction)),
-		}
-		if u := s.Undrained; u != nil {
-			t.Undrained = "cu " + report.SizeText(u.Strength) + " kPa"
-			if len(u.Points) > 0 {
-				t.Undrained = "cu by position"
-			} else if u.Gradient != 0 {
-				t.Undrained += " + " + report.SizeText(u.Gradient) + " kPa/m"
-			}
+			Drained: drainedWords(&s), Undrained: undrainedWords(s.Undrained),
 		}
 		b.m.Soils = append(b.m.Soils, t)
 	}
+}
+
+func drainedWords(s *report.Soil) string {
+	if p := s.PowerLaw; p != nil {
+		return fmt.Sprintf("τ = %s pa (σ′/pa)^%s, pa %s kPa", report.SizeText(p.A), report.SizeText(p.B), report.SizeText(p.Atmospheric))
+	}
+	return fmt.Sprintf("c′ %s kPa, φ′ %s°", report.SizeText(s.Drained.Cohesion), report.SizeText(s.Drained.Friction))
+}
+
+func undrainedWords(u *report.Undrained) string {
+	switch {
+	case u == nil:
+		return ""
+	case len(u.Points) > 0:
+		return "cu by position"
+	case u.Ratio != nil:
+		out := "cu " + report.SizeText(*u.Ratio) + " σ′v before works"
+		if u.Minimum != nil && *u.Minimum > 0 {
+			out += ", at least " + report.SizeText(*u.Minimum) + " kPa"
+		}
+		return out
+	}
+	out := "cu " + report.SizeText(u.Strength) + " kPa"
+	if u.Gradient != 0 {
+		out += " + " + report.SizeText(u.Gradient) + " kPa/m"
+	}
+	return out
 }
 
 // tintCount is the number of soil colours in the style.
