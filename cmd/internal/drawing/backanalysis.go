@@ -19,19 +19,19 @@ type backPlot struct {
 
 func inDegrees(rad float64) float64 { return rad * 180 / math.Pi }
 
-// plotOf returns how the unknown of a back-analysis is drawn: c' over phi', or FS over the single unknown.
+// plotOf returns how the unknown of a back-analysis is drawn: c' over φ′, or FS over the single unknown.
 func plotOf(u remedies.Unknown) backPlot {
 	fs := func(p *remedies.BackPoint) float64 { return p.FS }
 	friction := func(p *remedies.BackPoint) float64 { return inDegrees(p.Friction) }
 	const yTitle = "FS of the observed slip"
 	switch u {
 	case remedies.FrictionAlone:
-		return backPlot{"angle of friction phi', degrees (c' = 0)", yTitle, friction, fs, func(p *remedies.BackPoint) string {
-			return fmt.Sprintf("phi' %s°", rounded(friction(p)))
+		return backPlot{"angle of friction φ′, degrees (c′ = 0)", yTitle, friction, fs, func(p *remedies.BackPoint) string {
+			return fmt.Sprintf("φ′ %s°", cutShort(friction(p), 2))
 		}}
 	case remedies.UndrainedCu:
 		return backPlot{"undrained strength cu, kPa", yTitle, func(p *remedies.BackPoint) float64 { return p.Strength }, fs, func(p *remedies.BackPoint) string {
-			return fmt.Sprintf("cu %s kPa", rounded(p.Strength))
+			return fmt.Sprintf("cu %s kPa", cutShort(p.Strength, 2))
 		}}
 	case remedies.PressureRatio:
 		return backPlot{"pore pressure ratio ru", yTitle, func(p *remedies.BackPoint) float64 { return p.Ru }, fs, func(p *remedies.BackPoint) string {
@@ -39,12 +39,12 @@ func plotOf(u remedies.Unknown) backPlot {
 		}}
 	case remedies.StrengthPair:
 	}
-	return backPlot{"angle of friction phi', degrees", "cohesion c', kPa", friction, func(p *remedies.BackPoint) float64 { return p.Cohesion }, func(p *remedies.BackPoint) string {
-		return fmt.Sprintf("c' %s kPa, phi' %s°", rounded(p.Cohesion), rounded(friction(p)))
+	return backPlot{"angle of friction φ′, degrees", "cohesion c′, kPa", friction, func(p *remedies.BackPoint) float64 { return p.Cohesion }, func(p *remedies.BackPoint) string {
+		return fmt.Sprintf("c′ %s kPa, φ′ %s°", cutShort(p.Cohesion, 2), cutShort(friction(p), 2))
 	}}
 }
 
-// BackAnalysis draws the pairs of c' and phi' with which an observed slip just fails, or its FS over the single unknown, with the low, middle and high
+// BackAnalysis draws the pairs of c' and φ′ with which an observed slip just fails, or its FS over the single unknown, with the low, middle and high
 // points marked. It returns ErrNothingToDraw for a curve of fewer than two points.
 func BackAnalysis(name, soil string, b *remedies.BackAnalysis, opts Options) (*Figure, error) {
 	if len(b.Curve) < 2 {

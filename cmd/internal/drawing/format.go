@@ -12,11 +12,13 @@ import (
 // sumNoise is what the sum of areas of a section can be off by rounding alone, m3/m; a quantity is not rounded up for it.
 const sumNoise = 1e-9
 
-// fsDown writes a factor of safety with three decimals, never higher than it is: the shortest decimal that reads back as v is cut.
-func fsDown(v float64) string {
-	s := strconv.FormatFloat(v, 'f', -1, 64)
-	whole, decimals, _ := strings.Cut(s, ".")
-	return whole + "." + (decimals + "000")[:3]
+// fsDown writes a factor of safety with three decimals, never higher than it is.
+func fsDown(v float64) string { return cutShort(v, 3) }
+
+// cutShort writes a positive number with so many decimals, never higher than it is: the shortest decimal that reads back as v is cut.
+func cutShort(v float64, decimals int) string {
+	whole, rest, _ := strings.Cut(strconv.FormatFloat(v, 'f', -1, 64), ".")
+	return whole + "." + (rest + strings.Repeat("0", decimals))[:decimals]
 }
 
 // quantityUp writes a quantity with two decimals, rounded up.
