@@ -10,7 +10,7 @@ import (
 
 // Heights of trade-offs on a page of text, points.
 const (
-	leastPlot = 200.0
+	leastPlot = 180.0
 	mostPlot  = 290.0
 )
 
@@ -33,16 +33,13 @@ func (a *author) comparison() error {
 	a.haul()
 	a.matrix()
 	a.points()
+	a.reasons()
 	high := contentFoot - a.y - 3*faceHead.lead()
 	if high < leastPlot { // It goes to the next page.
 		high = mostPlot
 	}
 	figure, err := drawing.TradeoffPlot(a.r.Options, a.width(), min(high, mostPlot))
-	if err := a.amid("Earthworks against the factor of safety reached (ringed: the size that meets every requirement)", figure, err); err != nil {
-		return err
-	}
-	a.reasons()
-	return nil
+	return a.amid("Earthworks against the factor of safety reached (ringed: the size that meets every requirement)", figure, err)
 }
 
 // optionRow is the row of an option in the comparison.

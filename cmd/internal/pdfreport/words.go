@@ -137,8 +137,10 @@ func strength(s report.Strength, order []string) string {
 // measured finds a number with its unit.
 var measured = regexp.MustCompile(`(\d) (m[²³]?|kPa|kN|%|m³/m)([ ,.;:)]|$)`)
 
-// tied keeps numbers and their units on one line.
-func tied(s string) string { return measured.ReplaceAllString(s, "$1"+noBreak+"$2$3") }
+// tied keeps numbers with their units, and with what they are of, on one line.
+func tied(s string) string {
+	return strings.ReplaceAll(measured.ReplaceAllString(s, "$1"+noBreak+"$2$3"), "x = ", "x"+noBreak+"="+noBreak)
+}
 
 // unbroken keeps a text on one line.
 func unbroken(s string) string { return strings.ReplaceAll(s, " ", noBreak) }
