@@ -68,7 +68,7 @@ type Option struct {
 
 	Certificate *Certificate // nil for the existing slope and for trials.
 	Tradeoff    []TradeoffPoint
-	Front       *Front // Of several remedies with drains among them that meet the target; nil if none was asked for or drains have one length only.
+	Front       *Front // Of several remedies that meet the target, drains whose metres are sized among them; nil if none was asked for.
 }
 
 // Governing returns the outcome with the least margin; nil if there is none.

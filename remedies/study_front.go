@@ -34,8 +34,17 @@ func (p *FrontPoint) Governing() *Outcome {
 	return (&Option{Situations: p.Situations, Stages: p.Stages}).Governing()
 }
 
-// hasFront reports whether requests sized together have a front: one of several is for drains with water between them.
-func hasFront(group []Request) bool { return len(group) > 1 && slices.ContainsFunc(group, isDrains) }
+// metresOfDrain are the parameters of drains that set how many metres there are. Others, such as the depth of a trench, change them a little.
+var metresOfDrain = []string{"length", "spacing", "from", "to"}
+
+// hasFront reports whether requests sized together have a front: one of several is for drains with water between them, whose metres are sized.
+func hasFront(group []Request) bool {
+	return len(group) > 1 && slices.ContainsFunc(group, func(r Request) bool {
+		return isDrains(r) && slices.ContainsFunc(r.Axes, func(a optimize.Axis) bool {
+			return a.Len() > 1 && slices.Contains(metresOfDrain, a.Name)
+		})
+	})
+}
 
 // fronted sizes the works of a group from some slips, and finds their front where they have one. Should a slip met on the way reject the answer,
 // they are sized anew, and that slip with them.

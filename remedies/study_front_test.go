@@ -119,3 +119,40 @@ func TestFrontAgainstEveryDesign(t *testing.T) {
 		t.Errorf("front %v, want %v; whole %v, %d unresolved, %d searches", got, want, front.Whole, front.Unresolved, front.Searches)
 	}
 }
+
+// TestFrontOnlyWhereMetresAreSized checks which works are asked for a front: several, with drains whose metres the user leaves open.
+func TestFrontOnlyWhereMetresAreSized(t *testing.T) {
+	for name, c := range map[string]struct {
+		change func(j *remedies.Job)
+		want   bool
+	}{
+		"as it is":      {func(*remedies.Job) {}, true},
+		"not asked for": {func(j *remedies.Job) { j.Title = "no fronts" }, false},
+		"one spacing": {func(j *remedies.Job) {
+			for i, a := range j.Requests[1].Axes {
+				j.Requests[1].Axes[i].Max = a.Min
+			}
+		}, false},
+	} {
+		j := drainedBank()
+		j.Requests[0].Axes[0].Min = j.Requests[0].Axes[0].Max
+		j.Combinations = [][]string{{"berm", "drilled_drains"}}
+		c.change(j)
+		r, err := remedies.Study(t.Context(), j, remedies.Settings{Fronts: j.Title != "no fronts", Slices: 12})
+		if err != nil {
+			t.Fatal(err)
+		}
+		fronts := 0
+		for _, o := range r.Options {
+			if o.Front != nil {
+				fronts++
+			}
+			if len(o.Remedies) == 2 && o.Status != remedies.MeetsTarget {
+				t.Fatalf("%s: the pair is %s: the case no longer shows what it should", name, o.Status)
+			}
+		}
+		if fronts > 0 != c.want {
+			t.Errorf("%s: %d fronts", name, fronts)
+		}
+	}
+}

@@ -155,8 +155,8 @@ type Option struct {
 	Certificate *Certificate `json:"certificate" jsonschema:"nullable"` // What the answer rests on; null if nothing was sized.
 	Section     *Section     `json:"section"`                           // The section after works.
 	Tradeoff    []TradePoint `json:"tradeoff"`                          // The works against the FS asked for.
-	// Earthworks against metres of drain, of remedies sized together with drains among them that meet the target; null: none, or the drains have
-	// one length.
+	// Earthworks against metres of drain, of remedies sized together that meet the target, drains among them whose length or spacing is sized; null:
+	// none.
 	Front *Front `json:"front" jsonschema:"nullable"`
 }
 
