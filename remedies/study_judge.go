@@ -64,6 +64,9 @@ func (z *sizing) explain(ctx context.Context, o *Option, res *optimize.Result[Cu
 	x, verdict := free.X, "the target would take about %s, which breaks %s: %s"
 	if x == nil {
 		x, verdict = free.Best.X, "even %s, which breaks %s, "+NotEven+": %s"
+		if free.Status == optimize.Unresolved { // Designs that could not be judged might.
+			verdict = "even %s, which breaks %s, was not found to reach the target: %s"
+		}
 	}
 	var limits, details []string
 	broken := o.Proposal // Of the smallest works, where the ground allows none of them.

@@ -89,13 +89,16 @@ func (o *Option) FrontText() string {
 	var s []string
 	switch {
 	case len(f.Points) == 1:
-		s = append(s, "More drain than the answer has saves no earthworks.")
+		s = append(s, "More drain than this saves no earthworks.")
 	case f.Whole:
 		s = append(s, "Of the designs that meet every check none was found with less of one and no more of the other than these.")
 	default:
 		s = append(s, "Of the designs that meet every check none was found with less of one and no more of the other than any of these; there may be more such designs between them.")
 	}
 	s = append(s, "With less drain than the last none was found to meet every check. Searched and audited.")
+	if !slices.ContainsFunc(f.Points, func(p FrontPoint) bool { return p.Answer }) {
+		s = append(s, "The design of the option itself was made least by something else, and is not among them.")
+	}
 	if f.Unresolved > 0 {
 		s = append(s, fmt.Sprintf("Designs that could not be judged, and might come in: %s.", TotalText(float64(f.Unresolved))))
 	}

@@ -59,6 +59,14 @@ func TestFront(t *testing.T) {
 	if strings.Contains(f.Options[1].FrontDimensions(&front.Points[0]), "depth") {
 		t.Error("a dimension that all points share is told of each")
 	}
+	if text := f.Options[1].FrontText(); strings.Contains(text, "made least by something else") {
+		t.Errorf("the answer is among the points: %s", text)
+	}
+	f.Options[1].Front.Points = f.Options[1].Front.Points[1:2]
+	if text := f.Options[1].FrontText(); !strings.Contains(text, "More drain than this saves no earthworks.") || !strings.Contains(text, "made least by something else") {
+		t.Errorf("one point that is not the answer: %s", text)
+	}
+	f = New(r, src)
 	back, err := Rebuild(f)
 	if err != nil {
 		t.Fatal(err)
