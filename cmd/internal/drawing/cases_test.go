@@ -345,7 +345,8 @@ func crowded() drawn {
 		j.Limits.KeepClear = append(j.Limits.KeepClear, remedies.KeepClear{Name: fmt.Sprintf("fibre cable %d of the regional network operator", i+1), FromX: 56 + 3*float64(i), ToX: 58 + 3*float64(i), NoDig: true})
 	}
 	sec := d.opt.Proposal.Section
-	sec.Soils = append(j.Section.Soils, soil("granular fill", 20, 0, 36, 0))
+	j.Section.Soils = append(j.Section.Soils, soil("granular fill", 20, 0, 36, 0))
+	sec.Soils = j.Section.Soils
 	sec.Strata, sec.Loads = j.Section.Strata, j.Section.Loads
 	sec.Placed = []lem.Body{{Soil: len(sec.Soils) - 1, Outline: sec.Placed[0].Outline}}
 	d.opt.Proposal.Section = sec

@@ -6,6 +6,7 @@ import (
 	"strings"
 	"testing"
 
+	"standfast/lem"
 	"standfast/remedies"
 )
 
@@ -78,5 +79,26 @@ func TestTradeoffPlotLabels(t *testing.T) {
 	}
 	if _, err := TradeoffPlot([]remedies.Option{{Name: "berm"}}, 511, 200); !errors.Is(err, ErrNothingToDraw) {
 		t.Errorf("options without curves give %v", err)
+	}
+}
+
+// Exchanged ground is hatched as fill, a hole in panels, which its stage has as a mean along the works, as cut; a restraint is drawn.
+func TestBodiesInASequence(t *testing.T) {
+	d := cuttingWithBerm()
+	full := construction(t, d, 400)
+	if len(strokesOf(full, fillPen)) == 0 || len(strokesOf(full, cutPen)) != 0 {
+		t.Error("the berm is not hatched as fill alone")
+	}
+	stage := d.opt.Proposal.Section
+	stage.Soils = append(append([]lem.Soil{}, stage.Soils...), soil("clay between holes", 12, 1, 20, 0))
+	stage.Placed = []lem.Body{{Soil: len(stage.Soils) - 1, Outline: stage.Placed[0].Outline}}
+	stage.Restraints = []lem.Restraint{{Name: "piles", X: 45, Top: 51, Bottom: 46, Force: 10}}
+	d.opt.Stages[0].Check.Section = &stage
+	open := construction(t, d, 400)
+	if len(strokesOf(open, cutPen)) == 0 {
+		t.Error("a hole in panels is not hatched as cut")
+	}
+	if n := len(strokesOf(open, pen{inkBlack, 1.8, nil})); n != 1 {
+		t.Errorf("%d restraints drawn, want 1", n)
 	}
 }
