@@ -8,6 +8,8 @@ import (
 	"strings"
 	"testing"
 
+	"pgregory.net/rapid"
+
 	"standfast/cmd/internal/casefile"
 	"standfast/cmd/internal/dxf"
 	"standfast/lem"
@@ -70,6 +72,46 @@ func TestFeaturesAreDrawn(t *testing.T) {
 				}
 			}
 		})
+	}
+}
+
+// furnish adds whatever else a case can say of a section, anywhere in it.
+func furnish(t *rapid.T, d drawn) {
+	j := d.job
+	g := j.Section.Ground
+	offset := func(what string) float64 { return rapid.Float64Range(g.Left()-5, g.Right()+5).Draw(t, what) }
+	depth := rapid.Float64Range(0.1, 8).Draw(t, "depth")
+	var s lem.Section
+	for range rapid.IntRange(0, 3).Draw(t, "restraints") {
+		x := offset("restraint at")
+		s.Restraints = append(s.Restraints, lem.Restraint{Name: "row of piles", X: x, Top: g.At(x), Bottom: g.At(x) - depth, Force: 40})
+		s.LineLoads = append(s.LineLoads, lem.LineLoad{Name: "wall", X: offset("line load at"), Vertical: rapid.Float64Range(-9, 9).Draw(t, "down"), Horizontal: 3})
+		a, b := offset("slip from"), offset("slip to")
+		if a > b {
+			a, b = b, a
+		}
+		if b-a > 0.1 {
+			s.Known = append(s.Known, lem.KnownSlip{Line: lem.Profile{{X: a, Y: g.At(a)}, {X: (a + b) / 2, Y: g.At((a+b)/2) - depth}, {X: b, Y: g.At(b)}}, Friction: 0.2})
+			j.Limits.Overhead = append(j.Limits.Overhead, remedies.Overhead{Name: "line", FromX: a, ToX: b, Level: g.At(a) + depth, Clearance: depth / 2})
+		}
+		j.Waters[0].Points = append(j.Waters[0].Points, lem.PressurePoint{X: x, Y: g.At(x) - depth, Pressure: 9.81 * depth})
+	}
+	switch rapid.IntRange(0, 2).Draw(t, "crack") {
+	case 1:
+		s.Crack = &lem.TensionCrack{Depth: depth, WaterShare: 0.5}
+	case 2:
+		a := offset("crack from")
+		s.Crack = &lem.TensionCrack{Line: lem.Profile{{X: a, Y: g.At(a) - depth}, {X: a + 6, Y: g.At(a)}}}
+	}
+	j.Waters[0].BySoil = []remedies.SoilLine{{Soil: 0, Line: j.Waters[0].Line}, {Soil: 1, Line: g}}
+	r := rapid.Float64Range(1, 60).Draw(t, "radius")
+	j.Observed = &remedies.Observed{Slip: lem.Slip{Kind: lem.Circle, Centre: lem.Point{X: offset("centre at"), Y: g[0].Y + r/2}, Radius: r}}
+	targets := []*lem.Section{&j.Section}
+	if d.opt != nil {
+		targets = append(targets, &d.opt.Proposal.Section)
+	}
+	for _, q := range targets {
+		q.Restraints, q.LineLoads, q.Known, q.Crack = s.Restraints, s.LineLoads, s.Known, s.Crack
 	}
 }
 

@@ -269,11 +269,15 @@ func stretch(d *drawn, kx, ky float64) {
 func TestLabelsOfAnySection(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {
 		d := anySection(t)
+		furnish(t, d)
 		f, err := Section(d.job, d.opt, Options{Credit: "test"})
 		if err != nil {
 			t.Fatal(err)
 		}
 		checkLabels(t, f)
+		if err := SectionDXF(io.Discard, d.job, d.opt); err != nil {
+			t.Fatal(err)
+		}
 	})
 }
 
