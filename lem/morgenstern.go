@@ -30,7 +30,7 @@ func (ws *Workspace) morgensternPrice(shape *SideForce, leftward bool) (f, lambd
 	}
 	pole := ws.pole()
 	start := max(f, pole*startAbovePole)
-	f, lambda, ok := ws.newton(start, ws.startLambda(), pole, leftward)
+	f, lambda, ok := ws.newton(start, ws.startLambda(leftward), pole, leftward)
 	if ok {
 		reason = ws.judge(f, lambda, leftward).Reason
 	}
@@ -99,14 +99,13 @@ func (ws *Workspace) startF(leftward bool) float64 {
 }
 
 // startLambda is the tangent of 0.7 of the mean inclination of the slip (a common guess, no source), for the greatest f.
-func (ws *Workspace) startLambda() float64 {
-	var drop, width float64
-	for i := range ws.slice[:ws.n] {
-		s := &ws.slice[i]
-		drop += s.sin / s.cos * s.b
-		width += s.b
+func (ws *Workspace) startLambda(leftward bool) float64 {
+	a, b := ws.edge(0, -1, leftward), ws.edge(ws.n-1, 1, leftward)
+	drop := (a.Y - b.Y) / (b.X - a.X)
+	if leftward {
+		drop = -drop
 	}
-	return 0.7 * max(0, drop/width) / ws.sidePeak
+	return 0.7 * max(0, drop) / ws.sidePeak
 }
 
 // pole returns the F below which m-alpha of some slice is negative.

@@ -8,8 +8,9 @@ const (
 	steepestHead  = 80 * math.Pi / 180 // The head may not be steeper.
 	exitAllowance = 15 * math.Pi / 180 // The exit may not rise more steeply than Rankine's passive wedge, 45 degrees - phi/2, and this.
 	// In a concave slip every part rises against its uphill neighbour and is dragged down by it: lambda is positive. The equations of
-	// force and moment have further roots with lambda well below 0 and a low F, which no slip can follow.
-	leastLambda   = -0.1
+	// force and moment have further roots with lambda below 0 and a low F, which no slip can follow: a descent that may go to -0.1 bends trials
+	// into deep wedges until they reach that, and brought F of undrained banks down to half of that of the circle.
+	leastLambda   = -closureTol
 	turnTol       = 1e-6 // A bend to the wrong side of less than this, as a difference of slope, is rounding.
 	shortestPiece = 2e-3 // Nodes of a trial stay this share of its length apart.
 	mostDeepening = 1.6  // A trial shallower than the depth of interest is deepened by at most this factor.

@@ -36,6 +36,48 @@ func TestDefaultSearchAgainstLongOnes(t *testing.T) {
 	}
 }
 
+// TestHowThorough measures searches for the lowest circle against the lowest of two of eight times the effort by both samplers; in its long form it
+// prints the table of docs/theory.md.
+func TestHowThorough(t *testing.T) {
+	sections := uint64(5)
+	if longRun() {
+		sections = 60
+	}
+	rows := []struct {
+		name string
+		o    SearchOptions
+		most float64
+	}{
+		{"by daylight, effort 0.5", SearchOptions{Effort: 0.5}, math.Inf(1)},
+		{"by daylight, effort 1", SearchOptions{}, 0.003},
+		{"by daylight, effort 2", SearchOptions{Effort: 2}, 0.003},
+		{"by centre, effort 1", SearchOptions{Sampler: ByCentre}, math.Inf(1)},
+	}
+	miss := make([][]float64, len(rows))
+	trials := make([]int, len(rows))
+	for seed := range sections {
+		s, sit, _ := inventedSection(seed)
+		m := compiled(t, s, sit)
+		long := min(lowestCircle(t, m, SearchOptions{Effort: 8, Seed: 99}), lowestCircle(t, m, SearchOptions{Effort: 8, Seed: 98, Sampler: ByCentre}))
+		for i, row := range rows {
+			row.o.Methods, row.o.MinDepth = []Method{Bishop}, 1
+			found, err := m.Search(context.Background(), row.o)
+			if err != nil {
+				t.Fatal(err)
+			}
+			f := found.Basins[0].Result.F
+			miss[i] = append(miss[i], f/long-1)
+			trials[i] += found.Trials
+			if f > long*(1+row.most) {
+				t.Errorf("section %d, %s: F = %.4f, long searches find %.4f", seed, row.name, f, long)
+			}
+		}
+	}
+	for i, row := range rows {
+		t.Logf("%s: too high by %s; %d evaluations", row.name, spread(miss[i]), trials[i]/int(sections))
+	}
+}
+
 // TestSearchRepeats: the same model, options and seed give the same minima to the last bit; a search leaves nothing behind in the model.
 func TestSearchRepeats(t *testing.T) {
 	s, sit := benchSection(3)

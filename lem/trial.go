@@ -175,6 +175,9 @@ func (s *searcher) sweep(ctx context.Context) {
 		}
 	}
 	s.sweepTangents(ctx)
+	if s.o.MinDepth > 0 {
+		s.sweepHeld(ctx)
+	}
 }
 
 // sweepTangents tries arcs that just touch a boundary between soils from above: minima often rest on one, and are narrow there.
