@@ -3,6 +3,8 @@ package remedies
 import (
 	"errors"
 	"fmt"
+	"math"
+	"strings"
 )
 
 // Objective is what a sizing makes least.
@@ -39,8 +41,8 @@ func ParseObjective(name string) (Objective, bool) {
 	return 0, false
 }
 
-// ErrBlankRate says that an objective needs a rate or factor that the case leaves blank.
-var ErrBlankRate = errors.New("remedies: the objective needs a rate that is blank")
+// ErrBlankRate says that an objective needs rates or factors that the case leaves blank.
+var ErrBlankRate = errors.New("remedies: the objective needs rates or factors that are blank")
 
 // value returns what is made least of a proposal; NaN where it needs a blank rate.
 func (o Objective) value(j *Job, q *Quantities) float64 {
@@ -54,11 +56,59 @@ func (o Objective) value(j *Job, q *Quantities) float64 {
 	return q.Earthworks()
 }
 
-// priced reports an error if works of the smallest size cannot be priced by the objective.
-func (z *sizing) priced() error {
-	p := z.w.apply(z.j, z.w.smallest())
-	if v := z.j.Objective.value(z.j, &p.Quantities); v != v {
-		return fmt.Errorf("%w: %s by %s", ErrBlankRate, z.w.title, z.j.Objective)
+// blank names the rates, factors and measures that the objective needs for a proposal and that the case leaves blank.
+func (o Objective) blank(j *Job, q *Quantities) []string {
+	var out []string
+	for _, it := range BillOf(j, q).Items {
+		amount := it.Cost
+		if o == LeastCarbon {
+			amount = it.Carbon
+		}
+		switch {
+		case math.IsNaN(it.PerMetre): // Benching alone is measured by a factor.
+			out = appendOnce(out, "bench_step")
+		case math.IsNaN(amount):
+			out = appendOnce(out, it.Work.String())
+		}
+	}
+	return out
+}
+
+// unpriced names what is blank of all that the works need, at their least size or, where the site allows it, their greatest.
+func (w *works) unpriced(j *Job) []string {
+	for i, x := range [][]float64{w.smallest(), w.greatest()} {
+		p := w.apply(j, x)
+		if i > 0 && len(p.Violations) > 0 {
+			continue
+		}
+		if math.IsNaN(j.Objective.value(j, &p.Quantities)) {
+			return j.Objective.blank(j, &p.Quantities)
+		}
+	}
+	return nil
+}
+
+// priced reports an error if anything that is to be sized, or works of the user's own, cannot be priced: what has no price has no rank either.
+func (st *study) priced() error {
+	groups := [][]Request{}
+	if !adequate(st.existing, st.s) {
+		groups = st.j.groups(st.s.Pairs)
+	}
+	for i := range st.j.Trials {
+		groups = append(groups, st.j.Trials[i].Requests)
+	}
+	var lacking []string
+	for _, g := range groups {
+		w, err := newWorks(st.j, groupName(g), g)
+		if err != nil {
+			return err
+		}
+		if names := w.unpriced(st.j); len(names) > 0 {
+			lacking = appendOnce(lacking, w.title+" needs "+strings.Join(names, ", "))
+		}
+	}
+	if len(lacking) > 0 {
+		return fmt.Errorf("%w: %s", ErrBlankRate, strings.Join(lacking, "; "))
 	}
 	return nil
 }

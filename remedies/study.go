@@ -21,6 +21,9 @@ func Study(ctx context.Context, job *Job, s Settings) (*Result, error) {
 		return nil, err
 	}
 	st := &study{ctx: ctx, j: j, s: &s, existing: existing, pools: map[string][]pooled{}}
+	if err := st.priced(); err != nil {
+		return nil, err
+	}
 	again := s.Points && job.Observed != nil
 	groups := len(j.groups(s.Pairs))
 	if st.total = groups + len(j.Trials); again {
@@ -168,9 +171,6 @@ func (st *study) size(group []Request) error {
 	z := newSizing(st.j, w, st.s)
 	if g := st.existing.Governing(); g != nil {
 		z.existingMargin = g.Margin()
-	}
-	if err := z.priced(); err != nil {
-		return err
 	}
 	ctx := st.ctx
 	start := st.start(z, group)

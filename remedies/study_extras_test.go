@@ -2,6 +2,7 @@ package remedies
 
 import (
 	"context"
+	"errors"
 	"math"
 	"strings"
 	"testing"
@@ -85,8 +86,8 @@ func TestSensitivityTurnsTheRightWay(t *testing.T) {
 func TestObjectiveNeedsRates(t *testing.T) {
 	j := fencedBerm(70)
 	j.Objective = LeastCost
-	if _, err := Study(context.Background(), j, Settings{}); err == nil {
-		t.Fatal("a study by cost went through without rates")
+	if _, err := Study(context.Background(), j, Settings{}); !errors.Is(err, ErrBlankRate) || !strings.Contains(err.Error(), "toe berm needs strip, bench_step, import") {
+		t.Fatalf("a study by cost without rates: %v", err)
 	}
 	j.Economics.Cost = Factors{Work: map[Work]float64{Import: 10, Strip: 0, Dispose: 0, Excavate: 0, Place: 0, Benching: 0}}
 	j.Economics.BenchStep = 0.5
@@ -96,6 +97,12 @@ func TestObjectiveNeedsRates(t *testing.T) {
 	}
 	q := &res.Options[0].Proposal.Quantities
 	near(t, "cost", Cost(j, q), 10*q.Earthworks()*j.Length, 1e-9)
+	delete(j.Economics.Cost.Work, Excavate)
+	unload, _ := Find("unload")
+	j.Trials = []Trial{{Name: "own", Requests: []Request{DefaultRequest(&unload)}}}
+	if _, err := Study(context.Background(), j, Settings{}); !errors.Is(err, ErrBlankRate) || !strings.Contains(err.Error(), "unload the head needs cut") {
+		t.Errorf("a trial without a price, which has no rank: %v", err)
+	}
 	for _, name := range Objectives() {
 		if o, ok := ParseObjective(name); !ok || o.String() != name {
 			t.Errorf("objective %q does not come back", name)

@@ -80,3 +80,12 @@ func (w *works) smallest() []float64 {
 	}
 	return x
 }
+
+// greatest returns the last design of the lattice.
+func (w *works) greatest() []float64 {
+	x := make([]float64, len(w.axes))
+	for i, a := range w.axes {
+		x[i] = a.At(a.Len() - 1)
+	}
+	return x
+}

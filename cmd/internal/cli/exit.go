@@ -63,7 +63,8 @@ func exitCode(err error) int {
 		return exitInterrupted
 	case errors.Is(err, errNothingMeets), errors.Is(err, errRefuted):
 		return exitNothingMeets
-	case errors.As(err, &usage), len(casefile.Faults(err)) > 0, errors.Is(err, remedies.ErrRequest):
+	case errors.As(err, &usage), len(casefile.Faults(err)) > 0, errors.Is(err, remedies.ErrRequest),
+		errors.Is(err, remedies.ErrBlankRate):
 		return exitInput
 	}
 	return exitOther
