@@ -46,8 +46,9 @@ func (ws *Workspace) bishop(leftward bool) (float64, Status) {
 // bracket holds the bounds of the root of a falling function.
 type bracket struct{ lo, hi float64 }
 
-// next narrows the bounds by the value g of the function at f and returns where to look next, given dg = -g' and ddg = g”/2: a step of Halley's
-// method, which is exact for a single slice, one of Newton's where that leaves the bounds, else the middle. At the root itself it stays there.
+// next narrows the bounds by the value g of the function at f and returns where to look next, given dg and ddg, its slope negated and half its
+// second derivative: a step of Halley's method, which is exact for a single slice, one of Newton's where that leaves the bounds, else the middle.
+// At the root itself it stays there.
 func (b *bracket) next(f, g, dg, ddg float64) float64 {
 	if g > 0 {
 		b.lo = f

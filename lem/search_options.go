@@ -36,8 +36,8 @@ type Minimum struct {
 // Minima is the outcome of a search.
 type Minima struct {
 	Basins []Minimum // Every distinct basin, ascending in F.
-	// Unresolved holds trials that no governing method could solve and whose screen (Ordinary, on polylines Janbu without f0 where that is higher) is lower than the lowest F found,
-	// lowest screen first, at most MaxUnresolved of them.
+	// Unresolved holds trials that no governing method could solve and whose screen (Ordinary, on polylines Janbu without f0 where that is higher)
+	// is lower than the lowest F found, lowest screen first, at most MaxUnresolved of them.
 	Unresolved      []Minimum
 	Trials          int // Slip evaluations spent.
 	NotConverged    int // Trials that no governing method could solve; of polylines, that the first of them could not.

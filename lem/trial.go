@@ -10,7 +10,7 @@ const (
 	flattest     = 0.02 // Least half angle of an arc, rad.
 	roundest     = 1.65 // Greatest half angle, rad: a little beyond a half circle.
 	touchTol     = 1e-9 // How close an arc is brought to the firm base, as a share of its size.
-	projectSteps = 24   // Steps to bring an arc to the depth of interest or up to the firm base.
+	projectSteps = 24   // Steps of regula falsi to bring an arc to the depth of interest or to touch a boundary.
 	tangentSteps = 20   // Halvings of the half angle to bring an arc to a boundary.
 	// An arc is brought to within this share above the depth of interest. Where a boundary lies at just that depth, as beneath a berm with a face
 	// parallel to the old one, an arc deeper by a share d cuts a chord through it as long as the root of d: 1e-3 cost F up to a tenth.
