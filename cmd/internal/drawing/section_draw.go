@@ -214,5 +214,20 @@ func (p *picture) labelSlip(s *sheet) {
 	}
 	n.lines = append(n.lines, bodyFace.wrap(clean(name), 150, 2)...)
 	n.lines = append(n.lines, "required "+number(g.Check.Required, 2))
-	s.label(n, below, s.view.at(p.slip[len(p.slip)/2]))
+	var anchors []xy
+	for _, share := range []float64{0.5, 0.4, 0.6, 0.3, 0.7} {
+		anchors = append(anchors, s.view.at(pointAlong(p.slip, share)))
+	}
+	s.label(n, below, anchors...)
+}
+
+// pointAlong returns the point of a line at a share of its extent across.
+func pointAlong(l []lem.Point, share float64) lem.Point {
+	x := l[0].X + share*(l[len(l)-1].X-l[0].X)
+	for i := 0; i+1 < len(l); i++ {
+		if a, b := l[i], l[i+1]; x <= b.X && b.X > a.X {
+			return lem.Point{X: x, Y: a.Y + (b.Y-a.Y)*(x-a.X)/(b.X-a.X)}
+		}
+	}
+	return l[len(l)-1]
 }
