@@ -153,6 +153,6 @@ func (p *Proposal) checkImport(j *Job) {
 	b := BalanceOf(j, &p.Quantities)
 	brought := (sum(b.Import) + p.Quantities.Stone) * j.Length
 	if over := brought - *j.Limits.MaxImport; over > limitSlack {
-		p.violate(limitImport, over, "%.0f m3 of fill have to be brought, the %s is %.0f m3", math.Ceil(brought-limitSlack), limitImport, *j.Limits.MaxImport)
+		p.violate(limitImport, over, "%.0f m3 of fill have to be brought, the %s is %g m3", math.Ceil(brought-limitSlack), limitImport, *j.Limits.MaxImport)
 	}
 }

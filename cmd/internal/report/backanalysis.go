@@ -3,8 +3,6 @@ package report
 import (
 	"fmt"
 	"io"
-	"math"
-	"strconv"
 
 	"github.com/jedib0t/go-pretty/v6/table"
 
@@ -157,28 +155,33 @@ func (p *printer) backTable(f *BackFile, points []BackPoint, names []string) {
 		}
 		for _, v := range []*float64{q.Cohesion, q.Friction, q.Strength} {
 			if v != nil {
-				row = append(row, floorText(*v+shownTol*math.Abs(*v), 2))
+				row = append(row, strengthText(*v))
 			}
 		}
 		if q.Ru != nil {
-			row = append(row, ceilText(*q.Ru*(1-shownTol), 3))
+			row = append(row, ratioText(*q.Ru))
 		}
 		rows = append(rows, append(row, FactorText(q.FS+shownTol)))
 	}
 	p.table(columns, rows)
 }
 
-// Text says in one line what a point is.
+// Text says in one line what a point is: strengths rounded down, a pore pressure ratio up.
 func (q *BackPoint) Text() string {
-	number := func(v float64) string { return strconv.FormatFloat(v, 'g', 4, 64) }
 	switch {
 	case q.Friction != nil:
-		return fmt.Sprintf("c' %s kPa, phi' %s degrees", number(*q.Cohesion), number(*q.Friction))
+		return fmt.Sprintf("c' %s kPa, phi' %s degrees", strengthText(*q.Cohesion), strengthText(*q.Friction))
 	case q.Strength != nil:
-		return fmt.Sprintf("cu %s kPa", number(*q.Strength))
+		return fmt.Sprintf("cu %s kPa", strengthText(*q.Strength))
 	}
-	return fmt.Sprintf("ru %s", number(*q.Ru))
+	return "ru " + ratioText(*q.Ru)
 }
+
+// strengthText returns a strength that was found, rounded down to two decimals but for what closing an equation leaves behind.
+func strengthText(v float64) string { return floorText(v*(1+shownTol), 2) }
+
+// ratioText returns a pore pressure ratio that was found, rounded up likewise to three decimals.
+func ratioText(v float64) string { return ceilText(v*(1-shownTol), 3) }
 
 // MethodNamed returns the governing method of that name and reports whether there is one.
 func MethodNamed(name string) (lem.Method, bool) {

@@ -13,7 +13,7 @@ const notNeeded = "not needed"
 
 // Strengths returns the cohesion and the angle of friction of a point, rounded down: "c' 0.00 kPa" and "phi' 25.49 degrees".
 func (s *Sized) Strengths() (cohesion, friction string) {
-	return "c' " + floorText(s.Cohesion*(1+shownTol), 2) + " kPa", "phi' " + floorText(s.Friction*(1+shownTol), 2) + " degrees"
+	return "c' " + strengthText(s.Cohesion) + " kPa", "phi' " + strengthText(s.Friction) + " degrees"
 }
 
 // Text says which strength a point has.
