@@ -35,7 +35,7 @@ func plotOf(u remedies.Unknown) backPlot {
 		}}
 	case remedies.PressureRatio:
 		return backPlot{"pore pressure ratio ru", yTitle, func(p *remedies.BackPoint) float64 { return p.Ru }, fs, func(p *remedies.BackPoint) string {
-			return fmt.Sprintf("ru %.3f", p.Ru)
+			return "ru " + upTo(p.Ru, 3)
 		}}
 	case remedies.StrengthPair:
 	}

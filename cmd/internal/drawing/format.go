@@ -26,6 +26,15 @@ func quantityUp(v float64) string {
 	return strconv.FormatFloat(math.Ceil((v-sumNoise)*100)/100+0, 'f', 2, 64)
 }
 
+// upTo writes a positive number rounded up to so many decimals.
+func upTo(v float64, decimals int) string {
+	unit := math.Pow10(decimals)
+	return strconv.FormatFloat(math.Ceil(v*unit-sumNoise)/unit, 'f', decimals, 64)
+}
+
+// requiredUp writes a required factor of safety, rounded up, with two decimals where they are enough and three else.
+func requiredUp(v float64) string { return strings.TrimSuffix(upTo(v, 3), "0") }
+
 // number writes v with at least the given decimals and at most four.
 func number(v float64, decimals int) string {
 	s := strconv.FormatFloat(v, 'f', 4, 64)

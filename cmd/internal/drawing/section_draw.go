@@ -213,7 +213,7 @@ func (p *picture) labelSlip(s *sheet) {
 		name = "stage: " + name
 	}
 	n.lines = append(n.lines, bodyFace.wrap(clean(name), 150, 2)...)
-	n.lines = append(n.lines, "required "+number(g.Check.Required, 2))
+	n.lines = append(n.lines, "required "+requiredUp(g.Check.Required))
 	var anchors []xy
 	for _, share := range []float64{0.5, 0.4, 0.6, 0.3, 0.7} {
 		anchors = append(anchors, s.view.at(pointAlong(p.slip, share)))

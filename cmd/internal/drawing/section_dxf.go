@@ -342,7 +342,7 @@ func (d *board) notes() {
 		if o.Check.Stage {
 			name = "stage: " + name
 		}
-		asked := "required " + number(o.Check.Required, 2)
+		asked := "required " + requiredUp(o.Check.Required)
 		if o.Check.Advisory {
 			asked = "told only"
 		}

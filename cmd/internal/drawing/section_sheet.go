@@ -161,7 +161,7 @@ func quantities(q *remedies.Quantities) string {
 func (p *picture) slipWords() string {
 	g := p.gov
 	out := "Governing slip: FS " + fsDown(g.FS) + " (" + methodName(g.Method) + "), " + clean(checkName(&g.Check)) + ", required " +
-		number(g.Check.Required, 2)
+		requiredUp(g.Check.Required)
 	if g.Slip.Kind == lem.Circle {
 		return out + "; circle about (" + rounded(g.Slip.Centre.X) + ", " + rounded(g.Slip.Centre.Y) + "), radius " +
 			rounded(g.Slip.Radius) + " m."
@@ -237,7 +237,7 @@ func (p *picture) fsRows() []fsRow {
 		if o.Check.Stage {
 			name = "stage: " + name
 		}
-		r := fsRow{name: nameLines(name), required: number(o.Check.Required, 2), fs: "none", verdict: "unresolved", bad: true}
+		r := fsRow{name: nameLines(name), required: requiredUp(o.Check.Required), fs: "none", verdict: "unresolved", bad: true}
 		if !math.IsNaN(o.FS) {
 			r.fs, r.method = fsDown(o.FS), methodName(o.Method)
 			switch {

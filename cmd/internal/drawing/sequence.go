@@ -192,7 +192,7 @@ func (q *panel) answer() string {
 	}
 	switch {
 	case o.Check.Required > 0:
-		out += ", required " + number(o.Check.Required, 2)
+		out += ", required " + requiredUp(o.Check.Required)
 	default:
 		out += ", told only"
 	}
