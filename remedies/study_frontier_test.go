@@ -39,15 +39,18 @@ func (d gridDesign) Search(context.Context, optimize.Effort) ([]optimize.Found[i
 
 // newGrid draws a lattice whose FS rises with works and drains, roughly, and sizes its answer.
 func newGrid(t *rapid.T, byCost bool, hide float64) *grid {
-	side := rapid.SampledFrom([]int{2, 6, 30})
-	axes := []optimize.Axis{{Name: "works", Max: float64(side.Draw(t, "works")) / 4, Step: 0.25}, {Name: "drains", Min: 3, Max: 3 + float64(side.Draw(t, "drains")), Step: 1}}
+	side := 40 // Half of the lattices have a front of more points than are shown.
+	if rapid.Bool().Draw(t, "small") {
+		side = rapid.IntRange(1, 6).Draw(t, "side")
+	}
+	axes := []optimize.Axis{{Name: "works", Max: float64(side) / 4, Step: 0.25}, {Name: "drains", Min: 3, Max: 3 + float64(side), Step: 1}}
 	designs := axes[0].Len() * axes[1].Len()
 	g := &grid{f: newFrontier[int](axes, designs), margins: make([][]float64, designs), hidden: make([][]bool, designs)}
 	g.f.byCost, g.f.settings.Allowance = byCost, 0.005
 	g.f.open = func(x []float64) optimize.Design[int] { return gridDesign{g, g.f.index(x)} }
 	const cuts = 3
-	noise := rapid.Float64Range(-0.1, 0.1)
-	asked := rapid.SampledFrom([]float64{0.1, 0.5, 0.8, 1.1}).Draw(t, "asked")
+	noise := rapid.Float64Range(-0.05, 0.05)
+	asked := rapid.SampledFrom([]float64{0.6, 0.7, 0.8}).Draw(t, "asked")
 	chance := rapid.Float64Range(0, 1)
 	for i := range designs {
 		x := optimize.Point(axes, i)
@@ -148,6 +151,7 @@ func TestFrontierAgainstAllPairs(t *testing.T) {
 			t.Fatalf("the answer %v is passed by: %v", own, got)
 		}
 	})
+
 	if wholes == 0 || parts == 0 {
 		t.Errorf("%d whole fronts, %d parts: one is not tested", wholes, parts)
 	}
@@ -182,5 +186,38 @@ func TestFrontierKeepsNothingThatASlipRejects(t *testing.T) {
 	})
 	if rejected == 0 {
 		t.Error("no answer was rejected: that is not tested")
+	}
+}
+
+// TestHasFront checks which works are asked for a front: several, with drains whose metres the user leaves open.
+func TestHasFront(t *testing.T) {
+	kind := func(name, sized string) Request {
+		k, _ := Find(name)
+		r := DefaultRequest(&k)
+		for i, a := range r.Axes {
+			r.Axes[i].Max = a.Min
+			if a.Name == sized {
+				r.Axes[i].Max, r.Axes[i].Step = a.Min+1, 0.5
+			}
+		}
+		return r
+	}
+	berm := kind("berm", "height")
+	for name, c := range map[string]struct {
+		group []Request
+		want  bool
+	}{
+		"spacing":            {[]Request{berm, kind("drilled_drains", "spacing")}, true},
+		"length":             {[]Request{kind("drilled_drains", "length"), berm}, true},
+		"spacing of trench":  {[]Request{berm, kind("trench_drains", "spacing")}, true},
+		"depth of trench":    {[]Request{berm, kind("trench_drains", "depth")}, false},
+		"one length":         {[]Request{berm, kind("drilled_drains", "")}, false},
+		"one remedy":         {[]Request{kind("drilled_drains", "spacing")}, false},
+		"no drains":          {[]Request{berm, kind("regrade", "batter")}, false},
+		"drains of one line": {[]Request{berm, kind("toe_drain", "depth")}, false},
+	} {
+		if got := hasFront(c.group); got != c.want {
+			t.Errorf("%s: %v, want %v", name, got, c.want)
+		}
 	}
 }
