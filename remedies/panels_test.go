@@ -129,8 +129,8 @@ func storyJob() *Job {
 }
 
 // TestOpenKeyStory digs the toe of an invented cutting in summer: 3 m wide, 1 m below the toe, with a nearly vertical back. The hole takes
-// the passive ground away and is far from safe in plane strain; in short panels far apart it is nearly as safe as the slope. The numbers
-// are those of one coarse computation by Bishop's method and are indicative only.
+// the passive ground away and is far from safe in plane strain; in short panels far apart it is nearly as safe as the slope. The values themselves
+// are compared with those of an analysis that shares no code in cmd/internal/cli, TestOpenKeyByAStranger.
 func TestOpenKeyStory(t *testing.T) {
 	j := storyJob()
 	p := apply(t, j, request("buttress", fillOf(rockfill), 2, 3, 1.5, 1, 3, 1.5, 0.05, 3, 15))
@@ -156,9 +156,7 @@ func TestOpenKeyStory(t *testing.T) {
 		t.Fatal(err)
 	}
 	before := found.Basins[0].Result.F
-	near(t, "FS before", before, 1.28, 0.03)
 	hole, panels := least["key open, plane strain"], least["key open, in panels"]
-	near(t, "FS of the open hole", hole, 0.94, 0.1)
 	if !(panels > hole+0.1 && panels < before && panels > 1.1) {
 		t.Errorf("FS %g before, %g in panels, %g in plane strain", before, panels, hole)
 	}

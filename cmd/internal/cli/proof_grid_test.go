@@ -3,20 +3,24 @@ package cli
 import (
 	"cmp"
 	"math"
+	"math/rand/v2"
 	"slices"
 )
 
-// A stranger's search for the lowest circle: every centre of a plain grid with circles down to every level of another, each with Bishop's
-// method as the stranger has it, then the lowest of them moved about as long as F falls. It has nothing of the program's searches.
+// A stranger's search for the lowest circle: every centre of a plain grid with circles down to every level of another, and circles through
+// every two of many points of the ground, which stand closer where it bends; each with Bishop's method as the stranger has it, then the lowest of
+// them moved about at random as long as F falls. It has nothing of the program's searches.
 
 // theirCircle is a circle by its centre and the level of its lowest point, with F by many slices.
 type theirCircle struct{ x, y, low, f float64 }
 
-// The grid, and how its lowest circles are moved.
+// The grids, and how their lowest circles are moved.
 const (
 	gridAcross, gridUp, gridDown = 17, 13, 14 // Centres across and up, levels of lowest points.
-	gridBest                     = 6          // Circles that are moved about.
-	gridFinest                   = 0.03       // m: the last step that they are moved by.
+	gridStations, gridAngles     = 28, 6      // Points of the ground, besides those where it bends; half angles of arcs.
+	gridFlattest                 = 0.15       // Fall of the chord of an arc between two points.
+	gridBest                     = 5          // Circles of each grid that are moved about.
+	gridMoves, gridShrink        = 220, 0.975 // How often, and by what the moves become smaller.
 	gridSlices                   = 16
 )
 
@@ -57,8 +61,32 @@ func (g *stranger) onCircle(c theirCircle, n int) float64 {
 	return least
 }
 
-// searchGrid goes through the grid and moves the lowest circles about. It returns them, the lowest first.
+// seed is a circle with the size of the moves that are to be tried on it.
+type seed struct{ circle, step theirCircle }
+
+// searchGrid goes through both grids and moves the lowest circles about. It returns them, the lowest first.
 func (g *stranger) searchGrid() []theirCircle {
+	var best []theirCircle
+	for _, seeds := range [][]seed{g.byCentres(), g.byDaylight()} {
+		slices.SortFunc(seeds, func(a, b seed) int { return cmp.Compare(a.circle.f, b.circle.f) })
+		var kept []seed
+		for _, s := range seeds {
+			near := func(k seed) bool {
+				a, b, far := s.circle, k.circle, min(s.step.x, k.step.x)
+				return max(math.Abs(a.x-b.x), math.Abs(a.y-b.y), 2*math.Abs(a.low-b.low)) < 1.5*far
+			}
+			if len(kept) < gridBest && !slices.ContainsFunc(kept, near) {
+				kept = append(kept, s)
+				best = append(best, g.move(s.circle, s.step, 0))
+			}
+		}
+	}
+	slices.SortFunc(best, func(a, b theirCircle) int { return cmp.Compare(a.f, b.f) })
+	return best
+}
+
+// byCentres returns the circles of the grid of centres that count.
+func (g *stranger) byCentres() (out []seed) {
 	ground := g.section.Ground
 	bottom, top := math.Inf(1), math.Inf(-1)
 	for _, p := range ground {
@@ -66,51 +94,62 @@ func (g *stranger) searchGrid() []theirCircle {
 	}
 	height, left, width := top-bottom, ground[0][0], ground[len(ground)-1][0]-ground[0][0]
 	step := theirCircle{x: width / (gridAcross + 1), y: 3 * height / gridUp, low: 2 * height / gridDown}
-	var all []theirCircle
 	for i := range gridAcross {
 		for k := range gridUp {
 			for m := range gridDown {
 				c := theirCircle{x: left + step.x*float64(i+1), y: bottom + height/2 + step.y*float64(k), low: top - step.low*(float64(m)+0.5)}
 				if c.f = g.onCircle(c, gridSlices); !math.IsInf(c.f, 1) {
-					all = append(all, c)
+					out = append(out, seed{c, step})
 				}
 			}
 		}
 	}
-	slices.SortFunc(all, func(a, b theirCircle) int { return cmp.Compare(a.f, b.f) })
-	var best []theirCircle
-	for _, c := range all {
-		near := func(b theirCircle) bool {
-			return math.Abs(b.x-c.x) < 1.5*step.x && math.Abs(b.y-c.y) < 1.5*step.y && math.Abs(b.low-c.low) < 1.5*step.low
-		}
-		if len(best) < gridBest && !slices.ContainsFunc(best, near) {
-			best = append(best, c)
-		}
-	}
-	for i := range best {
-		best[i] = g.move(best[i], step, 0)
-	}
-	slices.SortFunc(best, func(a, b theirCircle) int { return cmp.Compare(a.f, b.f) })
-	return best
+	return out
 }
 
-// move moves a circle along its three coordinates as long as F falls, by steps that are halved, until F is below enough.
-func (g *stranger) move(c, step theirCircle, enough float64) theirCircle {
-	const n = fewSlices
-	c.f = g.onCircle(c, n)
-	for max(step.x, step.y, step.low) > gridFinest {
-		better := c
-		for _, d := range []theirCircle{{x: step.x}, {x: -step.x}, {y: step.y}, {y: -step.y}, {low: step.low}, {low: -step.low}} {
-			d = theirCircle{x: c.x + d.x, y: c.y + d.y, low: c.low + d.low}
-			if d.f = g.onCircle(d, n); d.f < better.f {
-				better = d
+// byDaylight returns the circles through two points of the ground that count.
+func (g *stranger) byDaylight() (out []seed) {
+	ground := g.section.Ground
+	left, right := ground[0][0], ground[len(ground)-1][0]
+	var xs []float64
+	for i := 1; i < gridStations; i++ {
+		xs = append(xs, left+(right-left)*float64(i)/gridStations)
+	}
+	for _, p := range ground[1 : len(ground)-1] {
+		for _, beside := range []float64{0.02, 0.7, 1.5, 3} {
+			xs = append(xs, p[0]-beside, p[0]+beside)
+		}
+	}
+	slices.Sort(xs)
+	for i, a := range xs {
+		for _, b := range xs[i+1:] {
+			ya, yb := ground.at(a), ground.at(b)
+			chord := math.Hypot(b-a, yb-ya)
+			if a < left || b > right || math.Abs(ya-yb) < gridFlattest*(b-a) || chord < g.file.Settings.Depth {
+				continue
+			}
+			for k := range gridAngles {
+				half := math.Pi / 2 * (float64(k) + 0.7) / gridAngles
+				up, r := chord/2/math.Tan(half), chord/2/math.Sin(half)
+				c := theirPoint{(a+b)/2 - (yb-ya)/chord*up, (ya+yb)/2 + (b-a)/chord*up}
+				if f := g.counted(c, r, a, b, gridSlices); !math.IsInf(f, 1) {
+					out = append(out, seed{theirCircle{c[0], c[1], c[1] - r, f}, theirCircle{x: chord / 8, y: chord / 8, low: chord / 20}})
+				}
 			}
 		}
-		if better == c {
-			step = theirCircle{x: step.x / 2, y: step.y / 2, low: step.low / 2}
-		}
-		if c = better; c.f < enough {
-			break
+	}
+	return out
+}
+
+// move moves a circle at random as long as F falls, by steps that become smaller, until F is below enough.
+func (g *stranger) move(c, step theirCircle, enough float64) theirCircle {
+	rng := rand.New(rand.NewPCG(1, 2))
+	c.f = g.onCircle(c, fewSlices)
+	for size := 1.0; size > math.Pow(gridShrink, gridMoves) && c.f >= enough; size *= gridShrink {
+		n := func() float64 { return size * rng.NormFloat64() }
+		d := theirCircle{x: c.x + step.x*n(), y: c.y + step.y*n(), low: c.low + step.low*n()}
+		if d.f = g.onCircle(d, fewSlices); d.f < c.f {
+			c = d
 		}
 	}
 	c.f = g.onCircle(c, someSlices)
