@@ -66,7 +66,7 @@ func TestRandomPairs(t *testing.T) {
 		t.Errorf("%d draws, %d near, %d failed, %d searched", draws, all.near, all.failed, len(all.survivors))
 	}
 	if len(all.survivors) > draws/200 {
-		t.Errorf("%d of %d designs pass all slips of the certificate", len(all.survivors), draws)
+		t.Fatalf("%d of %d designs pass all slips of the certificate", len(all.survivors), draws)
 	}
 	p.search(t, all.survivors)
 }
