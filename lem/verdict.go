@@ -15,8 +15,8 @@ const (
 	// SmallMAlpha: where the base rises towards the exit, m-alpha = cos(alpha) + sin(alpha) tan(phi)/F is below 0.2 (Whitman and Bailey 1967
 	// warn below 0.2; recalled from memory), so that the normal force on the base grows without sense. It also bars exits much steeper than passive.
 	SmallMAlpha
-	// ReversedDrag, of Spencer and Morgenstern-Price like those that follow: lambda f is below -0.1 where f is greatest: the downhill side of a slice would hold up the uphill side, which sinks. On sharply
-	// bent slips the two equations have such roots, with an F too low, alone or beside the true one (the margin is ours).
+	// ReversedDrag, of Spencer and Morgenstern-Price like those that follow: lambda f is below 0 where f is greatest: the downhill side of a slice would hold up the uphill side, which sinks. On sharply
+	// bent slips the two equations have such roots, with an F too low, alone or beside the true one.
 	ReversedDrag
 	// BaseTension: the total normal forces on the base that pull outweigh those that press: the body would hang on its base. Some tension near the
 	// head, as cohesion brings with it, is no reason (the margin is ours).
@@ -45,9 +45,9 @@ func (r Reason) String() string {
 const (
 	// minMAlpha is the least m-alpha of an admissible slip.
 	minMAlpha   = 0.2
-	leastDrag   = -0.1 // Of Verdict.Drag.
-	mostThrust  = 0.3  // Of Verdict.Thrust.
-	mostTension = 1.0  // Of Verdict.Tension.
+	leastDrag   = -1e-6 // Of Verdict.Drag: rounding. With a margin of -0.1 lines that bend sharply far down in undrained clay had half of the F of the worst circle.
+	mostThrust  = 0.3   // Of Verdict.Thrust.
+	mostTension = 1.0   // Of Verdict.Tension.
 )
 
 // admitted returns F with the verdict of the m-alpha rule, for methods that have no other.
