@@ -4,6 +4,8 @@ import (
 	"math"
 	"strconv"
 	"strings"
+	"unicode"
+	"unicode/utf8"
 
 	"standfast/lem"
 	"standfast/remedies"
@@ -72,10 +74,11 @@ func methodName(m lem.Method) string {
 	return title(m.String())
 }
 
-// title writes a word with a capital.
+// title writes a word, in any alphabet, with a capital.
 func title(s string) string {
-	if s == "" {
+	first, n := utf8.DecodeRuneInString(s)
+	if n == 0 {
 		return s
 	}
-	return strings.ToUpper(s[:1]) + s[1:]
+	return string(unicode.ToUpper(first)) + s[n:]
 }

@@ -23,6 +23,8 @@ func TestRounding(t *testing.T) {
 		{"number with least decimals", number(2.5, 2), "2.50"},
 		{"number keeps what it needs", number(0.125, 2), "0.125"},
 		{"number without decimals", number(30, 0), "30"},
+		{"name in another alphabet", title("überhöhung"), "Überhöhung"},
+		{"name without letters", title(""), ""},
 		{"permeability", value(remedies.Value{Name: "drilled_drains.permeability", Unit: "m/s", Value: 1e-6}), "drilled drains permeability 1e-6 m/s"},
 	}
 	for _, c := range tests {

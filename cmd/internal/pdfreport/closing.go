@@ -52,7 +52,7 @@ func (a *author) changes() {
 	if o != nil {
 		a.margin(o)
 		if s := a.f.StepLessText(o); s != "" {
-			a.item(title(cubic(s)))
+			a.item(report.Capital(cubic(s)))
 		}
 		a.shortSwings(o)
 		for _, s := range a.f.RelaxationTexts(o) {
@@ -111,7 +111,7 @@ func (a *author) water() {
 func (a *author) margin(o *report.Option) {
 	if g, ok := o.Governing(); ok && g.FS.Known() && g.Margin() >= 0 {
 		a.item(fmt.Sprintf("%s stands by %s above the FS of %s required in %s. Whatever lowers FS there by more undoes the answer.",
-			title(o.Title), report.FactorText(g.Margin()), required(g.RequiredFS), g.Check))
+			report.Capital(o.Title), report.FactorText(g.Margin()), required(g.RequiredFS), g.Check))
 	}
 }
 

@@ -61,7 +61,7 @@ func optionRow(o *report.Option) row {
 
 // optionTitle names an option, with what sets it apart.
 func optionTitle(o *report.Option) string {
-	name := title(o.Title)
+	name := report.Capital(o.Title)
 	switch {
 	case o.Trial:
 		name += " (trial)"

@@ -78,7 +78,7 @@ func withSwings(f *report.File) {
 func chapterOf(t *testing.T, text string, f *report.File, i int) string {
 	t.Helper()
 	start := func(k int) int {
-		return strings.Index(text, "Option: "+optionTitle(&f.Options[k])+" "+title(f.Options[k].Status)+":")
+		return strings.Index(text, "Option: "+optionTitle(&f.Options[k])+" "+report.Capital(f.Options[k].Status)+":")
 	}
 	from, to := start(i), strings.Index(text, "Assumptions and cautions Assumptions")
 	if i+1 < len(f.Options) {

@@ -56,7 +56,7 @@ func (a *author) status(o *report.Option) {
 	if o.Status != meetsTarget {
 		c = inkBad
 	}
-	a.indented(faceStrong, c, 0, "", title(o.Status)+": "+reason(o)+".")
+	a.indented(faceStrong, c, 0, "", report.Capital(o.Status)+": "+reason(o)+".")
 	if dims := o.Dimensions(o.Parameters); dims != "" {
 		a.para("Works: " + dims + ".")
 	}
@@ -133,7 +133,7 @@ func (a *author) certificate(o *report.Option) {
 	}
 	a.heading("Certificate")
 	if o.Status == meetsTarget {
-		a.para(title(cubic(strings.TrimPrefix(o.CertificateText(), "Certificate: "))))
+		a.para(report.Capital(cubic(strings.TrimPrefix(o.CertificateText(), "Certificate: "))))
 	} else {
 		a.para(fmt.Sprintf("No design of this lattice within the limits was found to meet every check; shown is the best that was reached. %s of %s designs were rejected by a slip each.",
 			count(c.Witnessed), count(c.Cheaper)))

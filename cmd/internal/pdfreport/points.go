@@ -24,7 +24,7 @@ func (a *author) points() {
 	}
 	var rows []row
 	for _, r := range a.f.RankingRows() {
-		line := row{cells: []string{title(r.Title)}}
+		line := row{cells: []string{report.Capital(r.Title)}}
 		for _, c := range r.Cells {
 			line.cells = append(line.cells, raised(c))
 		}

@@ -44,19 +44,11 @@ func sentence(s string) string {
 	if s == "" {
 		return ""
 	}
-	s = strings.ToUpper(s[:1]) + s[1:]
+	s = report.Capital(s)
 	if !strings.HasSuffix(s, ".") {
 		s += "."
 	}
 	return cubic(s)
-}
-
-// title gives a text a capital.
-func title(s string) string {
-	if s == "" {
-		return s
-	}
-	return strings.ToUpper(s[:1]) + s[1:]
 }
 
 // method spells a method of slices as people do.
@@ -71,7 +63,7 @@ func method(name string) string {
 	case lem.JanbuPlain.String():
 		return "Janbu"
 	}
-	return title(name)
+	return report.Capital(name)
 }
 
 // required writes a required FS; a check of which nothing is asked has none.

@@ -80,16 +80,9 @@ func (p *printer) relaxations(f *File) {
 				p.line("")
 				first = false
 			}
-			p.para(" ", upper(o.Title)+": "+strings.ToLower(s[:1])+s[1:])
+			p.para(" ", Capital(o.Title)+": "+strings.ToLower(s[:1])+s[1:])
 		}
 	}
-}
-
-func upper(s string) string {
-	if s == "" {
-		return s
-	}
-	return strings.ToUpper(s[:1]) + s[1:]
 }
 
 // sensitivity prints how the least margin swings with the inputs, for the slope as it is and for an option.

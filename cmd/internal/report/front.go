@@ -115,7 +115,7 @@ func (p *printer) fronts(f *File) {
 }
 
 func (p *printer) front(f *File, o *Option) {
-	p.heading(upper(o.Title) + ": earthworks against metres of drain (FS rounded down, quantities up)")
+	p.heading(Capital(o.Title) + ": earthworks against metres of drain (FS rounded down, quantities up)")
 	columns := []column{{}, {head: "drains\nm/m", right: true}, {head: "earthworks\nm3/m", right: true}}
 	priced := slices.ContainsFunc(o.Front.Points, func(q FrontPoint) bool { return q.Cost != nil })
 	if priced {

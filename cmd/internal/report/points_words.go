@@ -118,7 +118,7 @@ func (a *BackAnalysis) chosenText() string {
 	if len(parts) == 0 {
 		return ""
 	}
-	return fmt.Sprintf("%s, of the size found with the strengths of the case: %s.", upper(title), strings.Join(parts, "; "))
+	return fmt.Sprintf("%s, of the size found with the strengths of the case: %s.", Capital(title), strings.Join(parts, "; "))
 }
 
 // leastText tells which option is least at each point.

@@ -78,3 +78,12 @@ func number(t *rapid.T, s string) float64 {
 	f, _ := r.Float64()
 	return f
 }
+
+// TestCapital checks that names of the user's own get a capital in any alphabet and stay whole.
+func TestCapital(t *testing.T) {
+	for of, want := range map[string]string{"": "", "toe berm": "Toe berm", "überhöhung": "Überhöhung", "насыпь": "Насыпь", "2 m cut": "2 m cut", "岸": "岸"} {
+		if got := Capital(of); got != want {
+			t.Errorf("%q becomes %q, want %q", of, got, want)
+		}
+	}
+}

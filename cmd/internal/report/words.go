@@ -4,11 +4,22 @@ import (
 	"fmt"
 	"slices"
 	"strings"
+	"unicode"
+	"unicode/utf8"
 
 	"standfast/lem"
 	"standfast/optimize"
 	"standfast/remedies"
 )
+
+// Capital gives a text a capital; it may be in any alphabet.
+func Capital(s string) string {
+	first, n := utf8.DecodeRuneInString(s)
+	if n == 0 {
+		return s
+	}
+	return string(unicode.ToUpper(first)) + s[n:]
+}
 
 // sizeOf returns a dimension in words, such as "top width 4 m" or "batter 1V:2H".
 func sizeOf(name string, value float64, unit string) string {

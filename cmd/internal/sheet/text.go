@@ -56,7 +56,7 @@ func sentence(s string) string {
 	if s == "" {
 		return ""
 	}
-	s = strings.ToUpper(s[:1]) + s[1:]
+	s = report.Capital(s)
 	if !strings.HasSuffix(s, ".") {
 		s += "."
 	}
