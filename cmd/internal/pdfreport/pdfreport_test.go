@@ -197,7 +197,7 @@ func TestDocumentSaysWhatTheResultSays(t *testing.T) {
 			}
 			for i := range f.Options {
 				o := &f.Options[i]
-				want = append(want, "Option: "+title(o.Title), report.QuantityText(o.Quantities.Earthworks), o.Status)
+				want = append(want, "Option: "+report.Capital(o.Title), report.QuantityText(o.Quantities.Earthworks), o.Status)
 				for k := range o.Situations {
 					want = append(want, report.FactorText(o.Situations[k].FS))
 				}
