@@ -62,8 +62,9 @@ func TestFeatureWater(t *testing.T) {
 }
 
 // TestFeatureStrength: a power law with b = 1 is a friction angle, and on one unit weight cu by ratio is a gradient below the ground.
+// On the same slip they agree to rounding (package lem); here either is searched, and may end in another of two polylines that are as low.
 func TestFeatureStrength(t *testing.T) {
-	const tolerance = 5e-4
+	const tolerance = 3e-3 // What a default search may miss.
 	same := func(what, situation string, a, b map[string]float64) {
 		if math.Abs(a[situation]-b[situation]) > tolerance*a[situation] {
 			t.Errorf("%s: FS %.5f and %.5f", what, a[situation], b[situation])
