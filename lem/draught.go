@@ -158,6 +158,12 @@ func (d *draught) breakpoints() []float64 {
 		add(d.s.Crack.Line.Left())
 		add(d.s.Crack.Line.Right())
 	}
+	d.ends(add)
+	return d.thin(xs)
+}
+
+// ends adds where loads, free water, drains and whatever is given by points begin, bend and end.
+func (d *draught) ends(add func(x float64)) {
 	for _, p := range d.sit.Water.Points {
 		add(p.X)
 	}
@@ -188,7 +194,6 @@ func (d *draught) breakpoints() []float64 {
 			}
 		}
 	}
-	return d.thin(xs)
 }
 
 // thin sorts breakpoints and leaves out those closer than a quarter of a step to another: they are the same place. The vertices of the

@@ -222,12 +222,7 @@ func check(s *Section, sit *Situation) error {
 			errs = append(errs, ErrBadDrawdownRatio)
 		}
 	}
-	for _, l := range lines {
-		errs = append(errs, finite(l))
-		if !slices.IsSortedFunc(l, compareX) {
-			errs = append(errs, ErrNotLeftToRight)
-		}
-	}
+	errs = append(errs, checkLines(lines))
 	variable := 0
 	for _, l := range s.Loads {
 		if l.Variable {
@@ -238,6 +233,18 @@ func check(s *Section, sit *Situation) error {
 		errs = append(errs, ErrTooManyVariable)
 	}
 	errs = append(errs, checkWater(s, &sit.Water), checkStrength(s), checkLoads(s, sit), s.Crack.check(), checkRestraints(s.Restraints))
+	return errors.Join(errs...)
+}
+
+// checkLines returns an error where lines are not finite or run back.
+func checkLines(lines []Profile) error {
+	var errs []error
+	for _, l := range lines {
+		errs = append(errs, finite(l))
+		if !slices.IsSortedFunc(l, compareX) {
+			errs = append(errs, ErrNotLeftToRight)
+		}
+	}
 	return errors.Join(errs...)
 }
 
