@@ -42,7 +42,7 @@ func ParseObjective(name string) (Objective, bool) {
 }
 
 // ErrBlankRate says that an objective needs rates or factors that the case leaves blank.
-var ErrBlankRate = errors.New("remedies: the objective needs rates or factors that are blank")
+var ErrBlankRate = errors.New("the objective needs rates or factors that are blank under `economics`")
 
 // value returns what is made least of a proposal; NaN where it needs a blank rate.
 func (o Objective) value(j *Job, q *Quantities) float64 {
