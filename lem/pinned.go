@@ -18,7 +18,6 @@ const (
 	pinWalk      = 0.02 // Steps in which an end is moved, as a share of the length, until the arc touches the boundary,
 	pinSteps     = 6    // and how many of them either way.
 	pinRounds    = 3    // Rounds of the descent along a bound.
-	heldPerPair  = 24   // Trials for each pair of zones and boundary of arcs held by depth of interest and boundary at once.
 	touchShare   = 0.02 // An arc touches a boundary if it clears it by less than this share of the hair beside it.
 )
 
@@ -181,52 +180,4 @@ func (s *searcher) clearance(p *vector, moved int, x float64, bed *rail) float64
 		return math.NaN()
 	}
 	return -bed.rises(slip.Centre, slip.Radius, min(q[0], q[1]), max(q[0], q[1]))
-}
-
-// sweepHeld tries arcs that rest on the depth of interest and touch a boundary between soils at once: on a thin layer at that depth they are the
-// only ones that find it, and a few trials between two stretches of ground hardly ever come near them.
-func (s *searcher) sweepHeld(ctx context.Context) {
-	q := sequenceOf(s.o.Seed + 2)
-	n := int(math.Ceil(heldPerPair * s.o.Effort))
-	k := 0
-	for _, bed := range s.m.beds() {
-		within := s.m.shallow(&bed, s.o.MinDepth)
-		for i, a := range s.zones {
-			for _, b := range s.zones[i:] {
-				inReach := func(r Range) bool { return r.From < b.To && r.To > a.From }
-				if ctx.Err() != nil || !s.mayFail(a, b) || !slices.ContainsFunc(within, inReach) {
-					continue
-				}
-				for j := range n {
-					v := q.at(k)
-					k++
-					p := vector{a.From + v[0]*(a.To-a.From), b.From + v[1]*(b.To-b.From), flattest}
-					over := [...]Range{a, b}[j%2]
-					if s.touchBetween(&p, j%2, over.From, over.To, &bed) {
-						s.note(s.try(p))
-					}
-				}
-			}
-		}
-	}
-}
-
-// shallow lists where a bed lies below the ground and no deeper than a depth.
-func (m *Model) shallow(bed *rail, depth float64) []Range {
-	var out []Range
-	for i := range m.cols {
-		c := &m.cols[i]
-		for j := 1; j < len(bed.pts); j++ {
-			a, b := bed.pts[j-1], bed.pts[j]
-			x0, x1 := max(a.X, c.x0), min(b.X, c.x1)
-			if x0 >= x1 {
-				continue
-			}
-			d0, d1 := c.ground.at(x0)-polylineAt(bed.pts, x0), c.ground.at(x1)-polylineAt(bed.pts, x1)
-			if max(d0, d1) > 0 && min(d0, d1) <= depth {
-				out = append(out, Range{x0, x1})
-			}
-		}
-	}
-	return out
 }
