@@ -367,76 +367,6 @@ func crowded() drawn {
 // asRead drops the option.
 func asRead(d drawn) drawn { return drawn{job: d.job} }
 
-// mirrored reflects a case about x = 0 and moves it right again.
-func mirrored(d drawn) drawn {
-	const shift = 72
-	pt := func(p lem.Point) lem.Point { return lem.Point{X: shift - p.X, Y: p.Y} }
-	prof := func(p lem.Profile) lem.Profile {
-		out := p.Mirror()
-		for i := range out {
-			out[i].X += shift
-		}
-		return out
-	}
-	section := func(s lem.Section) lem.Section {
-		s.Ground = prof(s.Ground)
-		st := make([]lem.Stratum, len(s.Strata))
-		for i, t := range s.Strata {
-			st[i] = lem.Stratum{Soil: t.Soil, Top: prof(t.Top)}
-		}
-		pl := make([]lem.Body, len(s.Placed))
-		for i, b := range s.Placed {
-			pl[i].Soil = b.Soil
-			for k := len(b.Outline) - 1; k >= 0; k-- {
-				pl[i].Outline = append(pl[i].Outline, pt(b.Outline[k]))
-			}
-		}
-		ld := make([]lem.Surcharge, len(s.Loads))
-		for i, l := range s.Loads {
-			l.FromX, l.ToX = shift-l.ToX, shift-l.FromX
-			ld[i] = l
-		}
-		s.Strata, s.Placed, s.Loads = st, pl, ld
-		return s
-	}
-	j := *d.job
-	j.Section, j.Crest, j.Toe = section(j.Section), pt(j.Crest), pt(j.Toe)
-	j.Waters = append([]remedies.WaterLine(nil), j.Waters...)
-	for i := range j.Waters {
-		j.Waters[i].Line = prof(j.Waters[i].Line)
-	}
-	l, r := *j.Limits.Right, *j.Limits.Left
-	l.X, r.X = shift-l.X, shift-r.X
-	j.Limits.Left, j.Limits.Right = &l, &r
-	j.Limits.KeepClear = append([]remedies.KeepClear(nil), j.Limits.KeepClear...)
-	for i := range j.Limits.KeepClear {
-		k := &j.Limits.KeepClear[i]
-		k.FromX, k.ToX = shift-k.ToX, shift-k.FromX
-	}
-	o := *d.opt
-	q := *o.Proposal
-	q.Section = section(q.Section)
-	q.Waters = append([]lem.Water(nil), q.Waters...)
-	for i := range q.Waters {
-		q.Waters[i].Line = prof(q.Waters[i].Line)
-	}
-	q.Dimensions = append([]remedies.Dimension(nil), q.Dimensions...)
-	for i := range q.Dimensions {
-		q.Dimensions[i].From, q.Dimensions[i].To = pt(q.Dimensions[i].From), pt(q.Dimensions[i].To)
-	}
-	flip := func(list []remedies.Outcome) []remedies.Outcome {
-		list = append([]remedies.Outcome(nil), list...)
-		for i := range list {
-			c := &list[i]
-			c.Slip.Centre, c.From, c.To = pt(c.Slip.Centre), pt(c.To), pt(c.From)
-			c.Check.Situation.Water.Line = prof(c.Check.Situation.Water.Line)
-		}
-		return list
-	}
-	o.Proposal, o.Situations, o.Stages = &q, flip(o.Situations), flip(o.Stages)
-	return drawn{&j, &o}
-}
-
 // cases are all sections that the tests draw, by name.
 func cases() map[string]drawn {
 	return map[string]drawn{
@@ -444,30 +374,5 @@ func cases() map[string]drawn {
 		"cutting-berm-left": mirrored(cuttingWithBerm()), "regrade-drains": regradeWithDrains(), "embankment": embankment(),
 		"embankment-read": asRead(embankment()), "flat": flat(), "flat-read": asRead(flat()), "steep": steep(), "crowded": crowded(),
 		"crowded-read": asRead(crowded()),
-	}
-}
-
-// tradeoffs are invented curves.
-func tradeoffs(differing bool) []remedies.Option {
-	curve := func(name string, status remedies.OptionStatus, required, a, b float64, n int) remedies.Option {
-		o := remedies.Option{Name: name, Title: name, Status: status}
-		for i := range n {
-			shift := 0.02 * float64(i-n/2)
-			fs := required + shift + 0.004*float64(i%3)
-			if status != remedies.MeetsTarget {
-				fs -= 0.03
-			}
-			o.Tradeoff = append(o.Tradeoff, remedies.TradeoffPoint{Shift: shift, RequiredFS: required + shift, Reached: fs, Earthworks: a + b*float64(i)*(1+0.05*float64(i))})
-		}
-		return o
-	}
-	second := 1.25
-	if differing {
-		second = 1.2
-	}
-	return []remedies.Option{
-		curve("toe berm", remedies.MeetsTarget, 1.25, 4, 1.6, 9), curve("toe buttress", remedies.MeetsTarget, second, 3.5, 1.5, 9),
-		curve("regrade", remedies.Infeasible, 1.25, 6, 4, 4), curve("unloading of the head", remedies.Infeasible, second, 2, 2.5, 4),
-		curve("trench drains", remedies.MeetsTarget, second, 0.8, 0.2, 9), curve("regrade with trench drains", remedies.MeetsTarget, second, 1.5, 1.2, 8),
 	}
 }
