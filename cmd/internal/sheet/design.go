@@ -56,10 +56,18 @@ func (b *builder) currency() string {
 	return ""
 }
 
+// moved reports whether a row of elements stands elsewhere, or is longer or shorter, at a point of a trade-off than as specified.
+func moved(o *report.Option, p *report.TradePoint) bool {
+	return p.Parameters["position"] != o.Parameters["position"] || p.Parameters["length"] != o.Parameters["length"]
+}
+
 // traded lays out a point of a trade-off.
 func (b *builder) traded(o *report.Option, p *report.TradePoint, specified *design) design {
 	d := b.blank(p.Ground, p.Placed)
-	d.Posts, d.shift = specified.Posts, p.Shift // The size of a row of elements changes, not where it stands.
+	d.Posts, d.shift = specified.Posts, p.Shift
+	if moved(o, p) { // Then only the rows that were there before are known.
+		d.Posts = posts(b.f.Existing.Section)
+	}
 	for i := range p.Checks {
 		a := &p.Checks[i]
 		b.addAnswer(&d, a.Name, unshifted(a.RequiredFS, p.Shift), &a.Found, p.Water)

@@ -1,6 +1,7 @@
 package sheet
 
 import (
+	"slices"
 	"strings"
 	"testing"
 
@@ -49,5 +50,27 @@ func TestLimits(t *testing.T) {
 	}
 	if p := d.Existing.Posts; len(p) != 1 || p[0].Bottom != 95 {
 		t.Errorf("restraints: %+v", p)
+	}
+}
+
+// A row of elements is not drawn where it stood for another target.
+func TestMovedRow(t *testing.T) {
+	f := sample.Result(t, "cutting")
+	i := slices.IndexFunc(f.Options, func(o report.Option) bool { return len(o.Tradeoff) > 1 })
+	o := &f.Options[i]
+	o.Section.Restraints = []report.Restraint{{Name: "piles", X: 50, Top: 101, Bottom: 95, Force: 12}}
+	of := func(position float64) map[string]report.Parameter {
+		return map[string]report.Parameter{"position": {Value: report.Number(position), Unit: "m"}}
+	}
+	o.Parameters = of(3)
+	for k := range o.Tradeoff {
+		o.Tradeoff[k].Parameters = of(3 + float64(k))
+	}
+	designs := newModel(f).Data.Options[i].Designs
+	if d := designs[0]; len(d.Posts) != 1 {
+		t.Errorf("as specified: %+v", d.Posts)
+	}
+	if d := designs[len(designs)-1]; len(d.Posts) != 0 {
+		t.Errorf("moved: %+v", d.Posts)
 	}
 }
