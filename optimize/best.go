@@ -6,6 +6,10 @@ import (
 	"slices"
 )
 
+// screensPerSearch is how many candidates may have their bounds lowered by a search that ends with what is quick to find, for each that may be
+// searched for all there is.
+const screensPerSearch = 2
+
 // bestBatch is how many candidates have the pool tried on them at a time.
 const bestBatch = largestBatch
 
@@ -15,6 +19,7 @@ type candidate[C any] struct {
 	bound    float64
 	cut      int32 // pool cut of the bound
 	tried    int   // pool cuts tried, from the first
+	screened bool
 	searched bool
 	audited  bool
 	found    []Found[C] // by search and audit
@@ -38,10 +43,10 @@ func (h *candidates[C]) Pop() any {
 }
 
 // rankBest looks for the design with the greatest margin among those that have a witness, best bound first: a bound is
-// lowered by trying the whole pool, then by a full search, then by an audit, and the first candidate to stay on top
-// after all three is the best. When the searches run out, only those searched stay in the queue.
+// lowered by trying the whole pool, then by a search that may end with what is quick to find, then by a full search, then by an audit, and the
+// first candidate to stay on top after all is the best. When searches of a kind run out, only those that had one stay in the queue.
 func (r *run[C]) rankBest() error {
-	var queue, searched candidates[C]
+	var queue, screened, searched candidates[C]
 	for rank, w := range r.res.Lattice {
 		if w.Cut != NoCut {
 			queue = append(queue, &candidate[C]{rank: rank, bound: w.Margin, cut: w.Cut})
@@ -66,6 +71,15 @@ func (r *run[C]) rankBest() error {
 		case len(searched) == r.s.BestSearches:
 			queue = searched
 			heap.Init(&queue)
+		case !top.screened && len(screened) == screensPerSearch*r.s.BestSearches:
+			queue = screened
+			heap.Init(&queue)
+		case !top.screened:
+			screened = append(screened, top)
+			if err := r.screenCandidate(top); err != nil {
+				return err
+			}
+			heap.Fix(&queue, 0)
 		default:
 			searched = append(searched, top)
 			if err := r.searchCandidate(top); err != nil {
@@ -102,6 +116,16 @@ func (r *run[C]) tightenTop(queue *candidates[C]) error {
 	return err
 }
 
+// screenCandidate lowers the bound of a candidate by what is quick to find, unless its search has ended with that before.
+func (r *run[C]) screenCandidate(c *candidate[C]) error {
+	c.screened = true
+	if _, known := r.verdicts[c.rank]; known {
+		return nil
+	}
+	_, err := r.lower(c, Effort{ToReject: true})
+	return err
+}
+
 // searchCandidate searches a candidate for all that there is to find, unless that was done before.
 func (r *run[C]) searchCandidate(c *candidate[C]) error {
 	c.searched = true
@@ -113,32 +137,38 @@ func (r *run[C]) searchCandidate(c *candidate[C]) error {
 	if !known {
 		r.res.Spent.FullySearched++
 	}
-	return r.lower(c, false)
+	return r.look(c, Effort{})
 }
 
 // auditCandidate audits a candidate that has been searched.
 func (r *run[C]) auditCandidate(c *candidate[C]) error {
 	c.audited = true
-	return r.lower(c, true)
+	return r.look(c, Effort{Audit: true})
+}
+
+// look searches or audits a candidate for all there is, and keeps what was found.
+func (r *run[C]) look(c *candidate[C], e Effort) error {
+	found, err := r.lower(c, e)
+	c.found = arrange(append(slices.Clone(c.found), found...))
+	c.missing += unresolved(found)
+	return err
 }
 
 // lower searches or audits a candidate on which the whole pool has been tried. Cuts below its bound are news: they
 // join the pool, and the lowest is the new bound.
-func (r *run[C]) lower(c *candidate[C], audit bool) error {
+func (r *run[C]) lower(c *candidate[C], e Effort) ([]Found[C], error) {
 	x := r.point(r.designs[c.rank])
 	d := r.open(x)
 	defer d.Close()
-	found, err := r.search(d, x, Effort{Audit: audit})
+	found, err := r.search(d, x, e)
 	if err != nil {
-		return err
+		return nil, err
 	}
-	c.found = arrange(append(slices.Clone(c.found), found...))
-	c.missing += unresolved(found)
 	lowest := int32(len(r.pool))
 	if r.joinFound(found, c.bound, 0); int(lowest) < len(r.pool) {
 		c.bound, c.cut = found[0].Margin, lowest
 	}
-	return nil
+	return found, nil
 }
 
 func (r *run[C]) acceptBest(c *candidate[C]) {

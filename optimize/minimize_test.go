@@ -308,7 +308,7 @@ func TestBestIsSearchedWithinBounds(t *testing.T) {
 	}
 	p := line(rows...)
 	r := p.minimize(t, Settings[int]{Start: []int{n}, FullSearches: 5})
-	if r.Status != Infeasible || r.Spent.Searches != 5 || r.Best.Margin != -10 || r.Best.X[0] != 0 || r.Best.Binding.Cut != 0 {
+	if r.Status != Infeasible || r.Spent.FullySearched > 5 || r.Best.Margin != -10 || r.Best.X[0] != 0 || r.Best.Binding.Cut != 0 {
 		t.Errorf("%v best %+v spent %+v", r.Status, r.Best, r.Spent)
 	}
 	p = line(rows...)
@@ -318,14 +318,11 @@ func TestBestIsSearchedWithinBounds(t *testing.T) {
 }
 
 func TestBestIsBoundedByThePool(t *testing.T) {
-	// One search brings cut 1 to light, on which row 2 is best; the pool must spare the others their searches.
+	// The first search, which may end with what is quick to find, brings cut 1 to light, on which row 2 is best; the pool must spare the others
+	// their searches.
 	p := line([]float64{-1, -9}, []float64{-1, -8}, []float64{-2, -4}, []float64{-3, -7})
 	r := p.minimize(t, Settings[int]{Start: []int{0}, FullSearches: 1})
-	if r.Status != Infeasible || r.Best.X[0] != 0 || r.Best.Margin != -9 {
-		t.Errorf("one search: best %+v", r.Best)
-	}
-	r = p.minimize(t, Settings[int]{Start: []int{0}, FullSearches: 2})
-	if r.Best.X[0] != 2 || r.Best.Margin != -4 || r.Spent.Searches > 2 {
+	if r.Status != Infeasible || r.Best.X[0] != 2 || r.Best.Margin != -4 || r.Spent.Searches > 3 || r.Spent.FullySearched > 1 {
 		t.Errorf("best %+v, spent %+v", r.Best, r.Spent)
 	}
 }
