@@ -14,7 +14,7 @@ const companionBelow = 1.5 // Slips up to this multiple of the depth of interest
 var companionDepths = [...]float64{1.08, 1.25} // deeper by these factors.
 
 // companions returns the companions of a slip that fails in a check, with their margins.
-func (d *design) companions(check int, b *lem.Minimum) []optimize.Found[Cut] {
+func (d *design) companions(ws *lem.Workspace, check int, b *lem.Minimum) []optimize.Found[Cut] {
 	if b.Slip.Kind != lem.Circle || b.Result.Depth > companionBelow*d.z.j.MinDepth {
 		return nil
 	}
@@ -28,7 +28,7 @@ func (d *design) companions(check int, b *lem.Minimum) []optimize.Found[Cut] {
 			continue
 		}
 		c := Cut{uint16(check), b.Setting, slip}
-		if m := d.Margin(&c); m < d.z.s.Allowance {
+		if m := d.margin(ws, &c); m < d.z.s.Allowance {
 			out = append(out, optimize.Found[Cut]{Cut: c, Margin: m})
 		}
 	}

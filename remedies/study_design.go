@@ -79,8 +79,11 @@ func (d *design) model(i int) *lem.Model {
 }
 
 // Margin returns FS less required FS of a slip of the pool.
-func (d *design) Margin(c *Cut) float64 {
-	r := d.model(int(c.Check)).FS(&d.ws, &c.Slip, c.Setting)
+func (d *design) Margin(c *Cut) float64 { return d.margin(&d.ws, c) }
+
+// margin is Margin for one of several goroutines, with a workspace of its own.
+func (d *design) margin(ws *lem.Workspace, c *Cut) float64 {
+	r := d.model(int(c.Check)).FS(ws, &c.Slip, c.Setting)
 	switch r.Status {
 	case lem.Converged:
 		return r.F - d.required(int(c.Check))
@@ -166,13 +169,14 @@ func (d *design) searchOne(ctx context.Context, i int, e optimize.Effort, polyli
 		return nil, err
 	}
 	var out []optimize.Found[Cut]
+	var ws lem.Workspace // Not the design's: other checks are searched meanwhile.
 	for k := range minima.Basins {
 		b := &minima.Basins[k]
 		out = append(out, optimize.Found[Cut]{
 			Cut:    Cut{uint16(i), b.Setting, b.Slip},
 			Margin: b.Result.F - d.required(i),
 		})
-		out = append(out, d.companions(i, b)...)
+		out = append(out, d.companions(&ws, i, b)...)
 	}
 	for _, u := range minima.Unresolved {
 		if u.Result.Screen < d.required(i)+d.z.s.Allowance {
