@@ -60,17 +60,7 @@ func TestFeaturesAreDrawn(t *testing.T) {
 			}
 			checkLabels(t, f)
 			keep(t, "feature-"+c.name, f)
-			got := strings.ReplaceAll(texts(f), "\n", " ")
-			for _, w := range c.want {
-				if !strings.Contains(got, w) {
-					t.Errorf("the drawing does not say %q; it says:\n%s", w, got)
-				}
-			}
-			for _, w := range c.not {
-				if strings.Contains(got, w) {
-					t.Errorf("the drawing says %q", w)
-				}
-			}
+			says(t, strings.ReplaceAll(texts(f), "\n", " "), c.want, c.not)
 		})
 	}
 }

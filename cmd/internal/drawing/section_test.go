@@ -106,17 +106,7 @@ func TestWhatASectionSays(t *testing.T) {
 			if err != nil {
 				t.Fatal(err)
 			}
-			got := texts(f)
-			for _, w := range c.want {
-				if !strings.Contains(got, w) {
-					t.Errorf("the drawing does not say %q; it says:\n%s", w, got)
-				}
-			}
-			for _, w := range c.not {
-				if strings.Contains(got, w) {
-					t.Errorf("the drawing says %q", w)
-				}
-			}
+			says(t, texts(f), c.want, c.not)
 		})
 	}
 }
@@ -301,6 +291,21 @@ func BenchmarkWritePNG(b *testing.B) {
 	for b.Loop() {
 		if err := f.WritePNG(io.Discard); err != nil {
 			b.Fatal(err)
+		}
+	}
+}
+
+// says checks that the texts of a drawing hold some words and do not hold others.
+func says(t *testing.T, got string, want, not []string) {
+	t.Helper()
+	for _, w := range want {
+		if !strings.Contains(got, w) {
+			t.Errorf("the drawing does not say %q; it says:\n%s", w, got)
+		}
+	}
+	for _, w := range not {
+		if strings.Contains(got, w) {
+			t.Errorf("the drawing says %q", w)
 		}
 	}
 }

@@ -125,11 +125,7 @@ func TestTextsOfAnyCaseStandFree(t *testing.T) {
 		}, []string{"123456789.13", "9,876,543,211"}},
 	} {
 		t.Run(c.name, func(t *testing.T) {
-			f := sample.Result(t, "cutting")
-			c.change(f)
-			b := laidOut(t, f)
-			standing(t, b)
-			text := said(b)
+			f, text := cuttingWith(t, c.change)
 			for _, want := range c.want {
 				if !strings.Contains(text, want) {
 					t.Errorf("the report does not say %q", want)
@@ -141,6 +137,16 @@ func TestTextsOfAnyCaseStandFree(t *testing.T) {
 			written(t, f)
 		})
 	}
+}
+
+// cuttingWith returns the result of the cutting with a change, and what its report, which must stand, says.
+func cuttingWith(t *testing.T, change func(*report.File)) (f *report.File, text string) {
+	t.Helper()
+	f = sample.Result(t, "cutting")
+	change(f)
+	b := laidOut(t, f)
+	standing(t, b)
+	return f, said(b)
 }
 
 // slipped adds what the observed slip leaves open to a result: its first option at two points, and nothing at the third.
@@ -159,24 +165,8 @@ func slipped(f *report.File) {
 
 // The same result gives the same bytes, also when it was written and read in between, and they are few.
 func TestSameBytes(t *testing.T) {
-	for _, name := range sample.Names {
-		f := sample.Result(t, name)
-		first := written(t, f)
-		var b bytes.Buffer
-		if err := f.Encode(&b); err != nil {
-			t.Fatal(err)
-		}
-		again, err := report.Decode(&b)
-		if err != nil {
-			t.Fatal(err)
-		}
-		if !bytes.Equal(first, written(t, f)) || !bytes.Equal(first, written(t, again)) {
-			t.Errorf("%s: not the same bytes", name)
-		}
-		if most := 2 << 20; len(first) > most {
-			t.Errorf("%s: %d bytes, more than %d", name, len(first), most)
-		}
-	}
+	const most = 2 << 20
+	sample.SameBytes(t, written, most)
 }
 
 // The numbers of the result are found in the document by a program that reads such documents.
@@ -284,11 +274,7 @@ func TestEveryOutcome(t *testing.T) {
 		}, "Back-analysis of the observed slip", "No answer"},
 	} {
 		t.Run(c.name, func(t *testing.T) {
-			f := sample.Result(t, "cutting")
-			c.change(f)
-			b := laidOut(t, f)
-			standing(t, b)
-			text := said(b)
+			_, text := cuttingWith(t, c.change)
 			if !strings.Contains(text, c.want) {
 				t.Errorf("the report does not say %q", c.want)
 			}

@@ -51,3 +51,27 @@ func PDFText(t testing.TB, doc []byte) string {
 	}
 	return strings.Join(strings.Fields(string(out)), " ")
 }
+
+// SameBytes checks that what is written from the result of each demo case is the same every time, also from a result that was itself written and
+// read in between, and has so many bytes at most.
+func SameBytes(t *testing.T, written func(testing.TB, *report.File) []byte, most int) {
+	t.Helper()
+	for _, name := range Names {
+		f := Result(t, name)
+		first := written(t, f)
+		var b bytes.Buffer
+		if err := f.Encode(&b); err != nil {
+			t.Fatal(err)
+		}
+		again, err := report.Decode(&b)
+		if err != nil {
+			t.Fatal(err)
+		}
+		if !bytes.Equal(first, written(t, f)) || !bytes.Equal(first, written(t, again)) {
+			t.Errorf("%s: not the same bytes", name)
+		}
+		if len(first) > most {
+			t.Errorf("%s: %d bytes, more than %d", name, len(first), most)
+		}
+	}
+}
